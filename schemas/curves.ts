@@ -1,0 +1,108 @@
+/** What assemble hands on: one Cp curve a phase, H and S its exact integrals, with covariances at the knots. */
+import type { ExaminedCase } from './checked.js';
+
+/** Which curves may be compared with each other: same zeros, same pressure convention. */
+export interface CurveFamily {
+  readonly enthalpyZero: string | null;
+  readonly entropyZero: string | null;
+  /** null: standard state; else the isobar that the tables state. */
+  readonly isobarPa: number | null;
+}
+
+/** Where a stretch of a curve came from. */
+export interface CurveOrigin {
+  readonly lowK: number;
+  readonly highK: number;
+  readonly source: string;
+  readonly file: string;
+  readonly firstLine: number;
+  readonly lastLine: number;
+  readonly corrections: number;
+  /** Cp of this stretch minus Cp of the preferred one at the join [J/(mol K)]; null where it joins nothing. */
+  readonly stepHeatCapacityJPerMolK: number | null;
+}
+
+/**
+ * Cp(T) = c0 + c1 x + c2 x^2 + c3 x^3 with x = T - knotK[i] in interval i; n knots, n - 1 intervals.
+ * H and S at the knots are on the family's zeros where `hasEnthalpyLevel` / `hasEntropyLevel`, else relative to the first knot.
+ */
+export interface PhaseCurve {
+  readonly phase: string;
+  readonly family: CurveFamily;
+  readonly knotK: Float64Array;
+  readonly c0: Float64Array;
+  readonly c1: Float64Array;
+  readonly c2: Float64Array;
+  readonly c3: Float64Array;
+  readonly enthalpyJPerMol: Float64Array;
+  readonly entropyJPerMolK: Float64Array;
+  /** 0 measured knot (a printed row), 1 made by us (298.15 K, joins, tail), 2 continuation. */
+  readonly knotKind: Uint8Array;
+  readonly measuredFromK: number;
+  readonly measuredToK: number;
+  readonly hasEnthalpyLevel: boolean;
+  readonly hasEntropyLevel: boolean;
+  /** How the levels are known: 'anchor' | 'table' | 'third-law' | the index of the transition they were carried through. */
+  readonly enthalpyLevelFrom: 'anchor' | 'table' | 'transition' | 'none';
+  readonly entropyLevelFrom: 'anchor' | 'table' | 'third-law' | 'transition' | 'none';
+  /** Relative standard uncertainty of Cp between knots beyond its integrals, and of the continuation. */
+  readonly uHeatCapacityJPerMolK: Float64Array;
+  /** State covariance of (H, S) at each knot, rows' errors only (levels apart): var H, cov HS, var S. */
+  readonly varH: Float64Array;
+  readonly covHS: Float64Array;
+  readonly varS: Float64Array;
+  /** Smoother gains knot k <- k + 1, 2x2 row-major, 4 a knot: Cov(x_k, x_j) = G_k Cov(x_{k+1}, x_j), k < j. */
+  readonly gain: Float64Array;
+  readonly uEnthalpyLevelJPerMol: number;
+  readonly uEntropyLevelJPerMolK: number;
+  readonly origins: readonly CurveOrigin[];
+}
+
+/** A temperature where G of two phases of one family is equal, at one pressure. */
+export interface Crossing {
+  readonly family: CurveFamily;
+  /** Phase of lower G below the crossing. */
+  readonly from: string;
+  /** Phase of lower G above it. */
+  readonly to: string;
+  readonly pressurePa: number;
+  /** `real`: gas imperfection included; `ideal`: fugacity equals the pressure; null: no gas in it. */
+  readonly gas: 'real' | 'ideal' | null;
+  readonly temperatureK: number;
+  readonly uK: number;
+  readonly enthalpyJPerMol: number;
+  readonly entropyJPerMolK: number;
+  /** True where both are the lowest of all phases there. */
+  readonly stable: boolean;
+  /** True where both phases' own data reach the crossing (no continuation). */
+  readonly measured: boolean;
+}
+
+/** Values at the published temperatures of one phase; columns. */
+export interface FunctionRows {
+  readonly phase: string;
+  readonly family: CurveFamily;
+  readonly rows: number;
+  readonly temperatureK: Float64Array;
+  readonly heatCapacityJPerMolK: Float64Array;
+  readonly entropyJPerMolK: Float64Array;
+  readonly enthalpyJPerMol: Float64Array;
+  readonly gibbsEnergyJPerMol: Float64Array;
+  readonly uHeatCapacityJPerMolK: Float64Array;
+  readonly uEntropyJPerMolK: Float64Array;
+  readonly uEnthalpyJPerMol: Float64Array;
+  readonly uGibbsEnergyJPerMol: Float64Array;
+  readonly stable: Uint8Array;
+  /** 0 measured, 1 interpolated, 2 extrapolated. */
+  readonly basis: Uint8Array;
+  /** 0 none, 1 below, 2 above (a two-sided row). */
+  readonly side: Uint8Array;
+}
+
+export interface AssembledCase {
+  readonly examined: ExaminedCase;
+  readonly curves: readonly PhaseCurve[];
+  /** At the policy's pressure and at every stated transition's own. */
+  readonly crossings: readonly Crossing[];
+  readonly functions: readonly FunctionRows[];
+}
