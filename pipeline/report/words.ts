@@ -1,0 +1,283 @@
+/** Every sentence that people read about findings is made here, and nowhere else. */
+import type { Finding, FindingDetail, ReadingProblem, Suspect } from '../../schemas/finding.js';
+import type { Address } from '../../schemas/harmonised.js';
+import { figure, plusMinus, unitInWords } from './figures.js';
+
+type Detail<Code extends FindingDetail['code']> = Extract<FindingDetail, { code: Code }>;
+
+/**
+ * What was found, what was expected, where, and what to do next, with the numbers: one line of plain text.
+ * A pure function of the finding; it computes nothing.
+ */
+export function sayFinding(finding: Finding): string {
+  return join(told(finding), where(finding), gravity(finding), finding.accepted ? 'Accepted by a curator.' : '');
+}
+
+/** `lead-study/points.csv line 412, column S`; a line of 0 is the descriptor or the whole file. */
+export function sayAddress({ source, file, line, column }: Address): string {
+  const path = file === '' ? source : `${source}/${file}`;
+  return `${path}${line > 0 ? ` line ${line}` : ''}${column === '' ? '' : `, column ${column}`}`;
+}
+
+/** `lead-study/points.csv:412 S`, as editors and terminals like it. */
+export function sayPlace({ source, file, line, column }: Address): string {
+  const path = file === '' ? source : `${source}/${file}`;
+  return `${path}${line > 0 ? `:${line}` : ''}${column === '' ? '' : ` ${column}`}`;
+}
+
+/** Cell, what it says, and what it should probably say: `x/points.csv:412 S says 888.108, probably 889.108 (one digit wrong)`. */
+export function saySuspect(suspect: Suspect): string {
+  const reason = suspect.explanation === null ? '' : ` (${suspect.explanation})`;
+  return `${sayPlace(suspect.address)} says ${suspect.printed}, probably ${suspect.proposedPrinted}${reason}`;
+}
+
+/** `gap in G` and the like: the subject of a rule in a few words, for headings. */
+export function saySeverity(severity: Finding['severity']): string {
+  return { fault: 'fault, withheld', doubt: 'doubt, published and flagged', note: 'note' }[severity];
+}
+
+function told(finding: Finding): string {
+  const { detail } = finding;
+  switch (detail.code) {
+    case 'reading':
+      return reading(detail);
+    case 'rows-disagree':
+      return (
+        `Two rows at ${kelvin(finding.temperatureK)} disagree: ${symbol(detail.quantity)} is ${detail.first} here and ` +
+        `${detail.second} on line ${detail.otherLine}. Withdraw the wrong one by a correction; if they are the two sides of a transition, state it.`
+      );
+    case 'temperatures-fall':
+      return (
+        `The temperature goes from ${kelvin(detail.previousK)} to ${kelvin(finding.temperatureK)} where it should rise. ` +
+        'Look for a wrong digit, or for a row in the wrong place.'
+      );
+    case 'impossible':
+      return `${capital(symbol(detail.quantity))} is ${detail.read}${at(finding)}, which cannot be; expected was ${detail.wanted}. Compare the cell with the original.`;
+    case 'interval':
+      return interval(finding, detail);
+    case 'cell':
+      return cell(finding, detail);
+    case 'anomaly':
+      return (
+        `${symbol(detail.quantity)} between ${kelvin(detail.lowK)} and ${kelvin(detail.highK)} stands off its neighbours${by(finding)}, and no single cell explains it: ` +
+        'a step or an anomaly. State a transition if there is one, or compare these rows with the original.'
+      );
+    case 'transition':
+      return transition(finding, detail);
+    case 'phase-order':
+      return (
+        `Between ${kelvin(detail.lowK)} and ${kelvin(detail.highK)} ${detail.lower} has the lowest Gibbs energy${by(finding)}, where the transitions say that ${detail.stated} is stable. ` +
+        `Look at the entropies and the formation enthalpies of ${detail.lower} and ${detail.stated}, or state the transition that is missing.`
+      );
+    case 'entropy-order':
+      return (
+        `S of ${detail.above} is ${amount(finding.observed, finding)}${at(finding)}, below S of ${detail.below} at ${amount(finding.expected, finding)}; ` +
+        `${detail.above} is the phase of higher temperature and should have more. Look at the entropies of both.`
+      );
+    case 'unstated-jump':
+      return (
+        `${symbol(detail.quantity)} jumps${by(finding)}${at(finding)}${inside(finding)}, and no transition is stated there. ` +
+        'State the transition, or compare the rows on both sides with the original.'
+      );
+  }
+}
+
+function reading({ problem, read, wanted, remedy }: Detail<'reading'>): string {
+  return join(`${READING[problem](quote(read))}${wanted === '' ? '' : `; expected was ${wanted}`}`, remedy);
+}
+
+const READING: Readonly<Record<ReadingProblem, (read: string) => string>> = {
+  'cell-not-a-number': (read) => `${read} is not a number`,
+  'cell-not-finite': (read) => `${read} is no finite number`,
+  'row-too-short': (read) => `The row has too few cells: ${read}`,
+  'row-too-long': (read) => `The row has too many cells: ${read}`,
+  'column-missing': (read) => `There is no column ${read}`,
+  'column-unknown': (read) => `The descriptor does not say what column ${read} is`,
+  'unit-unknown': (read) => `${read} is no unit that is known here`,
+  'unit-unfit': (read) => `The unit ${read} does not fit the quantity`,
+  'name-unmapped': (read) => `No substance is called ${read}`,
+  'phase-unmapped': (read) => `No phase is called ${read}`,
+  'substance-unknown': (read) => `${read} is no substance of substances.csv`,
+  'file-missing': (read) => `There is no file ${read}`,
+  'file-unreadable': (read) => `The file cannot be read: ${read}`,
+  'encoding-converted': (read) => `The file is not UTF-8 and was read as ${read}`,
+  'descriptor-unreadable': (read) => `The descriptor is not JSON that can be read: ${read}`,
+  'descriptor-invalid': (read) => `The descriptor says ${read}`,
+  'correction-out-of-date': (read) => `A correction was not applied, since the cell now says ${read}`,
+  'required-missing': (read) => `${read} is missing`,
+  'kind-not-yet-read': (read) => `Tables that hold ${read} are not read yet`,
+  'key-without-row': (read) => `Nothing was read for ${read}`,
+  'molar-mass-unknown': (read) => `No molar mass follows from ${read}`,
+  'acceptance-lapsed': (read) => `An acceptance no longer holds: ${read}`,
+};
+
+function interval(finding: Finding, { quantity, lowK, highK, named }: Detail<'interval'>): string {
+  const next = named
+    ? 'One cell explains it: see the suspects.'
+    : 'No single cell explains it: compare these rows with the original.';
+  const found = amount(finding.observed, finding);
+  const expected = expectation(finding);
+  if (finding.rule === 'functions-close') {
+    return `${symbol(quantity)} at ${kelvin(highK)} is ${found}; the row’s other functions put it at ${expected}. ${next}`;
+  }
+  const integral = finding.rule === 'enthalpy-follows-heat-capacity' ? '∫Cp dT' : '∫(Cp/T) dT';
+  return `From ${kelvin(lowK)} to ${kelvin(highK)} ${symbol(quantity)} rises by ${found}; ${integral} of the printed heat capacities gives ${expected}. ${next}`;
+}
+
+function cell(finding: Finding, { quantity, proposed, uProposed, explanation }: Detail<'cell'>): string {
+  const witness = {
+    'heat-capacity': 'the neighbouring rows and the printed H and S put it at',
+    entropy: 'the heat capacity and the neighbouring rows put it at',
+  }[quantity as 'entropy'];
+  const question = explanation === null ? 'Compare the cell with the original.' : `${capital(explanation)}?`;
+  const unit = finding.unit === null ? '' : ` ${unitInWords(finding.unit)}`;
+  return (
+    `${symbol(quantity)}${at(finding)} is ${finding.observed === null ? 'unreadable' : figure(finding.observed, uProposed)}${unit}${printed(finding)}; ` +
+    `${witness ?? 'the row’s other functions and its neighbours put it at'} ${plusMinus(proposed, uProposed)}. ${question}`
+  );
+}
+
+function transition(finding: Finding, detail: Detail<'transition'>): string {
+  const { statedK, computedK } = detail;
+  const { fromPhase: from, toPhase: to } = finding;
+  const name = `${from} → ${to}`;
+  const crossing =
+    computedK === null ? 'the two curves do not cross near it' : `the two curves cross at ${kelvin(computedK)}`;
+  switch (detail.what) {
+    case 'gap':
+      return (
+        `At the stated ${name} temperature of ${kelvin(statedK)} G of ${to} and G of ${from} differ by ${amount(finding.observed, finding)}; ` +
+        `expected was ${expectation(finding, 0)}, and ${crossing}. Look at the entropies, formation enthalpies and this temperature.`
+      );
+    case 'crossing':
+      return (
+        `The ${name} transition is stated at ${kelvin(statedK)}${printed(finding)}; ${crossing}${allowed(finding)}. ` +
+        'Look at the stated temperature, and at the entropies and enthalpies of both phases.'
+      );
+    case 'not-crossed':
+      return (
+        `The ${name} transition is stated at ${kelvin(statedK)}${printed(finding)}, and the Gibbs energies of ${from} and ${to} cross nowhere in the range of the data. ` +
+        'Look at the formation enthalpies and entropies of both phases.'
+      );
+    case 'closure':
+      return (
+        `${name} at ${kelvin(statedK)}: ΔH is ${amount(finding.observed, finding)}; T ΔS gives ${expectation(finding)}. ` +
+        'Look at ΔH, ΔS and the temperature.'
+      );
+    case 'jump':
+      return (
+        `${name} at ${kelvin(statedK)} is stated as a first-order transition, and the tables show a jump of ${amount(finding.observed, finding)}; ` +
+        `expected was ${expectation(finding)}. Look at the rows on both sides, and at the stated ΔH and ΔS.`
+      );
+    case 'no-jump':
+      return (
+        `${name} at ${kelvin(statedK)} is stated as a transition without latent heat, and the tables jump by ${amount(finding.observed, finding)}; ` +
+        `expected was ${expectation(finding, 0)}. If it has a latent heat, state the order "first".`
+      );
+    case 'falls':
+      return (
+        `Heating through ${name} at ${kelvin(statedK)} should raise enthalpy and entropy, and the change is ${amount(finding.observed, finding)}. ` +
+        'Look for a lost sign, or for from and to exchanged.'
+      );
+  }
+}
+
+/** Significance and materiality, where the finding was judged by both. */
+function gravity({ severity, detail, tolerance, unit, difference }: Finding): string {
+  if (detail.code === 'reading' || detail.code === 'rows-disagree' || detail.code === 'impossible') return '';
+  const known = detail.code === 'transition' ? detail.smallestDetectable : null;
+  const limit = tolerance === null || difference === null ? '' : `: ${difference < 0 ? '−' : ''}${figure(Math.abs(difference), tolerance)} against ${figure(tolerance, tolerance)}${unit === null ? '' : ` ${unitInWords(unit)}`}`;
+  switch (severity) {
+    case 'fault':
+      return `Outside what the uncertainties allow, and large enough to matter${limit}.`;
+    case 'doubt':
+      return `Outside what the uncertainties allow, yet too small to matter${limit}.`;
+    case 'note':
+      if (known === null) return '';
+      return `The data are too uncertain to decide; an error below ${figure(known)}${unit === null ? '' : ` ${unitInWords(unit)}`} would not show.`;
+  }
+}
+
+function where({ address, cause }: Finding): string {
+  return join(address === null ? '' : sayAddress(address), cause === null ? '' : `It follows from finding ${cause}`);
+}
+
+const SYMBOLS: Readonly<Record<string, string>> = {
+  temperature: 'T',
+  'heat-capacity': 'Cp',
+  entropy: 'S',
+  'enthalpy-increment': 'H − H(Tr)',
+  'gibbs-function': '−[G − H(Tr)]/T',
+  enthalpy: 'H',
+  'gibbs-energy': 'G',
+  'enthalpy-of-formation': 'ΔfH',
+  'gibbs-energy-of-formation': 'ΔfG',
+  'enthalpy-from-zero': 'H(Tr) − H(0)',
+  'transition-temperature': 'the transition temperature',
+  'transition-enthalpy': 'ΔH',
+  'transition-entropy': 'ΔS',
+  pressure: 'p',
+};
+
+/** The quantity as a chemist writes it; an unknown name stands for itself. */
+export function symbol(quantity: string): string {
+  return SYMBOLS[quantity] ?? quantity;
+}
+
+function at({ temperatureK }: Finding): string {
+  return temperatureK === null ? '' : ` at ${kelvin(temperatureK)}`;
+}
+
+function inside({ fromPhase, toPhase }: Finding): string {
+  return fromPhase === null || toPhase !== null ? '' : ` inside ${fromPhase}`;
+}
+
+function by(finding: Finding): string {
+  const size = finding.difference ?? finding.observed;
+  return size === null ? '' : ` by ${amount(Math.abs(size), finding)}`;
+}
+
+function allowed({ tolerance, unit }: Finding): string {
+  return tolerance === null || unit === null ? '' : `, where ± ${figure(tolerance, tolerance)} ${unitInWords(unit)} is allowed`;
+}
+
+function printed({ address, evidence, observed }: Finding): string {
+  const text = evidence.find(
+    ({ source, file, line, column }) =>
+      source === address?.source && file === address.file && line === address.line && column === address.column,
+  )?.printed;
+  if (text === undefined || (observed !== null && Number(text) === observed)) return '';
+  return ` (printed ${text})`;
+}
+
+function amount(value: number | null, { unit, tolerance }: Finding): string {
+  if (value === null) return 'unknown';
+  return `${figure(value, tolerance)}${unit === null ? '' : ` ${unitInWords(unit)}`}`;
+}
+
+function expectation({ expected, tolerance, unit }: Finding, otherwise: number | null = null): string {
+  const value = expected ?? otherwise;
+  if (value === null) return 'something else';
+  const text = tolerance === null ? figure(value) : plusMinus(value, tolerance);
+  return `${text}${unit === null ? '' : ` ${unitInWords(unit)}`}`;
+}
+
+function kelvin(temperatureK: number | null): string {
+  return temperatureK === null ? 'an unknown temperature' : `${figure(Math.round(temperatureK * 1000) / 1000)} K`;
+}
+
+function quote(text: string): string {
+  return /^[\w.+-]+$/.test(text) && !/^\d/.test(text) ? text : `“${text}”`;
+}
+
+function capital(text: string): string {
+  return text.startsWith('∫') || text.startsWith('Δ') ? text : text.charAt(0).toUpperCase() + text.slice(1);
+}
+
+/** Sentences one after another, each with its full stop. */
+function join(...sentences: readonly string[]): string {
+  return sentences
+    .filter((sentence) => sentence !== '')
+    .map((sentence) => (/[.?!]$/.test(sentence) ? sentence : `${sentence}.`))
+    .join(' ');
+}

@@ -1,0 +1,152 @@
+/** The commands and their options, as data: the parser and the help read the same table. */
+export interface OptionPage {
+  readonly name: string;
+  /** What stands after it in the help; null for a switch. */
+  readonly value: string | null;
+  /** May be given several times, or be followed by several words. */
+  readonly many?: boolean;
+  readonly means: string;
+}
+
+export interface CommandPage {
+  readonly name: CommandName;
+  /** One line for the overview. */
+  readonly does: string;
+  /** The word that follows the command; null where it takes none. */
+  readonly operand: { readonly name: string; readonly required: boolean; readonly means: string } | null;
+  readonly options: readonly OptionPage[];
+  /** Paragraphs that teach. */
+  readonly teaches: readonly string[];
+  readonly examples: readonly { readonly line: string; readonly does: string }[];
+}
+
+export type CommandName = 'nightly' | 'check' | 'show' | 'rules' | 'verify';
+
+const sources: OptionPage = { name: 'sources', value: 'DIR', means: 'where the raw tables are (default ./sources)' };
+const out: OptionPage = { name: 'out', value: 'DIR', means: 'where releases are kept (default ./out)' };
+const policy: OptionPage = {
+  name: 'policy',
+  value: 'FILE',
+  means: 'tolerances, grid, pressure … (default policy.json in the sources, else built in)',
+};
+const date: OptionPage = {
+  name: 'date',
+  value: 'YYYY-MM-DD',
+  means: 'the release date, on which acceptances are judged (default today)',
+};
+const strict: OptionPage = { name: 'strict', value: null, means: 'end with status 3 when any substance is withheld' };
+const jobs: OptionPage = {
+  name: 'jobs',
+  value: 'N',
+  means: 'how many workers at most (default the cores); the result is the same on any number',
+};
+const only: OptionPage = {
+  name: 'only',
+  value: 'SUBSTANCE…',
+  many: true,
+  means: 'these substances and no others, by id',
+};
+const log: OptionPage = {
+  name: 'log',
+  value: 'text|json',
+  means: 'json: one JSON object a line on standard output, for programs',
+};
+
+export const COMMANDS: readonly CommandPage[] = [
+  {
+    name: 'nightly',
+    does: 'read every table, check it, and publish a release',
+    operand: null,
+    options: [
+      sources,
+      out,
+      policy,
+      date,
+      strict,
+      {
+        name: 'accept-losses',
+        value: null,
+        means: 'publish although more than the allowed share of what was cleared becomes withheld',
+      },
+      jobs,
+      only,
+      log,
+    ],
+    teaches: [
+      'Reads substances.csv and every source folder, makes one heat-capacity curve a phase, checks the tables, curves and transitions, and leaves a release in OUT/releases with OUT/current moved to it at the very end: a reader never sees half a release.',
+      'A substance with a fault is withheld: its values stay out of the release, and the summary names the cell to look at first. The other substances are published all the same.',
+      'Status: 0 published; 1 nothing could be published, the old release stands; 2 used wrongly; 3 with --strict, something is withheld; 4 too much of what was cleared would be lost, the old release stands and the new one is kept beside it.',
+    ],
+    examples: [
+      { line: 'cuspline nightly', does: 'the whole library, ./sources to ./out' },
+      {
+        line: 'cuspline nightly --sources lab --out /srv/data --strict --log json',
+        does: 'from a scheduler that reads JSON',
+      },
+      { line: 'cuspline nightly --only lead tin --out /tmp/try', does: 'two substances, beside the real releases' },
+    ],
+  },
+  {
+    name: 'check',
+    does: 'do all that nightly does but publish; print what was found',
+    operand: null,
+    options: [sources, policy, date, strict, jobs, only, log],
+    teaches: [
+      'Nothing is written. Each finding is printed with the cell it starts from, what was expected there, and what to do next; findings that follow from another one stand under it.',
+      'The unit and the factor to SI of every declared column are shown first, so that a wrong unit is seen before it does harm.',
+      'Status: 0 checked; 1 nothing could be read; 2 used wrongly; 3 with --strict, something would be withheld.',
+    ],
+    examples: [
+      { line: 'cuspline check', does: 'everything in ./sources' },
+      { line: 'cuspline check --only lead', does: 'while the table of one substance is being typed in' },
+    ],
+  },
+  {
+    name: 'show',
+    does: 'show one substance: phases, transitions, findings, a sketch of G against T',
+    operand: { name: 'SUBSTANCE', required: true, means: 'its id, as in substances.csv' },
+    options: [
+      {
+        name: 'pressure',
+        value: 'VALUE',
+        means: 'pressure of the diagram: 101325 (Pa), "1 atm", "50 kPa" … (default the policy’s)',
+      },
+      sources,
+      policy,
+      date,
+      log,
+    ],
+    teaches: [
+      'The sketch draws, for each phase, how far its Gibbs energy lies above the lowest one: a phase is stable where its letter runs along the bottom, and a transition is where one letter lands there and another leaves.',
+    ],
+    examples: [
+      { line: 'cuspline show lead', does: 'at the policy’s pressure' },
+      { line: 'cuspline show water --pressure "1 atm"', does: 'at another pressure' },
+    ],
+  },
+  {
+    name: 'rules',
+    does: 'list the rules, or explain one',
+    operand: { name: 'RULE', required: false, means: 'the name of a rule' },
+    options: [policy, log],
+    teaches: ['With a name: its formula, its tolerance, what its three outcomes mean, and what would make it testable.'],
+    examples: [
+      { line: 'cuspline rules', does: 'every rule in one line' },
+      { line: 'cuspline rules gibbs-continuous', does: 'one rule in full' },
+    ],
+  },
+  {
+    name: 'verify',
+    does: 'check that a release is whole and unchanged',
+    operand: { name: 'RELEASE', required: true, means: 'the folder of a release, its id, or "current"' },
+    options: [out, log],
+    teaches: [
+      'Compares the size and SHA-256 of every file with contents.json, and reports missing, changed and unexpected files.',
+      'Status: 0 whole; 1 something differs; 2 used wrongly.',
+    ],
+    examples: [
+      { line: 'cuspline verify current', does: 'what readers see now' },
+      { line: 'cuspline verify out/releases/3f0c2a91d4e7', does: 'one release by its folder' },
+    ],
+  },
+];
