@@ -16,7 +16,10 @@ export function plusMinus(value: number, uncertainty: number): string {
 
 /** The way a unit is written in a sentence: `J/(mol.K)` becomes `J/(mol K)`. */
 export function unitInWords(unit: string): string {
-  return unit.replaceAll('.', ' ').replace(/^cal_th\b/, 'cal(th)').replace(/^Cel$/, '°C');
+  return unit
+    .replaceAll('.', ' ')
+    .replace(/^cal_th\b/, 'cal(th)')
+    .replace(/^Cel$/, '°C');
 }
 
 /** Decimals that show two significant digits of `uncertainty`; never more than 12, and never a rounding of whole digits. */

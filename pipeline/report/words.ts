@@ -186,7 +186,10 @@ function transition(finding: Finding, detail: Detail<'transition'>): string {
 function gravity({ severity, detail, tolerance, unit, difference }: Finding): string {
   if (detail.code === 'reading' || detail.code === 'rows-disagree' || detail.code === 'impossible') return '';
   const known = detail.code === 'transition' ? detail.smallestDetectable : null;
-  const limit = tolerance === null || difference === null ? '' : `: ${difference < 0 ? '−' : ''}${figure(Math.abs(difference), tolerance)} against ${figure(tolerance, tolerance)}${unit === null ? '' : ` ${unitInWords(unit)}`}`;
+  const limit =
+    tolerance === null || difference === null
+      ? ''
+      : `: ${difference < 0 ? '−' : ''}${figure(Math.abs(difference), tolerance)} against ${figure(tolerance, tolerance)}${unit === null ? '' : ` ${unitInWords(unit)}`}`;
   switch (severity) {
     case 'fault':
       return `Outside what the uncertainties allow, and large enough to matter${limit}.`;
@@ -238,7 +241,9 @@ function by(finding: Finding): string {
 }
 
 function allowed({ tolerance, unit }: Finding): string {
-  return tolerance === null || unit === null ? '' : `, where ± ${figure(tolerance, tolerance)} ${unitInWords(unit)} is allowed`;
+  return tolerance === null || unit === null
+    ? ''
+    : `, where ± ${figure(tolerance, tolerance)} ${unitInWords(unit)} is allowed`;
 }
 
 function printed({ address, evidence, observed }: Finding): string {

@@ -70,7 +70,10 @@ function readOptions(page: CommandPage, words: readonly string[]): Partial<Reque
     allowPositionals: true,
     tokens: true,
     options: Object.fromEntries(
-      page.options.map(({ name, value }) => [name, { type: value === null ? ('boolean' as const) : ('string' as const) }]),
+      page.options.map(({ name, value }) => [
+        name,
+        { type: value === null ? ('boolean' as const) : ('string' as const) },
+      ]),
     ),
   });
   const asked: Partial<Record<keyof Request, unknown>> = {};
@@ -140,7 +143,10 @@ function readOperand(page: CommandPage, loose: readonly string[]): string | null
   if (page.operand === null) {
     if (first === undefined) return null;
     const meant = page.options.some(({ name }) => name === 'only') ? ` Did you mean --only ${loose.join(' ')}?` : '';
-    throw usage(`"${page.name}" does not know what to do with "${first}".${meant}`, `See cuspline ${page.name} --help.`);
+    throw usage(
+      `"${page.name}" does not know what to do with "${first}".${meant}`,
+      `See cuspline ${page.name} --help.`,
+    );
   }
   if (second !== undefined) {
     throw usage(`"${page.name}" takes one ${page.operand.name}, and "${second}" is a second.`, 'Name one at a time.');

@@ -103,7 +103,7 @@ export const COMMANDS: readonly CommandPage[] = [
   },
   {
     name: 'show',
-    does: 'show one substance: phases, transitions, findings, a sketch of G against T',
+    does: 'one substance: phases, transitions, findings, a G–T sketch',
     operand: { name: 'SUBSTANCE', required: true, means: 'its id, as in substances.csv' },
     options: [
       {
@@ -129,7 +129,9 @@ export const COMMANDS: readonly CommandPage[] = [
     does: 'list the rules, or explain one',
     operand: { name: 'RULE', required: false, means: 'the name of a rule' },
     options: [policy, log],
-    teaches: ['With a name: its formula, its tolerance, what its three outcomes mean, and what would make it testable.'],
+    teaches: [
+      'With a name: its formula, its tolerance, what its three outcomes mean, and what would make it testable.',
+    ],
     examples: [
       { line: 'cuspline rules', does: 'every rule in one line' },
       { line: 'cuspline rules gibbs-continuous', does: 'one rule in full' },

@@ -10,8 +10,10 @@ export function helpFor(command: CommandName | null): string[] {
 
 function overview(): string[] {
   return [
-    'cuspline turns raw tables of pure substances (heat capacity, entropy, enthalpy,',
-    'transitions) into checked, consistent property data, or says what is wrong where.',
+    ...wrap(
+      'cuspline turns raw tables of pure substances (heat capacity, entropy, enthalpy, transitions) into checked, consistent property data, or says what is wrong where.',
+      WIDTH,
+    ),
     '',
     'Usage: cuspline COMMAND [options]',
     '',

@@ -32,7 +32,8 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
     formula: 'every declared cell is one number of a strict grammar, in a unit that is known and fits the quantity',
     tolerance: () => 'None.',
     agrees: 'Every declared cell of the table was read.',
-    disagrees: 'A cell, a row, a column, a file or a descriptor could not be read; the substances it touches are withheld.',
+    disagrees:
+      'A cell, a row, a column, a file or a descriptor could not be read; the substances it touches are withheld.',
     untestable: 'There is no table to read.',
     wants: 'A table, and a descriptor that names each of its columns.',
   },
@@ -117,7 +118,8 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
     agrees: 'The gap lies within its uncertainty.',
     disagrees: 'The gap lies outside it; the suspects say which datum closes it best.',
     untestable: 'One phase has no curve with H and S on the other one’s zeros.',
-    wants: 'H and S of both phases on one zero: a formation enthalpy and an entropy of each, or ΔH and ΔS of a transition between them.',
+    wants:
+      'H and S of both phases on one zero: a formation enthalpy and an entropy of each, or ΔH and ΔS of a transition between them.',
   },
   'crossing-agrees': {
     group: 'transitions',
@@ -134,8 +136,7 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
     group: 'transitions',
     holds: 'the stated ΔH is T times the stated ΔS',
     formula: 'ΔH = Tt ΔS',
-    tolerance: (policy) =>
-      `${significance(policy)} Material: ${policy.material.transitionTemperatureK} K times |ΔS|.`,
+    tolerance: (policy) => `${significance(policy)} Material: ${policy.material.transitionTemperatureK} K times |ΔS|.`,
     agrees: 'The three stated numbers belong together.',
     disagrees: 'One of ΔH, ΔS and Tt is wrong.',
     untestable: 'ΔH or ΔS is not stated.',
@@ -174,7 +175,8 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
   'lowest-curve-is-the-stated-phase': {
     group: 'transitions',
     holds: 'the phase of lowest G is the one that the transitions say',
-    formula: 'argmin over phases of G(T, p) = the stated phase, where the gap exceeds its uncertainty; no crossing without a stated transition',
+    formula:
+      'argmin over phases of G(T, p) = the stated phase, where the gap exceeds its uncertainty; no crossing without a stated transition',
     tolerance: (policy) => significance(policy),
     agrees: 'The diagram of the curves is the stated one, over the whole range of the data.',
     disagrees: 'Another phase is lowest, or the curves cross where no transition is stated.',

@@ -54,8 +54,6 @@ function page(rule: RuleName, policy: Policy): string[] {
   return [
     ...wrap(`${rule} (${group}): ${holds}`, WIDTH),
     '',
-    ...table(
-      parts.flatMap(([name, text]) => wrap(text, WIDTH - 14).map((line, i) => [i === 0 ? name : '', line])),
-    ),
+    ...table(parts.flatMap(([name, text]) => wrap(text, WIDTH - 14).map((line, i) => [i === 0 ? name : '', line]))),
   ];
 }
