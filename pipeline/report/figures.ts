@@ -5,7 +5,7 @@
 export function figure(value: number, uncertainty: number | null = null): string {
   if (!Number.isFinite(value)) return Number.isNaN(value) ? 'not a number' : value > 0 ? '∞' : '−∞';
   const text = uncertainty !== null && uncertainty > 0 ? toPlace(value, lastPlace(uncertainty)) : significant(value);
-  return text.replace('-', '−');
+  return text.replaceAll('-', '−');
 }
 
 /** `889.11 ± 0.012`: the value to the same place as its uncertainty. */

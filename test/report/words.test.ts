@@ -1,0 +1,336 @@
+import { describe, expect, it } from 'vitest';
+import { figure, plusMinus, unitInWords } from '../../pipeline/report/figures.js';
+import { sayAddress, sayFinding, sayPlace, saySuspect } from '../../pipeline/report/words.js';
+import type { FindingDetail, ReadingProblem, Suspect } from '../../schemas/finding.js';
+import { makeFinding, type PartialFinding } from '../../schemas/make-finding.js';
+
+const address = { source: 'mill-lab', file: 'points.csv', line: 412, column: 'S' };
+
+function say(partial: Partial<PartialFinding> & { detail: FindingDetail }): string {
+  return sayFinding(
+    makeFinding({ rule: 'entropy-follows-heat-capacity', severity: 'fault', substance: 'lead', address, ...partial }),
+  );
+}
+
+const interval = { code: 'interval', quantity: 'entropy', lowK: 1800, highK: 1900, named: true } as const;
+const transition = { code: 'transition', statedK: 600.6, computedK: 622.31, smallestDetectable: null } as const;
+const melting = { fromPhase: 'cr', toPhase: 'l', rule: 'gibbs-continuous', unit: 'J/mol' } as const;
+
+/** One finding of each kind, and words that its sentence must hold: found, expected, where, what next. */
+const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly RegExp[]])[] = [
+  [
+    'reading',
+    {
+      rule: 'row-readable',
+      detail: { code: 'reading', problem: 'cell-not-a-number', read: '12,4O', wanted: 'a number', remedy: 'Mend it' },
+    },
+    [/^“12,4O” is not a number; expected was a number\. Mend it\./, /mill-lab\/points\.csv line 412, column S\.$/],
+  ],
+  [
+    'rows-disagree',
+    {
+      rule: 'rows-distinct',
+      temperatureK: 300,
+      detail: { code: 'rows-disagree', otherLine: 17, quantity: 'heat-capacity', first: '24.5', second: '26.4' },
+    },
+    [/Two rows at 300 K disagree: Cp is 24\.5 here and 26\.4 on line 17/, /by a correction/, /line 412/],
+  ],
+  [
+    'temperatures-fall',
+    { rule: 'rows-distinct', temperatureK: 310, detail: { code: 'temperatures-fall', previousK: 400 } },
+    [/from 400 K to 310 K where it should rise/, /wrong digit/],
+  ],
+  [
+    'impossible',
+    {
+      rule: 'value-possible',
+      temperatureK: 300,
+      detail: { code: 'impossible', quantity: 'heat-capacity', read: '-24.5', wanted: 'Cp > 0' },
+    },
+    [/^Cp is -24\.5 at 300 K, which cannot be; expected was Cp > 0\./],
+  ],
+  [
+    'interval',
+    { detail: interval, observed: 3.2, expected: 2.198, difference: 1.002, tolerance: 0.01, unit: 'J/(mol.K)' },
+    [
+      /^From 1800 K to 1900 K S rises by 3\.200 J\/\(mol K\); ∫\(Cp\/T\) dT of the printed heat capacities gives 2\.198 ± 0\.010 J\/\(mol K\)\./,
+      /see the suspects/,
+      /and large enough to matter: 1\.002 against 0\.010 J\/\(mol K\)\.$/,
+    ],
+  ],
+  [
+    'interval of a row that does not close',
+    {
+      rule: 'functions-close',
+      detail: { ...interval, lowK: 1900, named: false },
+      observed: 40,
+      expected: 41,
+      difference: -1,
+      tolerance: 0.02,
+      unit: 'J/(mol.K)',
+    },
+    [
+      /^S at 1900 K is 40\.000 J\/\(mol K\); the row’s other functions put it at 41\.000 ± 0\.020/,
+      /No single cell/,
+      /−1\.000/,
+    ],
+  ],
+  [
+    'cell',
+    {
+      detail: { code: 'cell', quantity: 'entropy', proposed: 889.11, uProposed: 0.01, explanation: 'one digit wrong' },
+      temperatureK: 1900,
+      observed: 888.108,
+      unit: 'J/(mol.K)',
+      evidence: [{ ...address, printed: '212.263' }],
+    },
+    [
+      /^S at 1900 K is 888\.108 J\/\(mol K\) \(printed 212\.263\); the heat capacity and the neighbouring rows put it at 889\.110 ± 0\.010\. One digit wrong\?/,
+    ],
+  ],
+  [
+    'anomaly',
+    {
+      rule: 'heat-capacity-smooth',
+      severity: 'note',
+      detail: { code: 'anomaly', quantity: 'heat-capacity', lowK: 500, highK: 600 },
+      difference: -2.5,
+      unit: 'J/(mol.K)',
+    },
+    [/^Cp between 500 K and 600 K stands off its neighbours by 2\.5 J\/\(mol K\)/, /a step or an anomaly/],
+  ],
+  [
+    'transition gap',
+    { ...melting, detail: { ...transition, what: 'gap' }, observed: 812.4, difference: 812.4, tolerance: 12 },
+    [
+      /stated cr → l temperature of 600\.6 K.*differ by 812 J\/mol; expected was 0 ± 12 J\/mol, and the two curves cross at 622\.31 K/,
+    ],
+  ],
+  [
+    'transition crossing',
+    {
+      ...melting,
+      rule: 'crossing-agrees',
+      unit: 'K',
+      detail: { ...transition, what: 'crossing' },
+      observed: 600.6,
+      expected: 622.31,
+      difference: -21.71,
+      tolerance: 0.4,
+    },
+    [/The cr → l transition is stated at 600\.6 K; the two curves cross at 622\.31 K, where ± 0\.40 K is allowed/],
+  ],
+  [
+    'transition that nothing crosses',
+    { ...melting, rule: 'crossing-agrees', detail: { ...transition, what: 'not-crossed', computedK: null } },
+    [/of cr and l cross nowhere in the range of the data/],
+  ],
+  [
+    'transition closure',
+    {
+      ...melting,
+      rule: 'transition-entropy-closes',
+      detail: { ...transition, what: 'closure' },
+      observed: 4770,
+      expected: 4810,
+    },
+    [/ΔH is 4770 J\/mol; T ΔS gives 4810 J\/mol/],
+  ],
+  [
+    'transition jump',
+    {
+      ...melting,
+      rule: 'stated-transition-jumps',
+      detail: { ...transition, what: 'jump' },
+      observed: 0,
+      expected: 7.95,
+    },
+    [/stated as a first-order transition, and the tables show a jump of 0 J\/mol; expected was 7\.95 J\/mol/],
+  ],
+  [
+    'transition that jumps though continuous',
+    { ...melting, rule: 'stated-transition-jumps', detail: { ...transition, what: 'no-jump' }, observed: 300 },
+    [/without latent heat, and the tables jump by 300 J\/mol; expected was 0 J\/mol/, /state the order "first"/],
+  ],
+  [
+    'transition that falls',
+    { ...melting, rule: 'heating-raises-entropy', detail: { ...transition, what: 'falls' }, observed: -4770 },
+    [/should raise enthalpy and entropy, and the change is −4770 J\/mol/, /lost sign/],
+  ],
+  [
+    'phase-order',
+    {
+      rule: 'lowest-curve-is-the-stated-phase',
+      detail: { code: 'phase-order', lower: 'l', stated: 'cr', lowK: 400, highK: 500 },
+      difference: 250,
+      unit: 'J/mol',
+    },
+    [
+      /Between 400 K and 500 K l has the lowest Gibbs energy by 250 J\/mol, where the transitions say that cr is stable/,
+    ],
+  ],
+  [
+    'entropy-order',
+    {
+      rule: 'entropy-rises',
+      temperatureK: 600,
+      detail: { code: 'entropy-order', above: 'l', below: 'cr' },
+      observed: 80,
+      expected: 84,
+      unit: 'J/(mol.K)',
+    },
+    [/S of l is 80 J\/\(mol K\) at 600 K, below S of cr at 84 J\/\(mol K\)/],
+  ],
+  [
+    'unstated-jump',
+    {
+      rule: 'slope-jumps-only-at-transitions',
+      temperatureK: 420,
+      fromPhase: 'cr',
+      detail: { code: 'unstated-jump', quantity: 'entropy' },
+      observed: 3.1,
+      unit: 'J/(mol.K)',
+    },
+    [/^S jumps by 3\.1 J\/\(mol K\) at 420 K inside cr, and no transition is stated there\./],
+  ],
+];
+
+describe('the words of a finding', () => {
+  it.each(SENTENCES)(
+    'of kind %s say what was found, what was expected, where and what to do',
+    (_kind, partial, wanted) => {
+      const sentence = say(partial);
+      for (const pattern of wanted) expect(sentence).toMatch(pattern);
+      expect(sentence).toContain('mill-lab/points.csv line 412, column S.');
+      expect(sentence).not.toMatch(/undefined|null|NaN|\.\.|\s\s|\n/);
+    },
+  );
+
+  it('cover every code of the union', () => {
+    const codes: Record<FindingDetail['code'], true> = {
+      reading: true,
+      'rows-disagree': true,
+      'temperatures-fall': true,
+      impossible: true,
+      interval: true,
+      cell: true,
+      anomaly: true,
+      transition: true,
+      'phase-order': true,
+      'entropy-order': true,
+      'unstated-jump': true,
+    };
+    expect(new Set(SENTENCES.map(([, { detail }]) => detail.code))).toEqual(new Set(Object.keys(codes)));
+  });
+
+  it('are different for every reading problem and hold what was read, wanted and advised', () => {
+    const problems: Record<ReadingProblem, true> = {
+      'cell-not-a-number': true,
+      'cell-not-finite': true,
+      'row-too-short': true,
+      'row-too-long': true,
+      'column-missing': true,
+      'column-unknown': true,
+      'unit-unknown': true,
+      'unit-unfit': true,
+      'name-unmapped': true,
+      'phase-unmapped': true,
+      'substance-unknown': true,
+      'file-missing': true,
+      'file-unreadable': true,
+      'encoding-converted': true,
+      'descriptor-unreadable': true,
+      'descriptor-invalid': true,
+      'correction-out-of-date': true,
+      'required-missing': true,
+      'kind-not-yet-read': true,
+      'key-without-row': true,
+      'molar-mass-unknown': true,
+      'acceptance-lapsed': true,
+    };
+    const sentences = Object.keys(problems).map((problem) =>
+      say({
+        detail: { code: 'reading', problem: problem as ReadingProblem, read: 'x y', wanted: 'z', remedy: 'Do it.' },
+      }),
+    );
+    for (const sentence of sentences) expect(sentence).toMatch(/“x y”.*; expected was z\. Do it\. mill-lab/);
+    expect(new Set(sentences).size).toBe(sentences.length);
+  });
+
+  it('say that a doubt is too small to matter and a note undecided', () => {
+    const detail = { ...transition, what: 'gap', smallestDetectable: 900 } as const;
+    const numbers = { ...melting, detail, observed: 40, difference: 40, tolerance: 12 };
+    expect(say({ ...numbers, severity: 'doubt' })).toContain('yet too small to matter: 40 against 12 J/mol.');
+    expect(say({ ...numbers, severity: 'note' })).toContain('an error below 900 J/mol would not show.');
+  });
+
+  it('name the finding that one follows from, and say what is accepted', () => {
+    const finding = makeFinding({ ...melting, severity: 'fault', detail: { ...transition, what: 'gap' }, address });
+    const sentence = sayFinding({ ...finding, cause: '0123456789abcdef', accepted: true });
+    expect(sentence).toContain('It follows from finding 0123456789abcdef.');
+    expect(sentence).toMatch(/Accepted by a curator\.$/);
+  });
+});
+
+describe('places and suspects', () => {
+  it('name source, file, line and column, and leave out what is not known', () => {
+    expect(sayAddress(address)).toBe('mill-lab/points.csv line 412, column S');
+    expect(sayPlace(address)).toBe('mill-lab/points.csv:412 S');
+    expect(sayAddress({ source: 'mill-lab', file: 'source.json', line: 0, column: '' })).toBe('mill-lab/source.json');
+    expect(sayAddress({ source: 'mill-lab', file: '', line: 0, column: '' })).toBe('mill-lab');
+  });
+
+  it('say what the cell says and what it should probably say, in its own unit', () => {
+    const suspect: Suspect = {
+      finding: '0123456789abcdef',
+      substance: 'lead',
+      place: 1,
+      group: 1,
+      address,
+      printed: '212.263',
+      observed: 888.108,
+      normalisedResidual: 40,
+      redundancy: 0.8,
+      proposed: 889.11,
+      uProposed: 0.01,
+      proposedPrinted: '212.503',
+      smallestDetectable: 0.1,
+      explanation: 'one digit wrong',
+    };
+    expect(saySuspect(suspect)).toBe('mill-lab/points.csv:412 S says 212.263, probably 212.503 (one digit wrong)');
+    expect(saySuspect({ ...suspect, explanation: null })).toMatch(/probably 212\.503$/);
+  });
+});
+
+describe('figures', () => {
+  it('have the decimals that the uncertainty bears', () => {
+    expect(figure(889.1096, 0.012)).toBe('889.110');
+    expect(figure(-21.707, 0.4)).toBe('−21.71');
+    expect(figure(81234.5, 120)).toBe('81235');
+    expect(plusMinus(889.1096, 0.012)).toBe('889.110 ± 0.012');
+  });
+
+  it('have six significant digits where none is known', () => {
+    expect(figure(0.1094321987)).toBe('0.109432');
+    expect(figure(600)).toBe('600');
+    expect(figure(-0)).toBe('0');
+    expect(figure(1e-7)).toBe('1e−7');
+  });
+
+  it('name what is no number', () => {
+    expect([Number.NaN, Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY].map((value) => figure(value))).toEqual([
+      'not a number',
+      '∞',
+      '−∞',
+    ]);
+  });
+
+  it('write units as in a sentence', () => {
+    expect(['J/(mol.K)', 'Cel', 'kJ/mol', 'cal_th/(mol.K)'].map(unitInWords)).toEqual([
+      'J/(mol K)',
+      '°C',
+      'kJ/mol',
+      'cal(th)/(mol K)',
+    ]);
+  });
+});
