@@ -128,7 +128,9 @@ export type FindingDetail =
       readonly highK: number;
     }
   | { readonly code: 'entropy-order'; readonly above: string; readonly below: string }
-  | { readonly code: 'unstated-jump'; readonly quantity: string };
+  | { readonly code: 'unstated-jump'; readonly quantity: string }
+  /** The program broke down on this substance; nothing about it is known. */
+  | { readonly code: 'calculation-failed'; readonly message: string };
 
 /** One rule at one place. */
 export interface Outcome {

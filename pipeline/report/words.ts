@@ -79,6 +79,11 @@ function told(finding: Finding): string {
         `${symbol(detail.quantity)} jumps${by(finding)}${at(finding)}${inside(finding)}, and no transition is stated there. ` +
         'State the transition, or compare the rows on both sides with the original.'
       );
+    case 'calculation-failed':
+      return (
+        `The calculation broke down (${detail.message}), so nothing about this substance was checked. ` +
+        'This is a fault of the program, not of the tables: please report it with them'
+      );
   }
 }
 
@@ -184,7 +189,13 @@ function transition(finding: Finding, detail: Detail<'transition'>): string {
 
 /** Significance and materiality, where the finding was judged by both. */
 function gravity({ severity, detail, tolerance, unit, difference }: Finding): string {
-  if (detail.code === 'reading' || detail.code === 'rows-disagree' || detail.code === 'impossible') return '';
+  if (
+    detail.code === 'reading' ||
+    detail.code === 'calculation-failed' ||
+    detail.code === 'rows-disagree' ||
+    detail.code === 'impossible'
+  )
+    return '';
   const known = detail.code === 'transition' ? detail.smallestDetectable : null;
   const limit =
     tolerance === null || difference === null

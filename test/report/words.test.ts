@@ -193,6 +193,11 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     },
     [/^S jumps by 3\.1 J\/\(mol K\) at 420 K inside cr, and no transition is stated there\./],
   ],
+  [
+    'calculation-failed',
+    { rule: 'row-readable', detail: { code: 'calculation-failed', message: 'matrix is singular' } },
+    [/^The calculation broke down \(matrix is singular\)/, /a fault of the program/],
+  ],
 ];
 
 describe('the words of a finding', () => {
@@ -219,6 +224,7 @@ describe('the words of a finding', () => {
       'phase-order': true,
       'entropy-order': true,
       'unstated-jump': true,
+      'calculation-failed': true,
     };
     expect(new Set(SENTENCES.map(([, { detail }]) => detail.code))).toEqual(new Set(Object.keys(codes)));
   });
