@@ -16,19 +16,14 @@ export interface ScaledTemperature {
  * it may differ by is `possibleDifferenceK`), and outside the range in which the difference is published.
  */
 export function toIts90(temperatureK: number, scale: TemperatureScaleName): ScaledTemperature {
-  const difference = scale === 'IPTS-68' ? t90MinusT68 : scale === 'IPTS-48' ? t90MinusT48 : null;
+  const difference = scale === 'IPTS-68' ? from68 : scale === 'IPTS-48' ? from48 : null;
   if (difference === null) return { temperatureK, slope: 1, converted: true };
   const oldCelsius = temperatureK - ICE_POINT_K;
-  let t90 = oldCelsius;
-  let shift = 0;
+  let there = difference(oldCelsius);
   // The differences are published as functions of t90; they vary by less than 0.7 % of a kelvin per kelvin.
-  for (let pass = 0; pass < 4; pass++) {
-    const next = difference(t90);
-    if (next === null) return { temperatureK, slope: 1, converted: false };
-    shift = next;
-    t90 = oldCelsius + shift;
-  }
-  return { temperatureK: temperatureK + shift, slope: slopeAt(difference, t90), converted: true };
+  for (let pass = 0; pass < 4 && there !== null; pass++) there = difference(oldCelsius + there.shift);
+  if (there === null) return { temperatureK, slope: 1, converted: false };
+  return { temperatureK: temperatureK + there.shift, slope: 1 - there.rate, converted: true };
 }
 
 /**
@@ -51,29 +46,44 @@ export function possibleDifferenceK(temperatureK: number, scale: TemperatureScal
   }
 }
 
-const A = [-0.148759, -0.267408, 1.08076, 1.269056, -4.089591, -1.871251, 7.438081, -3.536296] as const;
+/** a0...a8 of a power series in t/630; a0 is 0. */
+const A = [0, -0.148759, -0.267408, 1.08076, 1.269056, -4.089591, -1.871251, 7.438081, -3.536296] as const;
+/** b0...b5 of a power series in t. */
 const B = [78.687209, -0.47135991, 1.0954715e-3, -1.2357884e-6, 6.7736583e-10, -1.4458081e-13] as const;
 const GOLD_POINT_CELSIUS = 1064.18;
 
+/** A difference t90 - t_old [K] and its rate of change with t90. */
+interface Difference {
+  readonly shift: number;
+  readonly rate: number;
+}
+
 /**
- * t90 - t68 [K] at t90 [degrees Celsius]; null below -200. To 630.6: Preston-Thomas, Metrologia 27 (1990) 3, eq. (22);
+ * t90 - t68 [K] at t90 [degrees Celsius]; null below -200. To 630.6: Preston-Thomas, Metrologia 27 (1990) 3;
  * to 1064.18: Rusby et al., Metrologia 31 (1994) 149; above: -0.25 (T/1337.33 K)^2, quoted from memory, it meets the
- * polynomial at 1064.18 degrees Celsius to 0.0001 K.
+ * polynomial at 1064.18 degrees Celsius to 0.0002 K.
  */
 export function t90MinusT68(celsius: number): number | null {
+  return from68(celsius)?.shift ?? null;
+}
+
+function from68(celsius: number): Difference | null {
   if (!(celsius >= -200)) return null;
-  if (celsius <= 630.6) {
-    const x = celsius / 630;
-    let sum = 0;
-    for (let i = A.length - 1; i >= 0; i--) sum = (sum + A[i]) * x;
-    return sum;
+  if (celsius > GOLD_POINT_CELSIUS) {
+    const shift = -0.25 * ((celsius + ICE_POINT_K) / 1337.33) ** 2;
+    return { shift, rate: (2 * shift) / (celsius + ICE_POINT_K) };
   }
-  if (celsius <= GOLD_POINT_CELSIUS) {
-    let sum = 0;
-    for (let i = B.length - 1; i >= 0; i--) sum = sum * celsius + B[i];
-    return sum;
+  const low = celsius <= 630.6;
+  const coefficients = low ? A : B;
+  const unit = low ? 630 : 1;
+  const x = celsius / unit;
+  let shift = 0;
+  let rate = 0;
+  for (let i = coefficients.length - 1; i >= 0; i--) {
+    rate = rate * x + shift;
+    shift = shift * x + coefficients[i];
   }
-  return -0.25 * ((celsius + ICE_POINT_K) / 1337.33) ** 2;
+  return { shift, rate: rate / unit };
 }
 
 /** [degrees Celsius, t90 - t48 in K], a published handbook table. */
@@ -102,6 +112,10 @@ const T90_MINUS_T48: readonly (readonly [number, number])[] = [
  * the parabolas through neighbouring rows (Bessel), so that heat capacities get no steps; the rows are met exactly.
  */
 export function t90MinusT48(celsius: number): number | null {
+  return from48(celsius)?.shift ?? null;
+}
+
+function from48(celsius: number): Difference | null {
   const table = T90_MINUS_T48;
   const last = table.length - 1;
   if (!(celsius >= table[0][0] && celsius <= table[last][0])) return null;
@@ -112,7 +126,12 @@ export function t90MinusT48(celsius: number): number | null {
   const left = tableSlope(i) * h;
   const right = tableSlope(i + 1) * h;
   const rise = table[i + 1][1] - table[i][1];
-  return table[i][1] + x * (left + x * (3 * rise - 2 * left - right + x * (left + right - 2 * rise)));
+  const c2 = 3 * rise - 2 * left - right;
+  const c3 = left + right - 2 * rise;
+  return {
+    shift: table[i][1] + x * (left + x * (c2 + x * c3)),
+    rate: (left + x * (2 * c2 + x * 3 * c3)) / h,
+  };
 }
 
 function tableSlope(i: number): number {
@@ -124,18 +143,6 @@ function tableSlope(i: number): number {
   const after = (d2 - d1) / (t2 - t1);
   const bend = (after - before) / (t2 - t0);
   return before + bend * (2 * T90_MINUS_T48[i][0] - t0 - t1);
-}
-
-/** dt(old)/dt90 = 1 - d(t90 - t_old)/dt90, by differences over 0.1 K, one-sided at the ends of the range. */
-function slopeAt(difference: (celsius: number) => number | null, t90: number): number {
-  const here = difference(t90);
-  const below = difference(t90 - 0.05);
-  const above = difference(t90 + 0.05);
-  const low = below ?? here;
-  const high = above ?? here;
-  if (low === null || high === null) return 1;
-  const width = (below === null ? 0 : 0.05) + (above === null ? 0 : 0.05);
-  return 1 - (high - low) / width;
 }
 
 function bound68(temperatureK: number): number {
@@ -150,4 +157,22 @@ function bound48(temperatureK: number): number {
   if (celsius < 0) return 0.05;
   if (celsius <= 630.5) return 0.15;
   return 1.2 * Math.max(1, temperatureK / 1337.33) ** 2;
+}
+
+const GRID_K = 5;
+const GRID_TOP_K = 2000;
+const grids = new Map<TemperatureScaleName, Float64Array>();
+
+/** The largest of `possibleDifferenceK` between two temperatures [K], looked up every 5 K and at both ends. */
+export function largestPossibleDifferenceK(lowK: number, highK: number, scale: TemperatureScaleName): number {
+  if (scale === 'ITS-90' || scale === 'thermodynamic') return 0;
+  let grid = grids.get(scale);
+  if (grid === undefined) {
+    grid = Float64Array.from({ length: GRID_TOP_K / GRID_K + 1 }, (_, i) => possibleDifferenceK(i * GRID_K, scale));
+    grids.set(scale, grid);
+  }
+  let largest = Math.max(possibleDifferenceK(lowK, scale), possibleDifferenceK(highK, scale));
+  const last = Math.min(Math.floor(highK / GRID_K), grid.length - 1);
+  for (let i = Math.max(Math.ceil(lowK / GRID_K), 0); i <= last; i++) if (grid[i] > largest) largest = grid[i];
+  return largest;
 }
