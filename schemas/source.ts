@@ -63,28 +63,11 @@ const uncertaintyColumn = z.strictObject({
   shared: z.boolean().default(false),
 });
 const wordColumn = z.strictObject({ is: z.enum([...TEXT_QUANTITIES, 'ignored']) });
-const splitColumn = z.strictObject({ is: z.array(z.enum(TEXT_QUANTITIES)).min(2), split: word });
 
-/** One column. The kind is told by `is`, so that a message speaks of the right one. */
-export const columnSchema = z.looseObject({ is: z.unknown() }).transform((column, context) => {
-  const schema = Array.isArray(column.is)
-    ? splitColumn
-    : column.is === 'uncertainty'
-      ? uncertaintyColumn
-      : (TEXT_QUANTITIES as readonly unknown[]).includes(column.is) || column.is === 'ignored'
-        ? wordColumn
-        : numberColumn;
-  const parsed = schema.safeParse(column);
-  if (parsed.success) return parsed.data;
-  for (const issue of parsed.error.issues) context.issues.push({ ...issue, input: column } as never);
-  return z.NEVER;
-});
+/** One column; `is` tells which kind. */
+export const columnSchema = z.discriminatedUnion('is', [numberColumn, uncertaintyColumn, wordColumn]);
 
-export type ColumnDescriptor =
-  | z.infer<typeof numberColumn>
-  | z.infer<typeof uncertaintyColumn>
-  | z.infer<typeof wordColumn>
-  | z.infer<typeof splitColumn>;
+export type ColumnDescriptor = z.infer<typeof columnSchema>;
 
 /** Keys that may stand on the source or on a table; the table's wins. */
 const shared = {
