@@ -107,16 +107,32 @@ function tableCells(
     if (meaning.unit === undefined || meaning.is === 'uncertainty') return [];
     const texts = rows.map(({ row }) => row.cells[index]?.text.trim() ?? '');
     const decimals = Math.max(0, ...texts.map((text) => text.split('.')[1]?.length ?? 0));
-    return rows.flatMap(({ row, substance, place, order, temperatureK }, i) => {
+    const cells: SourceCell[] = [];
+    rows.forEach(({ row, substance, place, order, temperatureK }, i) => {
       const text = texts[i]!;
       const cell = row.cells[index];
-      if (cell === undefined || !/^-?\d+\.?\d*$/.test(text)) return [];
-      const { line } = row;
-      const depth = table.holds === 'thermal-functions' ? depths[i]! : -1;
-      const address = { substance, source, file, line, column: contents.header[index]! };
-      const meaningOf = { quantity: meaning.is, unit: meaning.unit!, holds: table.holds, place, order };
-      return [{ ...address, ...meaningOf, text, value: Number(text), decimals, temperatureK, depth, contents, cell }];
+      if (cell === undefined || !/^-?\d+\.?\d*$/.test(text)) return;
+      cells.push({
+        substance,
+        source,
+        file,
+        line: row.line,
+        column: contents.header[index]!,
+        quantity: meaning.is,
+        unit: meaning.unit!,
+        holds: table.holds,
+        place,
+        order,
+        text,
+        value: Number(text),
+        decimals,
+        temperatureK,
+        depth: table.holds === 'thermal-functions' ? depths[i]! : -1,
+        contents,
+        cell,
+      });
     });
+    return cells;
   });
 }
 
