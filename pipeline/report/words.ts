@@ -31,9 +31,20 @@ export function saySuspect(suspect: Suspect): string {
   return `${sayPlace(suspect.address)} says ${suspect.printed}, probably ${suspect.proposedPrinted}${reason}`;
 }
 
-/** `gap in G` and the like: the subject of a rule in a few words, for headings. */
-export function saySeverity(severity: Finding['severity']): string {
-  return { fault: 'fault, withheld', doubt: 'doubt, published and flagged', note: 'note' }[severity];
+/**
+ * Why a substance is withheld or flagged, in one line: the first suspect cell of its worst finding, or that finding itself.
+ * `findings` are worst first, as reconcile leaves them.
+ */
+export function sayReason(findings: readonly Finding[], suspects: readonly Suspect[]): string {
+  const grave = findings.filter(({ severity, accepted }) => severity !== 'note' && !accepted);
+  const roots = grave.filter(({ cause }) => cause === null);
+  const order = new Map([...roots, ...grave].map(({ id }, i) => [id, i]).reverse() as [string, number][]);
+  const [first] = suspects
+    .filter(({ finding }) => order.has(finding))
+    .sort((a, b) => a.place - b.place || order.get(a.finding)! - order.get(b.finding)!);
+  if (first !== undefined) return saySuspect(first);
+  const worst = roots[0] ?? grave[0] ?? findings[0];
+  return worst === undefined ? 'nothing was found' : sayFinding(worst);
 }
 
 function told(finding: Finding): string {

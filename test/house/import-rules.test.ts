@@ -73,6 +73,7 @@ const ALLOWED: Readonly<Partial<Record<Area, Readonly<Partial<Record<Area, strin
   'pipeline/shell': {
     schemas: 'it reads policies and acceptances at the door',
     'pipeline/core': 'constants for the descriptor report',
+    'pipeline/core/numeric': 'CSV holds the shortest decimals that read back',
     'pipeline/core/units': 'a pressure on the command line has a unit',
     'pipeline/core/physics': 'show draws a diagram at the pressure asked for',
     'pipeline/ingest': 'it runs the stages',
