@@ -2,7 +2,15 @@
  * Closes one medium: from its laws, its transitions and the levels of one phase, the levels of every phase at 298.15 K
  * such that G is equal on both sides of each transition, at that transition's own pressure, before any rounding.
  */
-import { R, REFERENCE_K, STANDARD_PRESSURE_PA, enthalpyChange, entropyChange, heatCapacity, secondVirial } from './laws.js';
+import {
+  enthalpyChange,
+  entropyChange,
+  heatCapacity,
+  R,
+  REFERENCE_K,
+  STANDARD_PRESSURE_PA,
+  secondVirial,
+} from './laws.js';
 
 /**
  * @typedef {object} ClosedPhase

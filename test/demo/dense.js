@@ -1,6 +1,6 @@
 /**
- * Refuses a table whose rows are too far apart: a cubic spline through the clean heat capacities must give the integrals
- * between rows to within a stated share of what the table prints.
+ * Refuses a table whose rows are too far apart: a cubic spline through the clean heat capacities must give the
+ * integrals between rows to within a stated share of what the table prints.
  */
 import { enthalpyChange, entropyChange, heatCapacity } from './laws.js';
 

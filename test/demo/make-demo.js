@@ -1,5 +1,5 @@
 /**
- * Makes the demo: invented media, their clean figures from stated laws, four sources as people keep them, and the slips.
+ * Makes the demo: invented media, their clean figures from stated laws, four sources as people keep them, the slips.
  *
  *   node test/demo/make-demo.js            writes sources/ and test/demo/planted-slips.json
  *   node test/demo/make-demo.js --check    makes it in memory and compares; exit status 1 where anything differs
@@ -56,7 +56,7 @@ function substances() {
   const header =
     'substance,name,formula,molar_mass,class,critical_temperature,critical_pressure,acentric_factor,polar_a,polar_b';
   const rows = MEDIA.map(({ id, name, molarMass, class: kind, critical: c }) =>
-    [id, name, '', molarMass, kind, c?.temperatureK, c?.pressurePa, c?.acentricFactor, '', ''].join(','),
+    [id, name, '', molarMass, kind, c?.temperatureK, c?.pressurePa, c?.acentricFactor, c && 0, c && 0].join(','),
   );
   return `${[header, ...rows.toSorted()].join('\n')}\n`;
 }

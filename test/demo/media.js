@@ -2,7 +2,8 @@
  * The 24 invented media: stated laws, ranges, transitions and levels. Everything else in the demo follows from these.
  *
  * law:    Cp = a + b T + c / T^2 + d T^2 [J/(mol K)]
- * steps:  temperature [K] and entropy [J/(mol K)] of each transition, at `pressurePa` and of the real or ideal gas where a gas is in it
+ * steps:  temperature [K] and entropy [J/(mol K)] of each transition; where a gas is in it, at `pressurePa` and of the
+ *         real or the ideal gas
  * origin: the phase whose formation enthalpy [J/mol] and entropy [J/(mol K)] at 298.15 K are stated; the others follow
  *
  * @typedef {object} Phase
@@ -44,7 +45,9 @@ const boiling = { gas: 'real', pressurePa: ATMOSPHERE_PA };
 function medium(source, id, kind, molarMass, origin, phases, steps, more = {}) {
   const [phase, enthalpy, entropy] = origin;
   const made = {};
-  for (const [label, [law, rangeK, from]] of Object.entries(phases)) made[label] = { law, rangeK, source: from ?? source };
+  for (const [label, [law, rangeK, from]] of Object.entries(phases)) {
+    made[label] = { law, rangeK, source: from ?? source };
+  }
   return {
     id,
     name: id[0].toUpperCase() + id.slice(1),

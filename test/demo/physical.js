@@ -1,11 +1,11 @@
 /**
  * Refuses a medium that is not sensible over its whole tabulated range and a tenth beyond it, metastable branches
  * included: Cp > 0, the gas has the least Cp, S(crystal) < S(liquid) < S(gas), each pair of neighbouring phases crosses
- * once and where stated, and nowhere is a phase lowest in G but the stated one, gas imperfection included where critical
- * constants are given.
+ * once and where stated, and nowhere is a phase lowest in G but the stated one, gas imperfection included where
+ * critical constants are given.
  */
 import { gibbsAt } from './close.js';
-import { ATMOSPHERE_PA, STANDARD_PRESSURE_PA, heatCapacity } from './laws.js';
+import { ATMOSPHERE_PA, heatCapacity, STANDARD_PRESSURE_PA } from './laws.js';
 
 const REACH = 0.1;
 const STEP_K = 1;
@@ -28,7 +28,8 @@ export function assertPhysical(medium, closed) {
         if (T < above.from || T > above.to) continue;
         if (!(above.S(T) > below.S(T))) fail(`S(${label}) is not above S(${order[i]}) at ${T} K`);
         const tabulated = isTabulated(medium, label, T) && isTabulated(medium, order[i], T);
-        if (label === 'g' && tabulated && !(above.Cp(T) < below.Cp(T))) fail(`Cp of the gas is not below that of ${order[i]} at ${T} K`);
+        if (label === 'g' && tabulated && !(above.Cp(T) < below.Cp(T)))
+          fail(`Cp of the gas is not below that of ${order[i]} at ${T} K`);
       }
     }
   }
@@ -53,13 +54,14 @@ function assertOrder(medium, order, levels, pressurePa, fail) {
     if (known.length < 2) continue;
     const lowest = known.reduce((best, label) => (G(label, T) < G(best, T) ? label : best));
     // grace about a step: its own pressure may be 1 atm where 1 bar is looked at
-    const stated = order.filter((label, i) => {
+    const stated = order.filter((_, i) => {
       const opens = i === 0 ? 0 : medium.steps[i - 1].temperatureK - GRACE_K;
       const closes = i === order.length - 1 ? Infinity : medium.steps[i].temperatureK + GRACE_K;
       return T >= opens && T <= closes;
     });
     const missing = stated.filter((label) => known.includes(label)).length === 0;
-    if (!missing && !stated.includes(lowest)) fail(`${lowest} is lowest in G at ${T} K, stated is ${stated.join(' or ')}`);
+    if (!missing && !stated.includes(lowest))
+      fail(`${lowest} is lowest in G at ${T} K, stated is ${stated.join(' or ')}`);
   }
   for (let i = 0; i < order.length; i++) {
     for (let j = i + 1; j < order.length; j++) {
@@ -85,7 +87,8 @@ function assertMagnitudes(medium, fail) {
   for (const step of medium.steps) {
     const [low, high] =
       step.to === 'g' ? [80, 110] : step.to !== 'l' ? [2, 20] : medium.class === 'metal' ? [7, 15] : [15, 130];
-    if (step.entropy < low || step.entropy > high) fail(`${step.from} to ${step.to}: ${step.entropy} J/(mol K) is unusual`);
+    if (step.entropy < low || step.entropy > high)
+      fail(`${step.from} to ${step.to}: ${step.entropy} J/(mol K) is unusual`);
   }
 }
 

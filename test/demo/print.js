@@ -28,7 +28,8 @@ export const lineOf = (sheet, row) => sheet.before.length + 2 + row;
 
 /** @param {Sheet} sheet */
 export function sheetText(sheet) {
-  const cell = (text) => (/["\r\n]/.test(text) || text.includes(sheet.delimiter) ? `"${text.replaceAll('"', '""')}"` : text);
+  const cell = (text) =>
+    /["\r\n]/.test(text) || text.includes(sheet.delimiter) ? `"${text.replaceAll('"', '""')}"` : text;
   const line = (row) => (typeof row === 'string' ? row : row.map(cell).join(sheet.delimiter));
   const lines = [...sheet.before, line(sheet.header), ...sheet.rows.map(line)];
   return (sheet.mark ? '\ufeff' : '') + lines.map((text) => text + sheet.newline).join('');
@@ -41,7 +42,9 @@ export function descriptorText(value, indent = '', room = 118) {
   const inner = `${indent}  `;
   const parts = Array.isArray(value)
     ? value.map((item) => inner + descriptorText(item, inner, room))
-    : Object.entries(value).map(([key, item]) => `${inner}${JSON.stringify(key)}: ${descriptorText(item, inner, room)}`);
+    : Object.entries(value).map(
+        ([key, item]) => `${inner}${JSON.stringify(key)}: ${descriptorText(item, inner, room)}`,
+      );
   const [open, shut] = Array.isArray(value) ? '[]' : '{}';
   return `${open}\n${parts.join(',\n')}\n${indent}${shut}`;
 }

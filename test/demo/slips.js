@@ -21,10 +21,11 @@ function digit(text, place, by) {
 }
 
 /**
- * `material`: the least change, in the column's own unit, that a user of the release would notice; a slip must exceed it
- * and twenty units of the last place.
+ * `material`: the least change, in the column's own unit, that a user of the release would notice; a slip must exceed
+ * it and twenty units of the last place.
  * @type {readonly { medium: string, source: string, file: string, cell: Record<string, string>, column: string,
- *   kind: string, about: string, quantity: string, material: number, slip: (clean: string, sheet: any, row: number) => string }[]}
+ *   kind: string, about: string, quantity: string, material: number,
+ *   slip: (clean: string, sheet: any, row: number) => string }[]}
  */
 const SLIPS = [
   {
@@ -151,7 +152,8 @@ function plant(sheets, { medium, source, file, cell, column, slip, kind, about, 
   const printed = slip(clean, sheet, rows[0]);
   const difference = Math.abs(number(printed) - number(clean));
   const lastPlace = 10 ** -(clean.split(/[.,]/)[1]?.length ?? 0);
-  if (!(difference >= 20 * lastPlace && difference > material)) throw new Error(`${medium}: ${clean} to ${printed} is too small a slip`);
+  if (!(difference >= 20 * lastPlace && difference > material))
+    throw new Error(`${medium}: ${clean} to ${printed} is too small a slip`);
   row[at] = printed;
   return { medium, source, file, line: lineOf(sheet, rows[0]), column, printed, clean, kind, about, quantity };
 }

@@ -1,6 +1,6 @@
 /**
- * A laboratory: measured Cp per gram in semicolon files with decimal commas (byte-order mark, CRLF), temperatures in deg C,
- * each run with its own calibration; transitions from its scanning calorimeter; boiling points; formation data.
+ * A laboratory: measured Cp per gram in semicolon files with decimal commas (byte-order mark, CRLF), temperatures in
+ * deg C, each run with its own calibration; transitions from its scanning calorimeter; boiling points; formation data.
  */
 import { onScale68 } from '../laws.js';
 import { BENCH, EXTRA_SERIES, MEDIA } from '../media.js';
@@ -26,7 +26,7 @@ const ENTROPY = 0.4;
 
 const DESCRIPTOR = {
   title: 'Bench Two: calorimetry of storage media',
-  citation: 'Invented for this demo: notebooks of the cooperative\'s second calorimetry bench',
+  citation: "Invented for this demo: notebooks of the cooperative's second calorimetry bench",
   year: 2023,
   licence: 'invented figures, free to copy (CC0-1.0)',
   basis: 'measured',
@@ -148,7 +148,13 @@ function series(medium, { phases }, parts) {
   let run = 0;
   for (const [label, [low, high]] of parts) {
     const count = Math.ceil((high - low) / STEP_K);
-    const halves = high - low > 200 ? [[0, Math.floor(count / 2)], [Math.floor(count / 2) + 1, count]] : [[0, count]];
+    const halves =
+      high - low > 200
+        ? [
+            [0, Math.floor(count / 2)],
+            [Math.floor(count / 2) + 1, count],
+          ]
+        : [[0, count]];
     for (const [first, last] of halves) {
       run += 1;
       const random = seeded(`${medium.id} ${label} run ${run}`);

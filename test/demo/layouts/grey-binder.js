@@ -1,4 +1,4 @@
-/** An older compilation: tab-separated sheets with comment lines on top, thermochemical calories, gas entropies at 1 atm. */
+/** An older compilation: tab-separated sheets under comment lines, thermochemical calories, gas entropies at 1 atm. */
 import { assertDense } from '../dense.js';
 import { ATMOSPHERE_PA, R, REFERENCE_K, STANDARD_PRESSURE_PA } from '../laws.js';
 import { BINDER, MEDIA } from '../media.js';
@@ -148,7 +148,15 @@ function transitions(media, closed) {
       const boils = step.gas === 'real';
       const heats = [fixed(step.enthalpy / CALORIE / 1000, 3), boils ? '0.15' : ''];
       const entropy = boils ? '' : fixed(step.entropy / CALORIE, 3);
-      return [medium.name, WORDS[step.from], WORDS[step.to], fixed(step.temperatureK, 2), step.gas ?? '', ...heats, entropy];
+      return [
+        medium.name,
+        WORDS[step.from],
+        WORDS[step.to],
+        fixed(step.temperatureK, 2),
+        step.gas ?? '',
+        ...heats,
+        entropy,
+      ];
     }),
   );
   return {

@@ -1,4 +1,4 @@
-/** An evaluated compilation: one comma-separated file a medium, its phases one below the other, three decimals, J and kJ. */
+/** An evaluated compilation: a comma-separated file a medium, its phases one below the other, three decimals, J and kJ. */
 import { assertDense } from '../dense.js';
 import { REFERENCE_K } from '../laws.js';
 import { MEDIA, QUAY } from '../media.js';
@@ -11,7 +11,7 @@ const ATMOSPHERES = { 100000: '1', 101325: '1.01325' };
 
 const DESCRIPTOR = {
   title: 'Quay Tables of Storage Media, third collection',
-  citation: 'Invented for this demo: Quay Tables of Storage Media, third collection, the cooperative\'s reading room',
+  citation: "Invented for this demo: Quay Tables of Storage Media, third collection, the cooperative's reading room",
   year: 2016,
   licence: 'invented figures, free to copy (CC0-1.0)',
   basis: 'evaluated',
@@ -79,7 +79,10 @@ function table(medium, { phases, steps }) {
   for (const [label, { rangeK, source }] of Object.entries(medium.phases)) {
     if (source !== QUAY) continue;
     const here = steps.filter((step) => step.from === label || step.to === label);
-    const temperatures = tabulated(rangeK, here.map((step) => step.temperatureK));
+    const temperatures = tabulated(
+      rangeK,
+      here.map((step) => step.temperatureK),
+    );
     assertDense(medium, label, temperatures, 0.5, 0.0005);
     const { Cp, S, H, enthalpyOfFormation } = phases[label];
     for (const T of temperatures) {

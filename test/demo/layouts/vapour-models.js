@@ -9,7 +9,7 @@ const FORMATION_KJ = 0.1;
 
 const DESCRIPTOR = {
   title: 'Vapour models: ideal-gas functions from computed molecular constants',
-  citation: 'Invented for this demo: vapour models, run 4, the cooperative\'s computing group',
+  citation: "Invented for this demo: vapour models, run 4, the cooperative's computing group",
   year: 2025,
   licence: 'invented figures, free to copy (CC0-1.0)',
   basis: 'computed',
