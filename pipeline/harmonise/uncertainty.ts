@@ -51,8 +51,8 @@ export function seriesUncertainty(
     sharedVariance += (part.relative + (size === 0 ? 0 : part.absolute / size)) ** 2;
   }
 
-  const fallback =
-    own.length > 0 || declared.length > 0 || !takesDefault(table.basis) ? own : [policyPart(policy, quantity)];
+  const said = declared.length > 0 || printed.some((entry) => table.columns[entry.column].shared);
+  const fallback = said || !takesDefault(table.basis) ? own : [policyPart(policy, quantity)];
   let stated = false;
   let filled = 0;
   for (const entry of printed) {

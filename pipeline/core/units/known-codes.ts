@@ -69,15 +69,16 @@ const MEANT: Readonly<Record<string, string>> = {
   degk: 'K',
 };
 
-/** Up to three known codes for the SI code `target`, nearest in spelling first; signs and case count for little. */
+/** Up to three known codes for the SI code `target`, nearest in spelling first (one that continues the code before others); signs and case count for little. */
 export function nearestCodes(target: string, code: string): readonly string[] {
   const known = KNOWN[target] ?? [target];
+  if (code === '') return known.slice(0, 3);
   const wanted = plainly(code);
   const meant = Object.hasOwn(MEANT, wanted) ? MEANT[wanted] : undefined;
   const ranked = known
     .map((candidate, place) => {
       const spelling = distance(wanted, plainly(candidate)) + distance(code, candidate) / 100;
-      return { candidate, place, score: candidate === meant ? -1 : spelling };
+      return { candidate, place, score: candidate === meant ? -1 : candidate.startsWith(code) ? 0.5 : spelling };
     })
     .sort((a, b) => a.score - b.score || a.place - b.place);
   return ranked.slice(0, 3).map((entry) => entry.candidate);
