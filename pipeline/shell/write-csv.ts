@@ -118,5 +118,5 @@ function quoted(word: string): string {
 
 /** Text as both formats can hold it: no lone surrogates, no NUL. */
 export function clean(word: string): string {
-  return word.toWellFormed().replaceAll('\0', '\ufffd');
+  return word.replaceAll(/\p{Surrogate}|\0/gu, '\ufffd');
 }

@@ -1,0 +1,181 @@
+/** Growable columns: a published table is filled cell by cell without an object a row. */
+import {
+  ABSENT_CODE,
+  type BooleanColumn,
+  type Column,
+  type ColumnTable,
+  type IntegerColumn,
+  type NumberColumn,
+  type TextColumn,
+} from '../../schemas/columns.js';
+import type { FieldKind, PublishedTable } from '../../schemas/release-tables.js';
+
+type Store = Float64Array | Int32Array | Uint8Array | Uint32Array;
+
+function grown<S extends Store>(store: S, needed: number): S {
+  if (needed <= store.length) return store;
+  const larger = new (store.constructor as new (length: number) => S)(Math.max(needed, 2 * store.length));
+  larger.set(store as never);
+  return larger;
+}
+
+/** Numbers, integers and flags: values with absence marked beside them. An absent cell holds 0. */
+class ValueBuilder<S extends Float64Array | Int32Array | Uint8Array> {
+  length = 0;
+  #values: S;
+  #absent = new Uint8Array(0);
+  #anyAbsent = false;
+
+  constructor(empty: S) {
+    this.#values = empty;
+  }
+
+  push(value: number | null): void {
+    this.#reserve(1);
+    if (value === null) this.#markAbsent(1);
+    else this.#values[this.length] = value === 0 ? 0 : value; // -0 is published as 0
+    this.length++;
+  }
+
+  append(values: ArrayLike<number>): void {
+    this.#reserve(values.length);
+    this.#values.set(values, this.length);
+    this.length += values.length;
+  }
+
+  fill(value: number | null, count: number): void {
+    this.#reserve(count);
+    if (value === null) this.#markAbsent(count);
+    else this.#values.fill(value, this.length, this.length + count);
+    this.length += count;
+  }
+
+  protected finish(): { values: S; absent: Uint8Array | null } {
+    const length = this.length;
+    return {
+      values: this.#values.slice(0, length) as S,
+      absent: this.#anyAbsent ? grown(this.#absent, length).slice(0, length) : null,
+    };
+  }
+
+  #reserve(count: number): void {
+    this.#values = grown(this.#values, this.length + count);
+  }
+
+  #markAbsent(count: number): void {
+    this.#absent = grown(this.#absent, Math.max(this.length + count, this.#values.length));
+    this.#absent.fill(1, this.length, this.length + count);
+    this.#anyAbsent = true;
+  }
+}
+
+export class NumberBuilder extends ValueBuilder<Float64Array> {
+  constructor() {
+    super(new Float64Array(16));
+  }
+  column(): NumberColumn {
+    return { kind: 'number', ...this.finish() };
+  }
+}
+
+export class IntegerBuilder extends ValueBuilder<Int32Array> {
+  constructor() {
+    super(new Int32Array(16));
+  }
+  column(): IntegerColumn {
+    return { kind: 'integer', ...this.finish() };
+  }
+}
+
+export class BooleanBuilder extends ValueBuilder<Uint8Array> {
+  constructor() {
+    super(new Uint8Array(16));
+  }
+  pushFlag(value: boolean | null): void {
+    this.push(value === null ? null : value ? 1 : 0);
+  }
+  column(): BooleanColumn {
+    return { kind: 'boolean', ...this.finish() };
+  }
+}
+
+/** Text by dictionary, words in order of first use. An empty text is an empty cell: CSV cannot tell them apart. */
+export class TextBuilder {
+  length = 0;
+  #codes = new Uint32Array(16);
+  readonly #codeOf = new Map<string, number>();
+
+  push(word: string | null): void {
+    this.#codes = grown(this.#codes, this.length + 1);
+    this.#codes[this.length++] = this.code(word);
+  }
+
+  fill(word: string | null, count: number): void {
+    this.#codes = grown(this.#codes, this.length + count);
+    this.#codes.fill(this.code(word), this.length, this.length + count);
+    this.length += count;
+  }
+
+  appendCodes(codes: ArrayLike<number>): void {
+    this.#codes = grown(this.#codes, this.length + codes.length);
+    this.#codes.set(codes, this.length);
+    this.length += codes.length;
+  }
+
+  code(word: string | null): number {
+    if (word === null || word === '') return ABSENT_CODE;
+    let code = this.#codeOf.get(word);
+    if (code === undefined) {
+      code = this.#codeOf.size;
+      this.#codeOf.set(word, code);
+    }
+    return code;
+  }
+
+  column(): TextColumn {
+    return { kind: 'text', codes: this.#codes.slice(0, this.length), words: [...this.#codeOf.keys()] };
+  }
+}
+
+interface BuilderOf {
+  number: NumberBuilder;
+  integer: IntegerBuilder;
+  boolean: BooleanBuilder;
+  text: TextBuilder;
+}
+
+/** One builder a field, by the field's name. */
+export type Builders<T extends PublishedTable> = {
+  readonly [F in T['fields'][number] as F['name']]: BuilderOf[F['kind']];
+};
+
+export function buildersFor<const T extends PublishedTable>(table: T): Builders<T> {
+  const made: Record<string, BuilderOf[FieldKind]> = {};
+  for (const field of table.fields) made[field.name] = builder(field.kind);
+  return made as Builders<T>;
+}
+
+function builder(kind: FieldKind): BuilderOf[FieldKind] {
+  switch (kind) {
+    case 'number':
+      return new NumberBuilder();
+    case 'integer':
+      return new IntegerBuilder();
+    case 'boolean':
+      return new BooleanBuilder();
+    case 'text':
+      return new TextBuilder();
+  }
+}
+
+/** Throws where the columns are not equally long: a cell was forgotten or written twice. */
+export function finishTable(builders: Readonly<Record<string, BuilderOf[FieldKind]>>): ColumnTable {
+  const columns: Record<string, Column> = {};
+  let rows = -1;
+  for (const [name, made] of Object.entries(builders)) {
+    if (rows < 0) rows = made.length;
+    if (made.length !== rows) throw new Error(`column ${name} has ${made.length} rows, the first column ${rows}`);
+    columns[name] = made.column();
+  }
+  return { rows: Math.max(0, rows), columns };
+}
