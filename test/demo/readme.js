@@ -45,7 +45,8 @@ ${rows.join('\n')}
 One more misprint has been found already and is put right by \`corrections.json\`, so the medium is clean; the raw file keeps
 what was printed: ${fixed.join(' ')}
 
-\`npm run nightly\` clears the sixteen, withholds the eight and names the cells. Lines count from 1, header and comment lines included. The same list, for programs: \`test/demo/planted-slips.json\`.
+A night should clear the sixteen, withhold the eight and name the cells. Lines count from 1, header and comment lines
+included. The same list, for programs: \`test/demo/planted-slips.json\`.
 
 ## Cautions
 
