@@ -45,7 +45,8 @@ export class Readings {
     const cell = { ...note.address, printed: note.read };
     const known = this.notes.get(key);
     if (known === undefined) this.notes.set(key, { note, evidence: [cell] });
-    else if (known.evidence.length < this.mostEvidence) known.evidence.push(cell);
+    else if (known.evidence.length < this.mostEvidence && !known.evidence.some((other) => other.line === cell.line))
+      known.evidence.push(cell);
   }
 
   findings(): Finding[] {
