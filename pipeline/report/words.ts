@@ -16,7 +16,8 @@ export function sayFinding(finding: Finding): string {
 /** `lead-study/points.csv line 412, column S`; a line of 0 is the descriptor or the whole file. */
 export function sayAddress({ source, file, line, column }: Address): string {
   const path = file === '' ? source : `${source}/${file}`;
-  return `${path}${line > 0 ? ` line ${line}` : ''}${column === '' ? '' : `, column ${column}`}`;
+  const what = /^character \d+$/.test(column) ? column : `column ${column}`;
+  return `${path}${line > 0 ? ` line ${line}` : ''}${column === '' ? '' : `, ${what}`}`;
 }
 
 /** `lead-study/points.csv:412 S`, as editors and terminals like it. */
@@ -99,15 +100,18 @@ function told(finding: Finding): string {
 }
 
 function reading({ problem, read, wanted, remedy }: Detail<'reading'>): string {
-  return join(`${READING[problem](quote(read))}${wanted === '' ? '' : `; expected was ${wanted}`}`, remedy);
+  return join(
+    `${READING[problem](quote(read), read)}${wanted === '' ? '' : `; expected was ${wanted}`}`,
+    capital(remedy),
+  );
 }
 
-const READING: Readonly<Record<ReadingProblem, (read: string) => string>> = {
+const READING: Readonly<Record<ReadingProblem, (quoted: string, read: string) => string>> = {
   'cell-not-a-number': (read) => `${read} is not a number`,
   'cell-not-finite': (read) => `${read} is no finite number`,
   'row-too-short': (read) => `The row has too few cells: ${read}`,
   'row-too-long': (read) => `The row has too many cells: ${read}`,
-  'column-missing': (read) => `There is no column ${read}`,
+  'column-missing': (read) => `The header says ${read}`,
   'column-unknown': (read) => `The descriptor does not say what column ${read} is`,
   'unit-unknown': (read) => `${read} is no unit that is known here`,
   'unit-unfit': (read) => `The unit ${read} does not fit the quantity`,
@@ -119,13 +123,19 @@ const READING: Readonly<Record<ReadingProblem, (read: string) => string>> = {
   'encoding-converted': (read) => `The file is not UTF-8 and was read as ${read}`,
   'descriptor-unreadable': (read) => `The descriptor is not JSON that can be read: ${read}`,
   'descriptor-invalid': (read) => `The descriptor says ${read}`,
-  'correction-out-of-date': (read) => `A correction was not applied, since the cell now says ${read}`,
-  'required-missing': (read) => `${read} is missing`,
-  'kind-not-yet-read': (read) => `Tables that hold ${read} are not read yet`,
+  'correction-out-of-date': (read) => `A correction is out of date, the file says ${read}`,
+  'required-missing': (quoted, read) => missing(quoted, read),
+  'kind-not-yet-read': (read) => `${read} is not read yet`,
   'key-without-row': (read) => `Nothing was read for ${read}`,
   'molar-mass-unknown': (read) => `No molar mass follows from ${read}`,
   'acceptance-lapsed': (read) => `An acceptance no longer holds: ${read}`,
 };
+
+/** What is missing may be named by its maker, or shown by what stands in its place. */
+function missing(quoted: string, read: string): string {
+  if (read === '' || read === 'nothing') return 'A value is missing';
+  return /^(The|A|An) /.test(read) ? `${read} is missing` : `A value is missing where the file says ${quoted}`;
+}
 
 function interval(finding: Finding, { quantity, lowK, highK, named }: Detail<'interval'>): string {
   const next = named
@@ -294,7 +304,8 @@ function kelvin(temperatureK: number | null): string {
 }
 
 function quote(text: string): string {
-  return /^[\w.+-]+$/.test(text) && !/^\d/.test(text) ? text : `“${text}”`;
+  if (text.startsWith('"')) return text;
+  return /^[A-Za-z][\w.+-]*$/.test(text) ? text : `“${text}”`;
 }
 
 function capital(text: string): string {

@@ -256,11 +256,22 @@ describe('the words of a finding', () => {
     };
     const sentences = Object.keys(problems).map((problem) =>
       say({
-        detail: { code: 'reading', problem: problem as ReadingProblem, read: 'x y', wanted: 'z', remedy: 'Do it.' },
+        detail: { code: 'reading', problem: problem as ReadingProblem, read: 'x y', wanted: 'z', remedy: 'do it' },
       }),
     );
     for (const sentence of sentences) expect(sentence).toMatch(/“x y”.*; expected was z\. Do it\. mill-lab/);
+    expect(sentences).toContain(
+      '“x y” is not a number; expected was z. Do it. mill-lab/points.csv line 412, column S.',
+    );
     expect(new Set(sentences).size).toBe(sentences.length);
+  });
+
+  it('name what is missing, or show what stands in its place', () => {
+    const missing = (read: string) =>
+      say({ detail: { code: 'reading', problem: 'required-missing', read, wanted: '', remedy: '' } });
+    expect(missing('')).toMatch(/^A value is missing\. mill-lab/);
+    expect(missing('The temperature of 3 rows')).toMatch(/^The temperature of 3 rows is missing\. mill-lab/);
+    expect(missing('n.a.')).toMatch(/^A value is missing where the file says n\.a\. mill-lab/);
   });
 
   it('say that a doubt is too small to matter and a note undecided', () => {
