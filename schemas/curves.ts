@@ -55,6 +55,15 @@ export interface PhaseCurve {
   readonly gain: Float64Array;
   readonly uEnthalpyLevelJPerMol: number;
   readonly uEntropyLevelJPerMolK: number;
+  /** Relative standard uncertainty of a calibration common to the whole curve, acting on H and S counted from `referenceK`. */
+  readonly uCalibrationRelative: number;
+  readonly referenceK: number;
+  /** Sources whose numbers fix the curve and its levels, preferred first. */
+  readonly sources: readonly string[];
+  /** Index of the stated transition that carries a level of this phase, or -1. */
+  readonly carriedThrough: number;
+  /** Growth of u(Cp) beyond the measured range: this share of Cp per kelvin. */
+  readonly continuationGrowthPerK: number;
   readonly origins: readonly CurveOrigin[];
 }
 

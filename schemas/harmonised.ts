@@ -56,6 +56,8 @@ export interface Series {
   /** G(T) from the declared zero. */
   readonly gibbsEnergy: SeriesQuantity | null;
   readonly notes: readonly string[] | null;
+  /** How many cells of this series have a correction in force. */
+  readonly corrections: number;
   readonly text: (row: number, column: number) => string;
 }
 

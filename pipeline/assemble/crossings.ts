@@ -1,0 +1,136 @@
+import type { Crossing, PhaseCurve } from '../../schemas/curves.js';
+import type { HarmonisedCase } from '../../schemas/harmonised.js';
+import type { Policy } from '../../schemas/policy.js';
+import { enthalpyAt, entropyAt } from '../core/physics/curve.js';
+import { gibbsUncertainty } from '../core/physics/curve-uncertainty.js';
+import { crossingsOf, type DiagramPhase, gibbsInDiagram } from '../core/physics/diagram.js';
+import { condensedTermUncertainty, gasTerm, type PressureTerm } from '../core/physics/pressure-terms.js';
+
+interface Placed extends DiagramPhase {
+  readonly source: PhaseCurve;
+  readonly term: PressureTerm | null;
+  readonly gas: boolean;
+}
+
+interface Setting {
+  readonly pressurePa: number;
+  readonly gas: 'real' | 'ideal';
+}
+
+/** Diagram settings: the policy's pressure with the real gas first, then each stated transition's own. */
+export function crossingsOfCase(substance: HarmonisedCase, curves: readonly PhaseCurve[], policy: Policy): Crossing[] {
+  const found: Crossing[] = [];
+  const isobars = new Set(curves.map((c) => c.family.isobarPa));
+  for (const isobar of isobars) {
+    const family = curves.filter((c) => c.family.isobarPa === isobar);
+    if (family.length < 2) continue;
+    const hasGas = family.some((c) => isGas(c.phase));
+    const settings =
+      isobar === null ? settingsOf(substance, policy, hasGas) : [{ pressurePa: isobar, gas: 'real' as const }];
+    for (let k = 0; k < settings.length; k++) {
+      const placed = family.map((c) => place(c, substance, settings[k]));
+      for (let i = 0; i < placed.length; i++) {
+        for (let j = i + 1; j < placed.length; j++) {
+          const gas = placed[i].gas || placed[j].gas;
+          // Without a gas, settings at one pressure repeat each other.
+          if (!gas && settings.findIndex((s) => s.pressurePa === settings[k].pressurePa) < k) continue;
+          if (!comparable(placed[i].source, placed[j].source)) continue;
+          for (const t of crossingsOf(placed[i], placed[j])) {
+            found.push(crossingAt(t, placed[i], placed[j], placed, settings[k], gas));
+          }
+        }
+      }
+    }
+  }
+  return found;
+}
+
+export function isGas(phase: string): boolean {
+  return phase === 'g' || phase.startsWith('g-');
+}
+
+function comparable(a: PhaseCurve, b: PhaseCurve): boolean {
+  return a.hasEnthalpyLevel && b.hasEnthalpyLevel && a.hasEntropyLevel && b.hasEntropyLevel;
+}
+
+function settingsOf(substance: HarmonisedCase, policy: Policy, hasGas: boolean): Setting[] {
+  const settings: Setting[] = [{ pressurePa: policy.pressurePa, gas: 'real' }];
+  for (const t of substance.transitions) {
+    const gas = t.gas ?? 'real';
+    if (gas === 'ideal' && !hasGas) continue;
+    if (!settings.some((s) => s.pressurePa === t.pressurePa && s.gas === gas)) {
+      settings.push({ pressurePa: t.pressurePa, gas });
+    }
+  }
+  return settings;
+}
+
+export function place(curve: PhaseCurve, substance: HarmonisedCase, setting: Setting): Placed {
+  const gas = isGas(curve.phase);
+  const term =
+    gas && curve.family.isobarPa === null
+      ? gasTerm(substance.substance, setting.gas, setting.pressurePa, boilingOf(substance))
+      : null;
+  return {
+    curve,
+    source: curve,
+    lowK: Math.max(curve.knotK[0], 1e-3),
+    highK: curve.knotK[curve.knotK.length - 1],
+    shift: term === null ? null : term.shift,
+    term,
+    gas,
+    formulaUnits: gas ? (substance.substance.vapourSpecies?.formulaUnits ?? 1) : 1,
+  };
+}
+
+/** The stated boiling or sublimation temperature, for the simple-fluid estimate; 500 K where none is stated. */
+export function boilingOf(substance: HarmonisedCase): number {
+  for (const t of substance.transitions) if (isGas(t.to)) return t.temperature.value;
+  return 500;
+}
+
+function crossingAt(
+  temperatureK: number,
+  a: Placed,
+  b: Placed,
+  all: readonly Placed[],
+  setting: Setting,
+  gas: boolean,
+): Crossing {
+  const step = Math.max(1e-3, 1e-6 * temperatureK);
+  const below = gibbsInDiagram(a, temperatureK - step) - gibbsInDiagram(b, temperatureK - step);
+  const [from, to] = below < 0 ? [a, b] : [b, a];
+  const perUnit = (p: Placed, x: number): number => x / p.formulaUnits;
+  const dS = perUnit(to, entropyAt(to.curve, temperatureK)) - perUnit(from, entropyAt(from.curve, temperatureK));
+  const dH = perUnit(to, enthalpyAt(to.curve, temperatureK)) - perUnit(from, enthalpyAt(from.curve, temperatureK));
+  const uGap = gapUncertainty(from, to, temperatureK, setting.pressurePa);
+  const g = gibbsInDiagram(from, temperatureK);
+  let stable = true;
+  for (const p of all) {
+    if (p === a || p === b || temperatureK < p.lowK || temperatureK > p.highK) continue;
+    if (!comparable(p.source, from.source)) continue;
+    if (gibbsInDiagram(p, temperatureK) < g) stable = false;
+  }
+  const inData = (p: Placed): boolean => temperatureK >= p.source.measuredFromK && temperatureK <= p.source.measuredToK;
+  return {
+    family: a.source.family,
+    from: from.source.phase,
+    to: to.source.phase,
+    pressurePa: setting.pressurePa,
+    gas: gas ? setting.gas : null,
+    temperatureK,
+    uK: uGap / Math.abs(dS),
+    enthalpyJPerMol: dH,
+    entropyJPerMolK: dS,
+    stable,
+    measured: inData(a) && inData(b),
+  };
+}
+
+/** u(dG) at T: both curves, the gas term, and the unknown volumes of condensed phases off the standard pressure. */
+export function gapUncertainty(a: Placed, b: Placed, temperatureK: number, pressurePa: number): number {
+  const part = (p: Placed): number => gibbsUncertainty(p.source, temperatureK) / p.formulaUnits;
+  const gas = (p: Placed): number => (p.term === null ? 0 : p.term.u(temperatureK) / p.formulaUnits);
+  const volume = a.source.family.isobarPa === null ? condensedTermUncertainty(pressurePa) : 0;
+  return Math.hypot(part(a), part(b), gas(a), gas(b), volume);
+}

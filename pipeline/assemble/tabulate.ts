@@ -1,0 +1,157 @@
+import type { Crossing, FunctionRows, PhaseCurve } from '../../schemas/curves.js';
+import type { HarmonisedCase } from '../../schemas/harmonised.js';
+import type { Policy } from '../../schemas/policy.js';
+import { cubicIntegral, cubicIntegralOverT, cubicValue } from '../core/numeric/cubic.js';
+import { stateCovariance } from '../core/physics/curve-uncertainty.js';
+import { type DiagramPhase, gibbsInDiagram } from '../core/physics/diagram.js';
+import { place } from './crossings.js';
+
+const BASIS_MEASURED = 0;
+const BASIS_INTERPOLATED = 1;
+const BASIS_EXTRAPOLATED = 2;
+
+/**
+ * Values at the raw temperatures, 298.15 K, each crossing at the policy's pressure and the policy's grid, for one phase.
+ * A row printed twice is published twice, `below` and `above`; so is a crossing's phase only once, being one phase.
+ */
+export function tabulated(
+  curve: PhaseCurve,
+  all: readonly PhaseCurve[],
+  crossings: readonly Crossing[],
+  substance: HarmonisedCase,
+  policy: Policy,
+): FunctionRows {
+  const mine = crossings.filter(
+    (c) =>
+      c.stable &&
+      c.pressurePa === (curve.family.isobarPa ?? policy.pressurePa) &&
+      c.family.isobarPa === curve.family.isobarPa &&
+      c.gas !== 'ideal' &&
+      (c.from === curve.phase || c.to === curve.phase),
+  );
+  const extra: number[] = mine.map((c) => c.temperatureK);
+  const low = curve.knotK[0];
+  const high = curve.knotK[curve.knotK.length - 1];
+  if (298.15 >= low && 298.15 <= high) extra.push(298.15);
+  const step = policy.grid.stepK;
+  for (let k = Math.max(1, Math.ceil(low / step)); k * step <= high; k++) extra.push(k * step);
+  extra.sort((a, b) => a - b);
+
+  const knots = curve.knotK;
+  const n = knots.length;
+  const size = n + extra.length;
+  const t = new Float64Array(size);
+  const interval = new Int32Array(size);
+  const atKnot = new Int32Array(size);
+  const side = new Uint8Array(size);
+  let rows = 0;
+  let e = 0;
+  for (let k = 0; k < n; k++) {
+    while (e < extra.length && extra[e] < knots[k]) {
+      if (rows === 0 || extra[e] > t[rows - 1]) {
+        t[rows] = extra[e];
+        interval[rows] = Math.max(0, k - 1);
+        atKnot[rows] = -1;
+        rows++;
+      }
+      e++;
+    }
+    while (e < extra.length && extra[e] === knots[k]) e++;
+    const twinAbove = k + 1 < n && knots[k + 1] === knots[k];
+    const twinBelow = k > 0 && knots[k - 1] === knots[k];
+    t[rows] = knots[k];
+    interval[rows] = twinAbove || k === n - 1 ? Math.max(0, k - 1) : k;
+    atKnot[rows] = k;
+    side[rows] = twinAbove ? 1 : twinBelow ? 2 : 0;
+    rows++;
+  }
+
+  const out: FunctionRows = {
+    phase: curve.phase,
+    family: curve.family,
+    rows,
+    temperatureK: t.subarray(0, rows),
+    heatCapacityJPerMolK: new Float64Array(rows),
+    entropyJPerMolK: new Float64Array(rows),
+    enthalpyJPerMol: new Float64Array(rows),
+    gibbsEnergyJPerMol: new Float64Array(rows),
+    uHeatCapacityJPerMolK: new Float64Array(rows),
+    uEntropyJPerMolK: new Float64Array(rows),
+    uEnthalpyJPerMol: new Float64Array(rows),
+    uGibbsEnergyJPerMol: new Float64Array(rows),
+    stable: stability(curve, all, t, rows, mine, substance, policy),
+    basis: new Uint8Array(rows),
+    side: side.subarray(0, rows),
+  };
+  for (let r = 0; r < rows; r++) {
+    const i = interval[r];
+    const k = atKnot[r];
+    const x = t[r] - knots[i];
+    const { c0, c1, c2, c3 } = curve;
+    const cp = cubicValue(c0[i], c1[i], c2[i], c3[i], x);
+    const h =
+      k >= 0 ? curve.enthalpyJPerMol[k] : curve.enthalpyJPerMol[i] + cubicIntegral(c0[i], c1[i], c2[i], c3[i], x);
+    const s =
+      k >= 0
+        ? curve.entropyJPerMolK[k]
+        : curve.entropyJPerMolK[i] + cubicIntegralOverT(c0[i], c1[i], c2[i], c3[i], knots[i], x);
+    out.heatCapacityJPerMolK[r] = cp;
+    out.enthalpyJPerMol[r] = h;
+    out.entropyJPerMolK[r] = s;
+    out.gibbsEnergyJPerMol[r] = h - t[r] * s;
+    const beyond = Math.max(curve.measuredFromK - t[r], t[r] - curve.measuredToK, 0);
+    const own = curve.uHeatCapacityJPerMolK;
+    const near = k >= 0 ? own[k] : Math.max(own[i], own[i + 1]);
+    out.uHeatCapacityJPerMolK[r] = short(
+      Math.hypot(near, curve.uCalibrationRelative * cp, curve.continuationGrowthPerK * cp * beyond),
+    );
+    const { hh, hs, ss } = stateCovariance(curve, t[r]);
+    out.uEnthalpyJPerMol[r] = short(Math.sqrt(Math.max(0, hh)));
+    out.uEntropyJPerMolK[r] = short(Math.sqrt(Math.max(0, ss)));
+    out.uGibbsEnergyJPerMol[r] = short(Math.sqrt(Math.max(0, hh - 2 * t[r] * hs + t[r] * t[r] * ss)));
+    out.basis[r] =
+      beyond > 0 ? BASIS_EXTRAPOLATED : k >= 0 && curve.knotKind[k] === 0 ? BASIS_MEASURED : BASIS_INTERPOLATED;
+  }
+  return out;
+}
+
+/** Uncertainties are published with four significant digits; more would say nothing. */
+function short(u: number): number {
+  if (u === 0) return 0;
+  const scale = 10 ** (3 - Math.floor(Math.log10(u)));
+  return scale > 1e15 ? u : Math.round(u * scale) / scale;
+}
+
+function stability(
+  curve: PhaseCurve,
+  all: readonly PhaseCurve[],
+  t: Float64Array,
+  rows: number,
+  mine: readonly Crossing[],
+  substance: HarmonisedCase,
+  policy: Policy,
+): Uint8Array {
+  const stable = new Uint8Array(rows).fill(1);
+  const setting = { pressurePa: policy.pressurePa, gas: 'real' as const };
+  const own = place(curve, substance, setting);
+  const others: DiagramPhase[] = [];
+  for (const c of all) {
+    if (c !== curve && c.family.isobarPa === curve.family.isobarPa && c.hasEnthalpyLevel && c.hasEntropyLevel)
+      others.push(place(c, substance, setting));
+  }
+  if (others.length === 0 || !curve.hasEnthalpyLevel || !curve.hasEntropyLevel) return stable;
+  for (let r = 0; r < rows; r++) {
+    if (t[r] <= 0) continue;
+    const g = gibbsInDiagram(own, t[r]);
+    for (const o of others) {
+      if (t[r] < o.lowK || t[r] > o.highK) continue;
+      // Rounding of G itself is allowed for: at a crossing both phases are stable.
+      if (gibbsInDiagram(o, t[r]) < g - 1e-9 * Math.abs(g) - 1e-6) {
+        stable[r] = 0;
+        break;
+      }
+    }
+    for (const c of mine) if (c.temperatureK === t[r]) stable[r] = 1;
+  }
+  return stable;
+}

@@ -1,0 +1,53 @@
+import type { ExaminedCase, NamedCell } from '../../schemas/checked.js';
+import type { Finding, Outcome, Suspect } from '../../schemas/finding.js';
+import type { HarmonisedCase } from '../../schemas/harmonised.js';
+import type { Policy } from '../../schemas/policy.js';
+import { kindOf, outcome } from './place.js';
+import { enthalpyFollowsHeatCapacity } from './rules/enthalpy-follows-heat-capacity.js';
+import { entropyFollowsHeatCapacity } from './rules/entropy-follows-heat-capacity.js';
+import { functionsClose } from './rules/functions-close.js';
+import { heatCapacitySmooth } from './rules/heat-capacity-smooth.js';
+import { rowReadable } from './rules/row-readable.js';
+import { rowsDistinct } from './rules/rows-distinct.js';
+import { judgeTable } from './rules/table-rules.js';
+import { valuePossible } from './rules/value-possible.js';
+import { nameCells } from './table/name-cells.js';
+
+const TABLE_RULES = [entropyFollowsHeatCapacity, enthalpyFollowsHeatCapacity, functionsClose, heatCapacitySmooth];
+
+/** Checks every table row by row, from Cp alone, before any curve is made. */
+export function examine(
+  cases: readonly HarmonisedCase[],
+  settings: { readonly policy: Policy },
+): { artefact: ExaminedCase[]; findings: Finding[] } {
+  return { artefact: cases.map((c) => examineCase(c, settings.policy)), findings: [] };
+}
+
+function examineCase(harmonised: HarmonisedCase, policy: Policy): ExaminedCase {
+  const id = harmonised.substance.id;
+  const outcomes: Outcome[] = [rowReadable(harmonised, harmonised.findings)];
+  const findings: Finding[] = [...harmonised.findings];
+  const named: NamedCell[] = [];
+  const suspects: Suspect[] = [];
+  harmonised.series.forEach((series, index) => {
+    const distinct = rowsDistinct(id, series);
+    const possible = valuePossible(id, series);
+    findings.push(...distinct.findings, ...possible.findings);
+    outcomes.push(distinct.outcome, possible.outcome);
+    const verdict = nameCells(series, policy);
+    const evidence = kindOf([series.table]);
+    for (const rule of TABLE_RULES) {
+      const judged = judgeTable(rule, id, series, index, verdict, policy);
+      outcomes.push(
+        outcome(id, rule.rule, series.phase, judged.outcome, evidence, {
+          missing: judged.missing,
+          smallestDetectable: judged.smallestDetectable,
+        }),
+      );
+      findings.push(...judged.findings);
+      named.push(...judged.named);
+      suspects.push(...judged.suspects);
+    }
+  });
+  return { harmonised, named, outcomes, findings, suspects };
+}

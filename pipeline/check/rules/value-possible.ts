@@ -1,0 +1,73 @@
+import type { Finding, Outcome } from '../../../schemas/finding.js';
+import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
+import { makeFinding } from '../../../schemas/make-finding.js';
+import { addressOf, evidenceOf, kindOf, outcome } from '../place.js';
+
+/** Above this a temperature in kelvin or a molar heat capacity per kelvin is no longer one (order of magnitude only). */
+const HOTTEST_K = 50_000;
+const LARGEST_J_PER_MOL_K = 1e6;
+
+/**
+ * T >= 0; Cp > 0 above 0 K; S >= 0 where the zero is absolute; orders of magnitude. A row at 0 K is a limit row: Cp and S
+ * may be zero there.
+ */
+export function valuePossible(substance: string, series: Series): { outcome: Outcome; findings: Finding[] } {
+  const findings: Finding[] = [];
+  const t = series.temperatureK;
+  const cp = series.heatCapacity;
+  const s = series.table.entropyZero === 'absolute' ? series.entropy : null;
+  const report = (row: number, column: number, quantity: string, value: number, wanted: string, unit: string): void => {
+    const same = findings.findIndex((f) => 'quantity' in f.detail && f.detail.quantity === quantity);
+    const cell = evidenceOf(series, row, column);
+    if (same >= 0) {
+      findings[same] = { ...findings[same], evidence: [...findings[same].evidence, cell] };
+      return;
+    }
+    findings.push(
+      makeFinding({
+        rule: 'value-possible',
+        severity: 'fault',
+        substance,
+        fromPhase: series.phase,
+        temperatureK: t[row],
+        observed: value,
+        unit,
+        address: addressOf(series, row, column),
+        evidence: [cell],
+        detail: { code: 'impossible', quantity, read: cell.printed, wanted },
+      }),
+    );
+  };
+  for (let i = 0; i < series.rows; i++) {
+    if (!(t[i] >= 0)) report(i, series.temperatureColumn, 'temperature', t[i], 'a temperature of 0 K or more', 'K');
+    else if (t[i] > HOTTEST_K)
+      report(i, series.temperatureColumn, 'temperature', t[i], `a temperature below ${HOTTEST_K} K`, 'K');
+    if (cp !== null && cp.present[i] === 1 && impossibleCp(cp, i, t[i]))
+      report(
+        i,
+        cp.column,
+        'heat-capacity',
+        cp.values[i],
+        'a heat capacity above 0 and below 1e6 J/(mol K)',
+        'J/(mol.K)',
+      );
+    if (s !== null && s.present[i] === 1 && s.values[i] < -s.halfUnit[i])
+      report(
+        i,
+        s.column,
+        'entropy',
+        s.values[i],
+        'an entropy of 0 or more, counted from the absolute zero',
+        'J/(mol.K)',
+      );
+  }
+  const kind = findings.length > 0 ? 'disagrees' : 'agrees';
+  return { outcome: outcome(substance, 'value-possible', series.phase, kind, kindOf([series.table])), findings };
+}
+
+function impossibleCp(cp: SeriesQuantity, i: number, temperatureK: number): boolean {
+  const v = cp.values[i];
+  if (temperatureK <= 0) return v < 0;
+  // Near 0 K a printed 0.000 is a rounded small number.
+  return v < 0 || (v === 0 && temperatureK > 20) || v > LARGEST_J_PER_MOL_K;
+}

@@ -1,0 +1,385 @@
+import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
+import type { Policy } from '../../../schemas/policy.js';
+import type { NumberQuantity } from '../../../schemas/quantities.js';
+import { digitU, type Residuals, residuals, standoff } from './residuals.js';
+import { lagrange, newStencil, pick } from './stencil.js';
+import { cellU, type TableRows, tableRows } from './table-rows.js';
+import { type Hypothesis, type Pattern, testHeatCapacity, Window } from './window.js';
+
+/** A cell that the pattern of the row checks points to. */
+export interface SuspectCell {
+  /** Row of the series. */
+  readonly row: number;
+  readonly quantity: NumberQuantity;
+  readonly pattern: Pattern;
+  readonly w: number;
+  readonly observed: number;
+  readonly proposed: number;
+  readonly uProposed: number;
+  /** Other cells that the data cannot tell from this one (chi square within 9), best first. */
+  readonly rivals: readonly {
+    readonly row: number;
+    readonly quantity: NumberQuantity;
+    readonly w: number;
+    readonly proposed: number;
+    readonly uProposed: number;
+  }[];
+}
+
+/** A place that does not close and that no single cell explains. */
+export interface Anomaly {
+  readonly check: 'entropy' | 'enthalpy' | 'closure' | 'heat-capacity';
+  readonly row: number;
+  readonly nextRow: number;
+  readonly difference: number;
+  readonly tolerance: number;
+  readonly material: boolean;
+}
+
+export interface TableVerdict {
+  readonly cells: readonly SuspectCell[];
+  readonly anomalies: readonly Anomaly[];
+  /** The smallest error of a cell that would have been named wherever it stood. */
+  readonly detectable: {
+    entropy: number | null;
+    enthalpy: number | null;
+    closure: number | null;
+    heatCapacity: number | null;
+  };
+}
+
+const MOST_NAMES = 12;
+/** Above this a residual is looked at; naming needs more. */
+const SCREEN = 3.5;
+
+/** Takes the best explained cell, leaves it out, and looks again. */
+export function nameCells(series: Series, policy: Policy): TableVerdict | null {
+  const cells: SuspectCell[] = [];
+  let current = series;
+  let rows = tableRows(current);
+  if (rows === null) return null;
+  let res = residuals(rows);
+  const detectable = smallest(rows, res, policy);
+  let hot = screen(rows, res, policy);
+  while (hot.length > 0 && cells.length < MOST_NAMES) {
+    const best = bestOf(rows, res, hot, policy);
+    if (best === null) break;
+    cells.push(best);
+    current = withoutCells(current, best);
+    const next = tableRows(current);
+    if (next === null) break;
+    rows = next;
+    res = residuals(rows);
+    hot = screen(rows, res, policy);
+  }
+  const anomalies = hot.length === 0 ? [] : leftOver(rows, res, policy);
+  return { cells, anomalies, detectable };
+}
+
+/** Rows around which something does not close. */
+function screen(rows: TableRows, res: Residuals, policy: Policy): number[] {
+  const hot: number[] = [];
+  const { n, h, s, f } = rows;
+  for (let i = 0; i < n; i++) {
+    let over = 0;
+    if (res.hasClosure[i] === 1 && s !== null && h !== null && f !== null) {
+      const r = rows.row[i];
+      const u2 = cellU(s, r) ** 2 + cellU(f, r) ** 2 + (cellU(h, r) / rows.t[i]) ** 2;
+      over = (res.closure[i] * res.closure[i]) / u2;
+    }
+    if (i < n - 1 && res.usable[i] === 1) {
+      const r = rows.row[i];
+      const next = rows.row[i + 1];
+      const hasH = h !== null && h.present[r] === 1 && h.present[next] === 1;
+      const hasS = s !== null && s.present[r] === 1 && s.present[next] === 1;
+      if (hasH || hasS) {
+        const e2 = res.e[i] * res.e[i] + res.own[i];
+        const c = res.c[i];
+        const uh2 = hasH ? cellU(h, r) ** 2 + cellU(h, next) ** 2 : 0;
+        const us2 = hasS ? cellU(s, r) ** 2 + cellU(s, next) ** 2 : 0;
+        const yh = hasH ? h.values[next] - h.values[r] - res.q[i] : 0;
+        const ys = hasS ? s.values[next] - s.values[r] - res.p[i] : 0;
+        const vh = uh2 + e2;
+        const vs = us2 + e2 * (c * c + res.open[i] * res.open[i]);
+        if (hasH) over = Math.max(over, (yh * yh) / vh);
+        if (hasS) over = Math.max(over, (ys * ys) / vs);
+        if (hasH && hasS) {
+          const k = e2 * c;
+          const det = vh * vs - k * k;
+          over = Math.max(over, (yh * yh * vs - 2 * yh * ys * k + ys * ys * vh) / det / 1.6);
+        }
+      }
+    }
+    if (over <= SCREEN * SCREEN) {
+      const stand = standoff(rows, i, -1);
+      if (
+        stand.interior &&
+        Math.abs(stand.difference) >= 0.6 * policy.material.heatCapacityRelative * Math.abs(rows.cp[i]) &&
+        Math.abs(stand.difference) > SCREEN * stand.u
+      ) {
+        over = SCREEN * SCREEN + 1;
+      }
+    }
+    if (over > SCREEN * SCREEN) hot.push(i);
+  }
+  return hot;
+}
+
+const PATTERNS = ['entropy', 'enthalpy', 'gibbs-function', 'entropy+gibbs', 'enthalpy+gibbs'] as const;
+
+function bestOf(rows: TableRows, res: Residuals, hot: readonly number[], policy: Policy): SuspectCell | null {
+  const candidates = new Set<number>();
+  for (const i of hot) for (let k = i - 1; k <= i + 2; k++) if (k >= 0 && k < rows.n) candidates.add(k);
+  const all: Hypothesis[] = [];
+  for (const k of candidates) {
+    const window = new Window(rows, res, k);
+    for (const pattern of PATTERNS) {
+      const one = window.test(rows, k, pattern);
+      if (one !== null) all.push(one);
+    }
+    const cp = heatCapacityHypothesis(rows, res, k, window);
+    if (cp !== null) all.push(cp);
+  }
+  all.sort((a, b) => Math.abs(b.w) - Math.abs(a.w) || a.row - b.row);
+  for (const one of all) {
+    if (Math.abs(one.w) <= policy.cell.threshold) return null;
+    if (!worthNaming(rows, one, policy)) continue;
+    const fits = one.after / Math.max(1, one.freedom) < 5 || one.after < 0.05 * one.before;
+    if (!fits) continue;
+    const rivals = all.filter(
+      (o) =>
+        o !== one &&
+        !(o.row === one.row && firstCell(o.pattern) === firstCell(one.pattern)) &&
+        Math.abs(o.row - one.row) <= 3 &&
+        one.w * one.w - o.w * o.w < 9 &&
+        worthNaming(rows, o, policy),
+    );
+    const seen = new Set<string>();
+    return {
+      ...described(rows, one),
+      rivals: rivals
+        .map((o) => described(rows, o))
+        .filter((o) => {
+          const key = `${o.row} ${o.quantity}`;
+          if (seen.has(key)) return false;
+          seen.add(key);
+          return true;
+        }),
+    };
+  }
+  return null;
+}
+
+function described(rows: TableRows, one: Hypothesis): Omit<SuspectCell, 'rivals'> {
+  const quantity = firstCell(one.pattern);
+  const q = cellsOf(rows, quantity);
+  const row = rows.row[one.row];
+  const observed = quantity === 'heat-capacity' ? rows.cp[one.row] : (q as SeriesQuantity).values[row];
+  return {
+    row,
+    quantity: q === null ? quantity : q.is,
+    pattern: one.pattern,
+    w: Math.abs(one.w),
+    observed,
+    proposed: observed - one.error,
+    uProposed: one.uError,
+  };
+}
+
+/** "This Cp", by the integrals around it where there are any, and by the row's own stand-off. First and last rows never. */
+function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, window: Window): Hypothesis | null {
+  const stand = standoff(rows, k, -1);
+  if (!stand.interior) return null;
+  const alone = Math.abs(stand.difference) / stand.u;
+  if (window.conditions === 0) {
+    // Cp alone: the neighbours must lie on their own curve once this row is out.
+    let worst = 0;
+    for (let j = Math.max(rows.from[k], k - 3); j <= Math.min(rows.to[k], k + 3); j++) {
+      if (j === k) continue;
+      const other = neighbourStandoff(rows, j, k);
+      if (other !== null && Math.abs(other.difference) > 3 * other.u) {
+        worst = Math.max(worst, Math.abs(other.difference));
+      }
+    }
+    const left = worst / Math.abs(stand.difference);
+    return {
+      row: k,
+      pattern: 'heat-capacity',
+      w: alone,
+      error: stand.difference,
+      uError: stand.u,
+      before: alone * alone,
+      after: left > 0.25 ? alone * alone : 0,
+      freedom: 1,
+    };
+  }
+  if (alone < 3) return null;
+  const joint = testHeatCapacity(rows, res, k);
+  if (joint === null || joint.w < 3) return null;
+  return {
+    ...joint,
+    w: Math.hypot(joint.w, Math.min(alone, joint.w)),
+    error: stand.difference,
+    uError: stand.u,
+  };
+}
+
+const stencil = newStencil();
+
+/** Row j's stand-off from the local cubic that uses neither j nor k. */
+function neighbourStandoff(rows: TableRows, j: number, k: number): { difference: number; u: number } | null {
+  const { t, cp } = rows;
+  const from = rows.from[j];
+  const to = rows.to[j];
+  let low = j - 1;
+  let high = j + 1;
+  if (low === k) low--;
+  if (high === k) high++;
+  if (low < from || high > to) return null;
+  const apart = 0.1 * (t[high] - t[low]);
+  pick(stencil, t, from, to, low, high, 1, apart, k);
+  if (stencil.n < 4) return null;
+  const a = lagrange(stencil, t, cp, t[j]);
+  pick(stencil, t, from, to, low, high, 2, apart, k);
+  const b = lagrange(stencil, t, cp, t[j]);
+  return { difference: cp[j] - a, u: Math.hypot(a - b, 1.4 * rows.uCp[j]) };
+}
+
+function firstCell(pattern: Pattern): NumberQuantity {
+  if (pattern === 'entropy' || pattern === 'entropy+gibbs') return 'entropy';
+  if (pattern === 'enthalpy' || pattern === 'enthalpy+gibbs') return 'enthalpy-increment';
+  return pattern === 'gibbs-function' ? 'gibbs-function' : 'heat-capacity';
+}
+
+function cellsOf(rows: TableRows, quantity: NumberQuantity): SeriesQuantity | null {
+  if (quantity === 'entropy') return rows.s;
+  if (quantity === 'enthalpy-increment') return rows.h;
+  if (quantity === 'gibbs-function') return rows.f;
+  return rows.series.heatCapacity;
+}
+
+function worthNaming(rows: TableRows, one: Hypothesis, policy: Policy): boolean {
+  const quantity = firstCell(one.pattern);
+  const q = cellsOf(rows, quantity);
+  if (q === null) return false;
+  const row = rows.row[one.row];
+  const units = Math.abs(one.error) / (2 * q.halfUnit[row]);
+  if (units < policy.cell.lastPlaces * 0.9) return false;
+  if (quantity === 'heat-capacity') {
+    return Math.abs(one.error) >= policy.material.heatCapacityRelative * 0.9 * Math.abs(rows.cp[one.row] - one.error);
+  }
+  return true;
+}
+
+/** The series with the named cells blanked. A pair's second cell goes with its first. */
+function withoutCells(series: Series, cell: SuspectCell): Series {
+  const blank = (q: SeriesQuantity | null, yes: boolean): SeriesQuantity | null => {
+    if (q === null || !yes) return q;
+    const present = q.present.slice();
+    present[cell.row] = 0;
+    return { ...q, present };
+  };
+  const p = cell.pattern;
+  return {
+    ...series,
+    heatCapacity: blank(series.heatCapacity, p === 'heat-capacity'),
+    entropy: blank(series.entropy, p === 'entropy' || p === 'entropy+gibbs'),
+    enthalpyIncrement: blank(series.enthalpyIncrement, p === 'enthalpy' || p === 'enthalpy+gibbs'),
+    enthalpy: blank(series.enthalpy, p === 'enthalpy' || p === 'enthalpy+gibbs'),
+    gibbsFunction: blank(series.gibbsFunction, p === 'gibbs-function' || p.endsWith('+gibbs')),
+  };
+}
+
+function leftOver(rows: TableRows, res: Residuals, policy: Policy): Anomaly[] {
+  const out: Anomaly[] = [];
+  const { n, h, s, f } = rows;
+  const limit = policy.cell.threshold;
+  const worst: Partial<Record<Anomaly['check'], Anomaly>> = {};
+  const keep = (a: Anomaly): void => {
+    const before = worst[a.check];
+    if (before === undefined || Math.abs(a.difference) / a.tolerance > Math.abs(before.difference) / before.tolerance) {
+      worst[a.check] = a;
+    }
+  };
+  for (let i = 0; i < n; i++) {
+    const r = rows.row[i];
+    if (res.hasClosure[i] === 1 && s !== null && h !== null && f !== null) {
+      // Only rounding can explain a difference here: its worst case is the tolerance.
+      const bound = s.halfUnit[r] + f.halfUnit[r] + h.halfUnit[r] / rows.t[i];
+      const own = Math.hypot(s.uOwn[r], f.uOwn[r], h.uOwn[r] / rows.t[i]);
+      const tolerance = 1.05 * bound + limit * own;
+      if (Math.abs(res.closure[i]) > 2 * tolerance) {
+        keep({
+          check: 'closure',
+          row: r,
+          nextRow: r,
+          difference: res.closure[i],
+          tolerance,
+          material: Math.abs(res.closure[i]) > materialS(policy, s.values[r]),
+        });
+      }
+    }
+    if (i === n - 1 || res.usable[i] === 0) continue;
+    const next = rows.row[i + 1];
+    const digits = digitU(rows, i);
+    const e = Math.sqrt(res.e[i] * res.e[i] + res.own[i]);
+    if (h !== null && h.present[r] === 1 && h.present[next] === 1) {
+      const difference = h.values[next] - h.values[r] - res.q[i];
+      const tolerance = limit * Math.hypot(digits.h, e);
+      if (Math.abs(difference) > tolerance)
+        keep({
+          check: 'enthalpy',
+          row: r,
+          nextRow: next,
+          difference,
+          tolerance,
+          material: Math.abs(difference) > policy.material.enthalpyJPerMol,
+        });
+    }
+    if (s !== null && s.present[r] === 1 && s.present[next] === 1) {
+      const difference = s.values[next] - s.values[r] - res.p[i];
+      const tolerance = limit * Math.hypot(digits.s, e * Math.hypot(res.c[i], res.open[i]));
+      if (Math.abs(difference) > tolerance)
+        keep({
+          check: 'entropy',
+          row: r,
+          nextRow: next,
+          difference,
+          tolerance,
+          material: Math.abs(difference) > materialS(policy, s.values[r]),
+        });
+    }
+  }
+  for (const a of Object.values(worst)) out.push(a);
+  return out;
+}
+
+export function materialS(policy: Policy, value: number): number {
+  return Math.max(policy.material.entropyRelative * Math.abs(value), policy.material.entropyJPerMolK);
+}
+
+function smallest(rows: TableRows, res: Residuals, policy: Policy): TableVerdict['detectable'] {
+  // Power 80 % at the naming threshold: threshold + 0.84 standard deviations of the interval's check.
+  const times = policy.cell.threshold + 0.84;
+  const out: TableVerdict['detectable'] = { entropy: null, enthalpy: null, closure: null, heatCapacity: null };
+  const { h, s } = rows;
+  for (let i = 0; i < rows.n - 1; i++) {
+    const r = rows.row[i];
+    if (res.usable[i] === 0) continue;
+    const digits = digitU(rows, i);
+    const e = Math.sqrt(res.e[i] * res.e[i] + res.own[i]);
+    if (h !== null && h.present[r] === 1)
+      out.enthalpy = Math.max(out.enthalpy ?? 0, times * Math.hypot(digits.h, e), 10 * h.halfUnit[r]);
+    if (s !== null && s.present[r] === 1)
+      out.entropy = Math.max(out.entropy ?? 0, times * Math.hypot(digits.s, e * res.open[i]), 10 * s.halfUnit[r]);
+    if (res.hasClosure[i] === 1 && s !== null) out.closure = Math.max(out.closure ?? 0, 10 * s.halfUnit[r]);
+    const stand = standoff(rows, i, -1);
+    if (stand.interior)
+      out.heatCapacity = Math.max(
+        out.heatCapacity ?? 0,
+        times * stand.u,
+        policy.material.heatCapacityRelative * Math.abs(rows.cp[i]),
+      );
+  }
+  return out;
+}

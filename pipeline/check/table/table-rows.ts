@@ -1,0 +1,98 @@
+import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
+
+/** The rows of one series in rising temperature, as the row checks see them; n rows. Absent values are NaN-free and flagged. */
+export interface TableRows {
+  readonly series: Series;
+  readonly n: number;
+  readonly t: Float64Array;
+  readonly cp: Float64Array;
+  readonly uCp: Float64Array;
+  /** Row of the series. */
+  readonly row: Int32Array;
+  /** First row of the stretch (between rows printed twice) that each row belongs to, and its last. */
+  readonly from: Int32Array;
+  readonly to: Int32Array;
+  readonly h: SeriesQuantity | null;
+  readonly s: SeriesQuantity | null;
+  readonly f: SeriesQuantity | null;
+  /** Median distance of rows [K]. */
+  readonly spacingK: number;
+}
+
+export function tableRows(series: Series): TableRows | null {
+  const cp = series.heatCapacity;
+  if (cp === null) return null;
+  const temperature = series.temperatureK;
+  let order: Int32Array | number[] = new Int32Array(series.rows);
+  let sorted = true;
+  let n = 0;
+  for (let i = 0; i < series.rows; i++) {
+    if (cp.present[i] === 0) continue;
+    if (n > 0 && temperature[i] < temperature[order[n - 1]]) sorted = false;
+    order[n++] = i;
+  }
+  order = order.subarray(0, n);
+  if (!sorted) order = Array.from(order).sort((a, b) => temperature[a] - temperature[b] || a - b);
+  // A measured run that returns to a temperature stands once here: its first row.
+  const measured = series.table.basis === 'measured';
+  const t = new Float64Array(n);
+  const y = new Float64Array(n);
+  const u = new Float64Array(n);
+  const row = new Int32Array(n);
+  let k = 0;
+  for (let j = 0; j < n; j++) {
+    const i = order[j];
+    if (k > 0 && temperature[i] === t[k - 1]) {
+      if (measured) continue;
+      // The same row printed again, or a third row at one temperature, adds nothing.
+      if (k > 1 && t[k - 2] === t[k - 1]) continue;
+      if (cp.values[i] === y[k - 1] && sameLevels(series, i, row[k - 1])) continue;
+    }
+    t[k] = temperature[i];
+    y[k] = cp.values[i];
+    u[k] = Math.hypot(cp.uOwn[i], cp.halfUnit[i] / Math.sqrt(3));
+    row[k] = i;
+    k++;
+  }
+  if (k < 2) return null;
+  const from = new Int32Array(k);
+  const to = new Int32Array(k);
+  let start = 0;
+  for (let i = 1; i <= k; i++) {
+    if (i < k && t[i] !== t[i - 1]) continue;
+    for (let j = start; j < i; j++) {
+      from[j] = start;
+      to[j] = i - 1;
+    }
+    start = i;
+  }
+  const absolute = series.enthalpyIncrement === null && series.enthalpy !== null;
+  return {
+    series,
+    n: k,
+    t: t.subarray(0, k),
+    cp: y.subarray(0, k),
+    uCp: u.subarray(0, k),
+    row: row.subarray(0, k),
+    from,
+    to,
+    h: absolute ? series.enthalpy : series.enthalpyIncrement,
+    s: series.entropy,
+    f: absolute ? null : series.gibbsFunction,
+    spacingK: (t[k - 1] - t[0]) / (k - 1),
+  };
+}
+
+function sameLevels(series: Series, a: number, b: number): boolean {
+  for (const q of [series.entropy, series.enthalpyIncrement, series.enthalpy]) {
+    if (q !== null && q.present[a] === 1 && q.present[b] === 1 && q.values[a] !== q.values[b]) return false;
+  }
+  return true;
+}
+
+/** Standard uncertainty of one cell: its rounding and its own. */
+export function cellU(q: SeriesQuantity, row: number): number {
+  const rounding = q.halfUnit[row] / 1.7320508075688772;
+  const own = q.uOwn[row];
+  return own === 0 ? rounding : Math.sqrt(own * own + rounding * rounding);
+}

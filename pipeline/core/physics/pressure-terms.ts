@@ -1,0 +1,29 @@
+import { R_J_PER_MOL_K, STANDARD_PRESSURE_PA } from '../constants.js';
+import { type GasIdentity, secondVirial } from './gas-imperfection.js';
+
+/** What a pressure adds to G°, and how uncertain that is [J/mol]. */
+export interface PressureTerm {
+  readonly shift: (temperatureK: number) => number;
+  readonly u: (temperatureK: number) => number;
+}
+
+/**
+ * RT ln(p/p°), and for a real gas RT ln phi = B(T) p (virial equation cut after B; J. M. Prausnitz et al., Molecular
+ * Thermodynamics of Fluid-Phase Equilibria, 3rd ed. 1999, eq. 5-25, at low p). `ideal` takes phi = 1 at the stated fugacity.
+ */
+export function gasTerm(gas: GasIdentity, kind: 'real' | 'ideal', pressurePa: number, boilingK: number): PressureTerm {
+  const log = R_J_PER_MOL_K * Math.log(pressurePa / STANDARD_PRESSURE_PA);
+  if (kind === 'ideal') return { shift: (t) => log * t, u: () => 0 };
+  return {
+    shift: (t) => log * t + secondVirial(gas, t, boilingK).value * pressurePa,
+    u: (t) => secondVirial(gas, t, boilingK).u * pressurePa,
+  };
+}
+
+/**
+ * A condensed phase without a known molar volume: V_m (p - p°) is bounded by V_m <= 1e-4 m3/mol, and the difference between
+ * two of them by that as well; as a standard uncertainty the bound over sqrt(3) (JCGM 100:2008, 4.3.7).
+ */
+export function condensedTermUncertainty(pressurePa: number): number {
+  return (1e-4 * Math.abs(pressurePa - STANDARD_PRESSURE_PA)) / Math.sqrt(3);
+}
