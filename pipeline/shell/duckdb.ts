@@ -68,9 +68,10 @@ export class ParquetWriter {
         kind === 'text' ? `CAST(${identifier(name)} AS VARCHAR) AS ${identifier(name)}` : identifier(name),
       );
       const pairs = Object.entries(metadata).map(([key, value]) => `${identifier(key)}: ${literal(value)}`);
+      const keyValues = pairs.length > 0 ? `, KV_METADATA {${pairs.join(', ')}}` : '';
       await this.#connection.run(
         `COPY (SELECT ${columns.join(', ')} FROM columns_at_hand()) TO ${literal(path)} ` +
-          `(FORMAT parquet, COMPRESSION zstd, KV_METADATA {${pairs.join(', ')}})`,
+          `(FORMAT parquet, COMPRESSION zstd${keyValues})`,
       );
     } finally {
       this.#feed = null;
