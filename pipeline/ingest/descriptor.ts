@@ -13,6 +13,7 @@ export const DESCRIPTOR_FILE = 'source.json';
 
 const HEAD_KEYS = Object.keys(sourceHeadSchema.shape);
 const TABLE_KEYS = Object.keys(tableSchema.shape);
+const BASES = ['measured', 'evaluated', 'computed', 'estimated'] as const;
 const SOURCE_ONLY = new Set(['title', 'citation', 'doi', 'year', 'licence', 'tables']);
 
 /**
@@ -111,7 +112,7 @@ function sourceInfo(id: string, raw: Readonly<Record<string, unknown>>): SourceI
     doi: text('doi'),
     year: typeof raw.year === 'number' ? raw.year : null,
     licence: text('licence'),
-    basis: text('basis') ?? '',
+    basis: BASES.find((basis) => basis === raw.basis) ?? null,
   };
 }
 

@@ -19,7 +19,7 @@ export type { DescriptorResult, IngestPart, Layout, RowIndex, Runs, SourceInfo, 
 export { type ReadingNote, readingFinding } from './reading.js';
 export { addRunBytes, selectRuns } from './runs.js';
 export { SubstanceNames } from './substance-names.js';
-export { readSubstances, type SubstancesResult } from './substances.js';
+export { readSubstances, SUBSTANCES_FILE, type SubstancesResult } from './substances.js';
 export { jsonFinding, zodFindings } from './zod-findings.js';
 
 export interface IngestInput {

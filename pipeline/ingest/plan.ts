@@ -2,7 +2,7 @@
 import type { Correction } from '../../schemas/corrections.js';
 import type { Finding } from '../../schemas/finding.js';
 import type { NumberQuantity, TextQuantity } from '../../schemas/quantities.js';
-import type { TableMeaning } from '../../schemas/table-meaning.js';
+import type { Basis, TableMeaning } from '../../schemas/table-meaning.js';
 
 /** How the bytes of a table are cut into cells. */
 export interface Layout {
@@ -74,7 +74,7 @@ export interface SourceInfo {
   readonly doi: string | null;
   readonly year: number | null;
   readonly licence: string | null;
-  readonly basis: string;
+  readonly basis: Basis | null;
 }
 
 /** Stretches of lines of one substance, in file order. */

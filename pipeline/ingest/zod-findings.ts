@@ -1,11 +1,9 @@
 /** What a schema found wrong, in words for the person who wrote the file. */
-import type { z } from 'zod';
 import type { Finding, ReadingProblem } from '../../schemas/finding.js';
+import type { SchemaIssue as Issue } from '../../schemas/issue.js';
 import type { JsonPlace } from './json-place.js';
 import { nearestWords } from './nearest.js';
 import { readingFinding } from './reading.js';
-
-type Issue = z.core.$ZodIssue;
 
 export interface JsonFile {
   readonly source: string;
