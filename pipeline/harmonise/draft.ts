@@ -9,9 +9,11 @@ export interface DraftQuantity {
   values: Float64Array;
   /** False while `values` is still the raw array. */
   owned: boolean;
-  readonly present: Uint8Array;
+  /** May be shared with other series: replaced, never written to. */
+  present: Uint8Array;
   readonly halfUnit: Float64Array;
-  readonly uOwn: Float64Array;
+  /** May be shared with other series: replaced, never written to. */
+  uOwn: Float64Array;
   readonly uSharedRelative: number;
   readonly origin: UncertaintyOrigin;
 }

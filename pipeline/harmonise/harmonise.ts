@@ -6,6 +6,7 @@ import type { RawCase } from '../../schemas/raw.js';
 import { harmoniseAnchor } from './anchors.js';
 import { type Draft, finished } from './draft.js';
 import { countFromReference } from './reference-temperature.js';
+import { Room } from './room.js';
 import { draftSeries } from './series.js';
 import { harmoniseTransition } from './transitions.js';
 import { UnitBook } from './unit-book.js';
@@ -23,21 +24,22 @@ export function harmonise(
   { policy }: HarmoniseSettings,
 ): { readonly artefact: readonly HarmonisedCase[]; readonly findings: readonly Finding[] } {
   const all: Finding[] = [];
+  const room = new Room();
   const artefact = cases.map((raw) => {
     const findings: Finding[] = [];
-    const harmonised = harmoniseCase(raw, policy, findings);
+    const harmonised = harmoniseCase(raw, policy, room, findings);
     for (const finding of findings) all.push(finding);
     return harmonised;
   });
   return { artefact, findings: all };
 }
 
-function harmoniseCase(raw: RawCase, policy: Policy, findings: Finding[]): HarmonisedCase {
+function harmoniseCase(raw: RawCase, policy: Policy, room: Room, findings: Finding[]): HarmonisedCase {
   const { substance } = raw;
   const book = new UnitBook(substance, findings);
   const drafts: Draft[] = [];
   for (const series of raw.series) {
-    const draft = draftSeries(series, substance.id, book, policy, findings);
+    const draft = draftSeries(series, substance.id, book, policy, room, findings);
     if (draft !== null) drafts.push(draft);
   }
   const anchors: Anchor[] = [];

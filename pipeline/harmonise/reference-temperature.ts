@@ -117,23 +117,25 @@ function apply(draft: Draft, { enthalpy, bound, u }: Move): void {
       if (increments.present[i] === 0) continue;
       values[i] -= enthalpy;
       increments.halfUnit[i] += bound;
-      if (u > 0) increments.uOwn[i] = Math.hypot(increments.uOwn[i], u);
     }
+    if (u > 0) increments.uOwn = increments.uOwn.map((own) => Math.hypot(own, u));
   }
   const gibbs = draft.quantities['gibbs-function'];
   if (gibbs === undefined) return;
   const values = writable(gibbs);
+  const present = gibbs.present.slice();
   for (let i = 0; i < values.length; i++) {
     if (gibbs.present[i] === 0) continue;
     if (!(temperatureK[i] > 0)) {
       values[i] = 0;
-      gibbs.present[i] = 0;
+      present[i] = 0;
       continue;
     }
     values[i] += enthalpy / temperatureK[i];
     gibbs.halfUnit[i] += bound / temperatureK[i];
-    if (u > 0) gibbs.uOwn[i] = Math.hypot(gibbs.uOwn[i], u / temperatureK[i]);
   }
+  gibbs.present = present;
+  if (u > 0) gibbs.uOwn = gibbs.uOwn.map((own, i) => (present[i] === 1 ? Math.hypot(own, u / temperatureK[i]) : own));
 }
 
 function noWay(draft: Draft, substance: string): Finding {

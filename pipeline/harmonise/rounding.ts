@@ -1,5 +1,6 @@
 /** What the printed digits leave open. */
 import { NO_CELL } from '../../schemas/raw.js';
+import type { Room } from './room.js';
 
 /** Half a unit of the place `decimals`, in SI. */
 export function halfUnitOf(decimals: number, factor: number): number {
@@ -16,8 +17,9 @@ export function halfUnits(
   decimals: Int8Array,
   usualDecimals: number,
   factor: number,
+  room: Room,
 ): Float64Array {
-  const halves = new Float64Array(values.length).fill(halfUnitOf(usualDecimals, factor));
+  const halves = room.numbers(values.length).fill(halfUnitOf(usualDecimals, factor));
   let coarse = 0;
   let cells = 0;
   let smallestCoarse = Number.POSITIVE_INFINITY;

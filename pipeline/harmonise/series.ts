@@ -6,6 +6,7 @@ import { NO_CELL, type RawColumn, type RawSeries } from '../../schemas/raw.js';
 import { type Draft, type DraftQuantity, writable } from './draft.js';
 import { isGas, standardPressureTerm } from './gas-pressure.js';
 import { readingFinding } from './reading-finding.js';
+import type { Room } from './room.js';
 import { halfUnitOf, halfUnits } from './rounding.js';
 import { followScale, scaledTemperatures } from './scale.js';
 import { seriesUncertainty } from './uncertainty.js';
@@ -18,6 +19,7 @@ export function draftSeries(
   substance: string,
   book: UnitBook,
   policy: Policy,
+  room: Room,
   findings: Finding[],
 ): Draft | null {
   const temperature = given.columns.find((column) => column.is === 'temperature');
@@ -52,7 +54,7 @@ export function draftSeries(
   const quantities: Partial<Record<NumberQuantity, DraftQuantity>> = {};
   for (const entry of raw.columns) {
     if (entry.is === 'temperature' || quantities[entry.is] !== undefined) continue;
-    const quantity = draftQuantity(raw, entry, book, policy);
+    const quantity = draftQuantity(raw, entry, book, policy, room);
     if (quantity !== null) quantities[entry.is] = quantity;
   }
   const heatCapacityColumn = quantities['heat-capacity']?.column ?? FROM_DESCRIPTOR;
@@ -70,23 +72,28 @@ export function draftSeries(
   return draft;
 }
 
-function draftQuantity(raw: RawSeries, column: RawColumn, book: UnitBook, policy: Policy): DraftQuantity | null {
+function draftQuantity(
+  raw: RawSeries,
+  column: RawColumn,
+  book: UnitBook,
+  policy: Policy,
+  room: Room,
+): DraftQuantity | null {
   const conversion = book.conversion(raw.table, column.column, column.is);
   if (conversion === null) return null;
   const { factor, offset } = conversion;
   const { decimals, is } = column;
-  const present = new Uint8Array(raw.rows);
-  for (let i = 0; i < raw.rows; i++) present[i] = decimals[i] === NO_CELL ? 0 : 1;
+  const present = presence(decimals, room);
   let values = column.values;
   const owned = factor !== 1 || offset !== 0;
   if (owned) {
-    values = new Float64Array(raw.rows);
+    values = room.numbers(raw.rows);
     for (let i = 0; i < raw.rows; i++) if (present[i] === 1) values[i] = column.values[i] * factor + offset;
   }
   const halfUnit =
     column.column === FROM_DESCRIPTOR
-      ? new Float64Array(raw.rows)
-      : halfUnits(column.values, decimals, column.usualDecimals, factor);
+      ? room.numbers(raw.rows)
+      : halfUnits(column.values, decimals, column.usualDecimals, factor, room);
   const { uOwn, uSharedRelative, origin } = seriesUncertainty(
     raw,
     is,
@@ -96,8 +103,16 @@ function draftQuantity(raw: RawSeries, column: RawColumn, book: UnitBook, policy
     factor,
     book,
     policy,
+    room,
   );
   return { is, column: column.column, values, owned, present, halfUnit, uOwn, uSharedRelative, origin };
+}
+
+function presence(decimals: Int8Array, room: Room): Uint8Array {
+  if (decimals.indexOf(NO_CELL) < 0) return room.ones(decimals.length);
+  const present = new Uint8Array(decimals.length);
+  for (let i = 0; i < present.length; i++) present[i] = decimals[i] === NO_CELL ? 0 : 1;
+  return present;
 }
 
 /** The temperatures of an evaluated or computed table are chosen, not measured: they have no last place. */
