@@ -20,10 +20,11 @@ export class SeriesGatherer {
   private line = new Int32Array(this.room);
   private rowStart = new Uint32Array(this.room);
   private groupOf = new Int32Array(this.room);
+  private order = new Int32Array(this.room);
   private notes: string[] = [];
-  private values: Float64Array<ArrayBuffer>[];
-  private decimals: Int8Array<ArrayBuffer>[];
-  private corrected: (Uint8Array<ArrayBuffer> | null)[];
+  private values: Float64Array[];
+  private decimals: Int8Array[];
+  private corrected: (Uint8Array | null)[];
   /** Positions of the number and uncertainty columns; the temperature's place among them. */
   private readonly positions: readonly number[];
   private readonly temperature: number;
@@ -200,55 +201,67 @@ export class SeriesGatherer {
   }
 
   private close(groups: readonly Group[]): RawSeries[] {
-    const { part, rows, positions } = this;
-    const { meaning } = part.plan;
-    for (let n = 0; n < rows; n++) groups[this.groupOf[n]!]!.rows++;
+    for (let n = 0; n < this.rows; n++) groups[this.groupOf[n]!]!.rows++;
+    const { order } = this;
+    const places: number[] = [];
+    let rows = 0;
+    for (const group of groups) {
+      places.push(rows);
+      rows += group.rows;
+    }
+    for (let n = 0; n < this.rows; n++) order[places[this.groupOf[n]!]!++] = n;
     const result: RawSeries[] = [];
-    for (const [number, group] of groups.entries()) {
-      if (group.rows === 0) continue;
-      const pick = group.rows === rows ? null : this.rowsOf(number, group.rows);
-      const rowStart = take(this.rowStart, pick, rows);
-      const columns: RawColumn[] = [];
-      const uncertainties: RawSeries['uncertainties'][number][] = [];
-      for (const [k, column] of positions.entries()) {
-        const { is, of } = meaning.columns[column]!;
-        const values = take(this.values[k]!, pick, rows);
-        const decimals = take(this.decimals[k]!, pick, rows);
-        if (is === 'uncertainty') uncertainties.push({ of: of!, column, values, decimals });
-        else {
-          const marks = this.corrected[k] == null ? null : take(this.corrected[k], pick, rows);
-          const corrected = marks?.includes(1) ? marks : null;
-          columns.push({
-            is: is as NumberQuantity,
-            column,
-            values,
-            decimals,
-            usualDecimals: this.usual(values, decimals),
-            corrected,
-          });
-        }
-      }
-      result.push({
-        table: meaning,
-        phase: group.phase,
-        series: group.series,
-        incrementsFrom: group.incrementsFrom,
-        rows: group.rows,
-        line: take(this.line, pick, rows),
-        columns,
-        uncertainties,
-        notes: this.notePosition < 0 ? null : pick === null ? this.notes : Array.from(pick, (n) => this.notes[n]!),
-        text: (row, column) => printedCell(part, rowStart[row]!, column),
-      });
+    let start = 0;
+    for (const group of groups) {
+      if (group.rows > 0) result.push(this.seriesOf(group, start));
+      start += group.rows;
     }
     return result;
   }
 
-  private rowsOf(group: number, rows: number): Int32Array {
-    const pick = new Int32Array(rows);
-    let at = 0;
-    for (let n = 0; n < this.rows; n++) if (this.groupOf[n] === group) pick[at++] = n;
-    return pick;
+  /** The rows `order[start]` and on. All columns of a series share one piece of memory. */
+  private seriesOf(group: Group, start: number): RawSeries {
+    const { part, positions, order } = this;
+    const { meaning } = part.plan;
+    const { rows } = group;
+    const room = new ArrayBuffer(rows * (9 * positions.length + 8));
+    const afterValues = 8 * rows * positions.length;
+    const line = pickIntegers(this.line, order, start, new Int32Array(room, afterValues, rows));
+    const rowStart = pickOffsets(this.rowStart, order, start, new Uint32Array(room, afterValues + 4 * rows, rows));
+    const columns: RawColumn[] = [];
+    const uncertainties: RawSeries['uncertainties'][number][] = [];
+    for (let k = 0; k < positions.length; k++) {
+      const column = positions[k]!;
+      const { is, of } = meaning.columns[column]!;
+      const values = pickNumbers(this.values[k]!, order, start, new Float64Array(room, 8 * rows * k, rows));
+      const decimals = pickDecimals(
+        this.decimals[k]!,
+        order,
+        start,
+        new Int8Array(room, afterValues + 8 * rows + rows * k, rows),
+      );
+      if (is === 'uncertainty') {
+        uncertainties.push({ of: of!, column, values, decimals });
+        continue;
+      }
+      const marks = this.corrected[k] ?? null;
+      const picked = marks === null ? null : Uint8Array.from(order.subarray(start, start + rows), (n) => marks[n]!);
+      const corrected = picked?.includes(1) ? picked : null;
+      const usualDecimals = this.usual(values, decimals);
+      columns.push({ is: is as NumberQuantity, column, values, decimals, usualDecimals, corrected });
+    }
+    return {
+      table: meaning,
+      phase: group.phase,
+      series: group.series,
+      incrementsFrom: group.incrementsFrom,
+      rows,
+      line,
+      columns,
+      uncertainties,
+      notes: this.notePosition < 0 ? null : Array.from(order.subarray(start, start + rows), (n) => this.notes[n]!),
+      text: (row, column) => printedCell(part, rowStart[row]!, column),
+    };
   }
 
   private usual(values: Float64Array, decimals: Int8Array): number {
@@ -263,6 +276,7 @@ export class SeriesGatherer {
     this.line = longer(this.line, new Int32Array(this.room));
     this.rowStart = longer(this.rowStart, new Uint32Array(this.room));
     this.groupOf = longer(this.groupOf, new Int32Array(this.room));
+    this.order = new Int32Array(this.room);
     this.values = this.values.map((values) => longer(values, new Float64Array(this.room)));
     this.decimals = this.decimals.map((decimals) => longer(decimals, new Int8Array(this.room)));
     this.corrected = this.corrected.map((marks) => (marks === null ? null : longer(marks, new Uint8Array(this.room))));
@@ -308,17 +322,23 @@ function longer<T extends { set(from: ArrayLike<number>): void }>(old: ArrayLike
   return fresh;
 }
 
-/** The rows of `pick`, or the first `rows` of them where all are wanted. */
-function take<
-  T extends
-    | Float64Array<ArrayBuffer>
-    | Int32Array<ArrayBuffer>
-    | Uint32Array<ArrayBuffer>
-    | Int8Array<ArrayBuffer>
-    | Uint8Array<ArrayBuffer>,
->(from: T, pick: Int32Array | null, rows: number): T {
-  if (pick === null) return from.slice(0, rows) as T;
-  const result = from.slice(0, pick.length) as T;
-  for (let i = 0; i < pick.length; i++) result[i] = from[pick[i]!]!;
-  return result;
+// One loop for each kind of array: the same loop over several kinds is several times slower.
+function pickNumbers(from: Float64Array, order: Int32Array, start: number, to: Float64Array): Float64Array {
+  for (let i = 0; i < to.length; i++) to[i] = from[order[start + i]!]!;
+  return to;
+}
+
+function pickDecimals(from: Int8Array, order: Int32Array, start: number, to: Int8Array): Int8Array {
+  for (let i = 0; i < to.length; i++) to[i] = from[order[start + i]!]!;
+  return to;
+}
+
+function pickIntegers(from: Int32Array, order: Int32Array, start: number, to: Int32Array): Int32Array {
+  for (let i = 0; i < to.length; i++) to[i] = from[order[start + i]!]!;
+  return to;
+}
+
+function pickOffsets(from: Uint32Array, order: Int32Array, start: number, to: Uint32Array): Uint32Array {
+  for (let i = 0; i < to.length; i++) to[i] = from[order[start + i]!]!;
+  return to;
 }

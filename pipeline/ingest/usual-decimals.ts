@@ -7,6 +7,8 @@ import { NO_CELL } from '../../schemas/raw.js';
  */
 export class DecimalsCount {
   private readonly nonZero = new Uint32Array(256);
+  private lowest = 256;
+  private highest = -1;
   private cells = 0;
   private mostOfZeros = NO_CELL;
 
@@ -15,22 +17,27 @@ export class DecimalsCount {
       if (decimals > this.mostOfZeros) this.mostOfZeros = decimals;
       return;
     }
-    this.nonZero[decimals + 128]!++;
+    const place = decimals + 128;
+    this.nonZero[place]!++;
     this.cells++;
+    if (place < this.lowest) this.lowest = place;
+    if (place > this.highest) this.highest = place;
   }
 
   usual(): number {
     if (this.cells === 0) return this.mostOfZeros;
     let cells = 0;
-    for (let place = 255; place > 0; place--) {
+    for (let place = this.highest; place > this.lowest; place--) {
       cells += this.nonZero[place]!;
       if (cells * 5 >= this.cells) return place - 128;
     }
-    return NO_CELL;
+    return this.lowest - 128;
   }
 
   clear(): void {
-    this.nonZero.fill(0);
+    if (this.cells > 0) this.nonZero.fill(0, this.lowest, this.highest + 1);
+    this.lowest = 256;
+    this.highest = -1;
     this.cells = 0;
     this.mostOfZeros = NO_CELL;
   }
