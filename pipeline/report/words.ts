@@ -157,8 +157,16 @@ function cell(finding: Finding, { quantity, proposed, uProposed, explanation }: 
   }[quantity as 'entropy'];
   const question = explanation === null ? 'Compare the cell with the original.' : `${capital(explanation)}?`;
   const unit = finding.unit === null ? '' : ` ${unitInWords(finding.unit)}`;
+  const { observed } = finding;
+  const text = printedText(finding);
+  const found =
+    observed === null
+      ? 'unreadable'
+      : text !== undefined && Number(text) === observed
+        ? text.replace('-', '−')
+        : figure(observed, uProposed);
   return (
-    `${symbol(quantity)}${at(finding)} is ${finding.observed === null ? 'unreadable' : figure(finding.observed, uProposed)}${unit}${printed(finding)}; ` +
+    `${symbol(quantity)}${at(finding)} is ${found}${unit}${printed(finding)}; ` +
     `${witness ?? 'the row’s other functions and its neighbours put it at'} ${plusMinus(proposed, uProposed)}. ${question}`
   );
 }
@@ -278,13 +286,17 @@ function allowed({ tolerance, unit }: Finding): string {
     : `, where ± ${figure(tolerance, tolerance)} ${unitInWords(unit)} is allowed`;
 }
 
-function printed({ address, evidence, observed }: Finding): string {
-  const text = evidence.find(
+/** What the finding's own cell says, as printed. */
+function printedText({ address, evidence }: Finding): string | undefined {
+  return evidence.find(
     ({ source, file, line, column }) =>
       source === address?.source && file === address.file && line === address.line && column === address.column,
   )?.printed;
-  if (text === undefined || (observed !== null && Number(text) === observed)) return '';
-  return ` (printed ${text})`;
+}
+
+function printed(finding: Finding): string {
+  const text = printedText(finding);
+  return text === undefined || Number(text) === finding.observed ? '' : ` (printed ${text})`;
 }
 
 function amount(value: number | null, { unit, tolerance }: Finding): string {

@@ -23,7 +23,8 @@ export interface Log {
   readonly begin: (name: string, total: number, unit: string) => void;
   /** `done` so far, of the stage begun last. */
   readonly advance: (done: number) => void;
-  readonly end: () => void;
+  /** `total`: where it was not known before. */
+  readonly end: (total?: number) => void;
   /** A result: an object for programs, and the same as lines for people. */
   readonly tell: (
     event: Readonly<Record<string, unknown>> & { readonly event: string },
@@ -62,11 +63,11 @@ function textLog({ out, err, nowMs }: LogOptions, terminal: boolean): Log {
       const line = progressLine(stage, pace(stage, done, now), (err.columns ?? 80) - 1);
       err.write(terminal ? `\r${line}\x1b[K` : `${line}\n`);
     },
-    end: () => {
+    end: (total) => {
       if (stage === null) return;
       const seconds = (nowMs() - stage.startedMs) / 1000;
       clear();
-      err.write(`${stage.name}: ${count(stage.total, stage.unit)} in ${duration(seconds)}\n`);
+      err.write(`${stage.name}: ${count(total ?? stage.total, stage.unit)} in ${duration(seconds)}\n`);
       stage = null;
     },
     tell: (_event, lines) => {

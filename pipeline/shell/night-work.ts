@@ -96,7 +96,7 @@ export function judge(
 ): { readonly cases: readonly ReconciledCase[]; readonly findings: readonly Finding[] } {
   try {
     const { artefact, findings } = runStages(
-      { substances: work.substances, from, to, parts: narrow(parts, from, to) },
+      { substances: work.substances.slice(from, to), first: from, parts: narrow(parts, from, to) },
       work.settings,
     );
     return { cases: artefact, findings };

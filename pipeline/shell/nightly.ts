@@ -1,4 +1,4 @@
-import { relative } from 'node:path';
+import { join, relative } from 'node:path';
 import type { ReleaseTables } from '../../schemas/release.js';
 import type { Summary } from '../../schemas/summary.js';
 import { concatTables, inputsTable, lossGuard, publish } from '../publish/publish.js';
@@ -6,12 +6,14 @@ import { sayFinding } from '../report/words.js';
 import type { Request } from './arguments.js';
 import { contentId } from './content-id.js';
 import { ParquetWriter } from './duckdb.js';
-import { EXIT, type ExitStatus } from './exit-status.js';
+import type { ExitStatus } from './exit-status.js';
 import { type Library, openLibrary } from './library.js';
 import type { Log } from './log.js';
 import { workThrough } from './night.js';
 import type { PartitionResult } from './night-work.js';
+import { outcomeOf } from './outcome.js';
 import {
+  type CurrentRelease,
   currentRelease,
   discardDraft,
   finishDraft,
@@ -20,7 +22,7 @@ import {
   placeDraft,
   type ReleaseDraft,
 } from './release-folder.js';
-import { writeWhole } from './release-tables.js';
+import { PART_TABLES, writeWhole } from './release-tables.js';
 import { CAUTION, cautionLines, generalLines, tally, verdictLines } from './summary-lines.js';
 import { programVersion } from './version.js';
 
@@ -31,12 +33,12 @@ export interface NightSettings {
 
 /** The nightly build: read, calculate, check, publish. Ends with the status for the scheduler. */
 export async function nightly(request: Request, log: Log, settings: NightSettings = {}): Promise<ExitStatus> {
-  const library = await openLibrary(request, log, settings.partitionBytes);
+  const library = openLibrary(request, log, settings.partitionBytes);
   const version = programVersion();
   const id = contentId({
     inputs: library.inputs,
     policy: { policy: library.settings.policy, only: library.only },
-    acceptances: library.acceptedOn(request.date),
+    acceptances: library.inForce,
     version,
   });
   const draft = await openDraft(request.out, id);
@@ -49,7 +51,7 @@ export async function nightly(request: Request, log: Log, settings: NightSetting
     const work = library.work({ release: { folder: draft.folder, contentId: id }, findings: false });
     const results = await workThrough(work, request.jobs, log, openWriter);
     const made = await writeRelease(draft, library, results, await openWriter(), version, request.date);
-    return await decide(request, log, draft, library, results, made);
+    return await conclude(request, log, draft, library, results, made);
   } finally {
     await discardDraft(draft);
     if (writer !== null) ((await writer) as ParquetWriter).close();
@@ -58,7 +60,7 @@ export async function nightly(request: Request, log: Log, settings: NightSetting
 
 interface MadeRelease {
   readonly summary: Summary;
-  readonly previous: { readonly release: string; readonly summary: Summary | null } | null;
+  readonly standing: CurrentRelease | null;
 }
 
 async function writeRelease(
@@ -69,12 +71,12 @@ async function writeRelease(
   version: string,
   date: string,
 ): Promise<MadeRelease> {
-  const current = await currentRelease(draft.outFolder);
-  const previous = current?.summary === 'unreadable' ? null : (current?.summary ?? null);
+  const standing = await currentRelease(draft.outFolder);
+  const previous = standing === null || standing.summary === 'unreadable' ? null : standing.summary;
   const general = library.general(results);
   const tables = concatTables([
     smallTables(publish([], { sentence: sayFinding, general }).artefact),
-    ...results.map(({ tables }) => tables!),
+    ...results.map((result) => result.tables!),
   ]);
   const records = await writeWhole(
     writer,
@@ -90,47 +92,44 @@ async function writeRelease(
     substances: tables.substances!,
     previous,
   });
-  return { summary, previous: current === null ? null : { release: current.release, summary: previous } };
+  return { summary, standing };
 }
 
-/** Places the release and moves `current`, or says why not. */
-async function decide(
+/** Places the release, moves `current` or leaves it, and says which and why. */
+async function conclude(
   request: Request,
   log: Log,
   draft: ReleaseDraft,
   library: Library,
   results: readonly PartitionResult[],
-  { summary, previous }: MadeRelease,
+  { summary, standing }: MadeRelease,
 ): Promise<ExitStatus> {
   const lines = results.flatMap((result) => result.lines);
   const counts = tally(lines);
-  const guard = lossGuard(previous?.summary ?? null, summary, library.settings.policy.lossGuard);
-  const nothing = counts.cleared + counts.flagged === 0;
-  const held = !nothing && guard.held && !request.acceptLosses;
+  const previous = standing === null || standing.summary === 'unreadable' ? null : standing.summary;
   const { folder } = await placeDraft(draft);
-  if (!nothing && !held) await moveCurrent(request.out, draft.release);
-  const path = relative('.', folder) || folder;
-  const status = nothing
-    ? EXIT.nothing
-    : held
-      ? EXIT.heldBack
-      : request.strict && counts.withheld > 0
-        ? EXIT.withheld
-        : EXIT.done;
-  const outcome = nothing ? 'nothing-to-publish' : held ? 'held-back' : 'published';
-  const stands = previous === null ? 'There is no older release.' : `Release ${previous.release} still stands.`;
-  const where = nothing
-    ? [`Nothing could be published: every substance is withheld. ${stands}`, `What was found is kept in ${path}.`]
-    : held
-      ? [
-          `Held back: ${guard.lost.length} of ${guard.clearedBefore} substances that are cleared now would be withheld. ${stands}`,
-          `The new release is kept in ${path}. Mend the tables, or publish it with --accept-losses.`,
-        ]
-      : [`Release ${draft.release} is in ${path}, and ${relative('.', request.out) || '.'}/current leads to it.`];
+  const {
+    kind,
+    status,
+    lost,
+    lines: words,
+  } = outcomeOf({
+    ...counts,
+    standing,
+    substances: lines.map(({ substance }) => substance),
+    limited: library.only !== null,
+    guard: lossGuard(previous, summary, library.settings.policy.lossGuard),
+    acceptLosses: request.acceptLosses,
+    strict: request.strict,
+    release: draft.release,
+    path: forPeople(folder),
+    current: forPeople(join(request.out, 'current')),
+  });
+  if (kind === 'published') await moveCurrent(request.out, draft.release);
   log.tell(
     {
       event: 'summary',
-      outcome,
+      outcome: kind,
       status,
       release: draft.release,
       contentId: draft.contentId,
@@ -138,16 +137,22 @@ async function decide(
       substances: lines.length,
       ...counts,
       withheldSubstances: lines.filter(({ verdict }) => verdict === 'withheld'),
-      lost: held ? guard.lost : [],
+      lost,
       caution: CAUTION,
     },
-    [...generalLines(library.general(results)), ...verdictLines(lines), '', ...where, ...cautionLines()],
+    [...generalLines(library.general(results)), ...verdictLines(lines), '', ...words, ...cautionLines()],
   );
   return status;
 }
 
-const LARGE = ['functions', 'pieces', 'coverage'];
+/** A path as short as it can be said from here. */
+function forPeople(path: string): string {
+  const near = relative('.', path);
+  return near === '' || near.startsWith('..') ? path : near;
+}
 
 function smallTables(tables: ReleaseTables): Partial<ReleaseTables> {
-  return Object.fromEntries(Object.entries(tables).filter(([name]) => !LARGE.includes(name)));
+  return Object.fromEntries(
+    Object.entries(tables).filter(([name]) => !(PART_TABLES as readonly string[]).includes(name)),
+  );
 }

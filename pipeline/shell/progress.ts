@@ -1,4 +1,4 @@
-import { count } from './text.js';
+import { count, grouped } from './text.js';
 
 /** One stage of work under way. */
 export interface Stage {
@@ -28,8 +28,8 @@ export function pace({ total, startedMs }: Stage, done: number, nowMs: number): 
 export function progressLine(stage: Stage, { done, rate, secondsLeft }: Pace, width: number): string {
   const parts = [
     stage.name,
-    `${done.toLocaleString('en-GB')} of ${count(stage.total, stage.unit)}`,
-    rate === null ? '' : `${Math.round(rate).toLocaleString('en-GB')}/s`,
+    `${grouped(done)} of ${count(stage.total, stage.unit)}`,
+    rate === null ? '' : `${grouped(rate)}/s`,
     secondsLeft === null ? '' : `${duration(secondsLeft)} left`,
   ];
   return parts

@@ -10,12 +10,15 @@ import { checkCurves, examine } from '../check/check.js';
 import { harmonise } from '../harmonise/harmonise.js';
 import { type IngestInput, ingest } from '../ingest/ingest.js';
 import { reconcile } from '../reconcile/reconcile.js';
+import { accountForAll } from './account-for-all.js';
 
 export interface StageSettings {
   readonly policy: Policy;
   readonly accepted: readonly Acceptance[];
   /** YYYY-MM-DD. */
   readonly date: string;
+  /** Findings about substances from before their tables are read: rows of substances.csv. */
+  readonly listed: ReadonlyMap<string, readonly Finding[]>;
 }
 
 interface Result<Artefact> {
@@ -35,6 +38,7 @@ function stage<Before, After>(name: string, run: Stage<Before, After>['run']): S
 /** The stages in their order, from the bytes of tables to verdicts. Publishing follows, a batch at a time. */
 export const STAGES = [
   stage('ingest', (input: IngestInput) => ingest(input)),
+  stage('account for every substance', (cases: readonly RawCase[], settings) => accountForAll(cases, settings)),
   stage('harmonise', (cases: readonly RawCase[], { policy }) => harmonise(cases, { policy })),
   stage('examine the tables', (cases: readonly HarmonisedCase[], { policy }) => examine(cases, { policy })),
   stage('assemble', (cases: readonly ExaminedCase[], { policy }) => assemble(cases, { policy })),

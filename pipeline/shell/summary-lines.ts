@@ -1,3 +1,5 @@
+import type { Finding } from '../../schemas/finding.js';
+import { sayFinding } from '../report/words.js';
 import { count, table, wrap } from './text.js';
 import type { VerdictLine } from './verdict-line.js';
 
@@ -13,6 +15,19 @@ export function verdictLines(lines: readonly VerdictLine[]): string[] {
     `${count(lines.length, 'substance')}: ${cleared} cleared, ${flagged} flagged, ${withheld} withheld`,
     ...named('Withheld', 'withheld', lines),
     ...named('Flagged', 'flagged', lines),
+  ];
+}
+
+/** Findings that belong to a source or to the whole run, notes left out. */
+export function generalLines(findings: readonly Finding[]): string[] {
+  const grave = findings.filter(({ severity }) => severity !== 'note');
+  if (grave.length === 0) return [];
+  const shown = grave.slice(0, MOST_NAMED);
+  return [
+    'Sources',
+    ...shown.flatMap((finding) => wrap(sayFinding(finding), 76).map((line, i) => `${i === 0 ? '  ' : '    '}${line}`)),
+    ...(grave.length > shown.length ? [`  and ${grave.length - shown.length} more, in the table "findings"`] : []),
+    '',
   ];
 }
 

@@ -26,5 +26,10 @@ export function table(rows: readonly (readonly string[])[], right: readonly numb
 
 /** `1 substance`, `24 substances`. */
 export function count(n: number, one: string, many = `${one}s`): string {
-  return `${n.toLocaleString('en-GB')} ${n === 1 ? one : many}`;
+  return `${grouped(n)} ${n === 1 ? one : many}`;
+}
+
+/** A whole number with commas between its thousands. */
+export function grouped(n: number): string {
+  return String(Math.round(n)).replace(/\B(?=(\d{3})+$)/g, ',');
 }

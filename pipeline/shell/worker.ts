@@ -16,9 +16,10 @@ port.on('message', (partition: number) => {
   workPartition(work, partition, openWriter, (progress) => say({ progress })).then(
     (result) => say({ result }),
     // Thrown outside the promise, so that the thread ends and the night with it.
-    (error: unknown) => setImmediate(() => {
-      throw error;
-    }),
+    (error: unknown) =>
+      setImmediate(() => {
+        throw error;
+      }),
   );
 });
 
