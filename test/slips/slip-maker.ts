@@ -45,7 +45,7 @@ export interface SlipWish {
   /** Any substance where left out. */
   readonly substance?: string;
   readonly random: Random;
-  /** Times the least change; for cells of tables. Default: log-uniform from 1 to 20. */
+  /** Times the least change; for cells of tables. Default: log-uniform from 1 to 20, at most half of the figure. */
   readonly size?: number;
   /** Least change of a cell in its own unit; Infinity where none is ever seen. Default `designLimit`. */
   readonly least?: (cell: SourceCell) => number;
@@ -63,6 +63,8 @@ const QUANTITIES: Readonly<Record<SlipKind, readonly string[]>> = {
 };
 const TABLE_KINDS: readonly SlipKind[] = ['entropy', 'enthalpy-increment', 'gibbs-function', 'heat-capacity'];
 const LARGEST_TIMES_LEAST = 20;
+/** … and no more than this share of the figure, unless the least change is larger. */
+const LARGEST_SHARE = 0.5;
 
 /**
  * Plants a slip in `sourcesDir`, which must be a copy. Returns null where no cell of that kind can hold one large enough.
@@ -151,7 +153,8 @@ function spoilt(kind: SlipKind, cell: SourceCell, needed: number, random: Random
       return (cell.value - 273.15).toFixed(cell.decimals);
     default: {
       const lastPlace = 10 ** -cell.decimals;
-      const times = size ?? random.logBetween(1, LARGEST_TIMES_LEAST);
+      const largest = Math.min(LARGEST_TIMES_LEAST, (LARGEST_SHARE * Math.abs(cell.value)) / needed);
+      const times = size ?? random.logBetween(1, Math.max(1, largest));
       const places = Math.ceil((needed * times) / lastPlace - 1e-9);
       const change = (random.unit() < 0.5 ? -1 : 1) * places * lastPlace;
       // A heat capacity or an entropy keeps its sign: a negative one would be another kind of slip.

@@ -87,7 +87,7 @@ function identity(finding: Seen['findings'][number]): string {
   return `${finding.finding} ${finding.evidenceHash} ${finding.severity}`;
 }
 
-/** Rules that test a quantity, each with the factor from its unit to the column's SI unit. */
+/** Rules that test a quantity and speak in its own unit. */
 const TESTED_BY: Readonly<Record<string, readonly string[]>> = {
   entropy: ['entropy-follows-heat-capacity', 'functions-close'],
   'gibbs-function': ['functions-close'],
@@ -98,23 +98,33 @@ const TESTED_BY: Readonly<Record<string, readonly string[]>> = {
   'transition-temperature': ['crossing-agrees'],
   'transition-enthalpy': ['transition-entropy-closes'],
 };
+/** Rules in the unit of an entropy that test an enthalpy too: an error in H shows as H/T. */
+const TESTED_TIMES_T: Readonly<Record<string, readonly string[]>> = { 'enthalpy-increment': ['functions-close'] };
 
 /** A slip is planted at this many times the smallest error that the clean library's run says it would reveal, or more. */
 export const TIMES_DETECTABLE = 1.5;
 
 /**
  * Least change of a cell, in its own unit: the design's limit, and 1.5 times the printed smallest detectable error where
- * one is printed. Infinity where every rule that could test the cell says that it is untestable.
+ * one is printed (of several rules the sharpest). Infinity where each rule that could test the cell is untestable there.
  */
 export function leastFrom(clean: Seen): (cell: SourceCell) => number {
   return (cell) => {
-    const rules = TESTED_BY[cell.quantity] ?? [];
-    const outcomes = clean.coverage.filter(
-      (row) => row.substance === cell.substance && rules.includes(row.rule) && concerns(row.place, cell),
-    );
-    const testable = outcomes.filter((row) => row.outcome !== 'untestable');
-    if (testable.length === 0) return Number.POSITIVE_INFINITY;
-    const printed = testable.flatMap((row) => (row.smallestDetectable === null ? [] : [row.smallestDetectable]));
+    const testable = (rules: readonly string[]) =>
+      clean.coverage.filter(
+        (row) =>
+          row.substance === cell.substance &&
+          rules.includes(row.rule) &&
+          row.outcome !== 'untestable' &&
+          concerns(row.place, cell),
+      );
+    const own = testable(TESTED_BY[cell.quantity] ?? []);
+    const timesT = testable(TESTED_TIMES_T[cell.quantity] ?? []);
+    if (own.length + timesT.length === 0) return Number.POSITIVE_INFINITY;
+    const printed = [
+      ...own.flatMap((row) => row.smallestDetectable ?? []),
+      ...timesT.flatMap((row) => (row.smallestDetectable ?? Number.NaN) * cell.temperatureK),
+    ].filter((smallest) => !Number.isNaN(smallest));
     const si = printed.length === 0 ? 0 : Math.min(...printed);
     return Math.max(designLimit(cell), (TIMES_DETECTABLE * si) / (cell.unit.startsWith('k') ? 1000 : 1));
   };

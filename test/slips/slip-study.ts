@@ -3,7 +3,7 @@ import { cpSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { seededRandom } from './random.js';
-import { plantSlip, SLIP_KINDS, type Slip, type SlipKind } from './slip-maker.js';
+import { designLimit, plantSlip, SLIP_KINDS, type Slip, type SlipKind } from './slip-maker.js';
 import { leastFrom, type Seen, type SlipScore, scoreSlip } from './slip-score.js';
 import { listCells } from './source-cells.js';
 
@@ -19,6 +19,12 @@ export interface Study {
   readonly without: readonly { readonly seed: number; readonly kind: SlipKind }[];
 }
 
+export interface StudyOptions {
+  readonly kinds?: readonly SlipKind[];
+  /** `printed`: slips from 1.5 times the printed smallest detectable error up; `design`: from the design's limits up, though the clean run may say that so little would not be seen. */
+  readonly sizes?: 'printed' | 'design';
+}
+
 /**
  * The kinds take turns with the seeds.
  * @param run everything that a run says about a sources folder
@@ -27,11 +33,11 @@ export async function studySlips(
   sourcesDir: string,
   seeds: readonly number[],
   run: (sourcesDir: string) => Promise<Seen>,
-  kinds: readonly SlipKind[] = SLIP_KINDS,
+  { kinds = SLIP_KINDS, sizes = 'printed' }: StudyOptions = {},
 ): Promise<Study> {
   const clean = await run(sourcesDir);
   const cells = listCells(sourcesDir);
-  const least = leastFrom(clean);
+  const least = sizes === 'printed' ? leastFrom(clean) : designLimit;
   const studied: Studied[] = [];
   const without: { seed: number; kind: SlipKind }[] = [];
   for (const [turn, seed] of seeds.entries()) {
