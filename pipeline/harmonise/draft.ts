@@ -11,7 +11,8 @@ export interface DraftQuantity {
   owned: boolean;
   /** May be shared with other series: replaced, never written to. */
   present: Uint8Array;
-  readonly halfUnit: Float64Array;
+  /** May be shared with other series: replaced, never written to. */
+  halfUnit: Float64Array;
   /** May be shared with other series: replaced, never written to. */
   uOwn: Float64Array;
   readonly uSharedRelative: number;

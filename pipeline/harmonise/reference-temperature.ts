@@ -116,8 +116,8 @@ function apply(draft: Draft, { enthalpy, bound, u }: Move): void {
     for (let i = 0; i < values.length; i++) {
       if (increments.present[i] === 0) continue;
       values[i] -= enthalpy;
-      increments.halfUnit[i] += bound;
     }
+    if (bound > 0) increments.halfUnit = increments.halfUnit.map((half) => half + bound);
     if (u > 0) increments.uOwn = increments.uOwn.map((own) => Math.hypot(own, u));
   }
   const gibbs = draft.quantities['gibbs-function'];
@@ -132,9 +132,11 @@ function apply(draft: Draft, { enthalpy, bound, u }: Move): void {
       continue;
     }
     values[i] += enthalpy / temperatureK[i];
-    gibbs.halfUnit[i] += bound / temperatureK[i];
   }
   gibbs.present = present;
+  if (bound > 0) {
+    gibbs.halfUnit = gibbs.halfUnit.map((half, i) => (present[i] === 1 ? half + bound / temperatureK[i] : half));
+  }
   if (u > 0) gibbs.uOwn = gibbs.uOwn.map((own, i) => (present[i] === 1 ? Math.hypot(own, u / temperatureK[i]) : own));
 }
 

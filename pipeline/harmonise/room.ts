@@ -3,11 +3,12 @@
  * Thirty rows at a time, separate arrays cost more in garbage collection than all arithmetic on them.
  */
 const BLOCK = 1 << 15;
+const MOST_KEPT = 32;
 
 export class Room {
   private block = new Float64Array(0);
   private used = 0;
-  private readonly zero = new Map<number, Float64Array>();
+  private readonly same = new Map<number, Map<number, Float64Array>>();
   private readonly one = new Map<number, Uint8Array>();
 
   /** `length` zeros that belong to the caller. */
@@ -22,12 +23,19 @@ export class Room {
     return view;
   }
 
-  /** `length` zeros that many share: never to be written to. */
-  zeros(length: number): Float64Array {
-    let shared = this.zero.get(length);
+  /** `value`, `length` times, shared by many: never to be written to. */
+  constant(length: number, value: number): Float64Array {
+    let sameLength = this.same.get(length);
+    if (sameLength === undefined) {
+      sameLength = new Map();
+      this.same.set(length, sameLength);
+    }
+    let shared = sameLength.get(value);
     if (shared === undefined) {
-      shared = new Float64Array(length);
-      this.zero.set(length, shared);
+      // By mass, each substance has a value of its own; keeping those would only hold memory.
+      if (sameLength.size >= MOST_KEPT) sameLength.clear();
+      shared = this.numbers(length).fill(value);
+      sameLength.set(value, shared);
     }
     return shared;
   }

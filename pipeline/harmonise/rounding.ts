@@ -10,7 +10,8 @@ export function halfUnitOf(decimals: number, factor: number): number {
 /**
  * Half a unit of the last place of each row [SI]: the column's usual one, since zeros at the end are often not written
  * ("0." is not zero decimals). Where a fifth or more of the rows print fewer decimals and all of those are at least as
- * large as the rest, the column keeps its significant digits and those rows have their own last place.
+ * large as the rest, the column keeps its significant digits and those rows have their own last place. The array may be
+ * shared with other columns: never to be written to.
  */
 export function halfUnits(
   values: Float64Array,
@@ -19,7 +20,24 @@ export function halfUnits(
   factor: number,
   room: Room,
 ): Float64Array {
-  const halves = room.numbers(values.length).fill(halfUnitOf(usualDecimals, factor));
+  const usual = halfUnitOf(usualDecimals, factor);
+  let coarse = 0;
+  for (let i = 0; i < decimals.length; i++) if (decimals[i] < usualDecimals) coarse++;
+  if (coarse * 5 < decimals.length || !keepsSignificantDigits(values, decimals, usualDecimals)) {
+    return room.constant(values.length, usual);
+  }
+  const halves = room.numbers(values.length).fill(usual);
+  for (let i = 0; i < values.length; i++) {
+    if (isCoarse(values[i], decimals[i], usualDecimals)) halves[i] = halfUnitOf(decimals[i], factor);
+  }
+  return halves;
+}
+
+function isCoarse(value: number, decimals: number, usualDecimals: number): boolean {
+  return decimals !== NO_CELL && value !== 0 && decimals < usualDecimals;
+}
+
+function keepsSignificantDigits(values: Float64Array, decimals: Int8Array, usualDecimals: number): boolean {
   let coarse = 0;
   let cells = 0;
   let smallestCoarse = Number.POSITIVE_INFINITY;
@@ -28,17 +46,10 @@ export function halfUnits(
     if (decimals[i] === NO_CELL || values[i] === 0) continue;
     const size = Math.abs(values[i]);
     cells++;
-    if (decimals[i] < usualDecimals) {
+    if (isCoarse(values[i], decimals[i], usualDecimals)) {
       coarse++;
       if (size < smallestCoarse) smallestCoarse = size;
     } else if (size > largestFine) largestFine = size;
   }
-  if (coarse > 0 && coarse * 5 >= cells && smallestCoarse >= largestFine) {
-    for (let i = 0; i < values.length; i++) {
-      if (decimals[i] !== NO_CELL && values[i] !== 0 && decimals[i] < usualDecimals) {
-        halves[i] = halfUnitOf(decimals[i], factor);
-      }
-    }
-  }
-  return halves;
+  return coarse > 0 && coarse * 5 >= cells && smallestCoarse >= largestFine;
 }

@@ -92,7 +92,7 @@ function draftQuantity(
   }
   const halfUnit =
     column.column === FROM_DESCRIPTOR
-      ? room.numbers(raw.rows)
+      ? room.constant(raw.rows, 0)
       : halfUnits(column.values, decimals, column.usualDecimals, factor, room);
   const { uOwn, uSharedRelative, origin } = seriesUncertainty(
     raw,

@@ -43,7 +43,7 @@ export function seriesUncertainty(
   const declared = column < 0 ? [] : table.columns[column].uncertainty;
   const printed = raw.uncertainties.filter((entry) => entry.of === quantity);
   if (declared.length === 0 && printed.length === 0 && !takesDefault(table.basis)) {
-    return { uOwn: room.zeros(values.length), uSharedRelative: 0, origin: 'printed digits' };
+    return { uOwn: room.constant(values.length, 0), uSharedRelative: 0, origin: 'printed digits' };
   }
   const uOwn = room.numbers(values.length);
   let sharedVariance = 0;

@@ -163,7 +163,7 @@ const GRID_K = 5;
 const GRID_TOP_K = 2000;
 const grids = new Map<TemperatureScaleName, Float64Array>();
 
-/** The largest of `possibleDifferenceK` between two temperatures [K], looked up every 5 K and at both ends. */
+/** The largest of `possibleDifferenceK` between two temperatures [K], looked up every 5 K from below the one to above the other. */
 export function largestPossibleDifferenceK(lowK: number, highK: number, scale: TemperatureScaleName): number {
   if (scale === 'ITS-90' || scale === 'thermodynamic') return 0;
   let grid = grids.get(scale);
@@ -171,8 +171,9 @@ export function largestPossibleDifferenceK(lowK: number, highK: number, scale: T
     grid = Float64Array.from({ length: GRID_TOP_K / GRID_K + 1 }, (_, i) => possibleDifferenceK(i * GRID_K, scale));
     grids.set(scale, grid);
   }
-  let largest = Math.max(possibleDifferenceK(lowK, scale), possibleDifferenceK(highK, scale));
-  const last = Math.min(Math.floor(highK / GRID_K), grid.length - 1);
-  for (let i = Math.max(Math.ceil(lowK / GRID_K), 0); i <= last; i++) if (grid[i] > largest) largest = grid[i];
+  // Above the grid the bound only rises.
+  let largest = highK > GRID_TOP_K ? possibleDifferenceK(highK, scale) : 0;
+  const last = Math.min(Math.ceil(highK / GRID_K), grid.length - 1);
+  for (let i = Math.max(Math.floor(lowK / GRID_K), 0); i <= last; i++) if (grid[i] > largest) largest = grid[i];
   return largest;
 }
