@@ -182,7 +182,7 @@ async function writeJson(folder: string, name: string, value: object): Promise<v
 async function syncTree(folder: string): Promise<void> {
   const files = await filesIn(folder);
   const folders = new Set(['.', ...files.map((path) => dirname(path))]);
-  for (const path of [...files, ...folders]) await sync(join(folder, path));
+  await Promise.all([...files, ...folders].map((path) => sync(join(folder, path))));
 }
 
 /** `contents.json` last: until then the release does not verify. */

@@ -15,7 +15,7 @@ import {
 } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, test } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, test, vi } from 'vitest';
 import { inputsTable, publish } from '../../pipeline/publish/publish.js';
 import { contentId, releaseName } from '../../pipeline/shell/content-id.js';
 import { ParquetWriter } from '../../pipeline/shell/duckdb.js';
@@ -49,6 +49,8 @@ const INPUTS: InputFile[] = [
   },
 ];
 
+/** Files are written through to the disk, which may be slow. */
+vi.setConfig({ testTimeout: 60_000, hookTimeout: 60_000 });
 let writer: ParquetWriter;
 let out: string;
 beforeAll(async () => {

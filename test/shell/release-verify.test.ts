@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import { appendFileSync, cpSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, test } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, test, vi } from 'vitest';
 import { inputsTable, publish } from '../../pipeline/publish/publish.js';
 import { ParquetWriter } from '../../pipeline/shell/duckdb.js';
 import { finishDraft, openDraft, placeDraft } from '../../pipeline/shell/release-folder.js';
@@ -12,6 +12,8 @@ import type { Contents } from '../../schemas/contents.js';
 import { finding, reconciled, sentence } from '../publish/hand-made.js';
 
 const ID = 'a'.repeat(64);
+/** Files are written through to the disk, which may be slow. */
+vi.setConfig({ testTimeout: 60_000, hookTimeout: 60_000 });
 let whole: string;
 let folder: string;
 let writer: ParquetWriter;
