@@ -3,7 +3,8 @@ import type { NumberQuantity, TextQuantity } from '../../schemas/quantities.js';
 import { NO_CELL, type RawColumn, type RawSeries } from '../../schemas/raw.js';
 import { phaseWanted, resolvePhase } from './phase.js';
 import type { IngestPart, WordFrom } from './plan.js';
-import { printedCell, type RowReader } from './row-reader.js';
+import { printedCell, type RowReader, splitterOf } from './row-reader.js';
+import type { RowSplitter } from './row-splitter.js';
 import { DecimalsCount } from './usual-decimals.js';
 
 interface Group {
@@ -33,12 +34,14 @@ export class SeriesGatherer {
   private readonly notePosition: number;
   private readonly keyPositions: readonly number[];
   private readonly count = new DecimalsCount();
+  private readonly lookBack: RowSplitter;
 
   constructor(
     private readonly part: IngestPart,
     private readonly reader: RowReader,
   ) {
     const { meaning, words } = part.plan;
+    this.lookBack = splitterOf(part);
     const positions: number[] = [];
     for (const [position, { unit }] of meaning.columns.entries()) if (unit !== null) positions.push(position);
     this.positions = positions;
@@ -221,7 +224,7 @@ export class SeriesGatherer {
 
   /** The rows `order[start]` and on. All columns of a series share one piece of memory. */
   private seriesOf(group: Group, start: number): RawSeries {
-    const { part, positions, order } = this;
+    const { part, positions, order, lookBack } = this;
     const { meaning } = part.plan;
     const { rows } = group;
     const room = new ArrayBuffer(rows * (9 * positions.length + 8));
@@ -260,7 +263,7 @@ export class SeriesGatherer {
       columns,
       uncertainties,
       notes: this.notePosition < 0 ? null : Array.from(order.subarray(start, start + rows), (n) => this.notes[n]!),
-      text: (row, column) => printedCell(part, rowStart[row]!, column),
+      text: (row, column) => printedCell(part, lookBack, rowStart[row]!, column),
     };
   }
 

@@ -38,7 +38,7 @@ export class RowReader {
     readonly readings: () => Readings,
   ) {
     const { plan, index, corrections } = part;
-    this.row = new RowSplitter(plan.layout, index.newline);
+    this.row = splitterOf(part);
     this.numbers = new NumberReader(plan.layout.decimal);
     this.passes = rowFilter(plan, index.whereAt);
     this.missing = new Set(plan.layout.missing);
@@ -112,7 +112,9 @@ export class RowReader {
 
   /** The cell as the file prints it, before corrections. */
   printed(position: number): string {
-    return this.corrected === null ? this.text(position) : printedCell(this.part, this.rowStart, position);
+    return this.corrected === null
+      ? this.text(position)
+      : printedCell(this.part, splitterOf(this.part), this.rowStart, position);
   }
 
   address(position: number): Address {
@@ -180,8 +182,12 @@ export class RowReader {
 }
 
 /** The text that a file prints for column `position` of the row at `rowStart`; '' where the row has no such cell. */
-export function printedCell(part: IngestPart, rowStart: number, position: number): string {
+export function printedCell(part: IngestPart, splitter: RowSplitter, rowStart: number, position: number): string {
   const cell = part.index.cellAt[position] ?? -1;
-  const splitter = new RowSplitter(part.plan.layout, part.index.newline);
   return splitter.split(part.bytes, rowStart, part.bytes.length) ? splitter.text(cell) : '';
+}
+
+/** Another splitter for the same table, so that looking back at a cell does not disturb the reading. */
+export function splitterOf({ plan, index }: IngestPart): RowSplitter {
+  return new RowSplitter(plan.layout, index.newline);
 }
