@@ -27,6 +27,10 @@ export interface ExaminedCase {
 /** A stated transition beside what the curves give. */
 export interface JudgedTransition {
   readonly stated: StatedTransition;
+  /** Index of the transition among the substance's, and of its two curves among the assembled ones; -1 where there is none. */
+  readonly index: number;
+  readonly fromCurve: number;
+  readonly toCurve: number;
   readonly computedK: number | null;
   readonly uComputedK: number | null;
   readonly gapJPerMol: number | null;

@@ -2,20 +2,16 @@ import type { Crossing, PhaseCurve } from '../../schemas/curves.js';
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { enthalpyAt, entropyAt } from '../core/physics/curve.js';
-import { gibbsUncertainty } from '../core/physics/curve-uncertainty.js';
-import { crossingsOf, type DiagramPhase, gibbsInDiagram } from '../core/physics/diagram.js';
-import { condensedTermUncertainty, gasTerm, type PressureTerm } from '../core/physics/pressure-terms.js';
+import { crossingsOf, gibbsInDiagram } from '../core/physics/diagram.js';
+import {
+  type DiagramSetting,
+  gapUncertainty,
+  isGas,
+  type PlacedPhase,
+  placePhase,
+} from '../core/physics/placed-phase.js';
 
-interface Placed extends DiagramPhase {
-  readonly source: PhaseCurve;
-  readonly term: PressureTerm | null;
-  readonly gas: boolean;
-}
-
-interface Setting {
-  readonly pressurePa: number;
-  readonly gas: 'real' | 'ideal';
-}
+type Placed = PlacedPhase<PhaseCurve>;
 
 /** Diagram settings: the policy's pressure with the real gas first, then each stated transition's own. */
 export function crossingsOfCase(substance: HarmonisedCase, curves: readonly PhaseCurve[], policy: Policy): Crossing[] {
@@ -45,16 +41,12 @@ export function crossingsOfCase(substance: HarmonisedCase, curves: readonly Phas
   return found;
 }
 
-export function isGas(phase: string): boolean {
-  return phase === 'g' || phase.startsWith('g-');
-}
-
 function comparable(a: PhaseCurve, b: PhaseCurve): boolean {
   return a.hasEnthalpyLevel && b.hasEnthalpyLevel && a.hasEntropyLevel && b.hasEntropyLevel;
 }
 
-function settingsOf(substance: HarmonisedCase, policy: Policy, hasGas: boolean): Setting[] {
-  const settings: Setting[] = [{ pressurePa: policy.pressurePa, gas: 'real' }];
+function settingsOf(substance: HarmonisedCase, policy: Policy, hasGas: boolean): DiagramSetting[] {
+  const settings: DiagramSetting[] = [{ pressurePa: policy.pressurePa, gas: 'real' }];
   for (const t of substance.transitions) {
     const gas = t.gas ?? 'real';
     if (gas === 'ideal' && !hasGas) continue;
@@ -65,22 +57,8 @@ function settingsOf(substance: HarmonisedCase, policy: Policy, hasGas: boolean):
   return settings;
 }
 
-export function place(curve: PhaseCurve, substance: HarmonisedCase, setting: Setting): Placed {
-  const gas = isGas(curve.phase);
-  const term =
-    gas && curve.family.isobarPa === null
-      ? gasTerm(substance.substance, setting.gas, setting.pressurePa, boilingOf(substance))
-      : null;
-  return {
-    curve,
-    source: curve,
-    lowK: Math.max(curve.knotK[0], 1e-3),
-    highK: curve.knotK[curve.knotK.length - 1],
-    shift: term === null ? null : term.shift,
-    term,
-    gas,
-    formulaUnits: gas ? (substance.substance.vapourSpecies?.formulaUnits ?? 1) : 1,
-  };
+export function place(curve: PhaseCurve, substance: HarmonisedCase, setting: DiagramSetting): Placed {
+  return placePhase(curve, substance.substance, setting, boilingOf(substance));
 }
 
 /** The stated boiling or sublimation temperature, for the simple-fluid estimate; 500 K where none is stated. */
@@ -94,7 +72,7 @@ function crossingAt(
   a: Placed,
   b: Placed,
   all: readonly Placed[],
-  setting: Setting,
+  setting: DiagramSetting,
   gas: boolean,
 ): Crossing {
   const step = Math.max(1e-3, 1e-6 * temperatureK);
@@ -125,12 +103,4 @@ function crossingAt(
     stable,
     measured: inData(a) && inData(b),
   };
-}
-
-/** u(dG) at T: both curves, the gas term, and the unknown volumes of condensed phases off the standard pressure. */
-export function gapUncertainty(a: Placed, b: Placed, temperatureK: number, pressurePa: number): number {
-  const part = (p: Placed): number => gibbsUncertainty(p.source, temperatureK) / p.formulaUnits;
-  const gas = (p: Placed): number => (p.term === null ? 0 : p.term.u(temperatureK) / p.formulaUnits);
-  const volume = a.source.family.isobarPa === null ? condensedTermUncertainty(pressurePa) : 0;
-  return Math.hypot(part(a), part(b), gas(a), gas(b), volume);
 }

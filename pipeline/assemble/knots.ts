@@ -68,7 +68,6 @@ export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | nu
     const u = uncertainty(cp, row);
     if (n > 0 && t === knots.temperatureK[n - 1]) {
       const previous = n - 1;
-      const same = cp.values[row] === knots.heatCapacity[previous];
       if (measured) {
         // A run that returned to this temperature: the weighted mean of the two.
         const w1 = weight(knots.uHeatCapacity[previous]);
@@ -79,7 +78,6 @@ export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | nu
       }
       if (n > 1 && knots.temperatureK[n - 2] === t) continue;
       const apart = differs(H, row, knots.row[previous]) || differs(S, row, knots.row[previous]);
-      if (same && !apart) continue;
       knots.twin[n] = 1;
       knots.jump[n] = apart ? 1 : 0;
     }

@@ -90,7 +90,14 @@ export function judgeTable(
       for (const rival of c.rivals) {
         place++;
         suspects.push(
-          suspectOf(finding.id, substance, series, { ...c, ...rival, observed: cellValue(series, rival) }, place, group),
+          suspectOf(
+            finding.id,
+            substance,
+            series,
+            { ...c, ...rival, observed: cellValue(series, rival) },
+            place,
+            group,
+          ),
         );
       }
     }
@@ -105,7 +112,7 @@ export function judgeTable(
     findings.push(
       makeFinding({
         rule: rule.rule,
-        severity: a.material ? 'fault' : 'note',
+        severity: a.material ? (a.gross ? 'fault' : 'doubt') : 'note',
         substance,
         fromPhase: series.phase,
         temperatureK: series.temperatureK[a.row],

@@ -34,6 +34,8 @@ export interface Anomaly {
   readonly difference: number;
   readonly tolerance: number;
   readonly material: boolean;
+  /** More than a tenth of what the interval itself changes by: no step between two fits, but something broken. */
+  readonly gross: boolean;
 }
 
 export interface TableVerdict {
@@ -61,6 +63,10 @@ export function nameCells(series: Series, policy: Policy): TableVerdict | null {
   let res = residuals(rows);
   const detectable = smallest(rows, res, policy);
   let hot = screen(rows, res, policy);
+  if (hot.length > 0) {
+    res = residuals(rows, true);
+    hot = screen(rows, res, policy);
+  }
   while (hot.length > 0 && cells.length < MOST_NAMES) {
     const best = bestOf(rows, res, hot, policy);
     if (best === null) break;
@@ -69,7 +75,7 @@ export function nameCells(series: Series, policy: Policy): TableVerdict | null {
     const next = tableRows(current);
     if (next === null) break;
     rows = next;
-    res = residuals(rows);
+    res = residuals(rows, true);
     hot = screen(rows, res, policy);
   }
   const anomalies = hot.length === 0 ? [] : leftOver(rows, res, policy);
@@ -87,7 +93,7 @@ function screen(rows: TableRows, res: Residuals, policy: Policy): number[] {
       const u2 = cellU(s, r) ** 2 + cellU(f, r) ** 2 + (cellU(h, r) / rows.t[i]) ** 2;
       over = (res.closure[i] * res.closure[i]) / u2;
     }
-    if (i < n - 1 && res.usable[i] === 1) {
+    if (i < n - 1 && res.usable[i] !== 0) {
       const r = rows.row[i];
       const next = rows.row[i + 1];
       const hasH = h !== null && h.present[r] === 1 && h.present[next] === 1;
@@ -192,6 +198,7 @@ function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, wind
   if (!stand.interior) return null;
   const alone = Math.abs(stand.difference) / stand.u;
   if (window.conditions === 0) {
+    if (!stand.symmetric) return null;
     // Cp alone: the neighbours must lie on their own curve once this row is out.
     let worst = 0;
     for (let j = Math.max(rows.from[k], k - 3); j <= Math.min(rows.to[k], k + 3); j++) {
@@ -213,7 +220,6 @@ function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, wind
       freedom: 1,
     };
   }
-  if (alone < 3) return null;
   const joint = testHeatCapacity(rows, res, k);
   if (joint === null || joint.w < 3) return null;
   return {
@@ -316,10 +322,11 @@ function leftOver(rows: TableRows, res: Residuals, policy: Policy): Anomaly[] {
           difference: res.closure[i],
           tolerance,
           material: Math.abs(res.closure[i]) > materialS(policy, s.values[r]),
+          gross: Math.abs(res.closure[i]) > 0.1 * Math.abs(s.values[r]),
         });
       }
     }
-    if (i === n - 1 || res.usable[i] === 0) continue;
+    if (i === n - 1 || res.usable[i] !== 1) continue;
     const next = rows.row[i + 1];
     const digits = digitU(rows, i);
     const e = Math.sqrt(res.e[i] * res.e[i] + res.own[i]);
@@ -334,6 +341,7 @@ function leftOver(rows: TableRows, res: Residuals, policy: Policy): Anomaly[] {
           difference,
           tolerance,
           material: Math.abs(difference) > policy.material.enthalpyJPerMol,
+          gross: Math.abs(difference) > 0.1 * Math.abs(res.q[i]),
         });
     }
     if (s !== null && s.present[r] === 1 && s.present[next] === 1) {
@@ -347,6 +355,7 @@ function leftOver(rows: TableRows, res: Residuals, policy: Policy): Anomaly[] {
           difference,
           tolerance,
           material: Math.abs(difference) > materialS(policy, s.values[r]),
+          gross: Math.abs(difference) > 0.1 * Math.abs(res.p[i]),
         });
     }
   }
@@ -365,7 +374,7 @@ function smallest(rows: TableRows, res: Residuals, policy: Policy): TableVerdict
   const { h, s } = rows;
   for (let i = 0; i < rows.n - 1; i++) {
     const r = rows.row[i];
-    if (res.usable[i] === 0) continue;
+    if (res.usable[i] !== 1) continue;
     const digits = digitU(rows, i);
     const e = Math.sqrt(res.e[i] * res.e[i] + res.own[i]);
     if (h !== null && h.present[r] === 1)

@@ -12,11 +12,14 @@ export interface Residuals {
   readonly open: Float64Array;
   /** Variance of q from the rounding and scatter of Cp itself. */
   readonly own: Float64Array;
+  /** 0: not to be checked; 1: an interval; TWIN: a row printed twice, whose H and S must be equal. */
   readonly usable: Uint8Array;
   /** S - F - H/T of each row. */
   readonly closure: Float64Array;
   readonly hasClosure: Uint8Array;
 }
+
+export const TWIN = 2;
 
 const central = newStencil();
 const coarse = newStencil();
@@ -25,9 +28,10 @@ const other = new Float64Array(2);
 
 /**
  * Integrals by a local cubic through the four nearest rows; the interpolation error is the larger change when every second
- * row is left out, both parities. Intervals that start at 0 K with the next row above 20 K cannot be integrated from Cp.
+ * row is left out, both parities; `careful` (asked for once something does not close) also takes one-sided stencils, which
+ * see a kink that the thinned ones miss. Intervals that start at 0 K with the next row above 20 K cannot be integrated from Cp.
  */
-export function residuals(rows: TableRows): Residuals {
+export function residuals(rows: TableRows, careful = false): Residuals {
   const { n, t } = rows;
   const q = new Float64Array(n - 1);
   const p = new Float64Array(n - 1);
@@ -37,13 +41,17 @@ export function residuals(rows: TableRows): Residuals {
   const own = new Float64Array(n - 1);
   const usable = new Uint8Array(n - 1);
   for (let i = 0; i < n - 1; i++) {
-    if (t[i + 1] === t[i]) continue;
+    if (t[i + 1] === t[i]) {
+      usable[i] = isJump(rows, i) ? 0 : TWIN;
+      continue;
+    }
     if (t[i] === 0 && t[i + 1] > 20) continue;
     usable[i] = 1;
     interval(rows, i, -1, two);
     q[i] = two[0];
     p[i] = two[1];
     e[i] = errorOf(rows, i, -1, two[0]);
+    if (careful) e[i] = Math.max(e[i], shiftedError(rows, i, two[0]));
     const w = t[i + 1] - t[i];
     if (t[i] > 0) {
       c[i] = bumpOverT(t[i], t[i + 1]);
@@ -66,6 +74,37 @@ export function residuals(rows: TableRows): Residuals {
     }
   }
   return { q, p, e, c, open, own, usable, closure, hasClosure };
+}
+
+/** Both S and H apart at one temperature: two sides of a jump, not a slip. */
+function isJump(rows: TableRows, i: number): boolean {
+  const a = rows.row[i];
+  const b = rows.row[i + 1];
+  let apart = 0;
+  let compared = 0;
+  for (const q of [rows.h, rows.s]) {
+    if (q === null || q.present[a] === 0 || q.present[b] === 0) continue;
+    compared++;
+    if (Math.abs(q.values[a] - q.values[b]) > 6 * Math.hypot(cellU(q, a), cellU(q, b))) apart++;
+  }
+  return compared > 0 && apart === compared && compared > 1;
+}
+
+/** The larger change of the integral when the stencil is moved one row down or up. */
+function shiftedError(rows: TableRows, i: number, fine: number): number {
+  const { t, cp } = rows;
+  const from = rows.from[i];
+  const to = rows.to[i];
+  let error = 0;
+  for (let shift = -1; shift <= 1; shift += 2) {
+    const first = i - 1 + shift;
+    if (first < from || first + 3 > to) continue;
+    central.n = 4;
+    for (let k = 0; k < 4; k++) central.at[k] = first + k;
+    integrals(central, t, cp, t[i], t[i + 1], other);
+    error = Math.max(error, Math.abs(other[0] - fine));
+  }
+  return error;
 }
 
 /** Integrals over interval i without the row `without` (-1: with all). */
@@ -101,6 +140,8 @@ export interface Standoff {
   u: number;
   /** False where the row is an end of its stretch: the prediction would be an extrapolation. */
   interior: boolean;
+  /** Two rows on each side, none of them a limit row at 0 K. */
+  symmetric: boolean;
 }
 
 export function standoff(rows: TableRows, k: number, without: number): Standoff {
@@ -111,7 +152,7 @@ export function standoff(rows: TableRows, k: number, without: number): Standoff 
   let high = k + 1;
   if (low === without) low--;
   if (high === without) high++;
-  if (low < from || high > to || to - from < 4) return { difference: 0, u: 0, interior: false };
+  if (low < from || high > to || to - from < 4) return { difference: 0, u: 0, interior: false, symmetric: false };
   const apart = 0.1 * (t[high] - t[low]);
   pick(central, t, from, to, low, high, 1, apart, without === -1 ? k : without);
   const a = valueAt(t, cp, t[k]);
@@ -119,7 +160,25 @@ export function standoff(rows: TableRows, k: number, without: number): Standoff 
   pick(central, t, from, to, low, high, 2, apart, without === -1 ? k : without);
   const b = valueAt(t, cp, t[k]);
   const scatter = rows.uCp[k] * Math.sqrt(1 + gain);
-  return { difference: cp[k] - a, u: Math.hypot(a - b, scatter), interior: true };
+  let spread = Math.abs(a - b);
+  // One-sided stencils: the thinned one may agree with the full one by chance.
+  for (let side = -1; side <= 1; side += 2) {
+    oneSided(rows, k, side as 1 | -1);
+    if (central.n === 4) spread = Math.max(spread, 0.5 * Math.abs(a - valueAt(t, cp, t[k])));
+  }
+  const symmetric = k - 2 >= from && k + 2 <= to && !(t[from] === 0 && k - 2 === from);
+  return { difference: cp[k] - a, u: Math.hypot(spread, scatter), interior: true, symmetric };
+}
+
+/** One row on one side of k, three on the other. */
+function oneSided(rows: TableRows, k: number, side: 1 | -1): void {
+  const at = [k - side, k + side, k + 2 * side, k + 3 * side].sort((p, q) => p - q);
+  central.n = 0;
+  if (at[0] < rows.from[k] || at[3] > rows.to[k]) return;
+  const closest = 0.1 * (rows.t[k + 1] - rows.t[k - 1]);
+  for (let j = 1; j < 4; j++) if (rows.t[at[j]] - rows.t[at[j - 1]] < closest) return;
+  for (let j = 0; j < 4; j++) central.at[j] = at[j];
+  central.n = 4;
 }
 
 function valueAt(t: Float64Array, cp: Float64Array, x: number): number {

@@ -44,9 +44,8 @@ export function tableRows(series: Series): TableRows | null {
     const i = order[j];
     if (k > 0 && temperature[i] === t[k - 1]) {
       if (measured) continue;
-      // The same row printed again, or a third row at one temperature, adds nothing.
+      // A third row at one temperature adds nothing. The same row printed twice marks a break, as a glass note does.
       if (k > 1 && t[k - 2] === t[k - 1]) continue;
-      if (cp.values[i] === y[k - 1] && sameLevels(series, i, row[k - 1])) continue;
     }
     t[k] = temperature[i];
     y[k] = cp.values[i];
@@ -81,13 +80,6 @@ export function tableRows(series: Series): TableRows | null {
     f: absolute ? null : series.gibbsFunction,
     spacingK: (t[k - 1] - t[0]) / (k - 1),
   };
-}
-
-function sameLevels(series: Series, a: number, b: number): boolean {
-  for (const q of [series.entropy, series.enthalpyIncrement, series.enthalpy]) {
-    if (q !== null && q.present[a] === 1 && q.present[b] === 1 && q.values[a] !== q.values[b]) return false;
-  }
-  return true;
 }
 
 /** Standard uncertainty of one cell: its rounding and its own. */

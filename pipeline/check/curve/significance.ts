@@ -1,0 +1,32 @@
+import type { Severity } from '../../../schemas/finding.js';
+import type { Policy } from '../../../schemas/policy.js';
+import { sidakThreshold } from '../../core/numeric/normal.js';
+
+/** Critical values of one substance: alpha shared over its tests. */
+export interface Thresholds {
+  readonly fault: number;
+  readonly doubt: number;
+}
+
+const made = new Map<string, Thresholds>();
+
+export function thresholds(policy: Policy, tests: number): Thresholds {
+  const key = `${policy.alphaFault} ${policy.alphaDoubt} ${tests}`;
+  let found = made.get(key);
+  if (found === undefined) {
+    found = { fault: sidakThreshold(policy.alphaFault, tests), doubt: sidakThreshold(policy.alphaDoubt, tests) };
+    made.set(key, found);
+  }
+  return found;
+}
+
+/**
+ * How grave a difference is: significant and material a fault, significant only a doubt, material only a note, else nothing.
+ * `u` is the standard uncertainty of the difference.
+ */
+export function gravity(difference: number, u: number, material: number, limits: Thresholds): Severity | null {
+  const size = Math.abs(difference);
+  if (size > limits.fault * u) return size > material ? 'fault' : 'doubt';
+  if (size > limits.doubt * u) return 'doubt';
+  return size > material ? 'note' : null;
+}

@@ -1,0 +1,187 @@
+import type { AssembledCase, Crossing, PhaseCurve } from '../../../schemas/curves.js';
+import type { EvidenceKind } from '../../../schemas/finding.js';
+import type { HarmonisedCase, StatedTransition } from '../../../schemas/harmonised.js';
+import { type Equilibrium, equilibrium } from '../../core/physics/equilibrium.js';
+import {
+  type DiagramSetting,
+  gapUncertainty,
+  isGas,
+  type PlacedPhase,
+  placePhase,
+} from '../../core/physics/placed-phase.js';
+
+/** A stated transition beside the two curves that it joins. */
+export interface TransitionView {
+  readonly stated: StatedTransition;
+  readonly index: number;
+  /** `cr>l` */
+  readonly place: string;
+  readonly fromCurve: number;
+  readonly toCurve: number;
+  /** Null where a phase has no curve, or the stated temperature is far outside one. */
+  readonly pair: {
+    readonly from: PlacedPhase<PhaseCurve>;
+    readonly to: PlacedPhase<PhaseCurve>;
+    /** At the stated temperature, or at the computed crossing when a curve does not reach that far. */
+    readonly at: Equilibrium;
+    readonly atK: number;
+    readonly uGapJPerMol: number;
+  } | null;
+  /** What is missing for a comparison, in words for the curator. */
+  readonly missing: string | null;
+  /** A level of one of the phases was carried through this very transition: its G closes by construction. */
+  readonly byConstruction: boolean;
+  readonly crossing: Crossing | null;
+  readonly uStatedK: number;
+  readonly evidence: EvidenceKind;
+}
+
+export function transitionViews(assembled: AssembledCase): TransitionView[] {
+  const substance = assembled.examined.harmonised;
+  return substance.transitions.map((stated, index) => viewOf(stated, index, assembled, substance));
+}
+
+function viewOf(
+  stated: StatedTransition,
+  index: number,
+  assembled: AssembledCase,
+  substance: HarmonisedCase,
+): TransitionView {
+  const { curves } = assembled;
+  const place = `${stated.from}>${stated.to}`;
+  const [fromCurve, toCurve] = pairOf(stated, curves);
+  const temperatureK = stated.temperature.value;
+  const base = { stated, index, place, fromCurve, toCurve };
+  if (fromCurve < 0 || toCurve < 0) {
+    const without =
+      fromCurve < 0 && toCurve < 0 ? `${stated.from} and ${stated.to}` : fromCurve < 0 ? stated.from : stated.to;
+    return {
+      ...base,
+      pair: null,
+      missing: `a heat-capacity table of ${without}`,
+      byConstruction: false,
+      crossing: null,
+      uStatedK: stated.temperature.u,
+      evidence: 'independent',
+    };
+  }
+  const a = curves[fromCurve];
+  const b = curves[toCurve];
+  const within = stated.table.basis !== 'measured' && everySource(a, b, stated.table.source);
+  const uStatedK = within ? stated.temperature.uRounding : stated.temperature.u;
+  const evidence: EvidenceKind = within ? 'arithmetic' : 'independent';
+  const unlevelled = [a, b].find((c) => !c.hasEnthalpyLevel || !c.hasEntropyLevel);
+  const setting: DiagramSetting = { pressurePa: stated.pressurePa, gas: stated.gas ?? 'real' };
+  const boiling = boilingOf(substance);
+  const from = placePhase(a, substance.substance, setting, boiling);
+  const to = placePhase(b, substance.substance, setting, boiling);
+  const crossing = nearestCrossing(stated, a, assembled.crossings, temperatureK);
+  const byConstruction = a.carriedThrough === index || b.carriedThrough === index;
+  if (unlevelled !== undefined) {
+    return {
+      ...base,
+      pair: null,
+      missing: `a formation enthalpy and an entropy of ${unlevelled.phase}`,
+      byConstruction,
+      crossing: null,
+      uStatedK,
+      evidence,
+    };
+  }
+  const low = Math.max(from.lowK, to.lowK);
+  const high = Math.min(from.highK, to.highK);
+  let atK = temperatureK;
+  if (temperatureK < low || temperatureK > high) {
+    if (crossing === null && !(high > low)) {
+      return {
+        ...base,
+        pair: null,
+        missing: `tables of ${stated.from} and ${stated.to} that overlap`,
+        byConstruction,
+        crossing,
+        uStatedK,
+        evidence,
+      };
+    }
+    atK = crossing === null ? Math.min(high, Math.max(low, temperatureK)) : crossing.temperatureK;
+  }
+  return {
+    ...base,
+    pair: {
+      from,
+      to,
+      at: equilibrium(from, to, atK),
+      atK,
+      uGapJPerMol: gapUncertainty(from, to, atK, stated.pressurePa),
+    },
+    missing: null,
+    byConstruction,
+    crossing,
+    uStatedK,
+    evidence,
+  };
+}
+
+/**
+ * The two curves that a stated transition joins: on its own source's isobar where there is one, else on the standard state
+ * with the gas term, else on any isobar of its pressure. An ideal-gas transition is a matter of the standard state only.
+ */
+function pairOf(stated: StatedTransition, curves: readonly PhaseCurve[]): [number, number] {
+  if (stated.from === stated.to) {
+    const one = curves.findIndex((c) => c.phase === stated.from && c.family.isobarPa === null);
+    const any = one >= 0 ? one : curves.findIndex((c) => c.phase === stated.from);
+    return [any, any];
+  }
+  const find = (phase: string, isobarPa: number | null): number =>
+    curves.findIndex((c) => c.phase === phase && c.family.isobarPa === isobarPa);
+  const isobar = stated.gas === 'ideal' ? null : onIsobar(curves, stated.pressurePa);
+  const candidates: [number, number][] = [];
+  if (isobar !== null) candidates.push([find(stated.from, isobar), find(stated.to, isobar)]);
+  candidates.push([find(stated.from, null), find(stated.to, null)]);
+  const whole = candidates.filter(([x, y]) => x >= 0 && y >= 0);
+  const own = whole.find(
+    ([x, y]) => curves[x].sources.includes(stated.table.source) && curves[y].sources.includes(stated.table.source),
+  );
+  if (own !== undefined) return own;
+  const standard = whole.find(([x]) => curves[x].family.isobarPa === null);
+  return standard ?? whole[0] ?? candidates[candidates.length - 1];
+}
+
+function onIsobar(curves: readonly PhaseCurve[], pressurePa: number): number | null {
+  for (const c of curves) {
+    const p = c.family.isobarPa;
+    if (p !== null && Math.abs(p - pressurePa) <= 1e-6 * pressurePa) return p;
+  }
+  return null;
+}
+
+function everySource(a: PhaseCurve, b: PhaseCurve, source: string): boolean {
+  return a.sources.every((s) => s === source) && b.sources.every((s) => s === source);
+}
+
+function nearestCrossing(
+  stated: StatedTransition,
+  curve: PhaseCurve,
+  crossings: readonly Crossing[],
+  temperatureK: number,
+): Crossing | null {
+  const kind = isGas(stated.from) || isGas(stated.to) ? (stated.gas ?? 'real') : null;
+  const isobar = curve.family.isobarPa;
+  let best: Crossing | null = null;
+  for (const c of crossings) {
+    if (c.family.isobarPa !== isobar) continue;
+    const same = (c.from === stated.from && c.to === stated.to) || (c.from === stated.to && c.to === stated.from);
+    if (!same) continue;
+    if (isobar === null && (c.pressurePa !== stated.pressurePa || (kind !== null && c.gas !== kind))) continue;
+    // The crossing with the stated sense counts before a nearer one of the other sense.
+    const cost = Math.abs(c.temperatureK - temperatureK) + (c.from === stated.from ? 0 : 100);
+    if (best === null || cost < Math.abs(best.temperatureK - temperatureK) + (best.from === stated.from ? 0 : 100))
+      best = c;
+  }
+  return best;
+}
+
+function boilingOf(substance: HarmonisedCase): number {
+  for (const t of substance.transitions) if (isGas(t.to)) return t.temperature.value;
+  return 500;
+}

@@ -1,0 +1,114 @@
+import type { Datum } from '../../../schemas/harmonised.js';
+import { makeFinding } from '../../../schemas/make-finding.js';
+import {
+  isFirstOrder,
+  type Judgement,
+  statedCells,
+  type TransitionContext,
+  transitionKey,
+} from '../curve/judgement.js';
+import { gravity } from '../curve/significance.js';
+import { outcome } from '../place.js';
+
+/**
+ * dH = T dS of the stated numbers; where only one of them is stated, or the curves give their own, against the curves'
+ * difference at that temperature. In J/mol; the worst of the comparisons is the one kept.
+ */
+export function transitionEntropyCloses({ substance, view, policy, limits }: TransitionContext): Judgement {
+  const rule = 'transition-entropy-closes';
+  const { stated, pair } = view;
+  const { enthalpy, entropy, temperature } = stated;
+  const t = temperature.value;
+  if (!isFirstOrder(view)) {
+    return { outcome: outcome(substance, rule, view.place, 'agrees', 'arithmetic'), findings: [] };
+  }
+  const within = view.evidence === 'arithmetic' || stated.table.basis !== 'measured';
+  const uOf = (d: Datum): number => (within ? d.uRounding : d.u);
+  const comparisons: { observed: number; expected: number; u: number; about: Datum }[] = [];
+  if (enthalpy !== null && entropy !== null) {
+    comparisons.push({
+      observed: enthalpy.value,
+      expected: t * entropy.value,
+      u: Math.hypot(uOf(enthalpy), t * uOf(entropy), entropy.value * (within ? temperature.uRounding : temperature.u)),
+      about: enthalpy,
+    });
+  }
+  if (pair !== null && pair.atK === t && !view.byConstruction) {
+    const { at } = pair;
+    // u(dH) of the curves: that of their levels and rows; u(dG) and T u(dS) bound it.
+    const uGap = pair.uGapJPerMol;
+    if (enthalpy !== null) {
+      comparisons.push({
+        observed: enthalpy.value,
+        expected: at.enthalpyJPerMol,
+        u: Math.hypot(
+          view.evidence === 'arithmetic' ? enthalpy.uRounding : enthalpy.u,
+          uGap,
+          Math.abs(at.heatCapacityJPerMolK) * view.uStatedK,
+        ),
+        about: enthalpy,
+      });
+    }
+    if (entropy !== null) {
+      comparisons.push({
+        observed: t * entropy.value,
+        expected: t * at.entropyJPerMolK,
+        u: Math.hypot(
+          t * (view.evidence === 'arithmetic' ? entropy.uRounding : entropy.u),
+          uGap,
+          Math.abs(at.heatCapacityJPerMolK) * view.uStatedK,
+        ),
+        about: entropy,
+      });
+    }
+  }
+  if (comparisons.length === 0) {
+    const missing =
+      enthalpy === null && entropy === null
+        ? 'a stated enthalpy or entropy of the transition'
+        : 'both the enthalpy and the entropy of the transition, or levels of both phases that do not rest on it';
+    return { outcome: outcome(substance, rule, view.place, 'untestable', null, { missing }), findings: [] };
+  }
+  const worst = comparisons.reduce((a, b) =>
+    Math.abs(a.observed - a.expected) / a.u >= Math.abs(b.observed - b.expected) / b.u ? a : b,
+  );
+  const difference = worst.observed - worst.expected;
+  const dS = Math.abs(entropy?.value ?? (enthalpy as Datum).value / t);
+  const material = policy.material.transitionTemperatureK * Math.max(dS, Math.abs(worst.expected) / t);
+  const severity = gravity(difference, worst.u, material, limits);
+  const smallestDetectable = 4.13 * worst.u;
+  if (severity === null) {
+    return {
+      outcome: outcome(substance, rule, view.place, 'agrees', view.evidence, { smallestDetectable }),
+      findings: [],
+    };
+  }
+  const finding = makeFinding({
+    rule,
+    severity,
+    substance,
+    fromPhase: stated.from,
+    toPhase: stated.to,
+    temperatureK: t,
+    observed: worst.observed,
+    expected: worst.expected,
+    difference,
+    tolerance: limits.fault * worst.u,
+    unit: 'J/mol',
+    address: worst.about.address,
+    evidence: statedCells(view),
+    transition: transitionKey(view),
+    detail: {
+      code: 'transition',
+      what: 'closure',
+      statedK: t,
+      computedK: view.crossing?.temperatureK ?? null,
+      smallestDetectable,
+    },
+  });
+  const kind = severity === 'note' ? 'agrees' : 'disagrees';
+  return {
+    outcome: outcome(substance, rule, view.place, kind, view.evidence, { smallestDetectable }),
+    findings: [finding],
+  };
+}
