@@ -9,8 +9,7 @@ import { originOf, type Part, partOf, policyPart, takesDefault } from './uncerta
 import { FROM_DESCRIPTOR, type UnitBook } from './unit-book.js';
 
 /**
- * Null where the row has no such cell or its unit is refused. The last place is the cell's own, for a zero the column's
- * usual one; a value from the descriptor's constants is exact. `u` is the stated or default one and the rounding in
+ * Null where the row has no such cell or its unit is refused. The last place is as `lastPlace` says; a value from the descriptor's constants is exact. `u` is the stated or default one and the rounding in
  * quadrature; a formation quantity of exactly 0 is a definition and takes no default.
  */
 export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, policy: Policy): Datum | null {
@@ -22,7 +21,7 @@ export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, p
   const { factor, offset } = conversion;
   const value = cell.value * factor + offset;
   const constant = cell.column === FROM_DESCRIPTOR;
-  const halfUnit = constant ? 0 : halfUnitOf(cell.value === 0 ? cell.usualDecimals : cell.decimals, factor);
+  const halfUnit = constant ? 0 : halfUnitOf(lastPlace(cell), factor);
   const uRounding = halfUnit / Math.sqrt(3);
   const { parts, origin } = statedParts(row, cell, quantity, factor, book, policy);
   let variance = uRounding ** 2;
@@ -44,6 +43,14 @@ export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, p
     factor,
     offset,
   };
+}
+
+/**
+ * Decimals of a single cell: the column's usual ones for a zero and where one zero at the end is left out. Two left out
+ * (one number in a hundred) are taken for a coarser number: 1184 among 600.60 is known to a kelvin.
+ */
+function lastPlace({ value, decimals, usualDecimals }: RawCell): number {
+  return value === 0 || decimals === usualDecimals - 1 ? usualDecimals : decimals;
 }
 
 /** `datum` moved by `shift`, with a further standard uncertainty for the move; its rounding stays. */

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import type { RawCell } from '../../schemas/raw.js';
 import type { Basis, StatedUncertainty } from '../../schemas/table-meaning.js';
 import { columnOf, harmonised, rowOf, tableOf } from './raw.js';
 
@@ -55,5 +56,18 @@ describe('a stated number', () => {
     const source = formation('evaluated', '-94.05', declared);
     expect(source.origin).toBe('source default');
     expect(source.u).toBeCloseTo(Math.hypot(0.01 * 94.05 * 4184, source.uRounding), 8);
+  });
+
+  it.each([
+    ['-94.1', 2, 0.005],
+    ['-94', 2, 0.5],
+    ['0', 2, 0.005],
+    ['-94.052', 2, 0.0005],
+  ])('printed as %s where %d decimals are usual is known to %d', (printed, usualDecimals, half) => {
+    const table = tableOf([columnOf('dfH', 'enthalpy-of-formation', 'J/mol')], { holds: 'anchors' });
+    const row = rowOf(table, { phase: 'cr' }, { 'enthalpy-of-formation': printed });
+    const cell = { ...(row.cells['enthalpy-of-formation'] as RawCell), usualDecimals };
+    const given = { ...row, cells: { 'enthalpy-of-formation': cell } };
+    expect(harmonised({ anchors: [given] }).anchors[0].enthalpyOfFormation?.halfUnit).toBe(half);
   });
 });

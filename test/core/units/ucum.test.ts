@@ -97,6 +97,7 @@ describe('conversionTo', () => {
       refused(target, unit);
       refused(target, unit, PER_ATOM);
     }
+    expect(refused('J/(mol.K)', 'J/([iU].mol.K)').remedy).toContain('arbitrary');
     expect(refused('J/mol', 'kJ').problem).toBe('unit-unfit');
     expect(refused('J/mol', 'kJ').suggestions[0]).toBe('kJ/mol');
   });
