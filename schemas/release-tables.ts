@@ -126,11 +126,12 @@ const phases = {
 const transitions = {
   title: 'Transitions',
   description:
-    'Each stated transition beside what the curves give, and crossings of the curves that nobody stated. A transition that several sources state has a row for each',
+    'Each stated transition beside what the curves give, and crossings of the curves that nobody stated at that pressure. A transition that several sources state has a row for each',
   key: ['substance', 'transition'],
   fields: [
     substance,
     integer('transition', 'Running number within the substance'),
+    isobar,
     text('from_phase', 'Phase below the transition'),
     text('to_phase', 'Phase above it'),
     word('order', ['first', 'continuous', 'glass'], 'Order as stated; empty where nothing was stated', optional),

@@ -1,25 +1,44 @@
-/** The table of transitions: each stated one beside its crossing, then the crossings that nobody stated. */
+/** The table of transitions: each stated one beside its crossing, then the crossings that nobody stated at that pressure. */
 import type { JudgedTransition, ReconciledCase } from '../../schemas/checked.js';
-import type { Crossing } from '../../schemas/curves.js';
+import type { Crossing, PhaseCurve } from '../../schemas/curves.js';
 import type { RELEASE_TABLES } from '../../schemas/release-tables.js';
 import type { Builders } from './builders.js';
 
 type Transitions = Builders<typeof RELEASE_TABLES.transitions>;
 
 /** Adds one substance that is published. */
-export function addTransitions(to: Transitions, published: ReconciledCase): void {
-  const { assembled, judged } = published.checked;
+export function addTransitions(to: Transitions, reconciled: ReconciledCase): void {
+  const { assembled, judged } = reconciled.checked;
   const substance = assembled.examined.harmonised.substance.id;
-  const unstated = new Set(assembled.crossings);
+  const published = new Set<Crossing>();
+  const condensed = new Set<string>();
   let place = 0;
   for (const one of judged) {
     const crossing = crossingOf(one, assembled.crossings);
-    if (crossing !== null) unstated.delete(crossing);
-    addStated(to, substance, ++place, one, crossing);
+    if (crossing !== null) published.add(crossing);
+    if (crossing?.gas === null) condensed.add(condensedKey(crossing));
+    addStated(to, substance, ++place, one, crossing, isobarOf(one, crossing, assembled.curves));
   }
   for (const crossing of assembled.crossings) {
-    if (unstated.has(crossing)) addUnstated(to, substance, ++place, crossing);
+    if (published.has(crossing)) continue;
+    if (crossing.gas === null) {
+      // Without volumes a crossing of condensed phases is the same at every pressure that the diagram was drawn for.
+      const key = condensedKey(crossing);
+      if (condensed.has(key)) continue;
+      condensed.add(key);
+    }
+    addUnstated(to, substance, ++place, crossing);
   }
+}
+
+function condensedKey({ from, to, temperatureK, family }: Crossing): string {
+  return [...[from, to].sort(), temperatureK, family.isobarPa].join(' ');
+}
+
+function isobarOf(judged: JudgedTransition, crossing: Crossing | null, curves: readonly PhaseCurve[]): number | null {
+  if (crossing !== null) return crossing.family.isobarPa;
+  const curve = curves[judged.fromCurve] ?? curves[judged.toCurve];
+  return curve === undefined ? judged.stated.table.isobarPa : curve.family.isobarPa;
 }
 
 /** The crossing that the judgement speaks of: same phases, pressure and gas, and its very temperature. */
@@ -33,7 +52,7 @@ function crossingOf(judged: JudgedTransition, crossings: readonly Crossing[]): C
     if (
       samePhases &&
       crossing.pressurePa === stated.pressurePa &&
-      crossing.gas === stated.gas &&
+      (crossing.gas === null || crossing.gas === (stated.gas ?? 'real')) &&
       crossing.temperatureK === computedK
     ) {
       return crossing;
@@ -48,6 +67,7 @@ function addStated(
   place: number,
   judged: JudgedTransition,
   crossing: Crossing | null,
+  isobarPa: number | null,
 ): void {
   const { stated, computedK } = judged;
   const statedK = stated.temperature.value;
@@ -57,6 +77,7 @@ function addStated(
   const entropy = crossing === null ? judged.curveEntropyJPerMolK : sign * crossing.entropyJPerMolK;
   to.substance.push(substance);
   to.transition.push(place);
+  to.isobar_Pa.push(isobarPa);
   to.from_phase.push(stated.from);
   to.to_phase.push(stated.to);
   to.order.push(stated.order);
@@ -80,6 +101,7 @@ function addStated(
 function addUnstated(to: Transitions, substance: string, place: number, crossing: Crossing): void {
   to.substance.push(substance);
   to.transition.push(place);
+  to.isobar_Pa.push(crossing.family.isobarPa);
   to.from_phase.push(crossing.from);
   to.to_phase.push(crossing.to);
   to.order.push(null);

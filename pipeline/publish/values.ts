@@ -71,22 +71,25 @@ function addFunctions(
   }
 }
 
+/** A knot given twice (a two-sided temperature) has no interval between its sides, and so no piece. */
 function addPieces(to: Builders<typeof RELEASE_TABLES.pieces>, substance: string, curve: PhaseCurve): void {
-  const count = curve.knotK.length - 1;
-  if (count < 1) return;
+  const { knotK, hasEnthalpyLevel, hasEntropyLevel } = curve;
+  let count = 0;
+  for (let i = 0; i + 1 < knotK.length; i++) {
+    if (knotK[i] === knotK[i + 1]) continue;
+    count++;
+    to.low_K.push(knotK[i]!);
+    to.high_K.push(knotK[i + 1]!);
+    to.c0.push(curve.c0[i]!);
+    to.c1.push(curve.c1[i]!);
+    to.c2.push(curve.c2[i]!);
+    to.c3.push(curve.c3[i]!);
+    to.enthalpy_J_per_mol.push(hasEnthalpyLevel ? curve.enthalpyJPerMol[i]! : null);
+    to.entropy_J_per_mol_K.push(hasEntropyLevel ? curve.entropyJPerMolK[i]! : null);
+  }
   to.substance.fill(substance, count);
   to.phase.fill(curve.phase, count);
   to.isobar_Pa.fill(curve.family.isobarPa, count);
-  to.low_K.append(curve.knotK.subarray(0, count));
-  to.high_K.append(curve.knotK.subarray(1));
-  to.c0.append(curve.c0.subarray(0, count));
-  to.c1.append(curve.c1.subarray(0, count));
-  to.c2.append(curve.c2.subarray(0, count));
-  to.c3.append(curve.c3.subarray(0, count));
-  if (curve.hasEnthalpyLevel) to.enthalpy_J_per_mol.append(curve.enthalpyJPerMol.subarray(0, count));
-  else to.enthalpy_J_per_mol.fill(null, count);
-  if (curve.hasEntropyLevel) to.entropy_J_per_mol_K.append(curve.entropyJPerMolK.subarray(0, count));
-  else to.entropy_J_per_mol_K.fill(null, count);
 }
 
 function addPhase(to: Builders<typeof RELEASE_TABLES.phases>, published: ReconciledCase, curve: PhaseCurve): void {

@@ -157,7 +157,7 @@ export const stated: StatedTransition = {
   entropy: null,
 };
 
-const crossing: Crossing = {
+export const crossing: Crossing = {
   family: STANDARD,
   from: 'cr',
   to: 'l',
@@ -170,10 +170,20 @@ const crossing: Crossing = {
   stable: true,
   measured: true,
 };
-const unstatedCrossing: Crossing = { ...crossing, from: 'l', to: 'g', gas: 'real', temperatureK: 399.5, stable: false };
+export const unstatedCrossing: Crossing = {
+  ...crossing,
+  from: 'l',
+  to: 'g',
+  gas: 'real',
+  temperatureK: 399.5,
+  stable: false,
+};
 
-const judged: JudgedTransition = {
+export const judged: JudgedTransition = {
   stated,
+  index: 0,
+  fromCurve: 0,
+  toCurve: 1,
   computedK: 350.375,
   uComputedK: 0.07,
   gapJPerMol: 2.5,
@@ -199,6 +209,8 @@ const anchor: Anchor = {
 export interface Parts {
   readonly curves?: readonly PhaseCurve[];
   readonly functions?: readonly FunctionRows[];
+  readonly crossings?: readonly Crossing[];
+  readonly judged?: readonly JudgedTransition[];
   readonly findings?: readonly Finding[];
   readonly suspects?: readonly Suspect[];
   readonly verdict?: ReconciledCase['verdict'];
@@ -256,10 +268,10 @@ export function reconciled(id: string, parts: Parts = {}): ReconciledCase {
           suspects: [],
         },
         curves: parts.curves ?? [curve('cr'), curve('g')],
-        crossings: [crossing, unstatedCrossing],
+        crossings: parts.crossings ?? [crossing, unstatedCrossing],
         functions: parts.functions ?? [functionRows('cr'), functionRows('g')],
       },
-      judged: [judged],
+      judged: parts.judged ?? [judged],
       outcomes: [],
       findings: [],
     },

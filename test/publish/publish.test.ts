@@ -1,7 +1,19 @@
 import { describe, expect, test } from 'vitest';
 import { concatTables, inputsTable, publish } from '../../pipeline/publish/publish.js';
 import { type PublishedTable, RELEASE_TABLES } from '../../schemas/release-tables.js';
-import { curve, finding, functionRows, ISOBAR, reconciled, sentence, suspect } from './hand-made.js';
+import {
+  crossing,
+  curve,
+  finding,
+  functionRows,
+  ISOBAR,
+  judged,
+  reconciled,
+  sentence,
+  stated,
+  suspect,
+  unstatedCrossing,
+} from './hand-made.js';
 import { rowsOf } from './read.js';
 
 const settings = { sentence };
@@ -86,6 +98,23 @@ describe('publish', () => {
     });
   });
 
+  test('a two-sided temperature makes no piece of no width, and its upper piece starts from the upper side', () => {
+    const sided = curve('cr', undefined, {
+      knotK: Float64Array.of(200, 298.15, 298.15, 400),
+      c0: Float64Array.of(20.1, 0, 26.5),
+      c1: new Float64Array(3),
+      c2: new Float64Array(3),
+      c3: new Float64Array(3),
+      enthalpyJPerMol: Float64Array.of(-2000, 0, 125, 3000),
+      entropyJPerMolK: Float64Array.of(40, 50, 51, 59),
+    });
+    const rows = rowsOf(publish([reconciled('oil', { curves: [sided], functions: [] })], settings).artefact.pieces);
+    expect(rows.map((row) => [row.low_K, row.high_K, row.c0, row.enthalpy_J_per_mol])).toEqual([
+      [200, 298.15, 20.1, -2000],
+      [298.15, 400, 26.5, 125],
+    ]);
+  });
+
   test('a phase on an isobar is kept apart from its standard state', () => {
     const parts = {
       curves: [curve('g'), curve('g', ISOBAR)],
@@ -141,6 +170,29 @@ describe('publish', () => {
       stable: false,
       outcome: null,
     });
+  });
+
+  test('a crossing of condensed phases stands once, though it was found at several pressures', () => {
+    const parts = { crossings: [crossing, { ...crossing, pressurePa: 101325 }, unstatedCrossing] };
+    const rows = rowsOf(publish([reconciled('oil', parts)], settings).artefact.transitions);
+    expect(rows.map((row) => [row.from_phase, row.to_phase, row.pressure_Pa])).toEqual([
+      ['cr', 'l', 100000],
+      ['l', 'g', 100000],
+    ]);
+  });
+
+  test('a boiling point stated without a word on the gas is the real one', () => {
+    const boiling = { ...judged, stated: { ...stated, from: 'l', to: 'g' }, computedK: 399.5 };
+    const rows = rowsOf(publish([reconciled('oil', { judged: [boiling] })], settings).artefact.transitions);
+    expect(rows).toHaveLength(2);
+    expect(rows[0]).toMatchObject({ to_phase: 'g', gas: null, computed_temperature_K: 399.5 });
+    expect(rows[0]!.transition_enthalpy_J_per_mol).toBe(unstatedCrossing.enthalpyJPerMol);
+  });
+
+  test('a transition stated the other way round than the curves cross has the signs of its own direction', () => {
+    const back = { ...judged, stated: { ...stated, from: 'l', to: 'cr' } };
+    const rows = rowsOf(publish([reconciled('oil', { judged: [back] })], settings).artefact.transitions);
+    expect(rows[0]).toMatchObject({ transition_enthalpy_J_per_mol: -7010, slope_jump_J_per_mol_K: 20.0071 });
   });
 
   test('what is withheld is judged in public and published nowhere', () => {
