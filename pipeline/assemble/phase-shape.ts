@@ -103,8 +103,16 @@ interface Stepped {
   readonly exact: number;
 }
 
-/** Runs the chain over a stretch; `exactK` and `exactSK` are where H and S are held at zero when nothing observes them. */
-function runChain(stretch: Stretch, exactK: number, exactSK = exactK): Stepped {
+/**
+ * Runs the chain over a stretch; `exactK` and `exactSK` are where H and S are held at zero when nothing observes them.
+ * Printed increments are held at zero at `exactK` too where `countsThere`: it is their own H(Tr).
+ */
+function runChain(
+  stretch: Stretch,
+  exactK: number,
+  exactSK = exactK,
+  countsThere = exactK === stretch.referenceK,
+): Stepped {
   const { n, temperatureK: t } = stretch;
   const stepH = new Float64Array(n);
   const stepS = new Float64Array(n);
@@ -138,7 +146,7 @@ function runChain(stretch: Stretch, exactK: number, exactSK = exactK): Stepped {
   for (let i = 0; i < n; i++) if (Math.abs(t[i] - exactK) < Math.abs(t[exact] - exactK)) exact = i;
   const start = { h: 0, hVar: 1e10, s: 0, sVar: 1e4 };
   if (stretch.hasH) {
-    if (!stretch.absoluteH && t[exact] === exactK) {
+    if (countsThere && !stretch.absoluteH && t[exact] === exactK) {
       h[exact] = 0;
       hVar[exact] = 0;
     }
@@ -279,7 +287,8 @@ function finish(
   const crystal = !phase.startsWith('g') && !phase.startsWith('l');
   const tail = crystal && measuredFromK > 0 ? debyeTail(stretch.temperatureK, stretch.heatCapacity, metal) : null;
   const thirdLaw = crystal && !stretch.hasS && (tail !== null || measuredFromK === 0);
-  const { chain } = runChain(stretch, exactK, thirdLaw ? measuredFromK : exactK);
+  const countsThere = inside && (main.incrementsFrom === null || main.incrementsFrom === phase);
+  const { chain } = runChain(stretch, exactK, thirdLaw ? measuredFromK : exactK, countsThere);
   bend(stretch, chain);
 
   let { temperatureK: knotK, c0, c1, c2, c3 } = stretch;
