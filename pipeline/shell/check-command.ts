@@ -1,5 +1,5 @@
 import type { Finding } from '../../schemas/finding.js';
-import { sayFinding, sayPlace, saySuspect } from '../report/words.js';
+import { sayFinding, sayPlace, saySuspect } from '../report/report.js';
 import type { Request } from './arguments.js';
 import { EXIT, type ExitStatus } from './exit-status.js';
 import { openLibrary } from './library.js';

@@ -5,7 +5,7 @@ import type { InputFile } from '../../schemas/contents.js';
 import type { Finding } from '../../schemas/finding.js';
 import type { Substance } from '../../schemas/substances.js';
 import { addRunBytes, type IngestPart } from '../ingest/ingest.js';
-import { sayFinding } from '../report/words.js';
+import { sayFinding } from '../report/report.js';
 import type { Request } from './arguments.js';
 import { EXIT, Stop } from './exit-status.js';
 import type { Log } from './log.js';

@@ -6,7 +6,7 @@ import type { ReleaseTables, TableName } from '../../schemas/release.js';
 import type { Substance } from '../../schemas/substances.js';
 import { type IngestPart, selectRuns } from '../ingest/ingest.js';
 import { concatTables, publish } from '../publish/publish.js';
-import { sayFinding } from '../report/words.js';
+import { sayFinding } from '../report/report.js';
 import { refuseBrokenNumbers } from './broken-calculation.js';
 import type { ParquetWriter } from './duckdb.js';
 import { failedCase } from './failed-case.js';

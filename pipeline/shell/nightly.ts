@@ -2,7 +2,7 @@ import { join, relative } from 'node:path';
 import type { ReleaseTables } from '../../schemas/release.js';
 import type { Summary } from '../../schemas/summary.js';
 import { concatTables, inputsTable, lossGuard, publish } from '../publish/publish.js';
-import { sayFinding } from '../report/words.js';
+import { sayFinding } from '../report/report.js';
 import type { Request } from './arguments.js';
 import { contentId } from './content-id.js';
 import { ParquetWriter } from './duckdb.js';

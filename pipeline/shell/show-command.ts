@@ -1,4 +1,4 @@
-import { sayFinding } from '../report/words.js';
+import { sayFinding } from '../report/report.js';
 import type { Request } from './arguments.js';
 import { EXIT, type ExitStatus } from './exit-status.js';
 import { openLibrary } from './library.js';

@@ -3,8 +3,7 @@ import type { Crossing, PhaseCurve } from '../../schemas/curves.js';
 import type { StatedTransition } from '../../schemas/harmonised.js';
 import { gibbsInDiagram } from '../core/physics/diagram.js';
 import { gasTerm } from '../core/physics/pressure-terms.js';
-import { figure, plusMinus } from '../report/figures.js';
-import { sayFinding, sayPlace, saySuspect } from '../report/words.js';
+import { figure, plusMinus, sayFinding, sayPlace, saySuspect } from '../report/report.js';
 import { type SketchCurve, sketch } from './sketch.js';
 import { count, table, wrap } from './text.js';
 

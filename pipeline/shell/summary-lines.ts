@@ -1,5 +1,5 @@
 import type { Finding } from '../../schemas/finding.js';
-import { sayFinding } from '../report/words.js';
+import { sayFinding } from '../report/report.js';
 import { count, table, wrap } from './text.js';
 import type { VerdictLine } from './verdict-line.js';
 

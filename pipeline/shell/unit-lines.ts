@@ -1,7 +1,7 @@
 import { type NumberQuantity, QUANTITY_UNITS } from '../../schemas/quantities.js';
 import type { ColumnMeaning, TableMeaning } from '../../schemas/table-meaning.js';
 import { conversionTo, differenceTo } from '../core/units/ucum.js';
-import { figure } from '../report/figures.js';
+import { figure } from '../report/report.js';
 import { table } from './text.js';
 
 /** What one declared column means in SI: how `check` shows each descriptor's units before they can do harm. */

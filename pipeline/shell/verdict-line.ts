@@ -1,6 +1,6 @@
 import type { ReconciledCase } from '../../schemas/checked.js';
 import type { Verdict } from '../../schemas/summary.js';
-import { sayReason } from '../report/words.js';
+import { sayReason } from '../report/report.js';
 
 /** What the night's summary says about one substance; plain data, as a worker hands it back. */
 export interface VerdictLine {
