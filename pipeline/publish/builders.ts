@@ -19,6 +19,10 @@ function grown<S extends Store>(store: S, needed: number): S {
   return larger;
 }
 
+function cut<S extends Store>(store: S, length: number): S {
+  return store.length === length ? store : (store.slice(0, length) as S);
+}
+
 /** Numbers, integers and flags: values with absence marked beside them. An absent cell holds 0. */
 class ValueBuilder<S extends Float64Array | Int32Array | Uint8Array> {
   length = 0;
@@ -53,8 +57,8 @@ class ValueBuilder<S extends Float64Array | Int32Array | Uint8Array> {
   protected finish(): { values: S; absent: Uint8Array | null } {
     const length = this.length;
     return {
-      values: this.#values.slice(0, length) as S,
-      absent: this.#anyAbsent ? grown(this.#absent, length).slice(0, length) : null,
+      values: cut(this.#values, length),
+      absent: this.#anyAbsent ? cut(grown(this.#absent, length), length) : null,
     };
   }
 
@@ -70,8 +74,8 @@ class ValueBuilder<S extends Float64Array | Int32Array | Uint8Array> {
 }
 
 export class NumberBuilder extends ValueBuilder<Float64Array> {
-  constructor() {
-    super(new Float64Array(16));
+  constructor(capacity: number) {
+    super(new Float64Array(capacity));
   }
   column(): NumberColumn {
     return { kind: 'number', ...this.finish() };
@@ -79,8 +83,8 @@ export class NumberBuilder extends ValueBuilder<Float64Array> {
 }
 
 export class IntegerBuilder extends ValueBuilder<Int32Array> {
-  constructor() {
-    super(new Int32Array(16));
+  constructor(capacity: number) {
+    super(new Int32Array(capacity));
   }
   column(): IntegerColumn {
     return { kind: 'integer', ...this.finish() };
@@ -88,8 +92,8 @@ export class IntegerBuilder extends ValueBuilder<Int32Array> {
 }
 
 export class BooleanBuilder extends ValueBuilder<Uint8Array> {
-  constructor() {
-    super(new Uint8Array(16));
+  constructor(capacity: number) {
+    super(new Uint8Array(capacity));
   }
   pushFlag(value: boolean | null): void {
     this.push(value === null ? null : value ? 1 : 0);
@@ -102,8 +106,12 @@ export class BooleanBuilder extends ValueBuilder<Uint8Array> {
 /** Text by dictionary, words in order of first use. An empty text is an empty cell: CSV cannot tell them apart. */
 export class TextBuilder {
   length = 0;
-  #codes = new Uint32Array(16);
+  #codes: Uint32Array;
   readonly #codeOf = new Map<string, number>();
+
+  constructor(capacity: number) {
+    this.#codes = new Uint32Array(capacity);
+  }
 
   push(word: string | null): void {
     this.#codes = grown(this.#codes, this.length + 1);
@@ -116,10 +124,22 @@ export class TextBuilder {
     this.length += count;
   }
 
-  appendCodes(codes: ArrayLike<number>): void {
-    this.#codes = grown(this.#codes, this.length + codes.length);
-    this.#codes.set(codes, this.length);
-    this.length += codes.length;
+  /** One cell a choice, each an index into `words`. */
+  appendChoice(words: readonly (string | null)[], choices: Uint8Array): void {
+    const codes = new Map<number, number>();
+    this.#codes = grown(this.#codes, this.length + choices.length);
+    let last = -1;
+    let code = ABSENT_CODE;
+    for (let i = 0; i < choices.length; i++) {
+      const choice = choices[i]!;
+      if (choice !== last) {
+        code = codes.get(choice) ?? this.code(words[choice]!);
+        codes.set(choice, code);
+        last = choice;
+      }
+      this.#codes[this.length + i] = code;
+    }
+    this.length += choices.length;
   }
 
   code(word: string | null): number {
@@ -133,7 +153,7 @@ export class TextBuilder {
   }
 
   column(): TextColumn {
-    return { kind: 'text', codes: this.#codes.slice(0, this.length), words: [...this.#codeOf.keys()] };
+    return { kind: 'text', codes: cut(this.#codes, this.length), words: [...this.#codeOf.keys()] };
   }
 }
 
@@ -149,22 +169,23 @@ export type Builders<T extends PublishedTable> = {
   readonly [F in T['fields'][number] as F['name']]: BuilderOf[F['kind']];
 };
 
-export function buildersFor<const T extends PublishedTable>(table: T): Builders<T> {
+/** Room for `rows` rows is made at once; where their number is known, nothing is copied later. */
+export function buildersFor<const T extends PublishedTable>(table: T, rows = 16): Builders<T> {
   const made: Record<string, BuilderOf[FieldKind]> = {};
-  for (const field of table.fields) made[field.name] = builder(field.kind);
+  for (const field of table.fields) made[field.name] = builder(field.kind, rows);
   return made as Builders<T>;
 }
 
-function builder(kind: FieldKind): BuilderOf[FieldKind] {
+function builder(kind: FieldKind, rows: number): BuilderOf[FieldKind] {
   switch (kind) {
     case 'number':
-      return new NumberBuilder();
+      return new NumberBuilder(rows);
     case 'integer':
-      return new IntegerBuilder();
+      return new IntegerBuilder(rows);
     case 'boolean':
-      return new BooleanBuilder();
+      return new BooleanBuilder(rows);
     case 'text':
-      return new TextBuilder();
+      return new TextBuilder(rows);
   }
 }
 

@@ -20,7 +20,7 @@ export function publish(
   cases: readonly ReconciledCase[],
   settings: PublishSettings,
 ): { artefact: ReleaseTables; findings: readonly Finding[] } {
-  const values = valueBuilders();
+  const values = valueBuilders(cases.filter(({ verdict }) => verdict !== 'withheld'));
   const transitions = buildersFor(RELEASE_TABLES.transitions);
   const judgement = judgementBuilders();
   for (const finding of settings.general ?? []) addFinding(judgement, finding, settings.sentence);

@@ -12,10 +12,19 @@ const SIDES = [null, 'below', 'above'] as const;
 
 export type ValueBuilders = ReturnType<typeof valueBuilders>;
 
-export function valueBuilders() {
+/** The two long tables get room for all of their rows at once. */
+export function valueBuilders(published: readonly ReconciledCase[]) {
+  let functionRows = 0;
+  let pieceRows = 0;
+  for (const { checked } of published) {
+    for (const { rows } of checked.assembled.functions) functionRows += rows;
+    for (const { knotK } of checked.assembled.curves) {
+      for (let i = 1; i < knotK.length; i++) if (knotK[i] !== knotK[i - 1]) pieceRows++;
+    }
+  }
   return {
-    functions: buildersFor(RELEASE_TABLES.functions),
-    pieces: buildersFor(RELEASE_TABLES.pieces),
+    functions: buildersFor(RELEASE_TABLES.functions, functionRows),
+    pieces: buildersFor(RELEASE_TABLES.pieces, pieceRows),
     phases: buildersFor(RELEASE_TABLES.phases),
     provenance: buildersFor(RELEASE_TABLES.provenance),
   };
@@ -65,31 +74,42 @@ function addFunctions(
   levelled(to.u_enthalpy_J_per_mol, hasEnthalpyLevel, rows.uEnthalpyJPerMol);
   levelled(to.u_gibbs_energy_J_per_mol, hasEnthalpyLevel && hasEntropyLevel, rows.uGibbsEnergyJPerMol);
   to.stable.append(rows.stable);
-  for (let row = 0; row < count; row++) {
-    to.basis.push(BASES[rows.basis[row]!]!);
-    to.side.push(SIDES[rows.side[row]!]!);
-  }
+  to.basis.appendChoice(BASES, rows.basis);
+  to.side.appendChoice(SIDES, rows.side);
 }
 
 /** A knot given twice (a two-sided temperature) has no interval between its sides, and so no piece. */
 function addPieces(to: Builders<typeof RELEASE_TABLES.pieces>, substance: string, curve: PhaseCurve): void {
-  const { knotK, hasEnthalpyLevel, hasEntropyLevel } = curve;
-  let count = 0;
-  for (let i = 0; i + 1 < knotK.length; i++) {
-    if (knotK[i] === knotK[i + 1]) continue;
-    count++;
-    to.low_K.push(knotK[i]!);
-    to.high_K.push(knotK[i + 1]!);
-    to.c0.push(curve.c0[i]!);
-    to.c1.push(curve.c1[i]!);
-    to.c2.push(curve.c2[i]!);
-    to.c3.push(curve.c3[i]!);
-    to.enthalpy_J_per_mol.push(hasEnthalpyLevel ? curve.enthalpyJPerMol[i]! : null);
-    to.entropy_J_per_mol_K.push(hasEntropyLevel ? curve.entropyJPerMolK[i]! : null);
+  const { knotK } = curve;
+  for (let from = 0, i = 1; i <= knotK.length; i++) {
+    if (i < knotK.length && knotK[i] !== knotK[i - 1]) continue;
+    if (i - 1 > from) addRun(to, substance, curve, from, i - 1);
+    from = i;
   }
+}
+
+/** The pieces between the knots `from` and `last`. */
+function addRun(
+  to: Builders<typeof RELEASE_TABLES.pieces>,
+  substance: string,
+  curve: PhaseCurve,
+  from: number,
+  last: number,
+): void {
+  const count = last - from;
   to.substance.fill(substance, count);
   to.phase.fill(curve.phase, count);
   to.isobar_Pa.fill(curve.family.isobarPa, count);
+  to.low_K.append(curve.knotK.subarray(from, last));
+  to.high_K.append(curve.knotK.subarray(from + 1, last + 1));
+  to.c0.append(curve.c0.subarray(from, last));
+  to.c1.append(curve.c1.subarray(from, last));
+  to.c2.append(curve.c2.subarray(from, last));
+  to.c3.append(curve.c3.subarray(from, last));
+  if (curve.hasEnthalpyLevel) to.enthalpy_J_per_mol.append(curve.enthalpyJPerMol.subarray(from, last));
+  else to.enthalpy_J_per_mol.fill(null, count);
+  if (curve.hasEntropyLevel) to.entropy_J_per_mol_K.append(curve.entropyJPerMolK.subarray(from, last));
+  else to.entropy_J_per_mol_K.fill(null, count);
 }
 
 function addPhase(to: Builders<typeof RELEASE_TABLES.phases>, published: ReconciledCase, curve: PhaseCurve): void {

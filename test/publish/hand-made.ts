@@ -71,6 +71,8 @@ export function curve(phase: string, family = STANDARD, changes: Partial<PhaseCu
     sources: ['desk'],
     carriedThrough: -1,
     continuationGrowthPerK: 0.001,
+    enthalpyAnchor: 0,
+    entropyAnchor: 0,
     origins: [
       {
         lowK: 200,
