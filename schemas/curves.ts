@@ -60,6 +60,9 @@ export interface PhaseCurve {
   readonly referenceK: number;
   /** Sources whose numbers fix the curve and its levels, preferred first. */
   readonly sources: readonly string[];
+  /** Index of the anchor (among the substance's) that fixes the level of H and of S; -1 where none does. */
+  readonly enthalpyAnchor: number;
+  readonly entropyAnchor: number;
   /** Index of the stated transition that carries a level of this phase, or -1. */
   readonly carriedThrough: number;
   /** Growth of u(Cp) beyond the measured range: this share of Cp per kelvin. */

@@ -31,7 +31,7 @@ export function curvesOf(substance: HarmonisedCase, named: readonly NamedCell[],
     }
     if (shapes.length > 0) {
       const comparable = anchors.filter((a) => sameZeros(a, family));
-      curves.push(...levelled(shapes, comparable, substance.transitions, family, policy));
+      curves.push(...levelled(shapes, comparable, substance.transitions, family, policy, substance.anchors));
     }
   }
   return curves;

@@ -12,6 +12,8 @@ interface Level {
   hFrom: PhaseCurve['enthalpyLevelFrom'];
   sFrom: PhaseCurve['entropyLevelFrom'];
   through: number;
+  hAnchor: Anchor | null;
+  sAnchor: Anchor | null;
 }
 
 /**
@@ -25,6 +27,7 @@ export function levelled(
   transitions: readonly StatedTransition[],
   family: CurveFamily,
   policy: Policy,
+  all: readonly Anchor[],
 ): PhaseCurve[] {
   const growth = policy.continuation.relativePer100K / 100;
   const levels = shapes.map((shape) => ownLevel(shape, anchors, growth));
@@ -36,11 +39,21 @@ export function levelled(
     if (openH === 0) levels[0] = { ...levels[0], h: 0, uH: 0, hFrom: 'none' };
     if (openS === 0) levels[0] = { ...levels[0], s: 0, uS: 0, sFrom: 'none' };
   }
-  return shapes.map((shape, k) => curveOf(shape, levels[k], family, growth));
+  return shapes.map((shape, k) => curveOf(shape, levels[k], family, growth, all));
 }
 
 function ownLevel(shape: PhaseShape, anchors: readonly Anchor[], growth: number): Level {
-  const level: Level = { h: null, s: null, uH: 0, uS: 0, hFrom: 'none', sFrom: 'none', through: -1 };
+  const level: Level = {
+    h: null,
+    s: null,
+    uH: 0,
+    uS: 0,
+    hFrom: 'none',
+    sFrom: 'none',
+    through: -1,
+    hAnchor: null,
+    sAnchor: null,
+  };
   const own = preferredAnchor(anchors, shape, shape.phase);
   const home = shape.incrementsFrom === null ? own : preferredAnchor(anchors, shape, shape.incrementsFrom);
   const arrays = relative(shape);
@@ -53,6 +66,7 @@ function ownLevel(shape: PhaseShape, anchors: readonly Anchor[], growth: number)
       level.h = datum.value;
       level.uH = uOf(datum, home, shape);
       level.hFrom = 'anchor';
+      level.hAnchor = home ?? null;
     }
   } else if (own?.enthalpyOfFormation != null) {
     const at = valueAt(arrays, shape, own.referenceTemperatureK, growth, enthalpyAt);
@@ -60,6 +74,7 @@ function ownLevel(shape: PhaseShape, anchors: readonly Anchor[], growth: number)
       level.h = own.enthalpyOfFormation.value - at.value;
       level.uH = Math.hypot(uOf(own.enthalpyOfFormation, own, shape), at.u);
       level.hFrom = 'anchor';
+      level.hAnchor = own;
     }
   }
   if (shape.entropyMeans === 'declared') {
@@ -72,6 +87,7 @@ function ownLevel(shape: PhaseShape, anchors: readonly Anchor[], growth: number)
       level.s = own.entropy.value - at.value;
       level.uS = Math.hypot(uOf(own.entropy, own, shape), at.u / own.referenceTemperatureK);
       level.sFrom = 'anchor';
+      level.sAnchor = own;
     }
   }
   return level;
@@ -185,7 +201,13 @@ function reaches(shape: PhaseShape, temperatureK: number): boolean {
   return temperatureK >= shape.knotK[0] && temperatureK <= shape.knotK[shape.knotK.length - 1];
 }
 
-function curveOf(shape: PhaseShape, level: Level, family: CurveFamily, growth: number): PhaseCurve {
+function curveOf(
+  shape: PhaseShape,
+  level: Level,
+  family: CurveFamily,
+  growth: number,
+  all: readonly Anchor[],
+): PhaseCurve {
   const h = level.h ?? 0;
   const s = level.s ?? 0;
   return {
@@ -215,6 +237,8 @@ function curveOf(shape: PhaseShape, level: Level, family: CurveFamily, growth: n
     uCalibrationRelative: shape.uCalibrationRelative,
     referenceK: shape.referenceK,
     sources: shape.sources,
+    enthalpyAnchor: level.hAnchor === null ? -1 : all.indexOf(level.hAnchor),
+    entropyAnchor: level.sAnchor === null ? -1 : all.indexOf(level.sAnchor),
     carriedThrough: level.through,
     continuationGrowthPerK: growth,
     origins: shape.origins,

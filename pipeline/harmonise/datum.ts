@@ -45,12 +45,9 @@ export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, p
   };
 }
 
-/**
- * Decimals of a single cell: the column's usual ones for a zero and where one zero at the end is left out. Two left out
- * (one number in a hundred) are taken for a coarser number: 1184 among 600.60 is known to a kelvin.
- */
+/** Decimals of a single cell: its own, and the column's usual ones for a zero ("0." is not zero decimals). */
 function lastPlace({ value, decimals, usualDecimals }: RawCell): number {
-  return value === 0 || decimals === usualDecimals - 1 ? usualDecimals : decimals;
+  return value === 0 ? usualDecimals : decimals;
 }
 
 /** `datum` moved by `shift`, with a further standard uncertainty for the move; its rounding stays. */

@@ -1,12 +1,13 @@
 /** Reads a source's descriptor into one plan for each table of each file. */
 import type { Finding } from '../../schemas/finding.js';
 import { PLANNED_KINDS, type SourceHead, sourceHeadSchema, tableSchema } from '../../schemas/source.js';
+import { brokenPlans } from './broken-plan.js';
 import { matchFiles } from './glob.js';
 import { readJson } from './json-place.js';
 import { isObject, notYetRead } from './not-yet-read.js';
 import type { DescriptorResult, SourceInfo, TablePlan } from './plan.js';
 import { readingFinding } from './reading.js';
-import { brokenPlan, type TableSetting, tablePlans } from './table-plan.js';
+import { type TableSetting, tablePlans } from './table-plan.js';
 import { type JsonFile, jsonFinding, zodFindings } from './zod-findings.js';
 
 export const DESCRIPTOR_FILE = 'source.json';
@@ -88,7 +89,7 @@ export function readDescriptor(
     const setting: TableSetting = { json, sourceId, index, raw: { ...rawShared, ...table }, fileNames, textOf, named };
     if (headFault !== null || faults.length > 0 || !parsed.success || !head.success) {
       findings.push(...faults);
-      plans.push(...brokenPlan(setting, faults[0] ?? headFault!));
+      plans.push(...brokenPlans(setting, faults[0] ?? headFault!));
       continue;
     }
     const resolved = tablePlans(setting, { ...sharedOf(head.data), ...parsed.data });

@@ -2,8 +2,8 @@
 import type { NumberQuantity, TextQuantity } from '../../schemas/quantities.js';
 import type { RawCell, RawRow } from '../../schemas/raw.js';
 import type { IngestPart } from './plan.js';
-import { readPhase, wordOf } from './read-series.js';
 import type { RowReader } from './row-reader.js';
+import { readPhase, wordOf } from './row-words.js';
 
 const ORDERS: Readonly<Record<string, string>> = {
   '': 'first',

@@ -1,10 +1,10 @@
 /** Gathers the rows of a `thermal-functions` table, by phase and series, into columns in file order. */
-import type { NumberQuantity, TextQuantity } from '../../schemas/quantities.js';
+import type { NumberQuantity } from '../../schemas/quantities.js';
 import { NO_CELL, type RawColumn, type RawSeries } from '../../schemas/raw.js';
-import { phaseWanted, resolvePhase } from './phase.js';
 import type { IngestPart, WordFrom } from './plan.js';
 import { printedCell, type RowReader, splitterOf } from './row-reader.js';
 import type { RowSplitter } from './row-splitter.js';
+import { readPhase, wordOf } from './row-words.js';
 import { DecimalsCount } from './usual-decimals.js';
 
 interface Group {
@@ -284,38 +284,6 @@ export class SeriesGatherer {
     this.decimals = this.decimals.map((decimals) => longer(decimals, new Int8Array(this.room)));
     this.corrected = this.corrected.map((marks) => (marks === null ? null : longer(marks, new Uint8Array(this.room))));
   }
-}
-
-/** The phase label that a row gives for `quantity`, '' where a column of increments is empty; null where it is unknown, and reported. */
-export function readPhase(
-  part: IngestPart,
-  reader: RowReader,
-  substance: string,
-  quantity: TextQuantity,
-): string | null {
-  const { words, phases } = part.plan;
-  const from = words[quantity];
-  const word = wordOf(reader, from);
-  if (word === '' && quantity === 'increments-from') return '';
-  const label = resolvePhase(phases, substance, word);
-  if (label !== null) return label;
-  reader.readings().add({
-    problem: 'phase-unmapped',
-    subject: word,
-    address:
-      from !== undefined && 'column' in from
-        ? reader.address(from.column)
-        : { ...reader.address(-1), column: quantity },
-    read: word,
-    wanted: phaseWanted(word, phases),
-    remedy: `add "${word}" to "phases" in source.json; its rows are not used`,
-  });
-  return null;
-}
-
-export function wordOf(reader: RowReader, from: WordFrom | undefined): string {
-  if (from === undefined) return '';
-  return 'constant' in from ? from.constant : reader.text(from.column);
 }
 
 const columnOf = (from: WordFrom | undefined): number => (from !== undefined && 'column' in from ? from.column : -1);

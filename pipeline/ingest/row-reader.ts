@@ -1,12 +1,12 @@
 /** Reads the rows of one table one by one: corrections laid over them, rows that `where` leaves out passed by. */
 import type { Correction } from '../../schemas/corrections.js';
 import type { Address } from '../../schemas/harmonised.js';
+import { tidyHeader } from './column-meaning.js';
 import { outOfDateNote } from './corrections.js';
 import { NumberReader, READ_EMPTY, READ_INFINITE, READ_NUMBER } from './number.js';
 import type { IngestPart } from './plan.js';
 import type { Readings } from './reading.js';
 import { RowSplitter } from './row-splitter.js';
-import { tidyHeader } from './table-plan.js';
 import { decodeUtf8 } from './utf8.js';
 import { rowFilter } from './where.js';
 

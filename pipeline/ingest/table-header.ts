@@ -1,10 +1,10 @@
 /** Finds a table's header line and the cells that its columns stand in. */
 import type { Finding } from '../../schemas/finding.js';
+import { tidyHeader } from './column-meaning.js';
 import { nearestWords } from './nearest.js';
 import type { TablePlan } from './plan.js';
 import { readingFinding } from './reading.js';
 import type { RowSplitter } from './row-splitter.js';
-import { tidyHeader } from './table-plan.js';
 
 export interface TableHeader {
   /** First byte and line of the data. */

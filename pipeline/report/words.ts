@@ -28,8 +28,10 @@ export function sayPlace({ source, file, line, column }: Address): string {
 
 /** Cell, what it says, and what it should probably say: `x/points.csv:412 S says 888.108, probably 889.108 (one digit wrong)`. */
 export function saySuspect(suspect: Suspect): string {
-  const reason = suspect.explanation === null ? '' : ` (${suspect.explanation})`;
-  return `${sayPlace(suspect.address)} says ${suspect.printed}, probably ${suspect.proposedPrinted}${reason}`;
+  const { address, printed, proposedPrinted, explanation } = suspect;
+  const says = `${sayPlace(address)} says ${printed}`;
+  if (proposedPrinted === printed) return `${says}; a change below its last digit would close it`;
+  return `${says}, probably ${proposedPrinted}${explanation === null ? '' : ` (${explanation})`}`;
 }
 
 /**

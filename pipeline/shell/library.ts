@@ -63,7 +63,7 @@ export function openLibrary(
     inputs: [...sources.inputs, ...policyInput(request.policy, policy)],
     settings,
     only: request.only,
-    inForce: sources.accepted.filter(({ until }) => request.date <= until),
+    inForce: sources.accepted.filter(({ date, until }) => date <= request.date && request.date <= until),
     work: (what) => ({ substances, parts, settings, wanted, partitions: partition(bytesOf, partitionBytes), ...what }),
     general: (results) => {
       const all = [...sources.findings, ...results.flatMap(({ general }) => general)];

@@ -1,12 +1,14 @@
 import type { Finding } from '../../schemas/finding.js';
 import { sayFinding } from '../report/report.js';
-import { count, table, wrap } from './text.js';
+import { count, wrap } from './text.js';
 import type { VerdictLine } from './verdict-line.js';
 
 export const CAUTION =
   'Nothing about decomposition, reactivity or ignition is modelled, and a withheld value is not to be replaced unseen by an older one.';
 
 const MOST_NAMED = 25;
+/** Wide enough for a cell and its figures on one line. */
+const WIDTH = 110;
 
 /** `24 substances: 16 cleared, 0 flagged, 8 withheld`, then each withheld substance with the cell to look at first. */
 export function verdictLines(lines: readonly VerdictLine[]): string[] {
@@ -46,10 +48,13 @@ function named(title: string, wanted: VerdictLine['verdict'], lines: readonly Ve
   if (chosen.length === 0) return [];
   const shown = chosen.slice(0, MOST_NAMED);
   const more = chosen.length - shown.length;
+  const width = Math.max(...shown.map(({ substance }) => substance.length));
   return [
     '',
     title,
-    ...table(shown.map(({ substance, reason }) => [`  ${substance}`, reason])),
+    ...shown.flatMap(({ substance, reason }) =>
+      wrap(reason, WIDTH - width - 4).map((line, i) => `  ${(i === 0 ? substance : '').padEnd(width)}  ${line}`),
+    ),
     ...(more > 0 ? [`  and ${count(more, 'more', 'more')}, in the table "findings"`] : []),
   ];
 }

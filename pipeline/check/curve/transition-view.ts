@@ -92,18 +92,19 @@ function viewOf(
   const high = Math.min(from.highK, to.highK);
   let atK = temperatureK;
   if (temperatureK < low || temperatureK > high) {
-    if (crossing === null && !(high > low)) {
+    if (crossing === null) {
+      const short = [from, to].filter((p) => temperatureK < p.lowK || temperatureK > p.highK);
       return {
         ...base,
         pair: null,
-        missing: `tables of ${stated.from} and ${stated.to} that overlap`,
+        missing: `a heat-capacity table of ${short.map((p) => p.source.phase).join(' and ')} that reaches the stated temperature`,
         byConstruction,
         crossing,
         uStatedK,
         evidence,
       };
     }
-    atK = crossing === null ? Math.min(high, Math.max(low, temperatureK)) : crossing.temperatureK;
+    atK = crossing.temperatureK;
   }
   return {
     ...base,

@@ -112,7 +112,7 @@ export function judgeTable(
     findings.push(
       makeFinding({
         rule: rule.rule,
-        severity: a.material ? (a.gross ? 'fault' : 'doubt') : 'note',
+        severity: a.material && a.gross ? 'fault' : 'note',
         substance,
         fromPhase: series.phase,
         temperatureK: series.temperatureK[a.row],

@@ -73,3 +73,46 @@ export function gibbsUncertainty(curve: UncertainCurve, temperatureK: number): n
   const { hh, hs, ss } = stateCovariance(curve, temperatureK);
   return Math.sqrt(Math.max(0, hh - 2 * temperatureK * hs + temperatureK * temperatureK * ss));
 }
+
+/**
+ * Covariance of (H, S) at T1 with (H, S) at T2 of one curve, levels apart: [HH, HS, SH, SS], first index T1. From the
+ * smoother's gains between the knots next above; the calibration and the continuation are common to both.
+ */
+export function crossCovariance(
+  curve: UncertainCurve,
+  first: number,
+  second: number,
+): [number, number, number, number] {
+  if (first > second) {
+    const [hh, hs, sh, ss] = crossCovariance(curve, second, first);
+    return [hh, sh, hs, ss];
+  }
+  const i = intervalOf(curve, first) + 1;
+  const j = intervalOf(curve, second) + 1;
+  let a = curve.varH[j];
+  let b = curve.covHS[j];
+  let c = curve.covHS[j];
+  let d = curve.varS[j];
+  for (let k = j - 1; k >= i; k--) {
+    const g = 4 * k;
+    const g0 = curve.gain[g];
+    const g1 = curve.gain[g + 1];
+    const g2 = curve.gain[g + 2];
+    const g3 = curve.gain[g + 3];
+    [a, b, c, d] = [g0 * a + g1 * c, g0 * b + g1 * d, g2 * a + g3 * c, g2 * b + g3 * d];
+  }
+  if (curve.uCalibrationRelative > 0) {
+    const u2 = curve.uCalibrationRelative * curve.uCalibrationRelative;
+    const h0 = enthalpyAt(curve, curve.referenceK);
+    const s0 = entropyAt(curve, curve.referenceK);
+    const h1 = enthalpyAt(curve, first) - h0;
+    const s1 = entropyAt(curve, first) - s0;
+    const h2 = enthalpyAt(curve, second) - h0;
+    const s2 = entropyAt(curve, second) - s0;
+    a += u2 * h1 * h2;
+    b += u2 * h1 * s2;
+    c += u2 * s1 * h2;
+    d += u2 * s1 * s2;
+  }
+  return [a, b, c, d];
+}

@@ -1,0 +1,100 @@
+import type { CheckedCase } from '../../schemas/checked.js';
+import type { Finding } from '../../schemas/finding.js';
+import type { SuspectGroup } from './rank-data.js';
+
+const RANK: Readonly<Record<string, number>> = {
+  'row-readable': 0,
+  'rows-distinct': 1,
+  'value-possible': 1,
+  'entropy-follows-heat-capacity': 2,
+  'enthalpy-follows-heat-capacity': 2,
+  'functions-close': 2,
+  'heat-capacity-smooth': 2,
+  'entropy-rises': 6,
+  'slope-jumps-only-at-transitions': 3,
+  'gibbs-continuous': 4,
+  'transition-entropy-closes': 4,
+  'crossing-agrees': 5,
+  'heating-raises-entropy': 5,
+  'stated-transition-jumps': 6,
+  'lowest-curve-is-the-stated-phase': 7,
+};
+
+export interface RootedGroup {
+  readonly finding: Finding;
+  readonly group: SuspectGroup;
+  /** 1 for the first error of its finding. */
+  readonly number: number;
+}
+
+/**
+ * One cause, one finding: each group of suspects belongs to the finding that its first datum shows in most directly; the
+ * substance's other transition findings follow from it. A cell named inside a table is the cause of what its table shows.
+ */
+export function withCauses(
+  checked: CheckedCase,
+  groups: readonly SuspectGroup[],
+): { findings: readonly Finding[]; groups: readonly RootedGroup[] } {
+  const findings = [...checked.findings];
+  const rooted: RootedGroup[] = [];
+  const causeOf = new Map<string, string>();
+  const open = (f: Finding): boolean => f.severity !== 'note' && RANK[f.rule] >= 4;
+
+  // A cell that the row checks name explains what the same table shows beside it.
+  for (const cell of findings) {
+    if (cell.detail.code !== 'cell') continue;
+    for (const f of findings) {
+      if (f === cell || f.detail.code === 'cell' || causeOf.has(f.id)) continue;
+      const samePlace = f.fromPhase === cell.fromPhase && f.address?.file === cell.address?.file;
+      const sameLine = f.evidence.some((e) => e.file === cell.address?.file && e.line === cell.address?.line);
+      const table = f.rule === 'entropy-rises' || f.rule === 'value-possible' || f.detail.code === 'anomaly';
+      if (samePlace && (sameLine || table) && RANK[f.rule] !== 0) causeOf.set(f.id, cell.id);
+    }
+  }
+
+  const numbers = new Map<string, number>();
+  for (const group of groups) {
+    const first = group.members[0];
+    const wanted = candidates(findings.filter(open), first.of.kind, first.of.phase);
+    const root = wanted.find((f) => !rooted.some((r) => r.finding === f)) ?? wanted[0] ?? rooted[0]?.finding;
+    if (root === undefined) continue;
+    const number = (numbers.get(root.id) ?? 0) + 1;
+    numbers.set(root.id, number);
+    rooted.push({ finding: root, group, number });
+  }
+  // What is left over follows from the first error that touches its phases, else from the first of all.
+  for (const f of findings) {
+    if (!open(f) || rooted.some((r) => r.finding === f) || causeOf.has(f.id)) continue;
+    const near = rooted.find((r) => touches(r, f)) ?? rooted[0];
+    if (near !== undefined) causeOf.set(f.id, near.finding.id);
+  }
+  if (rooted.length === 0) {
+    // Nothing ranked: the same transition's findings still follow from the most direct of them.
+    const transitions = findings.filter(open).sort((a, b) => RANK[a.rule] - RANK[b.rule]);
+    for (const f of transitions.slice(1)) if (!causeOf.has(f.id)) causeOf.set(f.id, transitions[0].id);
+  }
+  return {
+    findings: findings.map((f) => (causeOf.has(f.id) ? { ...f, cause: causeOf.get(f.id) ?? null } : f)),
+    groups: rooted,
+  };
+}
+
+function candidates(findings: readonly Finding[], kind: string, place: string): Finding[] {
+  const wanted =
+    kind === 'enthalpy' || kind === 'entropy'
+      ? ['heating-raises-entropy', 'transition-entropy-closes', 'gibbs-continuous', 'crossing-agrees']
+      : ['gibbs-continuous', 'crossing-agrees', 'transition-entropy-closes'];
+  const score = (f: Finding): number => {
+    const at = wanted.indexOf(f.rule);
+    const places = place.split('>');
+    const touch = places.includes(f.fromPhase ?? '') || places.includes(f.toPhase ?? '');
+    const same = `${f.fromPhase}>${f.toPhase}` === place;
+    return (at < 0 ? wanted.length : at) + (same ? 0 : touch ? 10 : 20);
+  };
+  return findings.filter((f) => RANK[f.rule] >= 4).sort((a, b) => score(a) - score(b));
+}
+
+function touches(rooted: RootedGroup, f: Finding): boolean {
+  const places = rooted.group.members[0].of.phase.split('>');
+  return places.includes(f.fromPhase ?? '') || places.includes(f.toPhase ?? '');
+}
