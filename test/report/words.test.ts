@@ -316,6 +316,9 @@ describe('places and suspects', () => {
     };
     expect(saySuspect(suspect)).toBe('mill-lab/points.csv:412 S says 212.263, probably 212.503 (one digit wrong)');
     expect(saySuspect({ ...suspect, explanation: null })).toMatch(/probably 212\.503$/);
+    expect(saySuspect({ ...suspect, proposedPrinted: '212.263' })).toMatch(
+      /a change below its last digit would close it$/,
+    );
   });
 });
 
