@@ -1,3 +1,3 @@
 /** The front door of the words: sentences about findings, and figures as people print them. */
 export { figure, plusMinus, unitInWords } from './figures.js';
-export { sayFinding, sayPlace, sayReason, saySuspect } from './words.js';
+export { sayFinding, sayPlace, sayReason, saySuspect, saySuspects } from './words.js';

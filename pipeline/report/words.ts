@@ -34,6 +34,16 @@ export function saySuspect(suspect: Suspect): string {
   return `${says}, probably ${proposedPrinted}${explanation === null ? '' : ` (${explanation})`}`;
 }
 
+/** The suspects of one finding, a line each: the cells of one group cannot be told apart, a further group is a further error. */
+export function saySuspects(suspects: readonly Suspect[]): string[] {
+  return [...suspects]
+    .sort((a, b) => a.place - b.place)
+    .map((suspect, i, all) => {
+      const role = i === 0 ? 'suspect' : all[i - 1]!.group === suspect.group ? 'or' : 'and';
+      return `${role}: ${saySuspect(suspect)}`;
+    });
+}
+
 /**
  * Why a substance is withheld or flagged, in one line: the first suspect cell of its worst finding, or that finding itself.
  * `findings` are worst first, as reconcile leaves them.
@@ -45,7 +55,10 @@ export function sayReason(findings: readonly Finding[], suspects: readonly Suspe
   const [first] = suspects
     .filter(({ finding }) => order.has(finding))
     .sort((a, b) => a.place - b.place || order.get(a.finding)! - order.get(b.finding)!);
-  if (first !== undefined) return saySuspect(first);
+  if (first !== undefined) {
+    const alike = suspects.filter((one) => one !== first && one.finding === first.finding && one.group === first.group);
+    return [first, ...alike].map(saySuspect).join('; or ');
+  }
   const worst = roots[0] ?? grave[0] ?? findings[0];
   return worst === undefined ? 'nothing was found' : sayFinding(worst);
 }
@@ -80,7 +93,7 @@ function told(finding: Finding): string {
       return transition(finding, detail);
     case 'phase-order':
       return (
-        `Between ${kelvin(detail.lowK)} and ${kelvin(detail.highK)} ${detail.lower} has the lowest Gibbs energy${by(finding)}, where the transitions say that ${detail.stated} is stable. ` +
+        `${between(detail)} ${detail.lower} has the lowest Gibbs energy${by(finding)}, where the transitions say that ${detail.stated} is stable. ` +
         `Look at the entropies and the formation enthalpies of ${detail.lower} and ${detail.stated}, or state the transition that is missing.`
       );
     case 'entropy-order':
@@ -174,47 +187,57 @@ function cell(finding: Finding, { quantity, proposed, uProposed, explanation }: 
 }
 
 function transition(finding: Finding, detail: Detail<'transition'>): string {
-  const { statedK, computedK } = detail;
+  const [found, next] = transitionParts(finding, detail);
+  // A note decides nothing, so there is nothing to look for.
+  return finding.severity === 'note' ? found : `${found} ${next}`;
+}
+
+function transitionParts(finding: Finding, { what, statedK, computedK }: Detail<'transition'>): [string, string] {
   const { fromPhase: from, toPhase: to } = finding;
   const name = `${from} → ${to}`;
   const crossing =
     computedK === null ? 'the two curves do not cross near it' : `the two curves cross at ${kelvin(computedK)}`;
-  switch (detail.what) {
-    case 'gap':
-      return (
-        `At the stated ${name} temperature of ${kelvin(statedK)} G of ${to} and G of ${from} differ by ${amount(finding.observed, finding)}; ` +
-        `expected was ${expectation(finding, 0)}, and ${crossing}. Look at the entropies, formation enthalpies and this temperature.`
-      );
+  switch (what) {
+    case 'gap': {
+      const gap = finding.observed ?? 0;
+      return [
+        `At the stated ${name} temperature of ${kelvin(statedK)} G of ${from} lies ${amount(Math.abs(gap), finding)} ` +
+          `${gap < 0 ? 'below' : 'above'} G of ${to}; expected was ${expectation(finding, 0)}, and ${crossing}.`,
+        'Look at the entropies, the formation enthalpies and this temperature.',
+      ];
+    }
     case 'crossing':
-      return (
-        `The ${name} transition is stated at ${kelvin(statedK)}${printed(finding)}; ${crossing}${allowed(finding)}. ` +
-        'Look at the stated temperature, and at the entropies and enthalpies of both phases.'
-      );
+      return [
+        `The ${name} transition is stated at ${kelvin(statedK)}${printed(finding)}; ${crossing}${allowed(finding)}.`,
+        'Look at the stated temperature, and at the entropies and enthalpies of both phases.',
+      ];
     case 'not-crossed':
-      return (
-        `The ${name} transition is stated at ${kelvin(statedK)}${printed(finding)}, and the Gibbs energies of ${from} and ${to} cross nowhere in the range of the data. ` +
-        'Look at the formation enthalpies and entropies of both phases.'
-      );
+      return [
+        `The ${name} transition is stated at ${kelvin(statedK)}${printed(finding)}, and the Gibbs energies of ${from} and ${to} cross nowhere in the range of the data.`,
+        'Look at the formation enthalpies and entropies of both phases.',
+      ];
     case 'closure':
-      return (
-        `${name} at ${kelvin(statedK)}: ΔH is ${amount(finding.observed, finding)}; T ΔS gives ${expectation(finding)}. ` +
-        'Look at ΔH, ΔS and the temperature.'
-      );
+      return [
+        `${name} at ${kelvin(statedK)}: ΔH is ${amount(finding.observed, finding)}; T ΔS gives ${expectation(finding)}.`,
+        'Look at ΔH, ΔS and the temperature.',
+      ];
     case 'jump':
-      return (
+      return [
         `${name} at ${kelvin(statedK)} is stated as a first-order transition, and the tables show a jump of ${amount(finding.observed, finding)}; ` +
-        `expected was ${expectation(finding)}. Look at the rows on both sides, and at the stated ΔH and ΔS.`
-      );
+          `expected was ${expectation(finding)}.`,
+        'Look at the rows on both sides, and at the stated ΔH and ΔS.',
+      ];
     case 'no-jump':
-      return (
+      return [
         `${name} at ${kelvin(statedK)} is stated as a transition without latent heat, and the tables jump by ${amount(finding.observed, finding)}; ` +
-        `expected was ${expectation(finding, 0)}. If it has a latent heat, state the order "first".`
-      );
+          `expected was ${expectation(finding, 0)}.`,
+        'If it has a latent heat, state the order "first".',
+      ];
     case 'falls':
-      return (
-        `Heating through ${name} at ${kelvin(statedK)} should raise enthalpy and entropy, and the change is ${amount(finding.observed, finding)}. ` +
-        'Look for a lost sign, or for from and to exchanged.'
-      );
+      return [
+        `Heating through ${name} at ${kelvin(statedK)} should raise enthalpy and entropy, and the change is ${amount(finding.observed, finding)}.`,
+        'Look for a lost sign, or for from and to exchanged.',
+      ];
   }
 }
 
@@ -239,7 +262,7 @@ function gravity({ severity, detail, tolerance, unit, difference }: Finding): st
       return `Outside what the uncertainties allow, yet too small to matter${limit}.`;
     case 'note':
       if (known === null) return '';
-      return `The data are too uncertain to decide; an error below ${figure(known)}${unit === null ? '' : ` ${unitInWords(unit)}`} would not show.`;
+      return `The data are too uncertain to decide; an error below ${figure(known, known)}${unit === null ? '' : ` ${unitInWords(unit)}`} would not show.`;
   }
 }
 
@@ -271,6 +294,10 @@ export function symbol(quantity: string): string {
 
 function at({ temperatureK }: Finding): string {
   return temperatureK === null ? '' : ` at ${kelvin(temperatureK)}`;
+}
+
+function between({ lowK, highK }: { readonly lowK: number; readonly highK: number }): string {
+  return lowK === highK ? `At ${kelvin(lowK)}` : `Between ${kelvin(lowK)} and ${kelvin(highK)}`;
 }
 
 function inside({ fromPhase, toPhase }: Finding): string {

@@ -1,5 +1,5 @@
-import type { Finding } from '../../schemas/finding.js';
-import { sayFinding, sayPlace, saySuspect } from '../report/report.js';
+import type { Finding, Suspect } from '../../schemas/finding.js';
+import { sayFinding, sayPlace, saySuspects } from '../report/report.js';
 import type { Request } from './arguments.js';
 import { EXIT, type ExitStatus } from './exit-status.js';
 import { openLibrary } from './library.js';
@@ -42,26 +42,21 @@ function tellFound(log: Log, { findings, suspects }: FoundOut): void {
       tellFinding(
         log,
         finding,
-        suspects.filter((suspect) => suspect.finding === finding.id).map((one) => ({ ...one, words: saySuspect(one) })),
+        suspects.filter((suspect) => suspect.finding === finding.id),
         finding === root ? '' : '  ',
       );
     }
   }
 }
 
-function tellFinding(
-  log: Log,
-  finding: Finding,
-  suspects: readonly { readonly place: number; readonly words: string }[],
-  indent = '',
-): void {
+function tellFinding(log: Log, finding: Finding, suspects: readonly Suspect[], indent = ''): void {
   const message = sayFinding(finding);
   const { substance, severity, rule, address } = finding;
   const place = address === null ? '' : `  ${sayPlace(address)}`;
   const lines = [
     `${substance === '' ? 'source' : substance}  ${severity}  ${rule}${place}`,
     ...wrap(message, 76 - indent.length).map(indented),
-    ...suspects.map((suspect) => `  suspect ${suspect.place}: ${suspect.words}`),
+    ...saySuspects(suspects).map(indented),
     '',
   ];
   log.tell(

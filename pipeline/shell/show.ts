@@ -3,7 +3,7 @@ import type { Crossing, PhaseCurve } from '../../schemas/curves.js';
 import type { StatedTransition } from '../../schemas/harmonised.js';
 import { gibbsInDiagram } from '../core/physics/diagram.js';
 import { gasTerm } from '../core/physics/pressure-terms.js';
-import { figure, plusMinus, sayFinding, sayPlace, saySuspect } from '../report/report.js';
+import { figure, plusMinus, sayFinding, sayPlace, saySuspects } from '../report/report.js';
 import { type SketchCurve, sketch } from './sketch.js';
 import { count, table, wrap } from './text.js';
 
@@ -20,7 +20,7 @@ export function showLines(shown: ReconciledCase, pressurePa: number): string[] {
       WIDTH,
     ),
     ...section('Phases', phaseLines(assembled.curves)),
-    ...section('Transitions, stated and computed', transitionLines(judged)),
+    ...section('Transitions, stated and computed; ΔS of the curves in J/(mol K)', transitionLines(judged)),
     ...section('Crossings of the curves that nobody states', unstatedLines(assembled.crossings, judged, pressurePa)),
     ...section(`Findings (${count(shown.findings.length, 'finding')})`, findingLines(shown)),
     ...sketchLines(shown, pressurePa),
@@ -54,7 +54,7 @@ function transitionLines(judged: readonly JudgedTransition[]): string[] {
       computed,
       computedK === null ? '–' : difference(computedK, stated, uComputedK),
       one.curveEntropyJPerMolK === null ? '–' : figure(one.curveEntropyJPerMolK, 0.1),
-      `${outcome}${evidence === null ? '' : ` (${evidence})`}`,
+      `${outcome}${evidence === null ? '' : ` (${evidence})`}${stated.order === 'first' ? '' : `, ${stated.order}`}`,
     ];
   });
   return table([['', 'stated/K', 'computed/K', 'diff.', 'ΔS', ''], ...rows], [1, 2, 3, 4]);
@@ -88,7 +88,7 @@ function findingLines({ findings, suspects }: ReconciledCase): string[] {
     return [
       `${finding.severity}  ${finding.rule}${place}`,
       ...wrap(sayFinding(finding), WIDTH - 6).map((line) => `    ${line}`),
-      ...own.map((suspect) => `    suspect ${suspect.place}: ${saySuspect(suspect)}`),
+      ...saySuspects(own).map((line) => `    ${line}`),
     ];
   });
 }

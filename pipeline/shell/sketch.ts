@@ -9,7 +9,7 @@ const MARGIN = 10;
 
 /**
  * A G–T diagram in characters, at most `width` columns: for each phase, how far its G lies above the lowest one, on an
- * axis whose steps grow upwards (square root), so that the crossings near the bottom are seen beside a gas far above.
+ * axis whose steps grow upwards (cube root), so that the crossings near the bottom are seen beside a gas far above.
  * Stable is the letter on the bottom line. Values between the given temperatures are interpolated linearly: a picture,
  * no figures. Empty when no two temperatures are known.
  */
@@ -28,7 +28,7 @@ export function sketch(curves: readonly SketchCurve[], width = 80, height = 16):
     return values.map((value) => (value === null ? null : value - lowest));
   });
   const highest = Math.max(1e-9, ...above.flat().filter((value) => value !== null));
-  const rowOf = (value: number): number => Math.round((height - 1) * Math.sqrt(value / highest));
+  const rowOf = (value: number): number => Math.round((height - 1) * Math.cbrt(value / highest));
 
   const paper = Array.from({ length: height }, () => Array.from({ length: columns }, () => ' '));
   // The lowest curve is drawn last, so that its letter is the one seen on the bottom line.
@@ -45,7 +45,7 @@ export function sketch(curves: readonly SketchCurve[], width = 80, height = 16):
   const lines = paper
     .map((row, i) => {
       const share = marks.get(i);
-      const label = share === undefined ? '' : kilojoules(highest * (i / (height - 1)) ** 2);
+      const label = share === undefined ? '' : kilojoules(highest * (i / (height - 1)) ** 3);
       return `${label.padStart(MARGIN - 1)} ${share === undefined ? '│' : '┤'}${row.join('')}`.trimEnd();
     })
     .reverse();

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { figure, plusMinus, unitInWords } from '../../pipeline/report/figures.js';
-import { sayAddress, sayFinding, sayPlace, saySuspect } from '../../pipeline/report/words.js';
+import { sayAddress, sayFinding, sayPlace, sayReason, saySuspect, saySuspects } from '../../pipeline/report/words.js';
 import type { FindingDetail, ReadingProblem, Suspect } from '../../schemas/finding.js';
 import { makeFinding, type PartialFinding } from '../../schemas/make-finding.js';
 
@@ -103,7 +103,7 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     'transition gap',
     { ...melting, detail: { ...transition, what: 'gap' }, observed: 812.4, difference: 812.4, tolerance: 12 },
     [
-      /stated cr → l temperature of 600\.6 K.*differ by 812 J\/mol; expected was 0 ± 12 J\/mol, and the two curves cross at 622\.31 K/,
+      /stated cr → l temperature of 600\.6 K G of cr lies 812 J\/mol above G of l; expected was 0 ± 12 J\/mol, and the two curves cross at 622\.31 K/,
     ],
   ],
   [
@@ -319,6 +319,54 @@ describe('places and suspects', () => {
     expect(saySuspect({ ...suspect, proposedPrinted: '212.263' })).toMatch(
       /a change below its last digit would close it$/,
     );
+  });
+});
+
+describe('the reason why a substance is withheld', () => {
+  const detail = { ...transition, what: 'gap' } as const;
+  const note = makeFinding({ ...melting, severity: 'note', detail, transition: 'a' });
+  const root = makeFinding({ ...melting, severity: 'fault', detail, transition: 'b', address });
+  const after = { ...makeFinding({ ...melting, severity: 'fault', detail, transition: 'c' }), cause: root.id };
+  const cell = (finding: string, place: number, group: number, column: string): Suspect => ({
+    finding,
+    substance: 'lead',
+    place,
+    group,
+    address: { ...address, column },
+    printed: '1.0',
+    observed: 1,
+    normalisedResidual: 9,
+    redundancy: 0.5,
+    proposed: 2,
+    uProposed: 0.1,
+    proposedPrinted: '2.0',
+    smallestDetectable: 0.3,
+    explanation: null,
+  });
+
+  it('is the first suspect of the finding that the others follow from, with those of its group', () => {
+    const suspects = [
+      cell(after.id, 1, 1, 'X'),
+      cell(root.id, 2, 1, 'T'),
+      cell(root.id, 1, 1, 'S'),
+      cell(root.id, 101, 2, 'Y'),
+    ];
+    expect(sayReason([after, root, note], suspects)).toBe(
+      'mill-lab/points.csv:412 S says 1.0, probably 2.0; or mill-lab/points.csv:412 T says 1.0, probably 2.0',
+    );
+  });
+
+  it('is the finding itself where no cell is suspected', () => {
+    expect(sayReason([after, root, note], [])).toBe(sayFinding(root));
+  });
+
+  it('lists what cannot be told apart with or, and a further error with and', () => {
+    const suspects = [cell(root.id, 101, 2, 'Y'), cell(root.id, 1, 1, 'S'), cell(root.id, 2, 1, 'T')];
+    expect(saySuspects(suspects).map((line) => line.slice(0, 29))).toEqual([
+      'suspect: mill-lab/points.csv:',
+      'or: mill-lab/points.csv:412 T',
+      'and: mill-lab/points.csv:412 ',
+    ]);
   });
 });
 
