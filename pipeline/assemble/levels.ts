@@ -1,6 +1,7 @@
 import type { CurveFamily, PhaseCurve } from '../../schemas/curves.js';
 import type { Anchor, Datum, StatedTransition } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
+import { Room } from '../core/numeric/room.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
 import type { PhaseShape } from './phase-shape.js';
 
@@ -218,8 +219,8 @@ function curveOf(
     c1: shape.c1,
     c2: shape.c2,
     c3: shape.c3,
-    enthalpyJPerMol: h === 0 ? shape.enthalpy : shape.enthalpy.map((x) => x + h),
-    entropyJPerMolK: s === 0 ? shape.entropy : shape.entropy.map((x) => x + s),
+    enthalpyJPerMol: raised(shape.enthalpy, h),
+    entropyJPerMolK: raised(shape.entropy, s),
     knotKind: shape.knotKind,
     measuredFromK: shape.measuredFromK,
     measuredToK: shape.measuredToK,
@@ -243,4 +244,13 @@ function curveOf(
     continuationGrowthPerK: growth,
     origins: shape.origins,
   };
+}
+
+const room = new Room();
+
+function raised(values: Float64Array, by: number): Float64Array {
+  if (by === 0) return values;
+  const out = room.numbers(values.length);
+  for (let i = 0; i < out.length; i++) out[i] = values[i] + by;
+  return out;
 }

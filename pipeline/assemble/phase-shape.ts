@@ -4,11 +4,15 @@ import type { Series } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { cubicIntegral, cubicIntegralOverT } from '../core/numeric/cubic.js';
 import { type ChainResult, smoothChain } from '../core/numeric/gaussian-chain.js';
+import { Room } from '../core/numeric/room.js';
 import { baseCurve } from './base-curve.js';
-import { debyeTail } from './debye-tail.js';
+import { CurveDraft, type DraftKnot } from './curve-draft.js';
+import { type DebyeTail, debyeTail } from './debye-tail.js';
 import { knotsOf } from './knots.js';
 import { limitPieces } from './limit-interval.js';
 import { type Stretch, splitAt, stretchOf } from './stretch.js';
+
+const room = new Room();
 
 /** One phase's curve before its levels are known. */
 export interface PhaseShape {
@@ -98,9 +102,13 @@ function originOf(series: Series, lowK: number, highK: number, step: number | nu
   };
 }
 
-interface Stepped {
+interface ChainRun {
   readonly chain: ChainResult;
-  readonly exact: number;
+  /** Of each interval: the integrals of Cp and Cp/T, and those of the two bumps over T. */
+  readonly stepH: Float64Array;
+  readonly stepS: Float64Array;
+  readonly alpha: Float64Array;
+  readonly beta: Float64Array;
 }
 
 /**
@@ -112,13 +120,15 @@ function runChain(
   exactK: number,
   exactSK = exactK,
   countsThere = exactK === stretch.referenceK,
-): Stepped {
+): ChainRun {
   const { n, temperatureK: t } = stretch;
-  const stepH = new Float64Array(n);
-  const stepS = new Float64Array(n);
-  const stepVarH = new Float64Array(n);
-  const stepCovHS = new Float64Array(n);
-  const stepVarS = new Float64Array(n);
+  const stepH = room.numbers(n);
+  const stepS = room.numbers(n);
+  const stepVarH = room.numbers(n);
+  const stepCovHS = room.numbers(n);
+  const stepVarS = room.numbers(n);
+  const alphas = room.numbers(n);
+  const betas = room.numbers(n);
   for (let i = 0; i < n - 1; i++) {
     const w = t[i + 1] - t[i];
     if (w === 0) {
@@ -130,18 +140,26 @@ function runChain(
     }
     stepH[i] = cubicIntegral(stretch.c0[i], stretch.c1[i], stretch.c2[i], stretch.c3[i], w);
     stepS[i] = cubicIntegralOverT(stretch.c0[i], stretch.c1[i], stretch.c2[i], stretch.c3[i], t[i], w);
-    const alpha = cubicIntegralOverT(0, 6 / (w * w), -6 / w ** 3, 0, t[i], w);
-    const beta = cubicIntegralOverT(0, 60 / (w * w), -180 / w ** 3, 120 / w ** 4, t[i], w);
+    const w2 = w * w;
+    const alpha = cubicIntegralOverT(0, 6 / w2, -6 / (w2 * w), 0, t[i], w);
+    const beta = cubicIntegralOverT(0, 60 / w2, -180 / (w2 * w), 120 / (w2 * w2), t[i], w);
+    alphas[i] = alpha;
+    betas[i] = beta;
     const a = stretch.errorJPerMol[i] + 0.001 * w;
     const b = a / 2;
     stepVarH[i] = a * a + stretch.ownVarH[i];
     stepCovHS[i] = a * a * alpha + stretch.ownVarH[i] * alpha;
     stepVarS[i] = a * a * alpha * alpha + b * b * beta * beta + stretch.ownVarH[i] * alpha * alpha;
   }
-  const h = stretch.h.slice();
-  const hVar = stretch.hVar.slice();
-  const s = stretch.s.slice();
-  const sVar = stretch.sVar.slice();
+  const copy = (a: Float64Array): Float64Array => {
+    const out = room.numbers(n);
+    out.set(a);
+    return out;
+  };
+  const h = copy(stretch.h);
+  const hVar = copy(stretch.hVar);
+  const s = copy(stretch.s);
+  const sVar = copy(stretch.sVar);
   let exact = 0;
   for (let i = 0; i < n; i++) if (Math.abs(t[i] - exactK) < Math.abs(t[exact] - exactK)) exact = i;
   const start = { h: 0, hVar: 1e10, s: 0, sVar: 1e4 };
@@ -202,7 +220,7 @@ function runChain(
     startS: start.s,
     startSVar: start.sVar,
   });
-  return { chain, exact };
+  return { chain, stepH, stepS, alpha: alphas, beta: betas };
 }
 
 function firstFinite(variance: Float64Array): number {
@@ -211,31 +229,26 @@ function firstFinite(variance: Float64Array): number {
 }
 
 /** Bends each interval's cubic by its two bumps until its integrals are the chain's steps. */
-function bend(stretch: Stretch, chain: ChainResult): void {
+function bend(stretch: Stretch, run: ChainRun): void {
+  if (!stretch.hasH && !stretch.hasS) return;
   const { n, temperatureK: t } = stretch;
+  const { chain } = run;
   for (let i = 0; i < n - 1; i++) {
     const w = t[i + 1] - t[i];
     if (w === 0) continue;
-    const dH =
-      chain.h[i + 1] - chain.h[i] - cubicIntegral(stretch.c0[i], stretch.c1[i], stretch.c2[i], stretch.c3[i], w);
-    const dS =
-      chain.s[i + 1] -
-      chain.s[i] -
-      cubicIntegralOverT(stretch.c0[i], stretch.c1[i], stretch.c2[i], stretch.c3[i], t[i], w);
-    const alpha = cubicIntegralOverT(0, 6 / (w * w), -6 / w ** 3, 0, t[i], w);
-    const beta = cubicIntegralOverT(0, 60 / (w * w), -180 / w ** 3, 120 / w ** 4, t[i], w);
-    const b = (dS - dH * alpha) / beta;
+    const dH = chain.h[i + 1] - chain.h[i] - run.stepH[i];
+    const dS = chain.s[i + 1] - chain.s[i] - run.stepS[i];
+    const b = (dS - dH * run.alpha[i]) / run.beta[i];
     stretch.c1[i] += (6 * dH + 60 * b) / (w * w);
-    stretch.c2[i] += (-6 * dH - 180 * b) / w ** 3;
-    stretch.c3[i] += (120 * b) / w ** 4;
+    stretch.c2[i] += (-6 * dH - 180 * b) / (w * w * w);
+    stretch.c3[i] += (120 * b) / (w * w * w * w);
   }
 }
 
 /** A stretch whose H and S are the smoothed ones of its own observations; what it lends to another is its steps. */
 function smoothed(stretch: Stretch): Stretch {
   if (!stretch.hasH && !stretch.hasS) return stretch;
-  const { chain } = runChain(stretch, stretch.referenceK);
-  bend(stretch, chain);
+  bend(stretch, runChain(stretch, stretch.referenceK));
   return stretch;
 }
 
@@ -291,126 +304,27 @@ function finish(
   const { chain } = runChain(stretch, exactK, thirdLaw ? measuredFromK : exactK, countsThere);
   bend(stretch, chain);
 
-  let { temperatureK: knotK, c0, c1, c2, c3 } = stretch;
-  let { h, s, varH, covHS, varS, gain } = chain;
-  let kind = stretch.kind;
-  let uCp = stretch.uHeatCapacity;
-
-  if (knotK[0] === 0 && stretch.n > 2) {
-    const dips = [0.02, 0.05, 0.1, 0.2, 0.3].some((f) => {
-      const x = f * knotK[1];
-      return c0[0] + x * (c1[0] + x * (c2[0] + x * c3[0])) < 0;
-    });
-    const pieces = dips ? limitPieces(knotK[1], c0[1], h[1] - h[0], s[1] - s[0]) : null;
-    if (pieces !== null) {
-      const { thetaK, beta } = pieces;
-      knotK = inserted(knotK, 1, thetaK);
-      c0 = inserted(c0, 1, pieces.c0);
-      c1 = inserted(c1, 1, pieces.c1);
-      c2 = inserted(c2, 1, pieces.c2);
-      c3 = inserted(c3, 1, pieces.c3);
-      c0[0] = 0;
-      c1[0] = 0;
-      c2[0] = 0;
-      c3[0] = beta;
-      h = inserted(h, 1, h[0] + (beta * thetaK ** 4) / 4);
-      s = inserted(s, 1, s[0] + (beta * thetaK ** 3) / 3);
-      varH = inserted(varH, 1, (varH[0] + varH[1]) / 2);
-      covHS = inserted(covHS, 1, (covHS[0] + covHS[1]) / 2);
-      varS = inserted(varS, 1, (varS[0] + varS[1]) / 2);
-      gain = insertedGain(gain);
-      kind = insertedKind(kind, 1);
-      uCp = inserted(uCp, 1, uCp[1]);
-    }
-  } else if (tail !== null) {
-    const t = knotK[0];
-    const dH = (tail.gamma * t * t) / 2 + (tail.beta * t ** 4) / 4;
-    const dS = tail.gamma * t + (tail.beta * t ** 3) / 3;
-    // What the dropped terms cost: a few per cent of the tail's own entropy.
-    const uS = 0.03 * dS;
-    const uH = 0.03 * dH;
-    if (thirdLaw) {
-      for (let i = 0; i < s.length; i++) {
-        s[i] += dS;
-        varS[i] += uS * uS;
-      }
-    }
-    knotK = inserted(knotK, 0, 0);
-    c0 = inserted(c0, 0, 0);
-    c1 = inserted(c1, 0, tail.gamma);
-    c2 = inserted(c2, 0, 0);
-    c3 = inserted(c3, 0, tail.beta);
-    varH = inserted(varH, 0, varH[0] + uH * uH);
-    covHS = inserted(covHS, 0, covHS[0]);
-    varS = inserted(varS, 0, thirdLaw ? 0 : varS[0] + uS * uS);
-    h = inserted(h, 0, h[0] - dH);
-    s = inserted(s, 0, s[0] - dS);
-    gain = concat(new Float64Array([1, 0, 0, 1]), gain);
-    kind = insertedKind(kind, 0);
-    uCp = inserted(uCp, 0, 0);
-  }
-
-  if (policy.continuation.method === 'hold') {
-    const reach = policy.continuation.reachRelative;
-    if (knotK[0] > 0) {
-      const low = knotK[0] * (1 - reach);
-      const w = knotK[0] - low;
-      const cp = c0[0];
-      knotK = inserted(knotK, 0, low);
-      c0 = inserted(c0, 0, cp);
-      c1 = inserted(c1, 0, 0);
-      c2 = inserted(c2, 0, 0);
-      c3 = inserted(c3, 0, 0);
-      h = inserted(h, 0, h[0] - cp * w);
-      s = inserted(s, 0, s[0] - cp * Math.log(knotK[1] / low));
-      varH = inserted(varH, 0, varH[0]);
-      covHS = inserted(covHS, 0, covHS[0]);
-      varS = inserted(varS, 0, varS[0]);
-      gain = concat(new Float64Array([1, 0, 0, 1]), gain);
-      kind = insertedKind(kind, 0);
-      kind[0] = 2;
-      uCp = inserted(uCp, 0, uCp[0]);
-    }
-    const n = knotK.length;
-    const last = knotK[n - 1];
-    const i = n - 2;
-    const x = last - knotK[i];
-    const cp = c0[i] + x * (c1[i] + x * (c2[i] + x * c3[i]));
-    const high = last * (1 + reach);
-    knotK = inserted(knotK, n, high);
-    c0 = inserted(c0, n - 1, cp);
-    c1 = inserted(c1, n - 1, 0);
-    c2 = inserted(c2, n - 1, 0);
-    c3 = inserted(c3, n - 1, 0);
-    h = inserted(h, n, h[n - 1] + cp * (high - last));
-    s = inserted(s, n, s[n - 1] + cp * Math.log(high / last));
-    varH = inserted(varH, n, varH[n - 1]);
-    covHS = inserted(covHS, n, covHS[n - 1]);
-    varS = inserted(varS, n, varS[n - 1]);
-    gain = concat(gain, new Float64Array(4));
-    gain[4 * (n - 1)] = 1;
-    gain[4 * (n - 1) + 3] = 1;
-    kind = insertedKind(kind, n);
-    kind[n] = 2;
-    uCp = inserted(uCp, n, uCp[n - 1]);
-  }
+  const draft = new CurveDraft(stretch, chain);
+  if (measuredFromK === 0 && stretch.n > 2) keepPositive(draft);
+  else if (tail !== null) addTail(draft, tail, thirdLaw);
+  if (policy.continuation.method === 'hold') addContinuations(draft, policy.continuation.reachRelative);
 
   const cp = main.heatCapacity;
   return {
     phase,
-    knotK,
-    c0,
-    c1,
-    c2,
-    c3,
-    enthalpy: h,
-    entropy: s,
-    varH,
-    covHS,
-    varS,
-    gain,
-    knotKind: kind,
-    uHeatCapacity: uCp,
+    knotK: draft.view('knotK'),
+    c0: draft.intervals('c0'),
+    c1: draft.intervals('c1'),
+    c2: draft.intervals('c2'),
+    c3: draft.intervals('c3'),
+    enthalpy: draft.view('h'),
+    entropy: draft.view('s'),
+    varH: draft.view('varH'),
+    covHS: draft.view('covHS'),
+    varS: draft.view('varS'),
+    gain: draft.gains(),
+    knotKind: draft.kinds(),
+    uHeatCapacity: draft.view('uCp'),
     measuredFromK: tail !== null ? 0 : measuredFromK,
     measuredToK,
     enthalpyMeans: stretch.hasH ? (stretch.absoluteH ? 'declared' : 'increment') : 'relative',
@@ -425,34 +339,120 @@ function finish(
   };
 }
 
+/** A cubic from 0 K that would dip below zero gives way to the two pieces of `limitPieces`. */
+function keepPositive(draft: CurveDraft): void {
+  const high = draft.view('knotK')[1];
+  const c0 = draft.view('c0')[0];
+  const c1 = draft.view('c1')[0];
+  const c2 = draft.view('c2')[0];
+  const c3 = draft.view('c3')[0];
+  const dips = [0.02, 0.05, 0.1, 0.2, 0.3].some((f) => {
+    const x = f * high;
+    return c0 + x * (c1 + x * (c2 + x * c3)) < 0;
+  });
+  if (!dips) return;
+  const h = draft.view('h');
+  const s = draft.view('s');
+  const pieces = limitPieces(high, draft.view('c0')[1], h[1] - h[0], s[1] - s[0]);
+  if (pieces === null) return;
+  const { thetaK, beta } = pieces;
+  const middle = (name: 'varH' | 'covHS' | 'varS'): number => (draft.view(name)[0] + draft.view(name)[1]) / 2;
+  draft.splitFirst(
+    { c0: 0, c1: 0, c2: 0, c3: beta },
+    {
+      knotK: thetaK,
+      c0: pieces.c0,
+      c1: pieces.c1,
+      c2: pieces.c2,
+      c3: pieces.c3,
+      h: h[0] + (beta * thetaK ** 4) / 4,
+      s: s[0] + (beta * thetaK ** 3) / 3,
+      varH: middle('varH'),
+      covHS: middle('covHS'),
+      varS: middle('varS'),
+      kind: 1,
+      uCp: draft.view('uCp')[1],
+    },
+  );
+}
+
+/** The Debye tail below the first row; by the third law S counts from its end. */
+function addTail(draft: CurveDraft, tail: DebyeTail, thirdLaw: boolean): void {
+  const t = draft.view('knotK')[0];
+  const h = draft.view('h');
+  const s = draft.view('s');
+  const varH = draft.view('varH');
+  const covHS = draft.view('covHS');
+  const varS = draft.view('varS');
+  const dH = (tail.gamma * t * t) / 2 + (tail.beta * t ** 4) / 4;
+  const dS = tail.gamma * t + (tail.beta * t ** 3) / 3;
+  // What the dropped terms cost: a few per cent of the tail's own entropy.
+  const uH = 0.03 * dH;
+  const uS = 0.03 * dS;
+  if (thirdLaw) {
+    for (let i = 0; i < s.length; i++) {
+      s[i] += dS;
+      varS[i] += uS * uS;
+    }
+  }
+  draft.addFront({
+    knotK: 0,
+    c0: 0,
+    c1: tail.gamma,
+    c2: 0,
+    c3: tail.beta,
+    h: h[0] - dH,
+    s: s[0] - dS,
+    varH: varH[0] + uH * uH,
+    covHS: covHS[0],
+    varS: thirdLaw ? 0 : varS[0] + uS * uS,
+    kind: 1,
+    uCp: 0,
+  });
+}
+
+const CONTINUED = 2;
+
+/** The last Cp held beyond both ends, never towards 0 K; the growth of its uncertainty is added where it is asked for. */
+function addContinuations(draft: CurveDraft, reach: number): void {
+  const state = (at: number): Pick<DraftKnot, 'varH' | 'covHS' | 'varS' | 'uCp' | 'c1' | 'c2' | 'c3' | 'kind'> => ({
+    varH: draft.view('varH')[at],
+    covHS: draft.view('covHS')[at],
+    varS: draft.view('varS')[at],
+    uCp: draft.view('uCp')[at],
+    c1: 0,
+    c2: 0,
+    c3: 0,
+    kind: CONTINUED,
+  });
+  const first = draft.view('knotK')[0];
+  if (first > 0) {
+    const low = first * (1 - reach);
+    const cp = draft.view('c0')[0];
+    draft.addFront({
+      ...state(0),
+      knotK: low,
+      c0: cp,
+      h: draft.view('h')[0] - cp * (first - low),
+      s: draft.view('s')[0] - cp * Math.log(first / low),
+    });
+  }
+  const n = draft.n;
+  const knotK = draft.view('knotK');
+  const last = knotK[n - 1];
+  const x = last - knotK[n - 2];
+  const c = (name: 'c0' | 'c1' | 'c2' | 'c3'): number => draft.view(name)[n - 2];
+  const cp = c('c0') + x * (c('c1') + x * (c('c2') + x * c('c3')));
+  const high = last * (1 + reach);
+  draft.addBack({
+    ...state(n - 1),
+    knotK: high,
+    c0: cp,
+    h: draft.view('h')[n - 1] + cp * (high - last),
+    s: draft.view('s')[n - 1] + cp * Math.log(high / last),
+  });
+}
+
 function nearer(x: number, a: number, b: number): number {
   return Math.abs(x - a) <= Math.abs(x - b) ? a : b;
-}
-
-function inserted(a: Float64Array, at: number, value: number): Float64Array {
-  const out = new Float64Array(a.length + 1);
-  out.set(a.subarray(0, at), 0);
-  out[at] = value;
-  out.set(a.subarray(at), at + 1);
-  return out;
-}
-
-function insertedKind(a: Uint8Array, at: number): Uint8Array {
-  const out = new Uint8Array(a.length + 1);
-  out.set(a.subarray(0, at), 0);
-  out[at] = 1;
-  out.set(a.subarray(at), at + 1);
-  return out;
-}
-
-function insertedGain(gain: Float64Array): Float64Array {
-  // The first interval becomes two; the inner knot follows the first one's gain, then runs on.
-  return concat(new Float64Array([1, 0, 0, 1]), gain);
-}
-
-function concat(a: Float64Array, b: Float64Array): Float64Array {
-  const out = new Float64Array(a.length + b.length);
-  out.set(a, 0);
-  out.set(b, a.length);
-  return out;
 }

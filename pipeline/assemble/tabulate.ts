@@ -2,9 +2,12 @@ import type { Crossing, FunctionRows, PhaseCurve } from '../../schemas/curves.js
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { cubicIntegral, cubicIntegralOverT, cubicValue } from '../core/numeric/cubic.js';
+import { Room } from '../core/numeric/room.js';
 import { stateCovariance } from '../core/physics/curve-uncertainty.js';
 import { type DiagramPhase, gibbsInDiagram } from '../core/physics/diagram.js';
 import { place } from './crossings.js';
+
+const room = new Room();
 
 const BASIS_MEASURED = 0;
 const BASIS_INTERPOLATED = 1;
@@ -40,7 +43,7 @@ export function tabulated(
   const knots = curve.knotK;
   const n = knots.length;
   const size = n + extra.length;
-  const t = new Float64Array(size);
+  const t = room.numbers(size);
   const interval = new Int32Array(size);
   const atKnot = new Int32Array(size);
   const side = new Uint8Array(size);
@@ -71,14 +74,14 @@ export function tabulated(
     family: curve.family,
     rows,
     temperatureK: t.subarray(0, rows),
-    heatCapacityJPerMolK: new Float64Array(rows),
-    entropyJPerMolK: new Float64Array(rows),
-    enthalpyJPerMol: new Float64Array(rows),
-    gibbsEnergyJPerMol: new Float64Array(rows),
-    uHeatCapacityJPerMolK: new Float64Array(rows),
-    uEntropyJPerMolK: new Float64Array(rows),
-    uEnthalpyJPerMol: new Float64Array(rows),
-    uGibbsEnergyJPerMol: new Float64Array(rows),
+    heatCapacityJPerMolK: room.numbers(rows),
+    entropyJPerMolK: room.numbers(rows),
+    enthalpyJPerMol: room.numbers(rows),
+    gibbsEnergyJPerMol: room.numbers(rows),
+    uHeatCapacityJPerMolK: room.numbers(rows),
+    uEntropyJPerMolK: room.numbers(rows),
+    uEnthalpyJPerMol: room.numbers(rows),
+    uGibbsEnergyJPerMol: room.numbers(rows),
     stable: stability(curve, all, t, rows, mine, substance, policy),
     basis: new Uint8Array(rows),
     side: side.subarray(0, rows),
@@ -102,9 +105,9 @@ export function tabulated(
     const beyond = Math.max(curve.measuredFromK - t[r], t[r] - curve.measuredToK, 0);
     const own = curve.uHeatCapacityJPerMolK;
     const near = k >= 0 ? own[k] : Math.max(own[i], own[i + 1]);
-    out.uHeatCapacityJPerMolK[r] = short(
-      Math.hypot(near, curve.uCalibrationRelative * cp, curve.continuationGrowthPerK * cp * beyond),
-    );
+    const common = curve.uCalibrationRelative * cp;
+    const grown = curve.continuationGrowthPerK * cp * beyond;
+    out.uHeatCapacityJPerMolK[r] = short(Math.sqrt(near * near + common * common + grown * grown));
     const { hh, hs, ss } = stateCovariance(curve, t[r]);
     out.uEnthalpyJPerMol[r] = short(Math.sqrt(Math.max(0, hh)));
     out.uEntropyJPerMolK[r] = short(Math.sqrt(Math.max(0, ss)));
@@ -117,10 +120,13 @@ export function tabulated(
 
 /** Uncertainties are published with four significant digits; more would say nothing. */
 function short(u: number): number {
-  if (u === 0) return 0;
-  const scale = 10 ** (3 - Math.floor(Math.log10(u)));
-  return scale > 1e15 ? u : Math.round(u * scale) / scale;
+  if (!(u > 1e-12 && u < 1e15)) return u;
+  const scale = POWERS[Math.floor(Math.log10(u)) + 12];
+  return Math.round(u * scale) / scale;
 }
+
+/** 10^(3 - e) for e from -12 up. */
+const POWERS = Float64Array.from({ length: 28 }, (_, k) => 10 ** (15 - k));
 
 function stability(
   curve: PhaseCurve,

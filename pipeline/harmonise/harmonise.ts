@@ -6,7 +6,7 @@ import type { RawCase } from '../../schemas/raw.js';
 import { harmoniseAnchor } from './anchors.js';
 import { type Draft, finished } from './draft.js';
 import { countFromReference } from './reference-temperature.js';
-import { Room } from './room.js';
+import { Room } from '../core/numeric/room.js';
 import { draftSeries } from './series.js';
 import { harmoniseTransition } from './transitions.js';
 import { UnitBook } from './unit-book.js';

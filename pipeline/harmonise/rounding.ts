@@ -1,6 +1,6 @@
 /** What the printed digits leave open. */
 import { NO_CELL } from '../../schemas/raw.js';
-import type { Room } from './room.js';
+import type { Room } from '../core/numeric/room.js';
 
 /** Half a unit of the place `decimals`, in SI. */
 export function halfUnitOf(decimals: number, factor: number): number {

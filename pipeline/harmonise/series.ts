@@ -6,7 +6,7 @@ import { NO_CELL, type RawColumn, type RawSeries } from '../../schemas/raw.js';
 import { type Draft, type DraftQuantity, writable } from './draft.js';
 import { isGas, standardPressureTerm } from './gas-pressure.js';
 import { readingFinding } from './reading-finding.js';
-import type { Room } from './room.js';
+import type { Room } from '../core/numeric/room.js';
 import { halfUnitOf, halfUnits } from './rounding.js';
 import { followScale, scaledTemperatures } from './scale.js';
 import { seriesUncertainty } from './uncertainty.js';

@@ -4,7 +4,7 @@ import type { Policy } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
 import { NO_CELL, type RawSeries } from '../../schemas/raw.js';
 import type { Basis, StatedUncertainty, TableMeaning } from '../../schemas/table-meaning.js';
-import type { Room } from './room.js';
+import type { Room } from '../core/numeric/room.js';
 import type { UnitBook } from './unit-book.js';
 
 export interface OwnUncertainty {

@@ -1,8 +1,7 @@
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import type { Policy } from '../../../schemas/policy.js';
 import type { NumberQuantity } from '../../../schemas/quantities.js';
-import { digitU, type Residuals, residuals, standoff } from './residuals.js';
-import { lagrange, newStencil, pick } from './stencil.js';
+import { digitU, type Residuals, residuals, standoff, standoffWithout } from './residuals.js';
 import { cellU, type TableRows, tableRows } from './table-rows.js';
 import { type Hypothesis, type Pattern, testHeatCapacity, Window } from './window.js';
 
@@ -117,12 +116,9 @@ function screen(rows: TableRows, res: Residuals, policy: Policy): number[] {
       }
     }
     if (over <= SCREEN * SCREEN) {
-      const stand = standoff(rows, i, -1);
-      if (
-        stand.interior &&
-        Math.abs(stand.difference) >= 0.6 * policy.material.heatCapacityRelative * Math.abs(rows.cp[i]) &&
-        Math.abs(stand.difference) > SCREEN * stand.u
-      ) {
+      const least = 0.6 * policy.material.heatCapacityRelative * Math.abs(rows.cp[i]);
+      const stand = standoff(rows, i, least);
+      if (stand.interior && Math.abs(stand.difference) > SCREEN * stand.u) {
         over = SCREEN * SCREEN + 1;
       }
     }
@@ -194,7 +190,7 @@ function described(rows: TableRows, one: Hypothesis): Omit<SuspectCell, 'rivals'
 
 /** "This Cp", by the integrals around it where there are any, and by the row's own stand-off. First and last rows never. */
 function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, window: Window): Hypothesis | null {
-  const stand = standoff(rows, k, -1);
+  const stand = standoff(rows, k);
   if (!stand.interior) return null;
   const alone = Math.abs(stand.difference) / stand.u;
   if (window.conditions === 0) {
@@ -203,7 +199,7 @@ function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, wind
     let worst = 0;
     for (let j = Math.max(rows.from[k], k - 3); j <= Math.min(rows.to[k], k + 3); j++) {
       if (j === k) continue;
-      const other = neighbourStandoff(rows, j, k);
+      const other = standoffWithout(rows, j, k);
       if (other !== null && Math.abs(other.difference) > 3 * other.u) {
         worst = Math.max(worst, Math.abs(other.difference));
       }
@@ -228,27 +224,6 @@ function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, wind
     error: stand.difference,
     uError: stand.u,
   };
-}
-
-const stencil = newStencil();
-
-/** Row j's stand-off from the local cubic that uses neither j nor k. */
-function neighbourStandoff(rows: TableRows, j: number, k: number): { difference: number; u: number } | null {
-  const { t, cp } = rows;
-  const from = rows.from[j];
-  const to = rows.to[j];
-  let low = j - 1;
-  let high = j + 1;
-  if (low === k) low--;
-  if (high === k) high++;
-  if (low < from || high > to) return null;
-  const apart = 0.1 * (t[high] - t[low]);
-  pick(stencil, t, from, to, low, high, 1, apart, k);
-  if (stencil.n < 4) return null;
-  const a = lagrange(stencil, t, cp, t[j]);
-  pick(stencil, t, from, to, low, high, 2, apart, k);
-  const b = lagrange(stencil, t, cp, t[j]);
-  return { difference: cp[j] - a, u: Math.hypot(a - b, 1.4 * rows.uCp[j]) };
 }
 
 function firstCell(pattern: Pattern): NumberQuantity {
@@ -382,7 +357,7 @@ function smallest(rows: TableRows, res: Residuals, policy: Policy): TableVerdict
     if (s !== null && s.present[r] === 1)
       out.entropy = Math.max(out.entropy ?? 0, times * Math.hypot(digits.s, e * res.open[i]), 10 * s.halfUnit[r]);
     if (res.hasClosure[i] === 1 && s !== null) out.closure = Math.max(out.closure ?? 0, 10 * s.halfUnit[r]);
-    const stand = standoff(rows, i, -1);
+    const stand = standoff(rows, i);
     if (stand.interior)
       out.heatCapacity = Math.max(
         out.heatCapacity ?? 0,

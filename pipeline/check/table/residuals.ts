@@ -1,4 +1,16 @@
-import { bumpOverT, integrals, newStencil, noiseGain, pick } from './stencil.js';
+import { Room } from '../../core/numeric/room.js';
+import {
+  bumpOverT,
+  cubicAt,
+  integralOf,
+  integralOverT,
+  newCubic,
+  newStencil,
+  noiseGain,
+  pick,
+  type Stencil,
+  through,
+} from './stencil.js';
 import { cellU, type TableRows } from './table-rows.js';
 
 /** What the three row checks leave, over the rows and intervals of one table. Intervals without a check hold 0 in `has*`. */
@@ -21,10 +33,18 @@ export interface Residuals {
 
 export const TWIN = 2;
 
+const room = new Room();
+
 const central = newStencil();
 const coarse = newStencil();
 const two = new Float64Array(2);
-const other = new Float64Array(2);
+const fineCubic = newCubic();
+const coarseCubic = newCubic();
+
+function integralBy(stencil: Stencil, rows: TableRows, i: number): number {
+  through(stencil, rows.t, rows.cp, rows.t[i], coarseCubic);
+  return integralOf(coarseCubic, rows.t[i], rows.t[i + 1]);
+}
 
 /**
  * Integrals by a local cubic through the four nearest rows; the interpolation error is the larger change when every second
@@ -33,12 +53,12 @@ const other = new Float64Array(2);
  */
 export function residuals(rows: TableRows, careful = false): Residuals {
   const { n, t } = rows;
-  const q = new Float64Array(n - 1);
-  const p = new Float64Array(n - 1);
-  const e = new Float64Array(n - 1);
-  const c = new Float64Array(n - 1);
-  const open = new Float64Array(n - 1);
-  const own = new Float64Array(n - 1);
+  const q = room.numbers(n - 1);
+  const p = room.numbers(n - 1);
+  const e = room.numbers(n - 1);
+  const c = room.numbers(n - 1);
+  const open = room.numbers(n - 1);
+  const own = room.numbers(n - 1);
   const usable = new Uint8Array(n - 1);
   for (let i = 0; i < n - 1; i++) {
     if (t[i + 1] === t[i]) {
@@ -60,9 +80,9 @@ export function residuals(rows: TableRows, careful = false): Residuals {
       c[i] = 3 / w;
       open[i] = 3 / w;
     }
-    own[i] = (w * w * (rows.uCp[i] ** 2 + rows.uCp[i + 1] ** 2)) / 2;
+    own[i] = (w * w * (rows.uCp[i] * rows.uCp[i] + rows.uCp[i + 1] * rows.uCp[i + 1])) / 2;
   }
-  const closure = new Float64Array(n);
+  const closure = room.numbers(n);
   const hasClosure = new Uint8Array(n);
   const { h, s, f } = rows;
   if (h !== null && s !== null && f !== null) {
@@ -92,7 +112,6 @@ function isJump(rows: TableRows, i: number): boolean {
 
 /** The larger change of the integral when the stencil is moved one row down or up. */
 function shiftedError(rows: TableRows, i: number, fine: number): number {
-  const { t, cp } = rows;
   const from = rows.from[i];
   const to = rows.to[i];
   let error = 0;
@@ -101,8 +120,7 @@ function shiftedError(rows: TableRows, i: number, fine: number): number {
     if (first < from || first + 3 > to) continue;
     central.n = 4;
     for (let k = 0; k < 4; k++) central.at[k] = first + k;
-    integrals(central, t, cp, t[i], t[i + 1], other);
-    error = Math.max(error, Math.abs(other[0] - fine));
+    error = Math.max(error, Math.abs(integralBy(central, rows, i) - fine));
   }
   return error;
 }
@@ -112,12 +130,14 @@ export function interval(rows: TableRows, i: number, without: number, out: Float
   const { t, cp } = rows;
   const w = t[i + 1] - t[i];
   pick(central, t, rows.from[i], rows.to[i], i, i + 1, 1, 0.25 * w, without);
-  integrals(central, t, cp, t[i], t[i + 1], out);
+  through(central, t, cp, t[i], fineCubic);
+  out[0] = integralOf(fineCubic, t[i], t[i + 1]);
+  out[1] = integralOverT(fineCubic, t[i], t[i + 1]);
 }
 
 /** The larger change of the integral when the rows are thinned to every second one, both parities. */
 export function errorOf(rows: TableRows, i: number, without: number, fine: number): number {
-  const { t, cp } = rows;
+  const { t } = rows;
   const w = t[i + 1] - t[i];
   const from = rows.from[i];
   const to = rows.to[i];
@@ -128,8 +148,8 @@ export function errorOf(rows: TableRows, i: number, without: number, fine: numbe
     const lowAt = low < from ? i : low;
     const highAt = high > to ? i + 1 : high;
     pick(coarse, t, from, to, lowAt, highAt, 2, 0.25 * w, without);
-    integrals(coarse, t, cp, t[i], t[i + 1], other);
-    error = Math.max(error, Math.abs(other[0] - fine));
+    const change = Math.abs(integralBy(coarse, rows, i) - fine);
+    if (change > error) error = change;
   }
   return error;
 }
@@ -144,52 +164,72 @@ export interface Standoff {
   symmetric: boolean;
 }
 
-export function standoff(rows: TableRows, k: number, without: number): Standoff {
+const NOWHERE: Standoff = { difference: 0, u: 0, interior: false, symmetric: false };
+
+/** `least`: a smaller difference is of no interest, and its u is then not worked out (Infinity). */
+export function standoff(rows: TableRows, k: number, least = 0): Standoff {
   const { t, cp } = rows;
   const from = rows.from[k];
   const to = rows.to[k];
-  let low = k - 1;
-  let high = k + 1;
-  if (low === without) low--;
-  if (high === without) high++;
-  if (low < from || high > to || to - from < 4) return { difference: 0, u: 0, interior: false, symmetric: false };
+  const low = k - 1;
+  const high = k + 1;
+  if (low < from || high > to || to - from < 4) return NOWHERE;
   const apart = 0.1 * (t[high] - t[low]);
-  pick(central, t, from, to, low, high, 1, apart, without === -1 ? k : without);
-  const a = valueAt(t, cp, t[k]);
+  pick(central, t, from, to, low, high, 1, apart, -1);
+  through(central, t, cp, t[k], fineCubic);
+  const a = fineCubic.c0;
+  const difference = cp[k] - a;
+  const symmetric = k - 2 >= from && k + 2 <= to && !(t[from] === 0 && k - 2 === from);
+  if (Math.abs(difference) < least) return { difference, u: Number.POSITIVE_INFINITY, interior: true, symmetric };
   const gain = noiseGain(central, t, t[k]);
-  pick(central, t, from, to, low, high, 2, apart, without === -1 ? k : without);
-  const b = valueAt(t, cp, t[k]);
-  const scatter = rows.uCp[k] * Math.sqrt(1 + gain);
-  let spread = Math.abs(a - b);
+  pick(coarse, t, from, to, low, high, 2, apart, k);
+  through(coarse, t, cp, t[k], coarseCubic);
+  let spread = Math.abs(a - coarseCubic.c0);
   // One-sided stencils: the thinned one may agree with the full one by chance.
   for (let side = -1; side <= 1; side += 2) {
-    oneSided(rows, k, side as 1 | -1);
-    if (central.n === 4) spread = Math.max(spread, 0.5 * Math.abs(a - valueAt(t, cp, t[k])));
+    if (!oneSided(rows, k, side as 1 | -1)) continue;
+    through(coarse, t, cp, t[k], coarseCubic);
+    spread = Math.max(spread, 0.5 * Math.abs(a - coarseCubic.c0));
   }
-  const symmetric = k - 2 >= from && k + 2 <= to && !(t[from] === 0 && k - 2 === from);
-  return { difference: cp[k] - a, u: Math.hypot(spread, scatter), interior: true, symmetric };
+  const scatter = rows.uCp[k] * Math.sqrt(1 + gain);
+  return { difference, u: Math.sqrt(spread * spread + scatter * scatter), interior: true, symmetric };
 }
 
-/** One row on one side of k, three on the other. */
-function oneSided(rows: TableRows, k: number, side: 1 | -1): void {
-  const at = [k - side, k + side, k + 2 * side, k + 3 * side].sort((p, q) => p - q);
-  central.n = 0;
-  if (at[0] < rows.from[k] || at[3] > rows.to[k]) return;
-  const closest = 0.1 * (rows.t[k + 1] - rows.t[k - 1]);
-  for (let j = 1; j < 4; j++) if (rows.t[at[j]] - rows.t[at[j - 1]] < closest) return;
-  for (let j = 0; j < 4; j++) central.at[j] = at[j];
-  central.n = 4;
+/** One row on one side of k, three on the other; false where there are not enough, or two stand too close. */
+function oneSided(rows: TableRows, k: number, side: 1 | -1): boolean {
+  const { t } = rows;
+  const lowest = side === 1 ? k - 1 : k - 3;
+  const highest = side === 1 ? k + 3 : k + 1;
+  if (lowest < rows.from[k] || highest > rows.to[k]) return false;
+  const closest = 0.1 * (t[k + 1] - t[k - 1]);
+  let n = 0;
+  for (let j = lowest; j <= highest; j++) {
+    if (j === k) continue;
+    if (n > 0 && t[j] - t[coarse.at[n - 1]] < closest) return false;
+    coarse.at[n++] = j;
+  }
+  coarse.n = 4;
+  return true;
 }
 
-function valueAt(t: Float64Array, cp: Float64Array, x: number): number {
-  let sum = 0;
-  for (let i = 0; i < central.n; i++) {
-    const ti = t[central.at[i]];
-    let w = 1;
-    for (let j = 0; j < central.n; j++) if (j !== i) w *= (x - t[central.at[j]]) / (ti - t[central.at[j]]);
-    sum += w * cp[central.at[i]];
-  }
-  return sum;
+/** Row j's stand-off from the local cubic that uses neither j nor k. Null where too few rows are left. */
+export function standoffWithout(rows: TableRows, j: number, k: number): { difference: number; u: number } | null {
+  const { t, cp } = rows;
+  const from = rows.from[j];
+  const to = rows.to[j];
+  let low = j - 1;
+  let high = j + 1;
+  if (low === k) low--;
+  if (high === k) high++;
+  if (low < from || high > to) return null;
+  const apart = 0.1 * (t[high] - t[low]);
+  pick(central, t, from, to, low, high, 1, apart, k);
+  if (central.n < 4) return null;
+  through(central, t, cp, t[j], fineCubic);
+  const a = cubicAt(fineCubic, t[j]);
+  pick(coarse, t, from, to, low, high, 2, apart, k);
+  through(coarse, t, cp, t[j], coarseCubic);
+  return { difference: cp[j] - a, u: Math.hypot(a - cubicAt(coarseCubic, t[j]), 1.4 * rows.uCp[j]) };
 }
 
 /** Standard uncertainty of the H and S differences of interval i from the digits. */
@@ -197,7 +237,11 @@ export function digitU(rows: TableRows, i: number): { h: number; s: number } {
   const a = rows.row[i];
   const b = rows.row[i + 1];
   return {
-    h: rows.h === null ? 0 : Math.hypot(cellU(rows.h, a), cellU(rows.h, b)),
-    s: rows.s === null ? 0 : Math.hypot(cellU(rows.s, a), cellU(rows.s, b)),
+    h: rows.h === null ? 0 : root(cellU(rows.h, a), cellU(rows.h, b)),
+    s: rows.s === null ? 0 : root(cellU(rows.s, a), cellU(rows.s, b)),
   };
+}
+
+function root(a: number, b: number): number {
+  return Math.sqrt(a * a + b * b);
 }

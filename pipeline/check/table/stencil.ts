@@ -1,8 +1,7 @@
 /**
  * Local cubic interpolation of a table, for the checks: another route than the published curve's.
  *
- * `pick` chooses the four points of a stencil around an interval or a row; the integrals are by Gauss-Legendre quadrature
- * on the Lagrange polynomial through them.
+ * `pick` chooses the four points of a stencil around an interval or a row; `through` lays the polynomial through them.
  */
 export interface Stencil {
   /** Indices of the points; `n` of them are used (2 to 4). */
@@ -32,6 +31,18 @@ export function pick(
   apart: number,
   without: number,
 ): void {
+  if (stride === 1 && without < 0 && lowIndex - 1 >= from && highIndex + 1 <= to) {
+    // The ordinary case: two rows on each side, none too close.
+    const plain = t[lowIndex] - t[lowIndex - 1] >= apart && t[highIndex + 1] - t[highIndex] >= apart;
+    if (plain) {
+      stencil.at[0] = lowIndex - 1;
+      stencil.at[1] = lowIndex;
+      stencil.at[2] = highIndex;
+      stencil.at[3] = highIndex + 1;
+      stencil.n = 4;
+      return;
+    }
+  }
   const low = take(t, from, to, lowIndex, -1, stride, apart, without, below);
   const high = take(t, from, to, highIndex, 1, stride, apart, without, above);
   // Where one side runs out the other gives more.
@@ -76,19 +87,57 @@ function take(
   return n;
 }
 
-/** Value at x of the polynomial through the stencil's points. */
-export function lagrange(stencil: Stencil, t: Float64Array, y: Float64Array, x: number): number {
-  let sum = 0;
-  for (let i = 0; i < stencil.n; i++) {
-    const ti = t[stencil.at[i]];
-    let w = 1;
-    for (let j = 0; j < stencil.n; j++) if (j !== i) w *= (x - t[stencil.at[j]]) / (ti - t[stencil.at[j]]);
-    sum += w * y[stencil.at[i]];
-  }
-  return sum;
+/** The polynomial through a stencil's points, c0 + c1 x + c2 x^2 + c3 x^3 with x = T - origin. */
+export interface LocalCubic {
+  origin: number;
+  c0: number;
+  c1: number;
+  c2: number;
+  c3: number;
 }
 
-/** The sum of squared weights at x: how the points' own errors reach the interpolated value. */
+export function newCubic(): LocalCubic {
+  return { origin: 0, c0: 0, c1: 0, c2: 0, c3: 0 };
+}
+
+/** Newton's divided differences, multiplied out about `origin`. Two points give a line, three a parabola. */
+export function through(stencil: Stencil, t: Float64Array, y: Float64Array, origin: number, out: LocalCubic): void {
+  const { at, n } = stencil;
+  const x0 = t[at[0]] - origin;
+  const x1 = t[at[1]] - origin;
+  const y0 = y[at[0]];
+  const y1 = y[at[1]];
+  const d01 = (y1 - y0) / (x1 - x0);
+  let d012 = 0;
+  let d0123 = 0;
+  let x2 = 0;
+  if (n > 2) {
+    x2 = t[at[2]] - origin;
+    const y2 = y[at[2]];
+    const d12 = (y2 - y1) / (x2 - x1);
+    d012 = (d12 - d01) / (x2 - x0);
+    if (n > 3) {
+      const x3 = t[at[3]] - origin;
+      const d23 = (y[at[3]] - y2) / (x3 - x2);
+      d0123 = ((d23 - d12) / (x3 - x1) - d012) / (x3 - x0);
+    }
+  }
+  const b0 = d012 - x2 * d0123;
+  const e1 = b0 - x1 * d0123;
+  const e0 = d01 - x1 * b0;
+  out.origin = origin;
+  out.c3 = d0123;
+  out.c2 = e1 - x0 * d0123;
+  out.c1 = e0 - x0 * e1;
+  out.c0 = y0 - x0 * e0;
+}
+
+export function cubicAt(p: LocalCubic, temperatureK: number): number {
+  const x = temperatureK - p.origin;
+  return p.c0 + x * (p.c1 + x * (p.c2 + x * p.c3));
+}
+
+/** The sum of squared Lagrange weights at x: how the points' own errors reach the interpolated value. */
 export function noiseGain(stencil: Stencil, t: Float64Array, x: number): number {
   let sum = 0;
   for (let i = 0; i < stencil.n; i++) {
@@ -106,26 +155,23 @@ const WEIGHTS = [
   0.11846344252809454, 0.23931433524968324, 0.28444444444444444, 0.23931433524968324, 0.11846344252809454,
 ];
 
-/** Integrals of Cp and Cp/T over [low, high] by the stencil's polynomial, into out[0] and out[1]. */
-export function integrals(
-  stencil: Stencil,
-  t: Float64Array,
-  y: Float64Array,
-  low: number,
-  high: number,
-  out: Float64Array,
-): void {
+/** The integral of the polynomial over [low, high], in closed form. */
+export function integralOf(p: LocalCubic, low: number, high: number): number {
+  const a = low - p.origin;
+  const b = high - p.origin;
+  const at = (x: number): number => x * (p.c0 + x * (p.c1 / 2 + x * (p.c2 / 3 + (x * p.c3) / 4)));
+  return at(b) - at(a);
+}
+
+/** The integral of the polynomial over T, by Gauss-Legendre quadrature. */
+export function integralOverT(p: LocalCubic, low: number, high: number): number {
   const w = high - low;
-  let h = 0;
   let s = 0;
   for (let k = 0; k < 5; k++) {
     const x = low + NODES[k] * w;
-    const v = lagrange(stencil, t, y, x) * WEIGHTS[k];
-    h += v;
-    s += v / x;
+    s += (cubicAt(p, x) * WEIGHTS[k]) / x;
   }
-  out[0] = h * w;
-  out[1] = s * w;
+  return s * w;
 }
 
 /** The integral of the bump 6x(1 - x)/T over the interval, x from 0 to 1: how an error of the integral of Cp reaches that of Cp/T. */

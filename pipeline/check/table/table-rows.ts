@@ -1,4 +1,7 @@
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
+import { Room } from '../../core/numeric/room.js';
+
+const room = new Room();
 
 /** The rows of one series in rising temperature, as the row checks see them; n rows. Absent values are NaN-free and flagged. */
 export interface TableRows {
@@ -35,9 +38,9 @@ export function tableRows(series: Series): TableRows | null {
   if (!sorted) order = Array.from(order).sort((a, b) => temperature[a] - temperature[b] || a - b);
   // A measured run that returns to a temperature stands once here: its first row.
   const measured = series.table.basis === 'measured';
-  const t = new Float64Array(n);
-  const y = new Float64Array(n);
-  const u = new Float64Array(n);
+  const t = room.numbers(n);
+  const y = room.numbers(n);
+  const u = room.numbers(n);
   const row = new Int32Array(n);
   let k = 0;
   for (let j = 0; j < n; j++) {
@@ -49,7 +52,7 @@ export function tableRows(series: Series): TableRows | null {
     }
     t[k] = temperature[i];
     y[k] = cp.values[i];
-    u[k] = Math.hypot(cp.uOwn[i], cp.halfUnit[i] / Math.sqrt(3));
+    u[k] = cellU(cp, i);
     row[k] = i;
     k++;
   }

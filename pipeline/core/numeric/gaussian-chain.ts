@@ -1,3 +1,7 @@
+import { Room } from './room.js';
+
+const room = new Room();
+
 /**
  * A chain of two-component states x_k = (H_k, S_k) with known steps and Gaussian step errors, observed through printed
  * values of H, S and S - H/T: Kalman filter forwards (R. E. Kalman, J. Basic Eng. 82 (1960) 35) and the smoother of
@@ -39,12 +43,12 @@ export interface ChainResult {
 
 export function smoothChain(input: ChainInput): ChainResult {
   const { n, temperatureK, stepH, stepS, stepVarH, stepCovHS, stepVarS } = input;
-  const h = new Float64Array(n);
-  const s = new Float64Array(n);
-  const varH = new Float64Array(n);
-  const covHS = new Float64Array(n);
-  const varS = new Float64Array(n);
-  const gain = new Float64Array(4 * n);
+  const h = room.numbers(n);
+  const s = room.numbers(n);
+  const varH = room.numbers(n);
+  const covHS = room.numbers(n);
+  const varS = room.numbers(n);
+  const gain = room.numbers(4 * n);
 
   let xh = input.startH;
   let xs = input.startS;

@@ -1,0 +1,17 @@
+/** The sign lost. */
+import { writeLike } from './printed-number.js';
+import type { Slip } from './slip.js';
+
+export const signLost: Slip = {
+  code: 'sign-lost',
+  weight: 0.06,
+  propose: (cell) => {
+    if (cell.value === 0) return [];
+    const candidate = { value: -cell.value, step: cell.lastPlace, share: 1 };
+    return [
+      cell.number === null
+        ? candidate
+        : { ...candidate, printed: writeLike(cell.number, -cell.value, cell.number.decimals) },
+    ];
+  },
+};
