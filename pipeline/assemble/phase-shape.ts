@@ -301,8 +301,9 @@ function finish(
   const tail = crystal && measuredFromK > 0 ? debyeTail(stretch.temperatureK, stretch.heatCapacity, metal) : null;
   const thirdLaw = crystal && !stretch.hasS && (tail !== null || measuredFromK === 0);
   const countsThere = inside && (main.incrementsFrom === null || main.incrementsFrom === phase);
-  const { chain } = runChain(stretch, exactK, thirdLaw ? measuredFromK : exactK, countsThere);
-  bend(stretch, chain);
+  const run = runChain(stretch, exactK, thirdLaw ? measuredFromK : exactK, countsThere);
+  const { chain } = run;
+  bend(stretch, run);
 
   const draft = new CurveDraft(stretch, chain);
   if (measuredFromK === 0 && stretch.n > 2) keepPositive(draft);

@@ -26,7 +26,7 @@ export function readCell(context: SuspectContext): SuspectCell | null {
  * of them than `step` supports.
  */
 export function printCandidate(cell: SuspectCell, candidate: Candidate): string {
-  if (candidate.printed !== undefined) return candidate.printed;
+  if (candidate.printed !== undefined) return candidate.printed();
   if (cell.number === null) return String(Number(candidate.value.toPrecision(7)));
   const known = Math.ceil(cell.number.exponent - Math.log10(candidate.step) - 1e-9);
   return writeLike(cell.number, candidate.value, Math.min(usualDecimals(cell, cell.number, candidate, known), known));

@@ -1,6 +1,6 @@
 /** The decimal point moved by up to three places. */
 
-import { writeLike } from './printed-number.js';
+import { type PrintedNumber, writeLike } from './printed-number.js';
 import type { Candidate, Slip, SuspectCell } from './slip.js';
 
 /** [places to the right, share]. */
@@ -16,15 +16,16 @@ const MOVES = [
 export const decimalPointMoved: Slip = {
   code: 'decimal-point-moved',
   weight: 0.08,
-  propose: (cell) =>
-    cell.number === null || cell.value === 0 ? [] : MOVES.map(([places, share]) => moved(cell, places, share)),
+  propose: (cell) => {
+    const { number, value } = cell;
+    return number === null || value === 0 ? [] : MOVES.map(([places, share]) => moved(cell, number, places, share));
+  },
 };
 
-function moved(cell: SuspectCell, places: number, share: number): Candidate {
+function moved(cell: SuspectCell, number: PrintedNumber, places: number, share: number): Candidate {
   // Division by a power of ten keeps decimal numbers decimal: 123 / 10 is 12.3, 123 * 0.1 is not.
   const scale = 10 ** Math.abs(places);
   const value = places > 0 ? cell.value * scale : cell.value / scale;
   const step = places > 0 ? cell.lastPlace * scale : cell.lastPlace / scale;
-  const printed = writeLike(cell.number!, value, cell.number!.decimals - places);
-  return { value, step, share, printed };
+  return { value, step, share, printed: () => writeLike(number, value, number.decimals - places) };
 }

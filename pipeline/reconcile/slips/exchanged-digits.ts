@@ -1,5 +1,5 @@
 /** Two digits exchanged, neighbours more often than others. */
-import { withCharacters } from './printed-number.js';
+import { changeOf, withCharacters } from './printed-number.js';
 import type { Candidate, Slip } from './slip.js';
 
 const NEIGHBOURS_SHARE = 0.9;
@@ -17,9 +17,10 @@ export const digitsExchanged: Slip = {
       for (let j = i + 1; j < digits.length; j++) {
         const [a, b] = [digits[i], digits[j]];
         if (text[a] === text[b]) continue;
-        const changed = withCharacters(number, [a, b], [text[b], text[a]]);
+        const change = changeOf(number, i, Number(text[b])) + changeOf(number, j, Number(text[a]));
+        const printed = () => withCharacters(text, [a, b], [text[b], text[a]]);
         const share = j === i + 1 ? NEIGHBOURS_SHARE / neighbours : (1 - NEIGHBOURS_SHARE) / others;
-        candidates.push({ value: value + changed.change, step: lastPlace, share, printed: changed.text });
+        candidates.push({ value: value + change, step: lastPlace, share, printed });
       }
     }
     return candidates;

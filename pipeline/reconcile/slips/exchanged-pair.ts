@@ -9,6 +9,6 @@ export const enthalpyAndEntropyExchanged: Slip = {
     if (cell.quantity !== 'transition-enthalpy' && cell.quantity !== 'transition-entropy') return [];
     const other = cell.partner === null ? null : readPrinted(cell.partner.printed, null);
     if (other === null || other.value === cell.value) return [];
-    return [{ value: other.value, step: lastPlaceOf(other), share: 1, printed: other.text }];
+    return [{ value: other.value, step: lastPlaceOf(other), share: 1, printed: () => other.text }];
   },
 };

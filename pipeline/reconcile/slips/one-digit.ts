@@ -1,5 +1,5 @@
 /** One printed digit wrong: any of them may have been any of nine others. */
-import { withCharacters } from './printed-number.js';
+import { changeOf, withCharacters } from './printed-number.js';
 import type { Candidate, Slip } from './slip.js';
 
 export const oneDigitWrong: Slip = {
@@ -7,13 +7,14 @@ export const oneDigitWrong: Slip = {
   weight: 0.3,
   propose: ({ number, value, lastPlace }) => {
     if (number === null) return [];
-    const share = 1 / (9 * number.digits.length);
+    const { digits, text } = number;
+    const share = 1 / (9 * digits.length);
     const candidates: Candidate[] = [];
-    for (const place of number.digits) {
+    for (const [i, place] of digits.entries()) {
       for (let digit = 0; digit <= 9; digit++) {
-        if (number.text[place] === String(digit)) continue;
-        const changed = withCharacters(number, [place], [String(digit)]);
-        candidates.push({ value: value + changed.change, step: lastPlace, share, printed: changed.text });
+        if (text[place] === String(digit)) continue;
+        const printed = () => withCharacters(text, [place], [String(digit)]);
+        candidates.push({ value: value + changeOf(number, i, digit), step: lastPlace, share, printed });
       }
     }
     return candidates;

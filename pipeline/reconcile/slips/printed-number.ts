@@ -16,6 +16,8 @@ export interface PrintedNumber {
 }
 
 const SHAPE = /^([+\-\u2212]?)\s*([0-9][0-9.,\s]*|[.,][0-9][0-9\s]*)(?:([eEdD])([+\-\u2212]?)([0-9]+))?$/u;
+/** By the decimal mark: the other mark sets groups of three digits apart. */
+const GROUPED = { '.': /^[0-9]{1,3}(?:,[0-9]{3})+(?:\.[0-9]*)?$/, ',': /^[0-9]{1,3}(?:\.[0-9]{3})+(?:,[0-9]*)?$/ };
 
 /**
  * Reads `printed`; null where it is no plain number. A mark that may be a decimal comma or set thousands apart is taken
@@ -30,15 +32,15 @@ export function readPrinted(printed: string, expected: number | null): PrintedNu
   let bestDistance = Number.POSITIVE_INFINITY;
   for (const mark of ['.', ','] as const) {
     const other = mark === '.' ? ',' : '.';
+    if (mantissa.includes(other) && !GROUPED[mark].test(mantissa)) continue;
     const plain = mantissa.replaceAll(other, '').replace(/\s/gu, '');
     if (plain.split(mark).length > 2) continue;
     const point = plain.indexOf(mark);
-    if (point >= 0 && mantissa.lastIndexOf(other) > mantissa.indexOf(mark)) continue;
     const exponent =
       letter === undefined ? 0 : Number(exponentDigits) * (exponentSign === '' || exponentSign === '+' ? 1 : -1);
     const size = Number(`${plain.replace(mark, '.')}e${exponent}`);
     if (!Number.isFinite(size)) continue;
-    const value = sign === '-' || sign === '\u2212' ? -size : size;
+    const value = isMinus(sign) ? -size : size;
     const start = text.indexOf(mantissa, sign.length);
     const distance = expected === null ? (point >= 0 ? 0 : 1) : Math.abs(value - expected);
     if (distance >= bestDistance) continue;
@@ -71,25 +73,18 @@ export function writeLike(style: PrintedNumber, value: number, decimals: number)
   return sign + figures.replace('.', style.mark) + style.exponentText;
 }
 
-/** The text with the characters at `places` replaced, read again. */
-export function withCharacters(
-  number: PrintedNumber,
-  places: readonly number[],
-  characters: readonly string[],
-): { readonly text: string; readonly change: number } {
-  const changed = [...number.text];
-  let change = 0;
-  for (const [i, place] of places.entries()) {
-    change += (Number(characters[i]) - Number(number.text[place])) * placeValue(number, place);
-    changed[place] = characters[i];
-  }
-  return { text: changed.join(''), change: number.value < 0 || isMinus(number.sign) ? -change : change };
+/** What the value changes by when its digit number `index` (0 is the first) becomes `digit`. */
+export function changeOf(number: PrintedNumber, index: number, digit: number): number {
+  const after = number.digits.length - 1 - index;
+  const change = (digit - Number(number.text[number.digits[index]])) * 10 ** (after - number.decimals + number.exponent);
+  return isMinus(number.sign) ? -change : change;
 }
 
-/** What one unit of the digit at `place` of the text is worth. */
-function placeValue(number: PrintedNumber, place: number): number {
-  const after = number.digits.length - 1 - number.digits.indexOf(place);
-  return 10 ** (after - number.decimals + number.exponent);
+/** The text with other characters at `places`. */
+export function withCharacters(text: string, places: readonly number[], characters: readonly string[]): string {
+  const changed = [...text];
+  for (const [i, place] of places.entries()) changed[place] = characters[i];
+  return changed.join('');
 }
 
 const isDigit = (character: string): boolean => character >= '0' && character <= '9';

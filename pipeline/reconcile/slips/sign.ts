@@ -7,11 +7,8 @@ export const signLost: Slip = {
   weight: 0.06,
   propose: (cell) => {
     if (cell.value === 0) return [];
-    const candidate = { value: -cell.value, step: cell.lastPlace, share: 1 };
-    return [
-      cell.number === null
-        ? candidate
-        : { ...candidate, printed: writeLike(cell.number, -cell.value, cell.number.decimals) },
-    ];
+    const { number, value } = cell;
+    const candidate = { value: -value, step: cell.lastPlace, share: 1 };
+    return [number === null ? candidate : { ...candidate, printed: () => writeLike(number, -value, number.decimals) }];
   },
 };

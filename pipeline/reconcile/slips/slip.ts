@@ -45,7 +45,7 @@ export interface Candidate {
   /** Of the kind's prior; the shares of one cell sum to at most 1. */
   readonly share: number;
   /** As it would stand in the column, where that is more than the value in figures. */
-  readonly printed?: string;
+  readonly printed?: () => string;
   /** The cell's text itself tells of this slip, which says nothing about the value. */
   readonly told?: true;
 }
