@@ -146,13 +146,20 @@ function stability(
       others.push(place(c, substance, setting));
   }
   if (others.length === 0 || !curve.hasEnthalpyLevel || !curve.hasEntropyLevel) return stable;
+  // Temperatures rise, so each curve's interval is found by walking along.
+  const at = new Int32Array(others.length + 1);
+  const walk = (k: number, knots: Float64Array, temperatureK: number): number => {
+    while (at[k] < knots.length - 2 && knots[at[k] + 1] <= temperatureK) at[k]++;
+    return at[k];
+  };
   for (let r = 0; r < rows; r++) {
     if (t[r] <= 0) continue;
-    const g = gibbsInDiagram(own, t[r]);
-    for (const o of others) {
+    const g = gibbsInDiagram(own, t[r], walk(others.length, curve.knotK, t[r]));
+    for (let k = 0; k < others.length; k++) {
+      const o = others[k];
       if (t[r] < o.lowK || t[r] > o.highK) continue;
       // Rounding of G itself is allowed for: at a crossing both phases are stable.
-      if (gibbsInDiagram(o, t[r]) < g - 1e-9 * Math.abs(g) - 1e-6) {
+      if (gibbsInDiagram(o, t[r], walk(k, o.curve.knotK, t[r])) < g - 1e-9 * Math.abs(g) - 1e-6) {
         stable[r] = 0;
         break;
       }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { Room } from '../../pipeline/harmonise/room.js';
+import { Room } from '../../pipeline/core/numeric/room.js';
 import { halfUnitOf, halfUnits } from '../../pipeline/harmonise/rounding.js';
 import { columnOf, harmonised, seriesOf, tableOf } from './raw.js';
 

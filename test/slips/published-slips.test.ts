@@ -11,6 +11,7 @@ import { studySlips, studyTable } from './slip-study.js';
 const REPORTING_SEED = 700_001;
 const SLIPS = Number(process.env.SLIPS ?? 70);
 const FIRST_SEED = Number(process.env.SLIP_SEED ?? REPORTING_SEED);
+const SOURCES = process.env.SLIP_SOURCES ?? 'test/published';
 const sizes = process.env.SLIP_SIZES === 'design' ? 'design' : 'printed';
 const LEAST_SHARE = 0.97;
 
@@ -18,7 +19,7 @@ it(
   'finds at least 97 % of single wrong cells, in their substance only, the cell in the first group',
   async () => {
     const seeds = Array.from({ length: SLIPS }, (_, i) => FIRST_SEED + i);
-    const study = await studySlips('test/published', seeds, runPipeline, { sizes });
+    const study = await studySlips(SOURCES, seeds, runPipeline, { sizes });
     const { studied, without } = study;
     const table = studyTable(study);
     if (process.env.SLIPS !== undefined) console.log(table);

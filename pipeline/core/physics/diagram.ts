@@ -12,8 +12,10 @@ export interface DiagramPhase {
   readonly formulaUnits: number;
 }
 
-export function gibbsInDiagram(phase: DiagramPhase, temperatureK: number): number {
-  const g = gibbsAt(phase.curve, temperatureK) + (phase.shift === null ? 0 : phase.shift(temperatureK));
+/** `interval`: where T lies in the curve, for a caller that knows it. */
+export function gibbsInDiagram(phase: DiagramPhase, temperatureK: number, interval?: number): number {
+  const g =
+    gibbsAt(phase.curve, temperatureK, interval) + (phase.shift === null ? 0 : phase.shift(temperatureK));
   return phase.formulaUnits === 1 ? g : g / phase.formulaUnits;
 }
 

@@ -76,7 +76,8 @@ export function writeLike(style: PrintedNumber, value: number, decimals: number)
 /** What the value changes by when its digit number `index` (0 is the first) becomes `digit`. */
 export function changeOf(number: PrintedNumber, index: number, digit: number): number {
   const after = number.digits.length - 1 - index;
-  const change = (digit - Number(number.text[number.digits[index]])) * 10 ** (after - number.decimals + number.exponent);
+  const change =
+    (digit - Number(number.text[number.digits[index]])) * 10 ** (after - number.decimals + number.exponent);
   return isMinus(number.sign) ? -change : change;
 }
 
