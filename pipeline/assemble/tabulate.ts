@@ -15,7 +15,7 @@ const BASIS_EXTRAPOLATED = 2;
 
 /**
  * Values at the raw temperatures, 298.15 K, each crossing at the policy's pressure and the policy's grid, for one phase.
- * A row printed twice is published twice, `below` and `above`; so is a crossing's phase only once, being one phase.
+ * A row printed twice is published twice, `below` and `above`.
  */
 export function tabulated(
   curve: PhaseCurve,
@@ -26,7 +26,6 @@ export function tabulated(
 ): FunctionRows {
   const mine = crossings.filter(
     (c) =>
-      c.stable &&
       c.pressurePa === (curve.family.isobarPa ?? policy.pressurePa) &&
       c.family.isobarPa === curve.family.isobarPa &&
       c.gas !== 'ideal' &&
@@ -164,7 +163,7 @@ function stability(
         break;
       }
     }
-    for (const c of mine) if (c.temperatureK === t[r]) stable[r] = 1;
+    for (const c of mine) if (c.stable && c.temperatureK === t[r]) stable[r] = 1;
   }
   return stable;
 }
