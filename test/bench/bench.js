@@ -6,7 +6,7 @@
  * Both are whole processes, start to exit. Exit status 1 when the nightly did not publish.
  */
 import { existsSync, mkdirSync, mkdtempSync, readFileSync, realpathSync, rmSync, writeFileSync } from 'node:fs';
-import { cpus, tmpdir } from 'node:os';
+import { cpus, loadavg, tmpdir } from 'node:os';
 import { dirname, join, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { parseArgs } from 'node:util';
@@ -74,6 +74,9 @@ async function bench() {
     ratio: rounded(median(runs.map((r) => r.ratio)), 3),
     peak_MiB: rounded(Math.max(...runs.map((r) => r.nightly.peakMiB)), 1),
     floor_copy_s: rounded(median(runs.map((r) => r.copySeconds)), 3),
+    nightly_cpu_s: medianOrNull(runs.map((r) => r.nightly.cpuSeconds)),
+    floor_cpu_s: medianOrNull(runs.map((r) => r.floor.cpuSeconds)),
+    load_average: loadavg()[0],
     floor_peak_MiB: rounded(Math.max(...runs.map((r) => r.floor.peakMiB)), 1),
     bytes,
     seed,
@@ -94,7 +97,8 @@ function printTable(result, score) {
   say('| ---: | ---: | ---: | ---: | ---: | ---: |');
   const { rows, floor_s, nightly_s, ratio, peak_MiB } = result;
   say(`| ${result.substances} | ${rows} | ${floor_s} | ${nightly_s} | ${ratio} | ${peak_MiB} |`);
-  say(`(medians of ${result.pairs} pairs; the floor's copying alone ${result.floor_copy_s} s; peak is the largest seen)`);
+  say(`(medians of ${result.pairs} pairs; the floor's copying alone ${result.floor_copy_s} s; peak is the largest seen;`);
+  say(` CPU time ${result.floor_cpu_s} s and ${result.nightly_cpu_s} s; load average at the end ${result.load_average.toFixed(1)})`);
   say('');
   say('| slip | planted | found | cell in first group |');
   say('| --- | ---: | ---: | ---: |');
@@ -115,6 +119,10 @@ function median(list) {
   const sorted = list.toSorted((a, b) => a - b);
   const middle = sorted.length >> 1;
   return sorted.length % 2 === 1 ? sorted[middle] : (sorted[middle - 1] + sorted[middle]) / 2;
+}
+
+function medianOrNull(list) {
+  return list.includes(null) ? null : rounded(median(list), 2);
 }
 
 function rounded(value, decimals) {

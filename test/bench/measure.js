@@ -11,6 +11,7 @@ const POLL_MS = 20;
  * @typedef {object} Measured
  * @property {number} seconds wall time, process start to exit
  * @property {number} peakMiB largest resident set
+ * @property {number | null} cpuSeconds user and system time of all its threads; null without GNU time
  * @property {number} status
  * @property {string} stdout
  * @property {string} stderr
@@ -27,7 +28,7 @@ export async function measure(command, args) {
   const report = join(scratch, 'peak');
   const timed = existsSync(GNU_TIME);
   const [program, programArgs] = timed
-    ? [GNU_TIME, ['--quiet', '-f', '%M', '-o', report, command, ...args]]
+    ? [GNU_TIME, ['--quiet', '-f', '%M %U %S', '-o', report, command, ...args]]
     : [command, args];
   const started = performance.now();
   const child = spawn(program, programArgs, { stdio: ['ignore', 'pipe', 'pipe'] });
@@ -41,9 +42,10 @@ export async function measure(command, args) {
   });
   const seconds = (performance.now() - started) / 1000;
   if (poll !== null) clearInterval(poll);
-  const peakKiB = timed ? Number(readFileSync(report, 'utf8').trim()) : polledKiB;
+  const [peakKiB, user, system] = timed ? readFileSync(report, 'utf8').trim().split(' ').map(Number) : [polledKiB];
+  const cpuSeconds = timed ? user + system : null;
   rmSync(scratch, { recursive: true });
-  return { seconds, peakMiB: peakKiB / 1024, status, stdout: stdout(), stderr: stderr() };
+  return { seconds, peakMiB: peakKiB / 1024, cpuSeconds, status, stdout: stdout(), stderr: stderr() };
 }
 
 function gather(stream) {
