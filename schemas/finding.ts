@@ -162,5 +162,7 @@ export interface Suspect {
   readonly uProposed: number;
   readonly proposedPrinted: string;
   readonly smallestDetectable: number;
+  /** Code of the usual slip that would explain it, and the cell as that slip would have it. */
   readonly explanation: string | null;
+  readonly explainedPrinted: string | null;
 }

@@ -224,6 +224,7 @@ const suspects = {
     text('proposed_printed', 'The proposed value in the unit of the column', optional),
     number('smallest_detectable', null, 'The smallest error in this cell that the data would reveal'),
     text('explanation', 'The usual slip that would explain it', optional),
+    text('explained_printed', 'The cell as that slip would have it', optional),
   ],
 } as const satisfies PublishedTable;
 

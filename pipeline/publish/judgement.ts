@@ -105,4 +105,5 @@ function addSuspect(to: Builders<typeof RELEASE_TABLES.suspects>, suspect: Suspe
   to.proposed_printed.push(suspect.proposedPrinted);
   to.smallest_detectable.push(suspect.smallestDetectable);
   to.explanation.push(suspect.explanation);
+  to.explained_printed.push(suspect.explainedPrinted);
 }

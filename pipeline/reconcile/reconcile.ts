@@ -6,6 +6,7 @@ import { sidakThreshold } from '../core/numeric/normal.js';
 import { acceptedOf } from './acceptances.js';
 import { withCauses } from './causes.js';
 import { conditionsOf } from './conditions.js';
+import { explained, withExplanations } from './explained.js';
 import { type SuspectGroup, suspectGroups } from './rank-data.js';
 import { suspectsOf } from './suspects.js';
 
@@ -34,7 +35,7 @@ export function reconcile(
 function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose: Finding[]): ReconciledCase {
   const { policy } = settings;
   const tableSuspects = checked.assembled.examined.suspects;
-  const suspects: Suspect[] = [...tableSuspects];
+  let suspects: Suspect[] = [...tableSuspects];
   let findings: readonly Finding[] = checked.findings;
   if (checked.findings.length > 0) {
     const groups = groupsOf(checked, policy);
@@ -43,6 +44,8 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
     for (const { finding, group, number } of rooted.groups) {
       suspects.push(...suspectsOf(checked, finding, group, number, policy));
     }
+    suspects = explained(checked, suspects, policy);
+    findings = withExplanations(findings, suspects);
     const taken = acceptedOf(findings, settings);
     findings = taken.findings;
     loose.push(...taken.lapsed);

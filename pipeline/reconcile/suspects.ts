@@ -29,6 +29,7 @@ export function suspectsOf(
       proposedPrinted: printedLike(datum.printed, (member.proposed - datum.offset) / datum.factor),
       smallestDetectable: member.smallestDetectable,
       explanation: null,
+      explainedPrinted: null,
     };
   });
 }

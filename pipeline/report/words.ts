@@ -28,10 +28,40 @@ export function sayPlace({ source, file, line, column }: Address): string {
 
 /** Cell, what it says, and what it should probably say: `x/points.csv:412 S says 888.108, probably 889.108 (one digit wrong)`. */
 export function saySuspect(suspect: Suspect): string {
-  const { address, printed, proposedPrinted, explanation } = suspect;
+  const { address, printed, proposedPrinted, explanation, explainedPrinted } = suspect;
   const says = `${sayPlace(address)} says ${printed}`;
   if (proposedPrinted === printed) return `${says}; a change below its last digit would close it`;
-  return `${says}, probably ${proposedPrinted}${explanation === null ? '' : ` (${explanation})`}`;
+  if (explanation === null) return `${says}, probably ${proposedPrinted}`;
+  return `${says}, probably ${explainedPrinted ?? proposedPrinted} (${sayExplanation(explanation)}?)`;
+}
+
+const EXPLANATIONS: Readonly<Record<string, string>> = {
+  'one-digit-wrong': 'one digit wrong',
+  'digits-exchanged': 'two digits exchanged',
+  'decimal-point-moved': 'decimal point moved',
+  'copied-from-row-above': 'copied from the row above',
+  'sign-lost': 'sign lost',
+  'calorie-read-as-joule': 'calories where joules are declared',
+  'joule-read-as-calorie': 'joules where calories are declared',
+  'kilo-dropped': 'a thousand times too small: kilo dropped',
+  'kilo-added': 'a thousand times too large: kilo added',
+  'per-gram-read-as-per-mole': 'per gram where per mole is declared',
+  'per-mole-read-as-per-gram': 'per mole where per gram is declared',
+  'celsius-read-as-kelvin': 'degrees Celsius read as kelvin',
+  'kelvin-read-as-celsius': 'kelvin read as degrees Celsius',
+  'fahrenheit-not-converted': 'degrees Fahrenheit not converted',
+  'read-as-fahrenheit': 'kelvin or degrees Celsius read as degrees Fahrenheit',
+  'atmosphere-for-bar': 'an entropy at 1 atm taken for 1 bar, or the reverse',
+  'enthalpy-and-entropy-exchanged': 'ΔH and ΔS of the transition exchanged',
+  'in-units-of-r': 'given in units of R',
+  'log10-taken-for-ln': 'decimal logarithm taken for the natural one, or the reverse',
+  'torr-read-as-pascal': 'torr read as pascal',
+  'pascal-read-as-torr': 'pascal read as torr',
+};
+
+/** A usual slip in words, from its code. */
+export function sayExplanation(code: string): string {
+  return EXPLANATIONS[code] ?? code.replaceAll('-', ' ');
 }
 
 /** The suspects of one finding, a line each: the cells of one group cannot be told apart, a further group is a further error. */
@@ -170,7 +200,8 @@ function cell(finding: Finding, { quantity, proposed, uProposed, explanation }: 
     'heat-capacity': 'the neighbouring rows and the printed H and S put it at',
     entropy: 'the heat capacity and the neighbouring rows put it at',
   }[quantity as 'entropy'];
-  const question = explanation === null ? 'Compare the cell with the original.' : `${capital(explanation)}?`;
+  const question =
+    explanation === null ? 'Compare the cell with the original.' : `${capital(sayExplanation(explanation))}?`;
   const unit = finding.unit === null ? '' : ` ${unitInWords(finding.unit)}`;
   const { observed } = finding;
   const text = printedText(finding);

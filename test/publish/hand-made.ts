@@ -299,7 +299,8 @@ export function suspect(of: string, substance: string): Suspect {
     uProposed: 0.01,
     proposedPrinted: '57.85',
     smallestDetectable: 0.05,
-    explanation: 'two digits exchanged',
+    explanation: 'digits-exchanged',
+    explainedPrinted: '12.34',
   };
 }
 

@@ -78,7 +78,7 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
   [
     'cell',
     {
-      detail: { code: 'cell', quantity: 'entropy', proposed: 889.11, uProposed: 0.01, explanation: 'one digit wrong' },
+      detail: { code: 'cell', quantity: 'entropy', proposed: 889.11, uProposed: 0.01, explanation: 'one-digit-wrong' },
       temperatureK: 1900,
       observed: 888.108,
       unit: 'J/(mol.K)',
@@ -312,9 +312,10 @@ describe('places and suspects', () => {
       uProposed: 0.01,
       proposedPrinted: '212.503',
       smallestDetectable: 0.1,
-      explanation: 'one digit wrong',
+      explanation: 'one-digit-wrong',
+      explainedPrinted: null,
     };
-    expect(saySuspect(suspect)).toBe('mill-lab/points.csv:412 S says 212.263, probably 212.503 (one digit wrong)');
+    expect(saySuspect(suspect)).toBe('mill-lab/points.csv:412 S says 212.263, probably 212.503 (one digit wrong?)');
     expect(saySuspect({ ...suspect, explanation: null })).toMatch(/probably 212\.503$/);
     expect(saySuspect({ ...suspect, proposedPrinted: '212.263' })).toMatch(
       /a change below its last digit would close it$/,
@@ -342,6 +343,7 @@ describe('the reason why a substance is withheld', () => {
     proposedPrinted: '2.0',
     smallestDetectable: 0.3,
     explanation: null,
+    explainedPrinted: null,
   });
 
   it('is the first suspect of the finding that the others follow from, with those of its group', () => {

@@ -202,6 +202,7 @@ function suspectOf(
     proposedPrinted: printedLike(series.text(cell.row, q.column), cell.observed, cell.proposed),
     smallestDetectable: 4.13 * cell.uProposed,
     explanation: null,
+    explainedPrinted: null,
   };
 }
 

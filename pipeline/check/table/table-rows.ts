@@ -47,8 +47,8 @@ export function tableRows(series: Series): TableRows | null {
     const i = order[j];
     if (k > 0 && temperature[i] === t[k - 1]) {
       if (measured) continue;
-      // A third row at one temperature adds nothing. The same row printed twice marks a break, as a glass note does.
-      if (k > 1 && t[k - 2] === t[k - 1]) continue;
+      // Of three rows at one temperature the last is the upper side; the one between repeats the lower with a note.
+      if (k > 1 && t[k - 2] === t[k - 1]) k--;
     }
     t[k] = temperature[i];
     y[k] = cp.values[i];

@@ -14,8 +14,7 @@ export interface DiagramPhase {
 
 /** `interval`: where T lies in the curve, for a caller that knows it. */
 export function gibbsInDiagram(phase: DiagramPhase, temperatureK: number, interval?: number): number {
-  const g =
-    gibbsAt(phase.curve, temperatureK, interval) + (phase.shift === null ? 0 : phase.shift(temperatureK));
+  const g = gibbsAt(phase.curve, temperatureK, interval) + (phase.shift === null ? 0 : phase.shift(temperatureK));
   return phase.formulaUnits === 1 ? g : g / phase.formulaUnits;
 }
 
