@@ -1,13 +1,12 @@
 /**
  * The upper quantile of the standard normal law: z with P(Z > z) = p, 0 < p < 1, to about 1e-9 relative
- * (P. J. Acklam's rational approximation, 2003, refined by one step of Halley's method on the complementary error function).
+ * (P. J. Acklam's rational approximation, 2003, refined by two steps of Halley's method on the tail).
  */
 export function normalQuantile(p: number): number {
-  const q = 1 - p;
-  let x = acklam(q);
+  let x = -acklam(p);
   for (let k = 0; k < 2; k++) {
-    const e = upperTail(-x) - q;
-    const u = e * Math.sqrt(2 * Math.PI) * Math.exp((x * x) / 2);
+    // Relative to the density, so that tails below the rounding of 1 keep their digits.
+    const u = (p - upperTail(x)) * Math.sqrt(2 * Math.PI) * Math.exp((x * x) / 2);
     x -= u / (1 + (x * u) / 2);
   }
   return x;
@@ -15,7 +14,7 @@ export function normalQuantile(p: number): number {
 
 /** The two-sided critical value when `alpha` is shared over `tests` (Z. Sidak, J. Am. Stat. Assoc. 62 (1967) 626). */
 export function sidakThreshold(alpha: number, tests: number): number {
-  const each = 1 - (1 - alpha) ** (1 / Math.max(1, tests));
+  const each = -Math.expm1(Math.log1p(-alpha) / Math.max(1, tests));
   return normalQuantile(each / 2);
 }
 
