@@ -35,7 +35,7 @@ export function saySuspect(suspect: Suspect): string {
   return `${says}, probably ${explainedPrinted ?? proposedPrinted} (${sayExplanation(explanation)}?)`;
 }
 
-const EXPLANATIONS: Readonly<Record<string, string>> = {
+export const EXPLANATIONS: Readonly<Record<string, string>> = {
   'one-digit-wrong': 'one digit wrong',
   'digits-exchanged': 'two digits exchanged',
   'decimal-point-moved': 'decimal point moved',
@@ -109,14 +109,14 @@ function told(finding: Finding): string {
         'Look for a wrong digit, or for a row in the wrong place.'
       );
     case 'impossible':
-      return `${capital(symbol(detail.quantity))} is ${detail.read}${at(finding)}, which cannot be; expected was ${detail.wanted}. Compare the cell with the original.`;
+      return `${capital(symbol(detail.quantity))}${ofPhase(finding)} is ${detail.read}${at(finding)}, which cannot be; expected was ${detail.wanted}. Compare the cell with the original.`;
     case 'interval':
       return interval(finding, detail);
     case 'cell':
       return cell(finding, detail);
     case 'anomaly':
       return (
-        `${symbol(detail.quantity)} between ${kelvin(detail.lowK)} and ${kelvin(detail.highK)} stands off its neighbours${by(finding)}, and no single cell explains it: ` +
+        `${between(detail)} ${symbol(detail.quantity)}${ofPhase(finding)} stands off its neighbours${by(finding)}, and no single cell explains it: ` +
         'a step or an anomaly. State a transition if there is one, or compare these rows with the original.'
       );
     case 'transition':
@@ -128,7 +128,7 @@ function told(finding: Finding): string {
       );
     case 'entropy-order':
       return (
-        `S of ${detail.above} is ${amount(finding.observed, finding)}${at(finding)}, below S of ${detail.below} at ${amount(finding.expected, finding)}; ` +
+        `S of ${detail.above} lies ${size(finding)} below S of ${detail.below}${at(finding)}; ` +
         `${detail.above} is the phase of higher temperature and should have more. Look at the entropies of both.`
       );
     case 'unstated-jump':
@@ -188,11 +188,15 @@ function interval(finding: Finding, { quantity, lowK, highK, named }: Detail<'in
     : 'No single cell explains it: compare these rows with the original.';
   const found = amount(finding.observed, finding);
   const expected = expectation(finding);
+  const subject = `${symbol(quantity)}${ofPhase(finding)}`;
+  if (finding.rule === 'entropy-rises') {
+    return `${subject} falls from ${amount(finding.expected, finding)} at ${kelvin(lowK)} to ${found} at ${kelvin(highK)}, where it should rise. Compare these rows with the original.`;
+  }
   if (finding.rule === 'functions-close') {
-    return `${symbol(quantity)} at ${kelvin(highK)} is ${found}; the row’s other functions put it at ${expected}. ${next}`;
+    return `${subject} at ${kelvin(highK)} is ${found}; the row’s other functions put it at ${expected}. ${next}`;
   }
   const integral = finding.rule === 'enthalpy-follows-heat-capacity' ? '∫Cp dT' : '∫(Cp/T) dT';
-  return `From ${kelvin(lowK)} to ${kelvin(highK)} ${symbol(quantity)} rises by ${found}; ${integral} of the printed heat capacities gives ${expected}. ${next}`;
+  return `From ${kelvin(lowK)} to ${kelvin(highK)} ${subject} rises by ${found}; ${integral} of the printed heat capacities gives ${expected}. ${next}`;
 }
 
 function cell(finding: Finding, { quantity, proposed, uProposed, explanation }: Detail<'cell'>): string {
@@ -212,7 +216,7 @@ function cell(finding: Finding, { quantity, proposed, uProposed, explanation }: 
         ? text.replace('-', '−')
         : figure(observed, uProposed);
   return (
-    `${symbol(quantity)}${at(finding)} is ${found}${unit}${printed(finding)}; ` +
+    `${symbol(quantity)}${ofPhase(finding)}${at(finding)} is ${found}${unit}${printed(finding)}; ` +
     `${witness ?? 'the row’s other functions and its neighbours put it at'} ${plusMinus(proposed, uProposed)}. ${question}`
   );
 }
@@ -336,8 +340,17 @@ function inside({ fromPhase, toPhase }: Finding): string {
 }
 
 function by(finding: Finding): string {
-  const size = finding.difference ?? finding.observed;
-  return size === null ? '' : ` by ${amount(Math.abs(size), finding)}`;
+  return finding.difference === null && finding.observed === null ? '' : ` by ${size(finding)}`;
+}
+
+function size(finding: Finding): string {
+  const value = finding.difference ?? finding.observed;
+  return amount(value === null ? null : Math.abs(value), finding);
+}
+
+/** The phase of a finding inside one table. */
+function ofPhase({ fromPhase, toPhase }: Finding): string {
+  return fromPhase === null || toPhase !== null ? '' : ` of ${fromPhase}`;
 }
 
 function allowed({ tolerance, unit }: Finding): string {

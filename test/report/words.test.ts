@@ -1,6 +1,15 @@
 import { describe, expect, it } from 'vitest';
+import { SLIP_CODES } from '../../pipeline/reconcile/explain.js';
 import { figure, plusMinus, unitInWords } from '../../pipeline/report/figures.js';
-import { sayAddress, sayFinding, sayPlace, sayReason, saySuspect, saySuspects } from '../../pipeline/report/words.js';
+import {
+  EXPLANATIONS,
+  sayAddress,
+  sayFinding,
+  sayPlace,
+  sayReason,
+  saySuspect,
+  saySuspects,
+} from '../../pipeline/report/words.js';
 import type { FindingDetail, ReadingProblem, Suspect } from '../../schemas/finding.js';
 import { makeFinding, type PartialFinding } from '../../schemas/make-finding.js';
 
@@ -76,16 +85,31 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     ],
   ],
   [
+    'interval in which the entropy falls',
+    {
+      rule: 'entropy-rises',
+      detail: { ...interval, named: false },
+      fromPhase: 'cr',
+      observed: 70,
+      expected: 71.5,
+      difference: -1.5,
+      tolerance: 0.001,
+      unit: 'J/(mol.K)',
+    },
+    [/^S of cr falls from 71\.5000 J\/\(mol K\) at 1800 K to 70\.0000 J\/\(mol K\) at 1900 K, where it should rise/],
+  ],
+  [
     'cell',
     {
       detail: { code: 'cell', quantity: 'entropy', proposed: 889.11, uProposed: 0.01, explanation: 'one-digit-wrong' },
       temperatureK: 1900,
+      fromPhase: 'cr',
       observed: 888.108,
       unit: 'J/(mol.K)',
       evidence: [{ ...address, printed: '212.263' }],
     },
     [
-      /^S at 1900 K is 888\.108 J\/\(mol K\) \(printed 212\.263\); the heat capacity and the neighbouring rows put it at 889\.110 ± 0\.010\. One digit wrong\?/,
+      /^S of cr at 1900 K is 888\.108 J\/\(mol K\) \(printed 212\.263\); the heat capacity and the neighbouring rows put it at 889\.110 ± 0\.010\. One digit wrong\?/,
     ],
   ],
   [
@@ -97,7 +121,7 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
       difference: -2.5,
       unit: 'J/(mol.K)',
     },
-    [/^Cp between 500 K and 600 K stands off its neighbours by 2\.5 J\/\(mol K\)/, /a step or an anomaly/],
+    [/^Between 500 K and 600 K Cp stands off its neighbours by 2\.5 J\/\(mol K\)/, /a step or an anomaly/],
   ],
   [
     'transition gap',
@@ -175,11 +199,10 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
       rule: 'entropy-rises',
       temperatureK: 600,
       detail: { code: 'entropy-order', above: 'l', below: 'cr' },
-      observed: 80,
-      expected: 84,
+      observed: -4,
       unit: 'J/(mol.K)',
     },
-    [/S of l is 80 J\/\(mol K\) at 600 K, below S of cr at 84 J\/\(mol K\)/],
+    [/^S of l lies 4 J\/\(mol K\) below S of cr at 600 K; l is the phase of higher temperature/],
   ],
   [
     'unstated-jump',
@@ -320,6 +343,13 @@ describe('places and suspects', () => {
     expect(saySuspect({ ...suspect, proposedPrinted: '212.263' })).toMatch(
       /a change below its last digit would close it$/,
     );
+  });
+});
+
+describe('the usual slips', () => {
+  it('have words for every code, and for no other', () => {
+    expect(Object.keys(EXPLANATIONS).sort()).toEqual([...SLIP_CODES].sort());
+    expect(new Set(Object.values(EXPLANATIONS)).size).toBe(SLIP_CODES.length);
   });
 });
 

@@ -201,7 +201,7 @@ describe('check', () => {
     expect(findings[0]).toMatchObject({
       substance: 'corvane',
       severity: 'fault',
-      message: expect.stringMatching(/^S at 400 K/),
+      message: expect.stringMatching(/^S of cr at 400 K/),
     });
   });
 });
