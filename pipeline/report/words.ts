@@ -258,15 +258,14 @@ function transitionParts(finding: Finding, { what, statedK, computedK }: Detail<
       ];
     case 'jump':
       return [
-        `${name} at ${kelvin(statedK)} is stated as a first-order transition, and the tables show a jump of ${amount(finding.observed, finding)}; ` +
-          `expected was ${expectation(finding)}.`,
-        'Look at the rows on both sides, and at the stated ΔH and ΔS.',
+        `${name} at ${kelvin(statedK)} is stated as a transition without latent heat, and the entropy jumps by ${amount(finding.observed, finding)}; ` +
+          `expected was ${expectation(finding, 0)}.`,
+        'If it has a latent heat, state the order "first"; else look at the rows on both sides.',
       ];
     case 'no-jump':
       return [
-        `${name} at ${kelvin(statedK)} is stated as a transition without latent heat, and the tables jump by ${amount(finding.observed, finding)}; ` +
-          `expected was ${expectation(finding, 0)}.`,
-        'If it has a latent heat, state the order "first".',
+        `${name} at ${kelvin(statedK)} is stated as a first-order transition, and its jump of entropy, ${amount(finding.observed, finding)}, cannot be told from none.`,
+        'Look at the rows on both sides and at the stated ΔH and ΔS; if it has no latent heat, state its order.',
       ];
     case 'falls':
       return [
@@ -285,6 +284,7 @@ function gravity({ severity, detail, tolerance, unit, difference }: Finding): st
     detail.code === 'impossible'
   )
     return '';
+  if (detail.code === 'transition' && detail.what === 'no-jump') return '';
   const known = detail.code === 'transition' ? detail.smallestDetectable : null;
   const limit =
     tolerance === null || difference === null

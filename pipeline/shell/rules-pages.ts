@@ -40,7 +40,8 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
   'rows-distinct': {
     group: 'reading',
     holds: 'no two rows of a series at one temperature disagree; evaluated tables rise in temperature',
-    formula: 'T(i) < T(i+1) in evaluated tables; rows at one T are equal within their digits, two-sided rows aside',
+    formula:
+      'T(i) < T(i+1), and rows at one T equal within their digits, two-sided rows aside; a measured series may repeat and return',
     tolerance: () => 'The rounding of the printed digits.',
     agrees: 'The rows are in order and none contradicts another.',
     disagrees: 'Two rows at one temperature differ, or the temperature falls.',
@@ -64,7 +65,7 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
     tolerance: (policy) => `${rounding} ${cells(policy)} Material: ${entropyLimit(policy)}.`,
     agrees: 'Every interval closes.',
     disagrees: 'An interval does not close; the cell that explains it is named among the suspects, where one does.',
-    untestable: 'The table lacks S or Cp, or has fewer than four rows of one phase.',
+    untestable: 'The table prints no S beside Cp, or has a single row.',
     wants: 'A table of one phase that prints both Cp and S.',
   },
   'enthalpy-follows-heat-capacity': {
@@ -75,7 +76,7 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
       `${rounding} ${cells(policy)} Material: ${policy.material.enthalpyJPerMol} J/mol in H − H(Tr).`,
     agrees: 'Every interval closes.',
     disagrees: 'An interval does not close; the cell that explains it is named among the suspects, where one does.',
-    untestable: 'The table lacks H − H(Tr) or Cp, or has fewer than four rows of one phase.',
+    untestable: 'The table prints no H − H(Tr) beside Cp, or has a single row.',
     wants: 'A table of one phase that prints both Cp and H − H(Tr).',
   },
   'functions-close': {
@@ -101,13 +102,13 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
   },
   'entropy-rises': {
     group: 'limits',
-    holds: 'S rises with T; near a transition S(cr) < S(l) < S(g)',
-    formula: 'dS/dT > 0 in each phase;  S(higher phase) > S(lower phase) within 50 K of their transition',
+    holds: 'S rises with T, and from phase to phase on heating',
+    formula: 'S(T2) ≥ S(T1) from row to row;  S_to(Tt) > S_from(Tt) at each first-order transition',
     tolerance: (policy) => significance(policy),
     agrees: 'Entropies rise with temperature and from phase to phase.',
     disagrees: 'An entropy falls, or the phase of higher temperature has less of it.',
-    untestable: 'No entropies, or none of two phases near one transition.',
-    wants: 'Entropies of two phases on one zero, within 50 K of their transition.',
+    untestable: 'No entropies, or levels that were carried through the transition itself.',
+    wants: 'A column of S; for two phases, levels of S that do not rest on the transition between them.',
   },
   'gibbs-continuous': {
     group: 'transitions',
@@ -145,8 +146,8 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
   'slope-jumps-only-at-transitions': {
     group: 'transitions',
     holds: 'S and H do not jump inside a phase where no transition is stated',
-    formula: 'S(T+) = S(T−) and H(T+) = H(T−) wherever no transition is stated',
-    tolerance: (policy) => `${rounding} Material: ${entropyLimit(policy)}.`,
+    formula: 'S(T+) = S(T−) and H(T+) = H(T−) between two rows at one T, where no transition is stated',
+    tolerance: () => 'Twice the rounding of both rows.',
     agrees: 'There is no jump inside the phase.',
     disagrees: 'S or H jumps: a transition is missing, or rows on one side are wrong.',
     untestable: 'The table prints neither S nor H − H(Tr).',
@@ -156,11 +157,11 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
     group: 'transitions',
     holds: 'a first-order transition has a jump; a continuous one and a glass transition have none',
     formula: 'first order: S_to(Tt) − S_from(Tt) = ΔS ≠ 0;  continuous, glass: = 0',
-    tolerance: (policy) => significance(policy),
-    agrees: 'The tables show the jump that the statement says, or none where none is stated.',
-    disagrees: 'A stated jump is missing or differs, or a jump stands where none is stated.',
-    untestable: 'The tables of the two phases do not reach the transition from both sides, or print no S.',
-    wants: 'Rows on both sides of the transition.',
+    tolerance: (policy) => `${significance(policy)} Material: ${policy.material.entropyJPerMolK} J/(mol K).`,
+    agrees: 'There is a jump where one is stated, and none where none is.',
+    disagrees: 'A stated jump cannot be told from none, or the entropy jumps where none is stated.',
+    untestable: 'Neither ΔS nor ΔH is stated, and the levels of the two phases rest on the transition itself.',
+    wants: 'ΔS or ΔH of the transition, or an entropy of both phases.',
   },
   'heating-raises-entropy': {
     group: 'transitions',
