@@ -61,27 +61,30 @@ describe('the demo', () => {
     }
   });
 
-  it.each(slips)('finds $about of $medium in the first group of suspects, with one cause for all', (slip) => {
-    const findings = findingsOf(slip.medium);
-    const roots = findings.filter((row) => row.cause === null);
-    expect(roots.map((row) => row.rule)).toHaveLength(1);
-    const root = roots[0]!;
-    expect(root.severity).toBe('fault');
-    for (const row of findings) if (row !== root) expect(row.cause).toBe(root.finding);
-    const suspects = demo
-      .table('suspects')
-      .filter((row) => row.substance === slip.medium && row.finding === root.finding);
-    const first = suspects.filter((row) => row.group === 1);
-    const cell = first.find((row) => isAt(row, slip));
-    expect(cell, first.map((row) => `${row.file}:${row.line} ${row.column}`).join(', ')).toBeDefined();
-    expect(cell!.printed).toBe(slip.printed);
-    // The proposal meets the clean figure within its own uncertainty, in the printed unit.
-    const plain = (text: unknown): number => Number(String(text).replace(',', '.'));
-    const scale = (cell!.observed as number) / plain(slip.printed);
-    const doubt =
-      (4 * (cell!.u_proposed as number)) / Math.abs(scale) + 10 ** -(slip.clean.split(/[.,]/)[1]?.length ?? 0);
-    expect(Math.abs(plain(cell!.proposed_printed) - plain(slip.clean))).toBeLessThanOrEqual(doubt);
-  });
+  it.each(slips.map((slip) => [slip.about, slip.medium, slip] as const))(
+    'finds %s (%s) in the first group of suspects, with one cause for all',
+    (_about, _medium, slip) => {
+      const findings = findingsOf(slip.medium);
+      const roots = findings.filter((row) => row.cause === null);
+      expect(roots.map((row) => row.rule)).toHaveLength(1);
+      const root = roots[0]!;
+      expect(root.severity).toBe('fault');
+      for (const row of findings) if (row !== root) expect(row.cause).toBe(root.finding);
+      const suspects = demo
+        .table('suspects')
+        .filter((row) => row.substance === slip.medium && row.finding === root.finding);
+      const first = suspects.filter((row) => row.group === 1);
+      const cell = first.find((row) => isAt(row, slip));
+      expect(cell, first.map((row) => `${row.file}:${row.line} ${row.column}`).join(', ')).toBeDefined();
+      expect(cell!.printed).toBe(slip.printed);
+      // The proposal meets the clean figure within its own uncertainty, in the printed unit.
+      const plain = (text: unknown): number => Number(String(text).replace(',', '.'));
+      const scale = (cell!.observed as number) / plain(slip.printed);
+      const doubt =
+        (4 * (cell!.u_proposed as number)) / Math.abs(scale) + 10 ** -(slip.clean.split(/[.,]/)[1]?.length ?? 0);
+      expect(Math.abs(plain(cell!.proposed_printed) - plain(slip.clean))).toBeLessThanOrEqual(doubt);
+    },
+  );
 
   it('puts every planted cell first among its suspects', () => {
     const places = slips.map((slip) => {
