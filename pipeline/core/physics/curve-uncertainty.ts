@@ -1,3 +1,4 @@
+import { cubicIntegralOverT } from '../numeric/cubic.js';
 import { type CurveArrays, enthalpyAt, entropyAt, intervalOf } from './curve.js';
 
 /** What a curve's uncertainty is made of; shapes as in `CurveArrays`. */
@@ -30,8 +31,7 @@ export interface StateCovariance {
  */
 export function stateCovariance(curve: UncertainCurve, temperatureK: number): StateCovariance {
   const i = intervalOf(curve, temperatureK);
-  const w = curve.knotK[i + 1] - curve.knotK[i];
-  const t = w > 0 ? Math.min(1, Math.max(0, (temperatureK - curve.knotK[i]) / w)) : 0;
+  const t = shareOf(curve, i, temperatureK);
   const a = 1 - t;
   const g = 4 * i;
   const { varH, covHS, varS, gain } = curve;
@@ -54,17 +54,10 @@ export function stateCovariance(curve: UncertainCurve, temperatureK: number): St
     hs += u2 * dh * ds;
     ss += u2 * ds * ds;
   }
-  const beyond = Math.max(curve.measuredFromK - temperatureK, temperatureK - curve.measuredToK, 0);
-  if (beyond > 0) {
-    const high = temperatureK > curve.measuredToK;
-    const cp = high ? curve.c0[curve.c0.length - 1] : curve.c0[0];
-    const uH = (curve.continuationGrowthPerK * cp * beyond * beyond) / 2;
-    const uS = uH / (high ? curve.measuredToK : temperatureK);
-    const sign = high ? 1 : -1;
-    hh += uH * uH;
-    hs += sign * sign * uH * uS;
-    ss += uS * uS;
-  }
+  const [eH, eS] = continuationError(curve, temperatureK);
+  hh += eH * eH;
+  hs += eH * eS;
+  ss += eS * eS;
   return { hh, hs, ss };
 }
 
@@ -75,8 +68,9 @@ export function gibbsUncertainty(curve: UncertainCurve, temperatureK: number): n
 }
 
 /**
- * Covariance of (H, S) at T1 with (H, S) at T2 of one curve, levels apart: [HH, HS, SH, SS], first index T1. From the
- * smoother's gains between the knots next above; the calibration and the continuation are common to both.
+ * Covariance of (H, S) at T1 with (H, S) at T2 of one curve, levels apart: [HH, HS, SH, SS], first index T1. The same linear
+ * weights as in `stateCovariance`, between knots whose covariance the smoother's gains carry; the calibration and the
+ * continuation of one side are common to both.
  */
 export function crossCovariance(
   curve: UncertainCurve,
@@ -87,20 +81,29 @@ export function crossCovariance(
     const [hh, hs, sh, ss] = crossCovariance(curve, second, first);
     return [hh, sh, hs, ss];
   }
-  const i = intervalOf(curve, first) + 1;
-  const j = intervalOf(curve, second) + 1;
-  let a = curve.varH[j];
-  let b = curve.covHS[j];
-  let c = curve.covHS[j];
-  let d = curve.varS[j];
-  for (let k = j - 1; k >= i; k--) {
-    const g = 4 * k;
-    const g0 = curve.gain[g];
-    const g1 = curve.gain[g + 1];
-    const g2 = curve.gain[g + 2];
-    const g3 = curve.gain[g + 3];
-    [a, b, c, d] = [g0 * a + g1 * c, g0 * b + g1 * d, g2 * a + g3 * c, g2 * b + g3 * d];
+  const { varH, covHS, varS, gain } = curve;
+  const i = intervalOf(curve, first);
+  const j = intervalOf(curve, second);
+  const t1 = shareOf(curve, i, first);
+  const t2 = shareOf(curve, j, second);
+  const through = (k: number, m: Four): Four => {
+    const [g0, g1, g2, g3] = [gain[4 * k], gain[4 * k + 1], gain[4 * k + 2], gain[4 * k + 3]];
+    return [g0 * m[0] + g1 * m[2], g0 * m[1] + g1 * m[3], g2 * m[0] + g3 * m[2], g2 * m[1] + g3 * m[3]];
+  };
+  const at = (k: number): Four => [varH[k], covHS[k], covHS[k], varS[k]];
+  // Cov(x_j, x(T2)), and Cov(x_j+1, x(T2)) for two temperatures in one interval.
+  const low = mixed(1 - t2, at(j), t2, through(j, at(j + 1)));
+  let sum: Four;
+  if (i === j) {
+    const step = through(j, at(j + 1));
+    const high = mixed(1 - t2, [step[0], step[2], step[1], step[3]], t2, at(j + 1));
+    sum = mixed(1 - t1, low, t1, high);
+  } else {
+    let next = low;
+    for (let k = j - 1; k > i; k--) next = through(k, next);
+    sum = mixed(1 - t1, through(i, next), t1, next);
   }
+  let [hh, hs, sh, ss] = sum;
   if (curve.uCalibrationRelative > 0) {
     const u2 = curve.uCalibrationRelative * curve.uCalibrationRelative;
     const h0 = enthalpyAt(curve, curve.referenceK);
@@ -109,10 +112,44 @@ export function crossCovariance(
     const s1 = entropyAt(curve, first) - s0;
     const h2 = enthalpyAt(curve, second) - h0;
     const s2 = entropyAt(curve, second) - s0;
-    a += u2 * h1 * h2;
-    b += u2 * h1 * s2;
-    c += u2 * s1 * h2;
-    d += u2 * s1 * s2;
+    hh += u2 * h1 * h2;
+    hs += u2 * h1 * s2;
+    sh += u2 * s1 * h2;
+    ss += u2 * s1 * s2;
   }
-  return [a, b, c, d];
+  const [h1, s1] = continuationError(curve, first);
+  const [h2, s2] = continuationError(curve, second);
+  if (h1 * h2 > 0) {
+    hh += h1 * h2;
+    hs += h1 * s2;
+    sh += s1 * h2;
+    ss += s1 * s2;
+  }
+  return [hh, hs, sh, ss];
+}
+
+type Four = [number, number, number, number];
+
+function mixed(a: number, x: Four, b: number, y: Four): Four {
+  return [a * x[0] + b * y[0], a * x[1] + b * y[1], a * x[2] + b * y[2], a * x[3] + b * y[3]];
+}
+
+function shareOf(curve: UncertainCurve, i: number, temperatureK: number): number {
+  const w = curve.knotK[i + 1] - curve.knotK[i];
+  return w > 0 ? Math.min(1, Math.max(0, (temperatureK - curve.knotK[i]) / w)) : 0;
+}
+
+/**
+ * One standard uncertainty of (H, S) from an error of Cp that grows in proportion to the distance from the data, Cp itself
+ * held: its exact integrals over T and over ln T, so that most of it cancels in H - TS. [0, 0] within the data.
+ */
+function continuationError(curve: UncertainCurve, temperatureK: number): [number, number] {
+  const { measuredFromK: from, measuredToK: to } = curve;
+  if (temperatureK >= from && temperatureK <= to) return [0, 0];
+  const high = temperatureK > to;
+  const rate = curve.continuationGrowthPerK * (high ? curve.c0[curve.c0.length - 1] : curve.c0[0]);
+  const edge = high ? to : from;
+  const x = temperatureK - edge;
+  const sign = high ? 1 : -1;
+  return [(sign * rate * x * x) / 2, sign * rate * cubicIntegralOverT(0, 1, 0, 0, edge, x)];
 }

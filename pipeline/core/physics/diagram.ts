@@ -1,5 +1,6 @@
+import { cubicValue } from '../numeric/cubic.js';
 import { rootBetween } from '../numeric/root.js';
-import { type CurveArrays, entropyAt, gibbsAt } from './curve.js';
+import { type CurveArrays, entropyAt, gibbsAt, intervalOf } from './curve.js';
 
 /** One phase in a diagram at one pressure: its curve and what the pressure adds to G [J/mol] at T. */
 export interface DiagramPhase {
@@ -21,8 +22,9 @@ export function gibbsInDiagram(phase: DiagramPhase, temperatureK: number, interv
 /**
  * All temperatures at which two phases have the same G within the range that both reach, rising, to 1e-9 relative.
  *
- * Looked for between the knots of both curves; where dG does not change sign between two knots but its slope -dS does,
- * the extremum in between is looked at as well, so that a pair of crossings inside one interval is not missed.
+ * Looked for between the knots of both curves. S rises with T, so the ends of an interval bound dS inside it: where dS
+ * cannot vanish there is one crossing or none, by the sign of dG; where dG is too large to close there is none. What is
+ * left is cut at the turning points of dS and then of dG, so that no crossing inside one interval is missed.
  */
 export function crossingsOf(a: DiagramPhase, b: DiagramPhase): number[] {
   const low = Math.max(a.lowK, b.lowK);
@@ -30,39 +32,84 @@ export function crossingsOf(a: DiagramPhase, b: DiagramPhase): number[] {
   const found: number[] = [];
   if (!(high > low)) return found;
   const gap = (t: number): number => gibbsInDiagram(a, t) - gibbsInDiagram(b, t);
-  const slope = (t: number): number => -slopeOf(a, t) + slopeOf(b, t);
   const ts = merged(a.curve.knotK, b.curve.knotK, low, high);
   let t0 = ts[0];
   let g0 = gap(t0);
+  let a0 = slopeOf(a, t0);
+  let b0 = slopeOf(b, t0);
+  if (g0 === 0) found.push(t0);
   for (let i = 1; i < ts.length; i++) {
     const t1 = ts[i];
     const g1 = gap(t1);
-    if (g0 === 0 && i === 1) found.push(t0);
-    if (g1 === 0) found.push(t1);
-    else if (g0 !== 0 && g0 > 0 !== g1 > 0) found.push(rootBetween(gap, t0, t1, 1e-9 * t1));
-    else if (g0 !== 0 && Math.abs(g0) + Math.abs(g1) < near(t0, t1, a, b)) {
-      const d0 = slope(t0);
-      const d1 = slope(t1);
-      if (d0 > 0 !== d1 > 0 && d0 !== 0 && d1 !== 0) {
-        const turn = rootBetween(slope, t0, t1, 1e-9 * t1);
-        const gt = gap(turn);
-        if (gt > 0 !== g0 > 0) {
-          found.push(rootBetween(gap, t0, turn, 1e-9 * t1), rootBetween(gap, turn, t1, 1e-9 * t1));
-        }
-      }
+    const a1 = slopeOf(a, t1);
+    const b1 = slopeOf(b, t1);
+    const changed = g0 !== 0 && g1 !== 0 && g0 > 0 !== g1 > 0;
+    const least = a0 - b1;
+    const most = a1 - b0;
+    if (least > 0 || most < 0) {
+      if (changed) found.push(rootBetween(gap, t0, t1, 1e-9 * t1));
+    } else if (changed || Math.abs(g0) + Math.abs(g1) <= Math.max(-least, most) * (t1 - t0)) {
+      const slope = (t: number): number => slopeOf(b, t) - slopeOf(a, t);
+      const turns = changesOf(slope, [t0, ...heatCapacityTurns(a, b, t0, t1), t1]);
+      found.push(...changesOf(gap, [t0, ...turns, t1]));
     }
+    if (g1 === 0) found.push(t1);
     t0 = t1;
     g0 = g1;
+    a0 = a1;
+    b0 = b1;
   }
   return found;
 }
 
-/** dG cannot turn over within an interval when it is larger than the entropies there could close: |dS| below 200 J/(mol K). */
-function near(t0: number, t1: number, a: DiagramPhase, b: DiagramPhase): number {
-  const most = Math.abs(slopeOf(a, t0) - slopeOf(b, t0)) + Math.abs(slopeOf(a, t1) - slopeOf(b, t1));
-  return most * (t1 - t0);
+/** Where f changes sign or vanishes strictly inside the edges, f monotone between each two of them. */
+function changesOf(f: (t: number) => number, edges: readonly number[]): number[] {
+  const found: number[] = [];
+  let before = f(edges[0]);
+  for (let k = 1; k < edges.length; k++) {
+    const after = f(edges[k]);
+    if (before !== 0 && after !== 0 && before > 0 !== after > 0)
+      found.push(rootBetween(f, edges[k - 1], edges[k], 1e-9 * edges[k]));
+    if (after === 0 && k < edges.length - 1) found.push(edges[k]);
+    before = after;
+  }
+  return found;
 }
 
+/** Where Cp of two phases is equal inside one interval of both, so that dS turns: the roots of one cubic, rising. */
+function heatCapacityTurns(a: DiagramPhase, b: DiagramPhase, t0: number, t1: number): number[] {
+  const p = cubicFrom(a, t0, t1);
+  const q = cubicFrom(b, t0, t1);
+  const [c0, c1, c2, c3] = p.map((v, k) => v - q[k]);
+  const edges = [0, ...quadraticRoots(c1, 2 * c2, 3 * c3).filter((x) => x > 0 && x < t1 - t0), t1 - t0];
+  return changesOf((x) => cubicValue(c0, c1, c2, c3, x), edges).map((x) => t0 + x);
+}
+
+/** Cp per formula unit as a cubic in T - t0, in the interval of the curve that holds t0 to t1. */
+function cubicFrom({ curve, formulaUnits }: DiagramPhase, t0: number, t1: number): number[] {
+  const i = intervalOf(curve, (t0 + t1) / 2);
+  const x = t0 - curve.knotK[i];
+  const { c0, c1, c2, c3 } = curve;
+  const shifted = [
+    cubicValue(c0[i], c1[i], c2[i], c3[i], x),
+    c1[i] + x * (2 * c2[i] + 3 * x * c3[i]),
+    c2[i] + 3 * x * c3[i],
+    c3[i],
+  ];
+  return shifted.map((v) => v / formulaUnits);
+}
+
+/** Real roots of c + bx + ax^2, rising (common practice: the form without cancellation). */
+function quadraticRoots(c: number, b: number, a: number): number[] {
+  if (a === 0) return b === 0 ? [] : [-c / b];
+  const square = b * b - 4 * a * c;
+  if (square < 0) return [];
+  const h = -(b + (b < 0 ? -1 : 1) * Math.sqrt(square)) / 2;
+  const roots = h === 0 ? [0] : [h / a, c / h];
+  return roots.sort((x, y) => x - y);
+}
+
+/** S in the diagram [J/(mol K)]: minus the slope of G, pressure term included. */
 function slopeOf(phase: DiagramPhase, temperatureK: number): number {
   const s = entropyAt(phase.curve, temperatureK);
   if (phase.shift === null) return s / phase.formulaUnits;
