@@ -4,7 +4,7 @@ import type { Policy } from '../../schemas/policy.js';
 import { cubicIntegral, cubicIntegralOverT, cubicValue } from '../core/numeric/cubic.js';
 import { Room } from '../core/numeric/room.js';
 import { stateCovariance } from '../core/physics/curve-uncertainty.js';
-import { type DiagramPhase, gibbsInDiagram } from '../core/physics/diagram.js';
+import { gibbsInDiagram } from '../core/physics/diagram.js';
 import { place } from './crossings.js';
 
 const room = new Room();
@@ -85,6 +85,7 @@ export function tabulated(
     basis: new Uint8Array(rows),
     side: side.subarray(0, rows),
   };
+  const plain = curve.uCalibrationRelative === 0;
   for (let r = 0; r < rows; r++) {
     const i = interval[r];
     const k = atKnot[r];
@@ -97,17 +98,17 @@ export function tabulated(
       k >= 0
         ? curve.entropyJPerMolK[k]
         : curve.entropyJPerMolK[i] + cubicIntegralOverT(c0[i], c1[i], c2[i], c3[i], knots[i], x);
-    out.heatCapacityJPerMolK[r] = cp;
-    out.enthalpyJPerMol[r] = h;
-    out.entropyJPerMolK[r] = s;
-    out.gibbsEnergyJPerMol[r] = h - t[r] * s;
+    out.heatCapacityJPerMolK[r] = rounded(cp, 1e9);
+    out.enthalpyJPerMol[r] = rounded(h, 1e6);
+    out.entropyJPerMolK[r] = rounded(s, 1e9);
+    out.gibbsEnergyJPerMol[r] = rounded(h - t[r] * s, 1e6);
     const beyond = Math.max(curve.measuredFromK - t[r], t[r] - curve.measuredToK, 0);
     const own = curve.uHeatCapacityJPerMolK;
     const near = k >= 0 ? own[k] : Math.max(own[i], own[i + 1]);
     const common = curve.uCalibrationRelative * cp;
     const grown = curve.continuationGrowthPerK * cp * beyond;
     out.uHeatCapacityJPerMolK[r] = short(Math.sqrt(near * near + common * common + grown * grown));
-    const { hh, hs, ss } = stateCovariance(curve, t[r]);
+    const { hh, hs, ss } = k >= 0 && beyond === 0 && plain ? atKnotCovariance(curve, k) : stateCovariance(curve, t[r]);
     out.uEnthalpyJPerMol[r] = short(Math.sqrt(Math.max(0, hh)));
     out.uEntropyJPerMolK[r] = short(Math.sqrt(Math.max(0, ss)));
     out.uGibbsEnergyJPerMol[r] = short(Math.sqrt(Math.max(0, hh - 2 * t[r] * hs + t[r] * t[r] * ss)));
@@ -115,6 +116,24 @@ export function tabulated(
       beyond > 0 ? BASIS_EXTRAPOLATED : k >= 0 && curve.knotKind[k] === 0 ? BASIS_MEASURED : BASIS_INTERPOLATED;
   }
   return out;
+}
+
+const atKnot = { hh: 0, hs: 0, ss: 0 };
+
+/**
+ * Published values end nine decimals after J/(mol K) and six after J/mol, far below any uncertainty; what is exact to the
+ * last bit stands in the pieces.
+ */
+function rounded(value: number, scale: number): number {
+  return Math.round(value * scale) / scale;
+}
+
+/** At a knot the smoothed covariance itself, and the levels. */
+function atKnotCovariance(curve: PhaseCurve, k: number): { hh: number; hs: number; ss: number } {
+  atKnot.hh = curve.varH[k] + curve.uEnthalpyLevelJPerMol * curve.uEnthalpyLevelJPerMol;
+  atKnot.hs = curve.covHS[k];
+  atKnot.ss = curve.varS[k] + curve.uEntropyLevelJPerMolK * curve.uEntropyLevelJPerMolK;
+  return atKnot;
 }
 
 /** Uncertainties are published with four significant digits; more would say nothing. */
@@ -139,31 +158,31 @@ function stability(
   const stable = new Uint8Array(rows).fill(1);
   const setting = { pressurePa: policy.pressurePa, gas: 'real' as const };
   const own = place(curve, substance, setting);
-  const others: DiagramPhase[] = [];
-  for (const c of all) {
-    if (c !== curve && c.family.isobarPa === curve.family.isobarPa && c.hasEnthalpyLevel && c.hasEntropyLevel)
-      others.push(place(c, substance, setting));
-  }
-  if (others.length === 0 || !curve.hasEnthalpyLevel || !curve.hasEntropyLevel) return stable;
-  // Temperatures rise, so each curve's interval is found by walking along.
-  const at = new Int32Array(others.length + 1);
-  const walk = (k: number, knots: Float64Array, temperatureK: number): number => {
-    while (at[k] < knots.length - 2 && knots[at[k] + 1] <= temperatureK) at[k]++;
-    return at[k];
-  };
-  for (let r = 0; r < rows; r++) {
-    if (t[r] <= 0) continue;
-    const g = gibbsInDiagram(own, t[r], walk(others.length, curve.knotK, t[r]));
-    for (let k = 0; k < others.length; k++) {
-      const o = others[k];
-      if (t[r] < o.lowK || t[r] > o.highK) continue;
-      // Rounding of G itself is allowed for: at a crossing both phases are stable.
-      if (gibbsInDiagram(o, t[r], walk(k, o.curve.knotK, t[r])) < g - 1e-9 * Math.abs(g) - 1e-6) {
-        stable[r] = 0;
-        break;
+  if (!curve.hasEnthalpyLevel || !curve.hasEntropyLevel) return stable;
+  for (const other of all) {
+    if (other === curve || other.family.isobarPa !== curve.family.isobarPa) continue;
+    if (!other.hasEnthalpyLevel || !other.hasEntropyLevel) continue;
+    const rival = place(other, substance, setting);
+    // The sign of the gap changes at the pair's crossings alone: it is worked out once between two of them.
+    const cuts = mine
+      .filter((c) => c.from === other.phase || c.to === other.phase)
+      .map((c) => c.temperatureK)
+      .sort((x, y) => x - y);
+    let passed = -1;
+    let lower = false;
+    for (let r = 0; r < rows; r++) {
+      const temperatureK = t[r];
+      if (temperatureK <= 0 || temperatureK < rival.lowK) continue;
+      if (temperatureK > rival.highK) break;
+      let now = 0;
+      while (now < cuts.length && cuts[now] < temperatureK) now++;
+      if (now < cuts.length && cuts[now] === temperatureK) continue;
+      if (now !== passed) {
+        passed = now;
+        lower = gibbsInDiagram(rival, temperatureK) < gibbsInDiagram(own, temperatureK);
       }
+      if (lower) stable[r] = 0;
     }
-    for (const c of mine) if (c.stable && c.temperatureK === t[r]) stable[r] = 1;
   }
   return stable;
 }

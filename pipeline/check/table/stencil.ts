@@ -137,18 +137,6 @@ export function cubicAt(p: LocalCubic, temperatureK: number): number {
   return p.c0 + x * (p.c1 + x * (p.c2 + x * p.c3));
 }
 
-/** The sum of squared Lagrange weights at x: how the points' own errors reach the interpolated value. */
-export function noiseGain(stencil: Stencil, t: Float64Array, x: number): number {
-  let sum = 0;
-  for (let i = 0; i < stencil.n; i++) {
-    const ti = t[stencil.at[i]];
-    let w = 1;
-    for (let j = 0; j < stencil.n; j++) if (j !== i) w *= (x - t[stencil.at[j]]) / (ti - t[stencil.at[j]]);
-    sum += w * w;
-  }
-  return sum;
-}
-
 // Gauss-Legendre nodes and weights on [0, 1], five points (Abramowitz and Stegun, table 25.4).
 const NODES = [0.04691007703066802, 0.23076534494715845, 0.5, 0.7692346550528415, 0.953089922969332];
 const WEIGHTS = [

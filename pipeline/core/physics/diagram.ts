@@ -1,6 +1,7 @@
 import { cubicValue } from '../numeric/cubic.js';
+import { Room } from '../numeric/room.js';
 import { rootBetween } from '../numeric/root.js';
-import { type CurveArrays, entropyAt, gibbsAt, intervalOf } from './curve.js';
+import { type CurveArrays, enthalpyAt, entropyAt, gibbsAt, intervalOf } from './curve.js';
 
 /** One phase in a diagram at one pressure: its curve and what the pressure adds to G [J/mol] at T. */
 export interface DiagramPhase {
@@ -33,16 +34,24 @@ export function crossingsOf(a: DiagramPhase, b: DiagramPhase): number[] {
   if (!(high > low)) return found;
   const gap = (t: number): number => gibbsInDiagram(a, t) - gibbsInDiagram(b, t);
   const ts = merged(a.curve.knotK, b.curve.knotK, low, high);
+  let ia = intervalOf(a.curve, low);
+  let ib = intervalOf(b.curve, low);
   let t0 = ts[0];
-  let g0 = gap(t0);
-  let a0 = slopeOf(a, t0);
-  let b0 = slopeOf(b, t0);
+  stateAt(a, t0, ia, inA);
+  stateAt(b, t0, ib, inB);
+  let g0 = inA.g - inB.g;
+  let a0 = inA.s;
+  let b0 = inB.s;
   if (g0 === 0) found.push(t0);
   for (let i = 1; i < ts.length; i++) {
     const t1 = ts[i];
-    const g1 = gap(t1);
-    const a1 = slopeOf(a, t1);
-    const b1 = slopeOf(b, t1);
+    ia = walk(a.curve, ia, t1);
+    ib = walk(b.curve, ib, t1);
+    stateAt(a, t1, ia, inA);
+    stateAt(b, t1, ib, inB);
+    const g1 = inA.g - inB.g;
+    const a1 = inA.s;
+    const b1 = inB.s;
     const changed = g0 !== 0 && g1 !== 0 && g0 > 0 !== g1 > 0;
     const least = a0 - b1;
     const most = a1 - b0;
@@ -60,6 +69,33 @@ export function crossingsOf(a: DiagramPhase, b: DiagramPhase): number[] {
     b0 = b1;
   }
   return found;
+}
+
+const inA = { g: 0, s: 0 };
+const inB = { g: 0, s: 0 };
+
+/** G and S of a phase in its diagram, per formula unit, T lying in interval i of its curve. */
+function stateAt(phase: DiagramPhase, temperatureK: number, i: number, out: { g: number; s: number }): void {
+  const { curve, shift, formulaUnits } = phase;
+  const atKnot = curve.knotK[i] === temperatureK;
+  const h = atKnot ? curve.enthalpyJPerMol[i] : enthalpyAt(curve, temperatureK, i);
+  let s = atKnot ? curve.entropyJPerMolK[i] : entropyAt(curve, temperatureK, i);
+  let g = h - temperatureK * s;
+  if (shift !== null) {
+    const step = 1e-3 * temperatureK;
+    g += shift(temperatureK);
+    s -= (shift(temperatureK + step) - shift(temperatureK - step)) / (2 * step);
+  }
+  out.g = g / formulaUnits;
+  out.s = s / formulaUnits;
+}
+
+/** The interval that holds T, from one at or below it on. */
+export function walk(curve: CurveArrays, from: number, temperatureK: number): number {
+  const { knotK } = curve;
+  let i = from;
+  while (i < knotK.length - 2 && knotK[i + 1] <= temperatureK) i++;
+  return i;
 }
 
 /** Where f changes sign or vanishes strictly inside the edges, f monotone between each two of them. */
@@ -118,8 +154,10 @@ function slopeOf(phase: DiagramPhase, temperatureK: number): number {
   return (s - d) / phase.formulaUnits;
 }
 
+const room = new Room();
+
 function merged(a: Float64Array, b: Float64Array, low: number, high: number): Float64Array {
-  const out = new Float64Array(a.length + b.length + 2);
+  const out = room.numbers(a.length + b.length + 2);
   let n = 0;
   out[n++] = low;
   let i = 0;

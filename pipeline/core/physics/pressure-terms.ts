@@ -3,7 +3,8 @@ import { type GasIdentity, secondVirial } from './gas-imperfection.js';
 
 /** What a pressure adds to G°, and how uncertain that is [J/mol]. */
 export interface PressureTerm {
-  readonly shift: (temperatureK: number) => number;
+  /** Null where the pressure adds nothing at any temperature. */
+  readonly shift: ((temperatureK: number) => number) | null;
   readonly u: (temperatureK: number) => number;
 }
 
@@ -13,9 +14,11 @@ export interface PressureTerm {
  */
 export function gasTerm(gas: GasIdentity, kind: 'real' | 'ideal', pressurePa: number, boilingK: number): PressureTerm {
   const log = R_J_PER_MOL_K * Math.log(pressurePa / STANDARD_PRESSURE_PA);
-  if (kind === 'ideal') return { shift: (t) => log * t, u: () => 0 };
+  const ideal = log === 0 ? null : (t: number): number => log * t;
+  if (kind === 'ideal') return { shift: ideal, u: () => 0 };
+  const correlated = gas.criticalTemperatureK !== null && gas.criticalPressurePa !== null;
   return {
-    shift: (t) => log * t + secondVirial(gas, t, boilingK).value * pressurePa,
+    shift: correlated ? (t) => log * t + secondVirial(gas, t, boilingK).value * pressurePa : ideal,
     u: (t) => secondVirial(gas, t, boilingK).u * pressurePa,
   };
 }
