@@ -16,6 +16,11 @@ export function writeDecimal(value: number, out: Uint8Array, at: number): number
     value = -value;
   }
   if (value < 1e9 && value === Math.floor(value)) return writeInteger(value, out, at);
+  if (value < 1e6 && value >= 1e-6) {
+    // At most 15 digits, nine of them after the point: such a decimal is alone in its double's interval.
+    const billionths = Math.round(value * 1e9);
+    if (billionths / 1e9 === value) return writeFixed(billionths, out, at);
+  }
   const binary = ((highWord >>> 20) & 0x7ff) - LOWEST_BINARY;
   if (binary < 0 || value >= 1e17 || ((highWord & 0xfffff) === 0 && u32[0] === 0)) return writeText(value, out, at);
 
@@ -160,6 +165,23 @@ function putDigits(upper: number, lower: number, out: Uint8Array, at: number): n
     putFour(lower - four * 10000, out, end + 4);
     end += 8;
   }
+  while (out[end - 1] === ZERO) end--;
+  return end;
+}
+
+/** A number of billionths, not a multiple of 1e9. */
+function writeFixed(billionths: number, out: Uint8Array, at: number): number {
+  const whole = Math.floor(billionths / 1e9);
+  const rest = billionths - whole * 1e9;
+  const point = writeInteger(whole, out, at);
+  out[point] = POINT;
+  const first = (rest / 1e8) | 0;
+  const nextEight = rest - first * 1e8;
+  out[point + 1] = ZERO + first;
+  const nextFour = (nextEight / 10000) | 0;
+  putFour(nextFour, out, point + 2);
+  putFour(nextEight - nextFour * 10000, out, point + 6);
+  let end = point + 10;
   while (out[end - 1] === ZERO) end--;
   return end;
 }
