@@ -27,10 +27,14 @@ export interface DatumTest {
 /** delta0 of Baarda at alpha = 0.1 % and power 80 %. */
 export const NON_CENTRALITY = 4.13;
 
-/** Conditions that repeat each other make Q singular; the factor then fails and null comes back. */
+/** A condition whose own part of its variance is below this share repeats the others: rounding leaves some 1e-16. */
+const REPEATED = 1e-13;
+
+/** Conditions that repeat each other make Q singular: null comes back. */
 export function whitened(y: Float64Array, q: Float64Array, m: number): Whitened | null {
   const factor = q.slice(0, m * m);
   if (!factorise(factor, m)) return null;
+  for (let i = 0; i < m; i++) if (factor[i * m + i] ** 2 < REPEATED * q[i * m + i]) return null;
   const z = y.slice(0, m);
   whiten(factor, m, z);
   let chiSquare = 0;
