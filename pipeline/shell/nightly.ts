@@ -24,7 +24,7 @@ import {
 } from './release-folder.js';
 import { PART_TABLES, writeWhole } from './release-tables.js';
 import { CAUTION, cautionLines, generalLines, tally, verdictLines } from './summary-lines.js';
-import { programVersion } from './version.js';
+import { programIdentity } from './version.js';
 
 export interface NightSettings {
   /** Raw bytes of a partition; tests make it small. */
@@ -34,7 +34,7 @@ export interface NightSettings {
 /** The nightly build: read, calculate, check, publish. Ends with the status for the scheduler. */
 export async function nightly(request: Request, log: Log, settings: NightSettings = {}): Promise<ExitStatus> {
   const library = openLibrary(request, log, settings.partitionBytes);
-  const version = programVersion();
+  const version = programIdentity();
   const id = contentId({
     inputs: library.inputs,
     policy: { policy: library.settings.policy, only: library.only },
