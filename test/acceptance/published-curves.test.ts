@@ -89,7 +89,7 @@ describe('the published curves', () => {
     expect(joins).toBeGreaterThan(1000);
   });
 
-  it('give every row of functions: Cp, its integrals H and S, and G = H - TS, to 1e-9', () => {
+  it('give every row of functions: Cp, its integrals H and S, and G = H - TS, to 1e-9 or the last published place', () => {
     const rows = release.table('functions');
     expect(rows.length).toBeGreaterThan(1400);
     for (const row of rows) {
@@ -97,14 +97,17 @@ describe('the published curves', () => {
       const T = row.temperature_K as number;
       const side = row.side === 'below' ? 'below' : 'above';
       const { heatCapacity, entropy, enthalpy }: Values = valuesAt(curves.get(name)!, T, side);
-      const near = (field: string, value: number, scale: number): void => {
+      // Nine decimals of Cp and S are published, and six of H and G.
+      const near = (field: string, value: number, scale: number, decimals: number): void => {
         const tell = `${name} at ${T} K: ${field}`;
-        expect(Math.abs((row[field] as number) - value), tell).toBeLessThanOrEqual(1e-9 * Math.max(1, scale));
+        expect(Math.abs((row[field] as number) - value), tell).toBeLessThanOrEqual(
+          Math.max(1e-9 * scale, 0.6 * 10 ** -decimals),
+        );
       };
-      near('heat_capacity_J_per_mol_K', heatCapacity, Math.abs(heatCapacity));
-      near('entropy_J_per_mol_K', entropy, Math.abs(entropy));
-      near('enthalpy_J_per_mol', enthalpy, Math.abs(enthalpy));
-      near('gibbs_energy_J_per_mol', enthalpy - T * entropy, Math.abs(enthalpy) + Math.abs(T * entropy));
+      near('heat_capacity_J_per_mol_K', heatCapacity, Math.abs(heatCapacity), 9);
+      near('entropy_J_per_mol_K', entropy, Math.abs(entropy), 9);
+      near('enthalpy_J_per_mol', enthalpy, Math.abs(enthalpy), 6);
+      near('gibbs_energy_J_per_mol', enthalpy - T * entropy, Math.abs(enthalpy) + Math.abs(T * entropy), 6);
     }
   });
 });
