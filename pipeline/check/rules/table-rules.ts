@@ -37,14 +37,7 @@ export function judgeTable(
 ): TableJudgement {
   const missing = rule.missing(series);
   if (missing !== null || verdict === null) {
-    return {
-      outcome: 'untestable',
-      missing: missing ?? 'at least two rows',
-      smallestDetectable: null,
-      findings: [],
-      named: [],
-      suspects: [],
-    };
+    return untestable(series.heatCapacity === null ? 'a column of heat capacities' : (missing ?? 'at least two rows'));
   }
   const cells = verdict.cells.filter((c) => rule.names.includes(c.quantity));
   const findings: Finding[] = [];
@@ -134,14 +127,23 @@ export function judgeTable(
     );
   }
   const disagrees = findings.some((f) => f.severity !== 'note');
+  const smallestDetectable = rule.detectable(verdict);
+  if (findings.length === 0 && smallestDetectable === null) {
+    // Nowhere in the table do the cells that the rule needs stand side by side.
+    return untestable('rows side by side that hold what the rule compares');
+  }
   return {
     outcome: disagrees ? 'disagrees' : 'agrees',
     missing: null,
-    smallestDetectable: rule.detectable(verdict),
+    smallestDetectable,
     findings,
     named,
     suspects,
   };
+}
+
+function untestable(missing: string): TableJudgement {
+  return { outcome: 'untestable', missing, smallestDetectable: null, findings: [], named: [], suspects: [] };
 }
 
 /** The cells of a pattern: a pair is the cell and the one computed from it. */
