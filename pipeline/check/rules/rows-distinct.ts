@@ -5,16 +5,18 @@ import { addressOf, evidenceOf, kindOf, outcome } from '../place.js';
 
 /**
  * No two rows of a series at one temperature disagree, two-sided rows aside (equal S and H, other Cp: a glass or lambda
- * note), and temperatures rise in tables that are not measured series.
+ * note), and temperatures rise in tables that are not measured series; a measured one may repeat and return.
  */
 export function rowsDistinct(substance: string, series: Series): { outcome: Outcome; findings: Finding[] } {
   const findings: Finding[] = [];
   const t = series.temperatureK;
   const measured = series.table.basis === 'measured';
+  if (measured) return runsAgree(substance, series);
+  if (series.rows < 2) return untestable(substance, series, 'at least two rows');
   for (let i = 1; i < series.rows; i++) {
     if (t[i] > t[i - 1]) continue;
     if (t[i] < t[i - 1]) {
-      if (measured || findings.some((f) => f.detail.code === 'temperatures-fall')) continue;
+      if (findings.some((f) => f.detail.code === 'temperatures-fall')) continue;
       findings.push(
         makeFinding({
           rule: 'rows-distinct',
@@ -38,7 +40,6 @@ export function rowsDistinct(substance: string, series: Series): { outcome: Outc
       );
       continue;
     }
-    if (measured) continue;
     const clash = disagreement(series, i - 1, i);
     // Both S and H apart: the two sides of a jump, which slope-jumps-only-at-transitions judges.
     if (clash === null || clash.both) continue;
@@ -68,6 +69,58 @@ export function rowsDistinct(substance: string, series: Series): { outcome: Outc
   }
   const kind = findings.length > 0 ? 'disagrees' : 'agrees';
   return { outcome: outcome(substance, 'rows-distinct', series.phase, kind, kindOf([series.table])), findings };
+}
+
+function untestable(substance: string, series: Series, missing: string): { outcome: Outcome; findings: Finding[] } {
+  return { outcome: outcome(substance, 'rows-distinct', series.phase, 'untestable', null, { missing }), findings: [] };
+}
+
+/** Where a measured series returns to a temperature, its heat capacities agree within five standard uncertainties. */
+function runsAgree(substance: string, series: Series): { outcome: Outcome; findings: Finding[] } {
+  const cp = series.heatCapacity;
+  const t = series.temperatureK;
+  const rows = Array.from({ length: series.rows }, (_, i) => i).filter((i) => cp !== null && cp.present[i] === 1);
+  rows.sort((a, b) => t[a] - t[b] || a - b);
+  let compared = 0;
+  let worst: { ratio: number; a: number; b: number; tolerance: number } | null = null;
+  for (let k = 1; k < rows.length; k++) {
+    const [a, b] = [rows[k - 1], rows[k]];
+    if (cp === null || t[a] !== t[b]) continue;
+    compared++;
+    const tolerance = cp.halfUnit[a] + cp.halfUnit[b] + 5 * Math.hypot(cp.uOwn[a], cp.uOwn[b]);
+    const ratio = Math.abs(cp.values[b] - cp.values[a]) / tolerance;
+    if (ratio > 1 && (worst === null || ratio > worst.ratio)) worst = { ratio, a, b, tolerance };
+  }
+  if (cp === null || compared === 0) {
+    return untestable(substance, series, 'two rows at one temperature: a measured series may return to one');
+  }
+  const evidence = kindOf([series.table]);
+  if (worst === null) {
+    return { outcome: outcome(substance, 'rows-distinct', series.phase, 'agrees', evidence), findings: [] };
+  }
+  const { a, b, tolerance } = worst;
+  const finding = makeFinding({
+    rule: 'rows-distinct',
+    severity: 'doubt',
+    substance,
+    fromPhase: series.phase,
+    temperatureK: t[b],
+    observed: cp.values[b],
+    expected: cp.values[a],
+    difference: cp.values[b] - cp.values[a],
+    tolerance,
+    unit: 'J/(mol.K)',
+    address: addressOf(series, b, cp.column),
+    evidence: [evidenceOf(series, b, cp.column), evidenceOf(series, a, cp.column)],
+    detail: {
+      code: 'rows-disagree',
+      otherLine: series.line[a],
+      quantity: cp.is,
+      first: series.text(a, cp.column),
+      second: series.text(b, cp.column),
+    },
+  });
+  return { outcome: outcome(substance, 'rows-distinct', series.phase, 'disagrees', evidence), findings: [finding] };
 }
 
 function disagreement(series: Series, a: number, b: number): { q: SeriesQuantity; both: boolean } | null {
