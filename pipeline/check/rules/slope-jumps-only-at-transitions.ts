@@ -22,42 +22,48 @@ export function slopeJumpsOnlyAtTransitions(
       findings,
     };
   }
+  if (series.table.basis === 'measured') {
+    return {
+      outcome: outcome(substance, rule, series.phase, 'untestable', null, {
+        missing: 'an evaluated table: a measured series may return to a temperature',
+      }),
+      findings,
+    };
+  }
   const q = s ?? (h as NonNullable<typeof h>);
-  if (series.table.basis !== 'measured') {
-    for (let i = 1; i < series.rows; i++) {
-      if (t[i] !== t[i - 1]) continue;
-      const apart = (x: typeof s): boolean =>
-        x !== null &&
-        x.present[i] === 1 &&
-        x.present[i - 1] === 1 &&
-        Math.abs(x.values[i] - x.values[i - 1]) >
-          2 * (x.halfUnit[i] + x.halfUnit[i - 1]) + 6 * Math.hypot(x.uOwn[i], x.uOwn[i - 1]);
-      if (!(apart(s) && (h === null || apart(h)))) continue;
-      const stated = transitions.some(
-        (x) =>
-          x.order === 'first' &&
-          (x.from === series.phase || x.to === series.phase) &&
-          Math.abs(x.temperature.value - t[i]) < 0.01 * t[i],
-      );
-      if (stated || findings.length > 0) continue;
-      findings.push(
-        makeFinding({
-          rule,
-          severity: 'fault',
-          substance,
-          fromPhase: series.phase,
-          temperatureK: t[i],
-          observed: q.values[i] - q.values[i - 1],
-          expected: 0,
-          difference: q.values[i] - q.values[i - 1],
-          tolerance: q.halfUnit[i] + q.halfUnit[i - 1],
-          unit: q === s ? 'J/(mol.K)' : 'J/mol',
-          address: addressOf(series, i, q.column),
-          evidence: [evidenceOf(series, i - 1, q.column), evidenceOf(series, i, q.column)],
-          detail: { code: 'unstated-jump', quantity: q.is },
-        }),
-      );
-    }
+  for (let i = 1; i < series.rows; i++) {
+    if (t[i] !== t[i - 1]) continue;
+    const apart = (x: typeof s): boolean =>
+      x !== null &&
+      x.present[i] === 1 &&
+      x.present[i - 1] === 1 &&
+      Math.abs(x.values[i] - x.values[i - 1]) >
+        2 * (x.halfUnit[i] + x.halfUnit[i - 1]) + 6 * Math.hypot(x.uOwn[i], x.uOwn[i - 1]);
+    if (!(apart(s) && (h === null || apart(h)))) continue;
+    const stated = transitions.some(
+      (x) =>
+        x.order === 'first' &&
+        (x.from === series.phase || x.to === series.phase) &&
+        Math.abs(x.temperature.value - t[i]) < 0.01 * t[i],
+    );
+    if (stated || findings.length > 0) continue;
+    findings.push(
+      makeFinding({
+        rule,
+        severity: 'fault',
+        substance,
+        fromPhase: series.phase,
+        temperatureK: t[i],
+        observed: q.values[i] - q.values[i - 1],
+        expected: 0,
+        difference: q.values[i] - q.values[i - 1],
+        tolerance: q.halfUnit[i] + q.halfUnit[i - 1],
+        unit: q === s ? 'J/(mol.K)' : 'J/mol',
+        address: addressOf(series, i, q.column),
+        evidence: [evidenceOf(series, i - 1, q.column), evidenceOf(series, i, q.column)],
+        detail: { code: 'unstated-jump', quantity: q.is },
+      }),
+    );
   }
   const kind = findings.length > 0 ? 'disagrees' : 'agrees';
   return { outcome: outcome(substance, rule, series.phase, kind, kindOf([series.table])), findings };
