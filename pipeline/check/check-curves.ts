@@ -2,7 +2,7 @@ import type { CheckedCase, JudgedTransition } from '../../schemas/checked.js';
 import type { AssembledCase } from '../../schemas/curves.js';
 import type { Finding, Outcome } from '../../schemas/finding.js';
 import type { Policy } from '../../schemas/policy.js';
-import type { Judgement, TransitionContext } from './curve/judgement.js';
+import { isFirstOrder, type Judgement, type TransitionContext } from './curve/judgement.js';
 import { thresholds } from './curve/significance.js';
 import { type TransitionView, transitionViews } from './curve/transition-view.js';
 import { crossingAgrees } from './rules/crossing-agrees.js';
@@ -61,11 +61,18 @@ function checkCase(assembled: AssembledCase, policy: Policy): CheckedCase {
   return { assembled, judged, outcomes, findings };
 }
 
-/** The published row of a transition takes the gap's and the crossing's outcome, the graver of the two. */
+/**
+ * The published row of a transition takes the gap's and the crossing's outcome, the graver of the two; a continuous one and a
+ * glass transition, which have neither, that of their jump.
+ */
 function judgedOf(view: TransitionView, results: readonly Judgement[]): JudgedTransition {
   const gap = results[0].outcome;
   const crossing = results[1].outcome;
-  const graver = crossing.outcome === 'disagrees' || gap.outcome === 'untestable' ? crossing : gap;
+  const graver = !isFirstOrder(view)
+    ? results[3].outcome
+    : crossing.outcome === 'disagrees' || gap.outcome === 'untestable'
+      ? crossing
+      : gap;
   const { pair } = view;
   const atStated = pair !== null && pair.atK === view.stated.temperature.value;
   return {

@@ -15,7 +15,9 @@ export function gibbsContinuous({ substance, view, policy, limits }: TransitionC
   const { stated, pair } = view;
   if (!isFirstOrder(view)) {
     return {
-      outcome: outcome(substance, rule, view.place, 'agrees', 'arithmetic'),
+      outcome: outcome(substance, rule, view.place, 'untestable', null, {
+        missing: 'a first-order transition: one curve runs through a continuous one',
+      }),
       findings: [],
     };
   }

@@ -19,9 +19,6 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
   const { stated, pair } = view;
   const { enthalpy, entropy, temperature } = stated;
   const t = temperature.value;
-  if (!isFirstOrder(view)) {
-    return { outcome: outcome(substance, rule, view.place, 'agrees', 'arithmetic'), findings: [] };
-  }
   const within = view.evidence === 'arithmetic' || stated.table.basis !== 'measured';
   const uOf = (d: Datum): number => (within ? d.uRounding : d.u);
   const comparisons: { observed: number; expected: number; u: number; about: Datum }[] = [];
@@ -33,7 +30,7 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
       about: enthalpy,
     });
   }
-  if (pair !== null && pair.atK === t && !view.byConstruction) {
+  if (isFirstOrder(view) && pair !== null && pair.atK === t && !view.byConstruction) {
     const { at } = pair;
     // u(dH) of the curves: that of their levels and rows; u(dG) and T u(dS) bound it.
     const uGap = pair.uGapJPerMol;
