@@ -10,7 +10,7 @@ import { heatCapacitySmooth } from './rules/heat-capacity-smooth.js';
 import { rowReadable } from './rules/row-readable.js';
 import { rowsDistinct } from './rules/rows-distinct.js';
 import { judgeTable } from './rules/table-rules.js';
-import { valuePossible } from './rules/value-possible.js';
+import { statedValuesPossible, valuePossible } from './rules/value-possible.js';
 import { nameCells } from './table/name-cells.js';
 
 const TABLE_RULES = [entropyFollowsHeatCapacity, enthalpyFollowsHeatCapacity, functionsClose, heatCapacitySmooth];
@@ -29,6 +29,11 @@ function examineCase(harmonised: HarmonisedCase, policy: Policy): ExaminedCase {
   const findings: Finding[] = [...harmonised.findings];
   const named: NamedCell[] = [];
   const suspects: Suspect[] = [];
+  const stated = statedValuesPossible(harmonised);
+  if (stated !== null) {
+    outcomes.push(stated.outcome);
+    findings.push(...stated.findings);
+  }
   harmonised.series.forEach((series, index) => {
     const distinct = rowsDistinct(id, series);
     const possible = valuePossible(id, series);

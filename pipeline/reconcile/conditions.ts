@@ -56,6 +56,7 @@ export function conditionsOf(checked: CheckedCase, isobarPa: number | null): Con
   const boiling = boilingOf(substance);
   for (const j of checked.judged) {
     const { stated } = j;
+    if (!(stated.pressurePa > 0)) continue;
     if (stated.order !== 'first' || stated.from === stated.to || j.fromCurve < 0 || j.toCurve < 0) continue;
     const a = curves[j.fromCurve];
     const b = curves[j.toCurve];

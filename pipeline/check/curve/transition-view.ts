@@ -52,6 +52,17 @@ function viewOf(
   const [fromCurve, toCurve] = pairOf(stated, curves);
   const temperatureK = stated.temperature.value;
   const base = { stated, index, place, fromCurve, toCurve };
+  if (!(stated.pressurePa > 0)) {
+    return {
+      ...base,
+      pair: null,
+      missing: 'a pressure above 0',
+      byConstruction: false,
+      crossing: null,
+      uStatedK: stated.temperature.u,
+      evidence: 'independent',
+    };
+  }
   if (fromCurve < 0 || toCurve < 0) {
     const without =
       fromCurve < 0 && toCurve < 0 ? `${stated.from} and ${stated.to}` : fromCurve < 0 ? stated.from : stated.to;

@@ -1,5 +1,5 @@
 import type { Finding, Outcome } from '../../../schemas/finding.js';
-import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
+import type { Datum, HarmonisedCase, Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
 import { addressOf, evidenceOf, kindOf, outcome } from '../place.js';
 
@@ -70,4 +70,56 @@ function impossibleCp(cp: SeriesQuantity, i: number, temperatureK: number): bool
   if (temperatureK <= 0) return v < 0;
   // Near 0 K a printed 0.000 is a rounded small number.
   return v < 0 || (v === 0 && temperatureK > 20) || v > LARGEST_J_PER_MOL_K;
+}
+
+/** Stated numbers: temperatures and pressures of transitions above 0, entropies of anchors 0 or more on the absolute zero. */
+export function statedValuesPossible(harmonised: HarmonisedCase): { outcome: Outcome; findings: Finding[] } | null {
+  const { anchors, transitions } = harmonised;
+  if (anchors.length + transitions.length === 0) return null;
+  const substance = harmonised.substance.id;
+  const findings: Finding[] = [];
+  const report = (datum: Datum, phases: readonly [string, string | null], quantity: string, wanted: string): void => {
+    findings.push(
+      makeFinding({
+        rule: 'value-possible',
+        severity: 'fault',
+        substance,
+        fromPhase: phases[0],
+        toPhase: phases[1],
+        observed: datum.value,
+        unit: quantity === 'entropy' ? 'J/(mol.K)' : 'K',
+        address: datum.address,
+        evidence: [{ ...datum.address, printed: datum.printed }],
+        detail: { code: 'impossible', quantity, read: datum.printed, wanted },
+      }),
+    );
+  };
+  for (const { from, to, temperature, pressurePa, table } of transitions) {
+    if (!(pressurePa > 0)) {
+      const header = table.columns.find(({ is }) => is === 'pressure')?.header ?? 'pressure';
+      findings.push(
+        makeFinding({
+          rule: 'value-possible',
+          severity: 'fault',
+          substance,
+          fromPhase: from,
+          toPhase: to,
+          observed: pressurePa,
+          unit: 'Pa',
+          address: { ...temperature.address, column: header },
+          evidence: [{ ...temperature.address, printed: temperature.printed }],
+          detail: { code: 'impossible', quantity: 'pressure', read: `${pressurePa} Pa`, wanted: 'a pressure above 0' },
+        }),
+      );
+    }
+    if (!(temperature.value > 0 && temperature.value <= HOTTEST_K))
+      report(temperature, [from, to], 'transition-temperature', `a temperature above 0 K and below ${HOTTEST_K} K`);
+  }
+  for (const { phase, entropy, table } of anchors) {
+    if (entropy !== null && table.entropyZero === 'absolute' && entropy.value < -entropy.halfUnit)
+      report(entropy, [phase, null], 'entropy', 'an entropy of 0 or more, counted from the absolute zero');
+  }
+  const tables = [...anchors, ...transitions].map(({ table }) => table);
+  const kind = findings.length > 0 ? 'disagrees' : 'agrees';
+  return { outcome: outcome(substance, 'value-possible', '', kind, kindOf(tables)), findings };
 }
