@@ -3,6 +3,7 @@ import { Room } from '../core/numeric/room.js';
 import type { Stretch } from './stretch.js';
 
 const room = new Room();
+const CONTINUED = 2;
 const FRONT = 2;
 const BACK = 1;
 
@@ -89,16 +90,43 @@ export class CurveDraft {
     this.follow(this.start);
   }
 
-  /** A knot after the last one; `c` is the interval that ends at it. */
-  addBack(knot: DraftKnot): void {
+  /** The last Cp held up to `share` of the end temperatures beyond both ends, never towards 0 K. */
+  addContinuations(share: number): void {
+    const { knotK, c0, c1, c2, c3, h, s } = this.a;
+    const first = this.start;
+    if (knotK[first] > 0) {
+      const low = knotK[first] * (1 - share);
+      this.start--;
+      this.copyState(first, this.start);
+      knotK[this.start] = low;
+      c0[this.start] = c0[first];
+      h[this.start] = h[first] - c0[first] * (knotK[first] - low);
+      s[this.start] = s[first] - c0[first] * Math.log(knotK[first] / low);
+      this.follow(this.start);
+    }
     const last = this.end - 1;
-    this.a.c0[last] = knot.c0;
-    this.a.c1[last] = knot.c1;
-    this.a.c2[last] = knot.c2;
-    this.a.c3[last] = knot.c3;
+    const x = knotK[last] - knotK[last - 1];
+    const cp = c0[last - 1] + x * (c1[last - 1] + x * (c2[last - 1] + x * c3[last - 1]));
+    const high = knotK[last] * (1 + share);
+    c0[last] = cp;
+    c1[last] = 0;
+    c2[last] = 0;
+    c3[last] = 0;
     this.follow(last);
-    this.write(this.end, { ...knot, c0: 0, c1: 0, c2: 0, c3: 0 });
+    this.copyState(last, this.end);
+    knotK[this.end] = high;
+    h[this.end] = h[last] + cp * (high - knotK[last]);
+    s[this.end] = s[last] + cp * Math.log(high / knotK[last]);
     this.end++;
+  }
+
+  private copyState(from: number, to: number): void {
+    const { varH, covHS, varS, uCp } = this.a;
+    varH[to] = varH[from];
+    covHS[to] = covHS[from];
+    varS[to] = varS[from];
+    uCp[to] = uCp[from];
+    this.kind[to] = CONTINUED;
   }
 
   /** Moves the first knot one place down and puts a knot between it and the second. */

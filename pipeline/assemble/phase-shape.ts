@@ -6,7 +6,7 @@ import { cubicIntegral, cubicIntegralOverT } from '../core/numeric/cubic.js';
 import { type ChainResult, smoothChain } from '../core/numeric/gaussian-chain.js';
 import { Room } from '../core/numeric/room.js';
 import { baseCurve } from './base-curve.js';
-import { CurveDraft, type DraftKnot } from './curve-draft.js';
+import { CurveDraft } from './curve-draft.js';
 import { type DebyeTail, debyeTail } from './debye-tail.js';
 import { knotsOf } from './knots.js';
 import { limitPieces } from './limit-interval.js';
@@ -308,7 +308,7 @@ function finish(
   const draft = new CurveDraft(stretch, chain);
   if (measuredFromK === 0 && stretch.n > 2) keepPositive(draft);
   else if (tail !== null) addTail(draft, tail, thirdLaw);
-  if (policy.continuation.method === 'hold') addContinuations(draft, policy.continuation.reachRelative);
+  if (policy.continuation.method === 'hold') draft.addContinuations(policy.continuation.reachRelative);
 
   const cp = main.heatCapacity;
   return {
@@ -409,48 +409,6 @@ function addTail(draft: CurveDraft, tail: DebyeTail, thirdLaw: boolean): void {
     varS: thirdLaw ? 0 : varS[0] + uS * uS,
     kind: 1,
     uCp: 0,
-  });
-}
-
-const CONTINUED = 2;
-
-/** The last Cp held beyond both ends, never towards 0 K; the growth of its uncertainty is added where it is asked for. */
-function addContinuations(draft: CurveDraft, reach: number): void {
-  const state = (at: number): Pick<DraftKnot, 'varH' | 'covHS' | 'varS' | 'uCp' | 'c1' | 'c2' | 'c3' | 'kind'> => ({
-    varH: draft.view('varH')[at],
-    covHS: draft.view('covHS')[at],
-    varS: draft.view('varS')[at],
-    uCp: draft.view('uCp')[at],
-    c1: 0,
-    c2: 0,
-    c3: 0,
-    kind: CONTINUED,
-  });
-  const first = draft.view('knotK')[0];
-  if (first > 0) {
-    const low = first * (1 - reach);
-    const cp = draft.view('c0')[0];
-    draft.addFront({
-      ...state(0),
-      knotK: low,
-      c0: cp,
-      h: draft.view('h')[0] - cp * (first - low),
-      s: draft.view('s')[0] - cp * Math.log(first / low),
-    });
-  }
-  const n = draft.n;
-  const knotK = draft.view('knotK');
-  const last = knotK[n - 1];
-  const x = last - knotK[n - 2];
-  const c = (name: 'c0' | 'c1' | 'c2' | 'c3'): number => draft.view(name)[n - 2];
-  const cp = c('c0') + x * (c('c1') + x * (c('c2') + x * c('c3')));
-  const high = last * (1 + reach);
-  draft.addBack({
-    ...state(n - 1),
-    knotK: high,
-    c0: cp,
-    h: draft.view('h')[n - 1] + cp * (high - last),
-    s: draft.view('s')[n - 1] + cp * Math.log(high / last),
   });
 }
 
