@@ -349,12 +349,13 @@ function smallest(rows: TableRows, res: Residuals, policy: Policy): TableVerdict
   const { h, s } = rows;
   for (let i = 0; i < rows.n - 1; i++) {
     const r = rows.row[i];
+    const next = rows.row[i + 1];
     if (res.usable[i] !== 1) continue;
     const digits = digitU(rows, i);
     const e = Math.sqrt(res.e[i] * res.e[i] + res.own[i]);
-    if (h !== null && h.present[r] === 1)
+    if (h !== null && h.present[r] === 1 && h.present[next] === 1)
       out.enthalpy = Math.max(out.enthalpy ?? 0, times * Math.hypot(digits.h, e), 10 * h.halfUnit[r]);
-    if (s !== null && s.present[r] === 1)
+    if (s !== null && s.present[r] === 1 && s.present[next] === 1)
       out.entropy = Math.max(out.entropy ?? 0, times * Math.hypot(digits.s, e * res.open[i]), 10 * s.halfUnit[r]);
     if (res.hasClosure[i] === 1 && s !== null) out.closure = Math.max(out.closure ?? 0, 10 * s.halfUnit[r]);
     const stand = standoff(rows, i);
