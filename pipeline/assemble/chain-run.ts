@@ -19,12 +19,7 @@ export interface ChainRun {
  * Runs the chain over a stretch; `exactK` and `exactSK` are where H and S are held at zero when nothing observes them.
  * Printed increments are held at zero at `exactK` too where `countsThere`: it is their own H(Tr).
  */
-export function runChain(
-  stretch: Stretch,
-  exactK: number,
-  exactSK = exactK,
-  countsThere = exactK === stretch.referenceK,
-): ChainRun {
+export function runChain(stretch: Stretch, exactK: number, exactSK: number, countsThere: boolean): ChainRun {
   const { n, temperatureK: t } = stretch;
   const stepH = room.numbers(n);
   const stepS = room.numbers(n);
@@ -152,6 +147,6 @@ export function bend(stretch: Stretch, run: ChainRun): void {
 /** A stretch whose H and S are the smoothed ones of its own observations; what it lends to another is its steps. */
 export function smoothed(stretch: Stretch): Stretch {
   if (!stretch.hasH && !stretch.hasS) return stretch;
-  bend(stretch, runChain(stretch, stretch.referenceK));
+  bend(stretch, runChain(stretch, stretch.referenceK, stretch.referenceK, stretch.countsFromItself));
   return stretch;
 }

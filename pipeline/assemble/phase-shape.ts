@@ -6,7 +6,7 @@ import { baseCurve } from './base-curve.js';
 import { bend, runChain, smoothed } from './chain-run.js';
 import { CurveDraft } from './curve-draft.js';
 import { debyeTail } from './debye-tail.js';
-import { extend } from './join.js';
+import { type Extended, extend } from './join.js';
 import { knotsOf } from './knots.js';
 import { addTail, keepPositive } from './low-end.js';
 import { type Stretch, splitAt, stretchOf } from './stretch.js';
@@ -39,13 +39,14 @@ export interface PhaseShape {
   readonly incrementsFrom: string | null;
   readonly origins: readonly CurveOrigin[];
   readonly sources: readonly string[];
-  /** The series that the curve mainly rests on. */
+  /** The series that the levels rest on: the preferred one, or the one that alone prints H or S. */
   readonly main: Series;
 }
 
 /**
  * The curve of one phase from its series, preferred first. The preferred series gives its whole range; the others give what
- * lies beyond it, joined at its ends, H and S running on.
+ * lies beyond it, joined at its ends, H and S running on. A series that does not reach yet waits for one that closes the way;
+ * a gap is bridged only when none does, and no wider than a phase is continued.
  */
 export function phaseShape(
   phase: string,
@@ -54,8 +55,9 @@ export function phaseShape(
   policy: Policy,
 ): PhaseShape | null {
   let stretch: Stretch | null = null;
-  let main: Series | null = null;
   const origins: CurveOrigin[] = [];
+  const sources: string[] = [];
+  const waiting: { readonly series: Series; readonly stretch: Stretch }[] = [];
   for (const { series: one, named } of series) {
     const knots = knotsOf(one, named);
     if (knots === null) continue;
@@ -63,20 +65,45 @@ export function phaseShape(
     const next = stretchOf(knots, baseCurve(knots, scatter), one, scatter);
     if (stretch === null) {
       stretch = next;
-      main = one;
       origins.push(originOf(one, next.temperatureK[0], next.temperatureK[next.n - 1], null));
-      continue;
+      sources.push(one.table.source);
+    } else {
+      waiting.push({ series: one, stretch: smoothed(next) });
     }
-    const smooth = smoothed(next);
-    const grown: { stretch: Stretch; low: number | null; high: number | null } = extend(stretch, smooth);
-    const before: Stretch = stretch;
-    stretch = grown.stretch;
-    if (grown.low !== null) origins.unshift(originOf(one, smooth.temperatureK[0], before.temperatureK[0], grown.low));
-    if (grown.high !== null)
-      origins.push(originOf(one, before.temperatureK[before.n - 1], smooth.temperatureK[smooth.n - 1], grown.high));
   }
-  if (stretch === null || main === null) return null;
-  return finish(phase, stretch, main, origins, metal, policy);
+  if (stretch === null) return null;
+  const reach = policy.continuation.method === 'hold' ? policy.continuation.reachRelative : 0;
+  while (waiting.length > 0) {
+    const added: Added | null = firstThatReaches(stretch, waiting, 0) ?? firstThatReaches(stretch, waiting, reach);
+    if (added === null) break;
+    const [{ series: one, stretch: other }] = waiting.splice(added.index, 1);
+    const low = other.temperatureK[0];
+    const high = other.temperatureK[other.n - 1];
+    const first = stretch.temperatureK[0];
+    const last = stretch.temperatureK[stretch.n - 1];
+    if (low < first) origins.unshift(originOf(one, low, Math.min(first, high), added.extended.lowStep));
+    if (high > last) origins.push(originOf(one, Math.max(last, low), high, added.extended.highStep));
+    if (!sources.includes(one.table.source)) sources.push(one.table.source);
+    stretch = added.extended.stretch;
+  }
+  return finish(phase, stretch, origins, sources, metal, policy);
+}
+
+interface Added {
+  readonly index: number;
+  readonly extended: Extended;
+}
+
+function firstThatReaches(
+  stretch: Stretch,
+  waiting: readonly { readonly stretch: Stretch }[],
+  reach: number,
+): Added | null {
+  for (let index = 0; index < waiting.length; index++) {
+    const extended = extend(stretch, waiting[index].stretch, reach);
+    if (extended !== null) return { index, extended };
+  }
+  return null;
 }
 
 function hasOwn(series: Series): boolean {
@@ -102,12 +129,13 @@ function originOf(series: Series, lowK: number, highK: number, step: number | nu
 function finish(
   phase: string,
   whole: Stretch,
-  main: Series,
   origins: readonly CurveOrigin[],
+  sources: readonly string[],
   metal: boolean,
   policy: Policy,
 ): PhaseShape {
-  const referenceTemperature = main.table.referenceTemperatureK;
+  const main = whole.series;
+  const referenceTemperature = whole.referenceK;
   let stretch = whole;
   const measuredFromK = stretch.temperatureK[0];
   const measuredToK = stretch.temperatureK[stretch.n - 1];
@@ -117,7 +145,7 @@ function finish(
   const crystal = !phase.startsWith('g') && !phase.startsWith('l');
   const tail = crystal && measuredFromK > 0 ? debyeTail(stretch.temperatureK, stretch.heatCapacity, metal) : null;
   const thirdLaw = crystal && !stretch.hasS && (tail !== null || measuredFromK === 0);
-  const countsThere = inside && (main.incrementsFrom === null || main.incrementsFrom === phase);
+  const countsThere = inside && stretch.countsFromItself;
   const run = runChain(stretch, exactK, thirdLaw ? measuredFromK : exactK, countsThere);
   const { chain } = run;
   bend(stretch, run);
@@ -152,7 +180,7 @@ function finish(
     uCalibrationRelative: stretch.hasH || stretch.hasS ? 0 : (cp?.uSharedRelative ?? 0),
     incrementsFrom: main.incrementsFrom,
     origins,
-    sources: [...new Set(origins.map((o) => o.source))],
+    sources,
     main,
   };
 }

@@ -32,13 +32,27 @@ export class Stretch {
     readonly absoluteH: boolean,
     readonly hasH: boolean,
     readonly hasS: boolean,
-    readonly referenceK: number,
+    /** Whose printed H and S these are; the preferred series where nothing but Cp is printed. */
+    readonly series: Series,
   ) {}
+
+  get referenceK(): number {
+    return this.series.table.referenceTemperatureK;
+  }
+
+  /** H(Tr) of this very phase is the zero of the printed increments. */
+  get countsFromItself(): boolean {
+    return this.series.incrementsFrom === null || this.series.incrementsFrom === this.series.phase;
+  }
 
   /** Knots `from` to `to` inclusive. */
   slice(from: number, to: number): Stretch {
     const knots = <A extends Float64Array | Uint8Array>(a: A): A => a.slice(from, to + 1) as A;
     const intervals = (a: Float64Array): Float64Array => a.slice(from, to);
+    const printed = (variance: Float64Array): boolean => {
+      for (let i = from; i <= to; i++) if (variance[i] !== Number.POSITIVE_INFINITY) return true;
+      return false;
+    };
     return new Stretch(
       to - from + 1,
       knots(this.temperatureK),
@@ -59,24 +73,31 @@ export class Stretch {
       knots(this.jump),
       knots(this.kind),
       this.absoluteH,
-      this.hasH,
-      this.hasS,
-      this.referenceK,
+      this.hasH && printed(this.hVar),
+      this.hasS && printed(this.sVar),
+      this.series,
     );
   }
 
-  /** This stretch, then `next`, which starts where this one ends. The observations of the one with printed H or S are kept. */
-  joinedTo(next: Stretch): Stretch {
-    const keepFirst = this.hasH || this.hasS || !(next.hasH || next.hasS);
-    const knots = (a: Float64Array, b: Float64Array, blank: number | null): Float64Array => {
+  /**
+   * This stretch, then `next`, which starts where this one ends. Printed H and S are kept of one of the two alone, the
+   * preferred one where it has any: on the other's zero they would bend the curve at the join.
+   */
+  joinedTo(next: Stretch, preferFirst: boolean): Stretch {
+    const firstPrints = this.hasH || this.hasS;
+    const nextPrints = next.hasH || next.hasS;
+    const keepFirst = preferFirst ? firstPrints || !nextPrints : firstPrints && !nextPrints;
+    const knots = (a: Float64Array, b: Float64Array): Float64Array => {
       const out = new Float64Array(this.n + next.n - 1);
       out.set(a.subarray(0, this.n - 1), 0);
       out.set(b, this.n - 1);
-      if (keepFirst) out[this.n - 1] = a[this.n - 1];
-      if (blank !== null) {
-        if (keepFirst) out.fill(blank, this.n);
-        else out.fill(blank, 0, this.n - 1);
-      }
+      if (preferFirst) out[this.n - 1] = a[this.n - 1];
+      return out;
+    };
+    const observed = (a: Float64Array, b: Float64Array, blank: number): Float64Array => {
+      const out = new Float64Array(this.n + next.n - 1).fill(blank);
+      if (keepFirst) out.set(a, 0);
+      else out.set(b, this.n - 1);
       return out;
     };
     const bytes = (a: Uint8Array, b: Uint8Array): Uint8Array => {
@@ -85,6 +106,9 @@ export class Stretch {
       out.set(b.subarray(1), this.n);
       return out;
     };
+    // The join is a printed row where it is one of either.
+    const kind = bytes(this.kind, next.kind);
+    kind[this.n - 1] = Math.min(this.kind[this.n - 1], next.kind[0]);
     const intervals = (a: Float64Array, b: Float64Array): Float64Array => {
       const out = new Float64Array(a.length + b.length);
       out.set(a, 0);
@@ -94,27 +118,27 @@ export class Stretch {
     const keeper = keepFirst ? this : next;
     return new Stretch(
       this.n + next.n - 1,
-      knots(this.temperatureK, next.temperatureK, null),
-      knots(this.heatCapacity, next.heatCapacity, null),
-      knots(this.uHeatCapacity, next.uHeatCapacity, null),
+      knots(this.temperatureK, next.temperatureK),
+      knots(this.heatCapacity, next.heatCapacity),
+      knots(this.uHeatCapacity, next.uHeatCapacity),
       intervals(this.c0, next.c0),
       intervals(this.c1, next.c1),
       intervals(this.c2, next.c2),
       intervals(this.c3, next.c3),
       intervals(this.errorJPerMol, next.errorJPerMol),
       intervals(this.ownVarH, next.ownVarH),
-      knots(this.h, next.h, 0),
-      knots(this.hVar, next.hVar, Number.POSITIVE_INFINITY),
-      knots(this.s, next.s, 0),
-      knots(this.sVar, next.sVar, Number.POSITIVE_INFINITY),
-      knots(this.f, next.f, 0),
-      knots(this.fVar, next.fVar, Number.POSITIVE_INFINITY),
+      observed(this.h, next.h, 0),
+      observed(this.hVar, next.hVar, Number.POSITIVE_INFINITY),
+      observed(this.s, next.s, 0),
+      observed(this.sVar, next.sVar, Number.POSITIVE_INFINITY),
+      observed(this.f, next.f, 0),
+      observed(this.fVar, next.fVar, Number.POSITIVE_INFINITY),
       bytes(this.jump, next.jump),
-      bytes(this.kind, next.kind),
+      kind,
       keeper.absoluteH,
       keeper.hasH,
       keeper.hasS,
-      keeper.referenceK,
+      keeper.series,
     );
   }
 }
@@ -150,7 +174,7 @@ export function stretchOf(knots: Knots, base: BaseCurve, series: Series, scatter
     knots.absoluteH,
     knots.hasH,
     knots.hasS,
-    series.table.referenceTemperatureK,
+    series,
   );
 }
 
@@ -208,6 +232,6 @@ export function splitAt(stretch: Stretch, temperatureK: number): Stretch {
     stretch.absoluteH,
     stretch.hasH,
     stretch.hasS,
-    stretch.referenceK,
+    stretch.series,
   );
 }
