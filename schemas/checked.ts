@@ -33,6 +33,7 @@ export interface JudgedTransition {
   readonly toCurve: number;
   readonly computedK: number | null;
   readonly uComputedK: number | null;
+  /** G(to) - G(from) at the stated temperature. */
   readonly gapJPerMol: number | null;
   readonly uGapJPerMol: number | null;
   /** dH and dS of the curves at the stated temperature. */

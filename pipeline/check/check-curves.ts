@@ -82,7 +82,7 @@ function judgedOf(view: TransitionView, results: readonly Judgement[]): JudgedTr
     toCurve: view.toCurve,
     computedK: view.crossing?.temperatureK ?? null,
     uComputedK: view.crossing?.uK ?? null,
-    gapJPerMol: atStated ? (pair?.at.gapJPerMol ?? null) : null,
+    gapJPerMol: atStated && pair !== null ? 0 - pair.at.gapJPerMol : null,
     uGapJPerMol: atStated ? (pair?.uGapJPerMol ?? null) : null,
     curveEnthalpyJPerMol: pair?.at.enthalpyJPerMol ?? null,
     curveEntropyJPerMolK: pair?.at.entropyJPerMolK ?? null,
