@@ -62,10 +62,10 @@ export function withCauses(
     numbers.set(root.id, number);
     rooted.push({ finding: root, group, number });
   }
-  // What is left over follows from the first error that touches its phases, else from the first of all.
+  // What is left over follows from the first error that can bring it about, else from one that touches its phases.
   for (const f of findings) {
     if (!open(f) || rooted.some((r) => r.finding === f) || causeOf.has(f.id)) continue;
-    const near = rooted.find((r) => touches(r, f)) ?? rooted[0];
+    const near = rooted.find((r) => explains(r, f)) ?? rooted.find((r) => touches(r, f)) ?? rooted[0];
     if (near !== undefined) causeOf.set(f.id, near.finding.id);
   }
   if (rooted.length === 0) {
@@ -92,6 +92,21 @@ function candidates(findings: readonly Finding[], kind: string, place: string): 
     return (at < 0 ? wanted.length : at) + (same ? 0 : touch ? 10 : 20);
   };
   return findings.filter((f) => RANK[f.rule] >= 4).sort((a, b) => score(a) - score(b));
+}
+
+const OF_STATED_SIZE: ReadonlySet<string> = new Set([
+  'transition-entropy-closes',
+  'heating-raises-entropy',
+  'stated-transition-jumps',
+]);
+
+/** A stated dH or dS shows in its own transition's closure, a stated temperature in all that its transition is asked, an anchor in all that its phase is. */
+function explains(rooted: RootedGroup, f: Finding): boolean {
+  const { kind, phase } = rooted.group.members[0].of;
+  const same = `${f.fromPhase}>${f.toPhase}` === phase;
+  if (kind === 'enthalpy' || kind === 'entropy') return same && OF_STATED_SIZE.has(f.rule);
+  if (kind === 'temperature') return same || (f.rule === 'lowest-curve-is-the-stated-phase' && touches(rooted, f));
+  return touches(rooted, f);
 }
 
 function touches(rooted: RootedGroup, f: Finding): boolean {
