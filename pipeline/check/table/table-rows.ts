@@ -45,11 +45,7 @@ export function tableRows(series: Series): TableRows | null {
   let k = 0;
   for (let j = 0; j < n; j++) {
     const i = order[j];
-    if (k > 0 && temperature[i] === t[k - 1]) {
-      if (measured) continue;
-      // Of three rows at one temperature the last is the upper side; the one between repeats the lower with a note.
-      if (k > 1 && t[k - 2] === t[k - 1]) k--;
-    }
+    if (measured && k > 0 && temperature[i] === t[k - 1]) continue;
     t[k] = temperature[i];
     y[k] = cp.values[i];
     u[k] = cellU(cp, i);
