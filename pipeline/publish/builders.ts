@@ -19,8 +19,10 @@ function grown<S extends Store>(store: S, needed: number): S {
   return larger;
 }
 
+/** A long column stays where it was filled; a short one gives its spare room back. */
 function cut<S extends Store>(store: S, length: number): S {
-  return store.length === length ? store : (store.slice(0, length) as S);
+  if (store.length === length) return store;
+  return (length > 4096 && length > store.length / 2 ? store.subarray(0, length) : store.slice(0, length)) as S;
 }
 
 /** Numbers, integers and flags: values with absence marked beside them. An absent cell holds 0. */

@@ -19,6 +19,8 @@ export function concatTable(tables: readonly ColumnTable[]): ColumnTable {
   const [first] = tables;
   if (first === undefined) return { rows: 0, columns: {} };
   if (tables.length === 1) return first;
+  const filled = tables.filter(({ rows }) => rows > 0);
+  if (filled.length === 1) return filled[0]!;
   const columns: Record<string, Column> = {};
   for (const name of Object.keys(first.columns)) {
     columns[name] = concatColumn(tables.map((table) => table.columns[name]!));

@@ -64,7 +64,7 @@ export class ParquetWriter {
       await bindings.query(
         this.#connection,
         `COPY (SELECT ${columns.join(', ')} FROM columns_at_hand()) TO ${literal(path)} ` +
-          `(FORMAT parquet, COMPRESSION zstd${keyValues})`,
+          `(FORMAT parquet, COMPRESSION snappy${keyValues})`,
       );
     } finally {
       this.#feed = null;

@@ -15,7 +15,7 @@ import { runStages, type StageSettings } from './stages.js';
 import { type VerdictLine, verdictLine } from './verdict-line.js';
 
 /** Substances that go through the stages together: enough to be quick, few enough to bound memory. */
-const BATCH = 128;
+const BATCH = 1024;
 
 /** The whole night's work as plain data, so that a worker can be given it; bytes of files are shared, not copied. */
 export interface NightWork {

@@ -1,5 +1,5 @@
 /** Raw bytes that one worker takes at a time. */
-export const PARTITION_BYTES = 8_000_000;
+export const PARTITION_BYTES = 2_500_000;
 
 /**
  * Cuts the substances, in their order, into runs of about `target` raw bytes each. The cut depends on the input alone,

@@ -9,7 +9,13 @@ import { recordOf } from './file-records.js';
 import { writeCsv } from './write-csv.js';
 
 /** The tables that are written in parts when the library is large; the others are always one file. */
-export const PART_TABLES = ['functions', 'pieces', 'coverage'] as const satisfies readonly TableName[];
+export const PART_TABLES = [
+  'functions',
+  'pieces',
+  'transitions',
+  'coverage',
+  'provenance',
+] as const satisfies readonly TableName[];
 
 /**
  * Writes the tables given into the folder, `functions.csv` when there is one part, else `functions-001-of-012.csv`.

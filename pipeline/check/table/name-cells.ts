@@ -358,13 +358,17 @@ function smallest(rows: TableRows, res: Residuals, policy: Policy): TableVerdict
     if (s !== null && s.present[r] === 1 && s.present[next] === 1)
       out.entropy = Math.max(out.entropy ?? 0, times * Math.hypot(digits.s, e * res.open[i]), 10 * s.halfUnit[r]);
     if (res.hasClosure[i] === 1 && s !== null) out.closure = Math.max(out.closure ?? 0, 10 * s.halfUnit[r]);
-    const stand = standoff(rows, i);
-    if (stand.interior)
+    if (i > rows.from[i] && res.usable[i - 1] === 1 && rows.to[i] - rows.from[i] >= 4) {
+      // An even table's stand-off is as unsure as the thinned integral beside it, per kelvin.
+      const left = res.e[i - 1] / (rows.t[i] - rows.t[i - 1]);
+      const right = res.e[i] / (rows.t[i + 1] - rows.t[i]);
+      const spread = Math.max(left, right);
       out.heatCapacity = Math.max(
         out.heatCapacity ?? 0,
-        times * stand.u,
+        times * Math.sqrt(spread * spread + (1.45 * rows.uCp[i]) ** 2),
         policy.material.heatCapacityRelative * Math.abs(rows.cp[i]),
       );
+    }
   }
   return out;
 }
