@@ -55,9 +55,11 @@ export interface PhaseCurve {
   readonly gain: Float64Array;
   readonly uEnthalpyLevelJPerMol: number;
   readonly uEntropyLevelJPerMolK: number;
-  /** Relative standard uncertainty of a calibration common to the whole curve, acting on H and S counted from `referenceK`. */
+  /** Relative standard uncertainty of a calibration common to the whole curve, acting on H counted from `referenceK`. */
   readonly uCalibrationRelative: number;
   readonly referenceK: number;
+  /** The same for S: 0 K where it counts by the third law, else `referenceK`. */
+  readonly entropyReferenceK: number;
   /** Sources whose numbers fix the curve and its levels, preferred first. */
   readonly sources: readonly string[];
   /** Index of the anchor (among the substance's) that fixes the level of H and of S; -1 where none does. */

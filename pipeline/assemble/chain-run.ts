@@ -15,11 +15,20 @@ export interface ChainRun {
   readonly beta: Float64Array;
 }
 
-/**
- * Runs the chain over a stretch; `exactK` and `exactSK` are where H and S are held at zero when nothing observes them.
- * Printed increments are held at zero at `exactK` too where `countsThere`: it is their own H(Tr).
- */
-export function runChain(stretch: Stretch, exactK: number, exactSK: number, countsThere: boolean): ChainRun {
+/** Variance of the start over that of what is known of it: so wide that it says nothing, so narrow that digits are left. */
+const WIDE = 1e7;
+
+/** Where H and S are held at zero when nothing observes them. */
+export interface Zero {
+  readonly enthalpyK: number;
+  readonly entropyK: number;
+  /** Variance of that zero of S: by the third law, that of what lies below it. */
+  readonly entropyVar: number;
+  /** Printed increments are held at zero at `enthalpyK` too: it is their own H(Tr). */
+  readonly countsThere: boolean;
+}
+
+export function runChain(stretch: Stretch, zero: Zero): ChainRun {
   const { n, temperatureK: t } = stretch;
   const stepH = room.numbers(n);
   const stepS = room.numbers(n);
@@ -59,11 +68,10 @@ export function runChain(stretch: Stretch, exactK: number, exactSK: number, coun
   const hVar = copy(stretch.hVar);
   const s = copy(stretch.s);
   const sVar = copy(stretch.sVar);
-  let exact = 0;
-  for (let i = 0; i < n; i++) if (Math.abs(t[i] - exactK) < Math.abs(t[exact] - exactK)) exact = i;
-  const start = { h: 0, hVar: 1e10, s: 0, sVar: 1e4 };
+  const exact = nearestTo(t, n, zero.enthalpyK);
+  const start = { h: 0, hVar: 0, s: 0, sVar: 0 };
   if (stretch.hasH) {
-    if (countsThere && !stretch.absoluteH && t[exact] === exactK) {
+    if (zero.countsThere && !stretch.absoluteH && t[exact] === zero.enthalpyK) {
       h[exact] = 0;
       hVar[exact] = 0;
     }
@@ -75,13 +83,18 @@ export function runChain(stretch: Stretch, exactK: number, exactSK: number, coun
         start.h -= stepH[i];
         spread += stepVarH[i];
       }
-      start.hVar = 1e8 * spread;
+      start.hVar = WIDE * spread;
     }
   } else {
     h[exact] = 0;
     hVar[exact] = 0;
     start.h = 0;
-    for (let i = 0; i < exact; i++) start.h -= stepH[i];
+    let spread = 1e-6;
+    for (let i = 0; i < exact; i++) {
+      start.h -= stepH[i];
+      spread += stepVarH[i];
+    }
+    start.hVar = WIDE * spread;
   }
   if (stretch.hasS) {
     const first = firstFinite(sVar);
@@ -91,14 +104,18 @@ export function runChain(stretch: Stretch, exactK: number, exactSK: number, coun
       start.s -= stepS[i];
       spread += stepVarS[i];
     }
-    start.sVar = 1e8 * spread;
+    start.sVar = WIDE * spread;
   } else {
-    let exactS = 0;
-    for (let i = 0; i < n; i++) if (Math.abs(t[i] - exactSK) < Math.abs(t[exactS] - exactSK)) exactS = i;
+    const exactS = nearestTo(t, n, zero.entropyK);
     s[exactS] = 0;
-    sVar[exactS] = 0;
+    sVar[exactS] = zero.entropyVar;
     start.s = 0;
-    for (let i = 0; i < exactS; i++) start.s -= stepS[i];
+    let spread = 1e-12 + zero.entropyVar;
+    for (let i = 0; i < exactS; i++) {
+      start.s -= stepS[i];
+      spread += stepVarS[i];
+    }
+    start.sVar = WIDE * spread;
   }
   const chain = smoothChain({
     n,
@@ -120,6 +137,12 @@ export function runChain(stretch: Stretch, exactK: number, exactSK: number, coun
     startSVar: start.sVar,
   });
   return { chain, stepH, stepS, alpha: alphas, beta: betas };
+}
+
+function nearestTo(t: Float64Array, n: number, temperatureK: number): number {
+  let at = 0;
+  for (let i = 1; i < n; i++) if (Math.abs(t[i] - temperatureK) < Math.abs(t[at] - temperatureK)) at = i;
+  return at;
 }
 
 function firstFinite(variance: Float64Array): number {
@@ -147,6 +170,10 @@ export function bend(stretch: Stretch, run: ChainRun): void {
 /** A stretch whose H and S are the smoothed ones of its own observations; what it lends to another is its steps. */
 export function smoothed(stretch: Stretch): Stretch {
   if (!stretch.hasH && !stretch.hasS) return stretch;
-  bend(stretch, runChain(stretch, stretch.referenceK, stretch.referenceK, stretch.countsFromItself));
+  const at = stretch.referenceK;
+  bend(
+    stretch,
+    runChain(stretch, { enthalpyK: at, entropyK: at, entropyVar: 0, countsThere: stretch.countsFromItself }),
+  );
   return stretch;
 }

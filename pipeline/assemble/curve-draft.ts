@@ -90,6 +90,11 @@ export class CurveDraft {
     this.follow(this.start);
   }
 
+  /** The first knot's S is exact: it covaries with nothing above. */
+  freeFrontEntropy(): void {
+    this.gain[4 * this.start + 3] = 0;
+  }
+
   /** The last Cp held up to `share` of the end temperatures beyond both ends, never towards 0 K. */
   addContinuations(share: number): void {
     const { knotK, c0, c1, c2, c3, h, s } = this.a;

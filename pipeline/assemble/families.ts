@@ -23,15 +23,19 @@ export function curvesOf(substance: HarmonisedCase, named: readonly NamedCell[],
     const phases: string[] = [];
     for (const s of series) if (!phases.includes(s.series.phase)) phases.push(s.series.phase);
     const shapes: PhaseShape[] = [];
+    const comparable = anchors.filter((a) => sameZeros(a, family));
     for (const phase of phases) {
       const own = series.filter((s) => s.series.phase === phase);
       if (own.length > 1) own.sort((a, b) => compare(a.series, b.series, policy));
-      const shape = phaseShape(phase, own, substance.substance.class === 'metal', policy);
+      const entropyAnchorsK = comparable
+        .filter((a) => a.phase === phase && a.entropy !== null)
+        .map((a) => a.referenceTemperatureK);
+      const shape = phaseShape(phase, own, substance.substance.class === 'metal', policy, entropyAnchorsK);
       if (shape !== null) shapes.push(shape);
     }
     if (shapes.length > 0) {
-      const comparable = anchors.filter((a) => sameZeros(a, family));
-      curves.push(...levelled(shapes, comparable, substance.transitions, family, policy, substance.anchors));
+      const residual = substance.substance.residualEntropyJPerMolK;
+      curves.push(...levelled(shapes, comparable, substance.transitions, family, policy, substance.anchors, residual));
     }
   }
   return curves;

@@ -19,8 +19,8 @@ interface Level {
 
 /**
  * Puts the shapes of one family on its zeros. H and S come, in this order, from the table's own declared values, from an
- * anchor at the reference temperature, from the third law (S), and through a stated transition from a phase whose level is
- * known. A family in which nothing is anchored counts from its first phase.
+ * anchor at the reference temperature, from the third law (S, with what is left of it at 0 K), and through a stated transition
+ * from a phase whose level is known. A family in which nothing is anchored counts from its first phase.
  */
 export function levelled(
   shapes: readonly PhaseShape[],
@@ -29,9 +29,10 @@ export function levelled(
   family: CurveFamily,
   policy: Policy,
   all: readonly Anchor[],
+  residualEntropyJPerMolK: number,
 ): PhaseCurve[] {
   const growth = policy.continuation.relativePer100K / 100;
-  const levels = shapes.map((shape) => ownLevel(shape, anchors, growth));
+  const levels = shapes.map((shape) => ownLevel(shape, anchors, growth, residualEntropyJPerMolK));
   for (;;) {
     carryAll(shapes, levels, transitions);
     const openH = levels.every((l) => l.h === null) ? 0 : -1;
@@ -43,7 +44,12 @@ export function levelled(
   return shapes.map((shape, k) => curveOf(shape, levels[k], family, growth, all));
 }
 
-function ownLevel(shape: PhaseShape, anchors: readonly Anchor[], growth: number): Level {
+function ownLevel(
+  shape: PhaseShape,
+  anchors: readonly Anchor[],
+  growth: number,
+  residualEntropyJPerMolK: number,
+): Level {
   const level: Level = {
     h: null,
     s: null,
@@ -79,7 +85,7 @@ function ownLevel(shape: PhaseShape, anchors: readonly Anchor[], growth: number)
     }
   }
   if (shape.entropyMeans === 'declared') {
-    level.s = 0;
+    level.s = shape.thirdLaw ? residualEntropyJPerMolK : 0;
     level.sFrom = shape.thirdLaw ? 'third-law' : 'table';
   }
   if (own?.entropy != null && (shape.entropyMeans === 'relative' || shape.thirdLaw)) {
@@ -237,6 +243,7 @@ function curveOf(
     uEntropyLevelJPerMolK: level.uS,
     uCalibrationRelative: shape.uCalibrationRelative,
     referenceK: shape.referenceK,
+    entropyReferenceK: shape.entropyReferenceK,
     sources: shape.sources,
     enthalpyAnchor: level.hAnchor === null ? -1 : all.indexOf(level.hAnchor),
     entropyAnchor: level.sAnchor === null ? -1 : all.indexOf(level.sAnchor),

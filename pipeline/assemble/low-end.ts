@@ -19,7 +19,8 @@ export function keepPositive(draft: CurveDraft): void {
   const pieces = limitPieces(high, draft.view('c0')[1], h[1] - h[0], s[1] - s[0]);
   if (pieces === null) return;
   const { thetaK, beta } = pieces;
-  const middle = (name: 'varH' | 'covHS' | 'varS'): number => (draft.view(name)[0] + draft.view(name)[1]) / 2;
+  // So little lies below theta that its state errs as that at 0 K does.
+  const below = (name: 'varH' | 'covHS' | 'varS'): number => draft.view(name)[0];
   draft.splitFirst(
     { c0: 0, c1: 0, c2: 0, c3: beta },
     {
@@ -30,46 +31,41 @@ export function keepPositive(draft: CurveDraft): void {
       c3: pieces.c3,
       h: h[0] + (beta * thetaK ** 4) / 4,
       s: s[0] + (beta * thetaK ** 3) / 3,
-      varH: middle('varH'),
-      covHS: middle('covHS'),
-      varS: middle('varS'),
+      varH: below('varH'),
+      covHS: below('covHS'),
+      varS: below('varS'),
       kind: 1,
       uCp: draft.view('uCp')[1],
     },
   );
 }
 
-/** The Debye tail below the first row; by the third law S counts from its end. */
+/** What a tail adds up to from 0 K to T, and what its dropped terms cost: a few per cent of Cp at 20 K, so of its integrals. */
+export function tailIntegrals(tail: DebyeTail, temperatureK: number): { h: number; s: number; uH: number; uS: number } {
+  const h = (tail.gamma * temperatureK ** 2) / 2 + (tail.beta * temperatureK ** 4) / 4;
+  const s = tail.gamma * temperatureK + (tail.beta * temperatureK ** 3) / 3;
+  return { h, s, uH: 0.03 * h, uS: 0.03 * s };
+}
+
+/** The Debye tail below the first row; by the third law S counts from its end, exactly. */
 export function addTail(draft: CurveDraft, tail: DebyeTail, thirdLaw: boolean): void {
-  const t = draft.view('knotK')[0];
   const h = draft.view('h');
   const s = draft.view('s');
-  const varH = draft.view('varH');
-  const covHS = draft.view('covHS');
-  const varS = draft.view('varS');
-  const dH = (tail.gamma * t * t) / 2 + (tail.beta * t ** 4) / 4;
-  const dS = tail.gamma * t + (tail.beta * t ** 3) / 3;
-  // What the dropped terms cost: a few per cent of the tail's own entropy.
-  const uH = 0.03 * dH;
-  const uS = 0.03 * dS;
-  if (thirdLaw) {
-    for (let i = 0; i < s.length; i++) {
-      s[i] += dS;
-      varS[i] += uS * uS;
-    }
-  }
+  const below = tailIntegrals(tail, draft.view('knotK')[0]);
+  if (thirdLaw) for (let i = 0; i < s.length; i++) s[i] += below.s;
   draft.addFront({
     knotK: 0,
     c0: 0,
     c1: tail.gamma,
     c2: 0,
     c3: tail.beta,
-    h: h[0] - dH,
-    s: s[0] - dS,
-    varH: varH[0] + uH * uH,
-    covHS: covHS[0],
-    varS: thirdLaw ? 0 : varS[0] + uS * uS,
+    h: h[0] - below.h,
+    s: s[0] - below.s,
+    varH: draft.view('varH')[0] + below.uH ** 2,
+    covHS: thirdLaw ? 0 : draft.view('covHS')[0],
+    varS: thirdLaw ? 0 : draft.view('varS')[0] + below.uS ** 2,
     kind: 1,
     uCp: 0,
   });
+  if (thirdLaw) draft.freeFrontEntropy();
 }

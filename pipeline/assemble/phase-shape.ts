@@ -8,7 +8,7 @@ import { CurveDraft } from './curve-draft.js';
 import { debyeTail } from './debye-tail.js';
 import { type Extended, extend } from './join.js';
 import { knotsOf } from './knots.js';
-import { addTail, keepPositive } from './low-end.js';
+import { addTail, keepPositive, tailIntegrals } from './low-end.js';
 import { type Stretch, splitAt, stretchOf } from './stretch.js';
 
 /** One phase's curve before its levels are known. */
@@ -35,6 +35,8 @@ export interface PhaseShape {
   readonly entropyMeans: 'declared' | 'relative';
   readonly thirdLaw: boolean;
   readonly referenceK: number;
+  /** Where S counts from: 0 K by the third law, else as H. */
+  readonly entropyReferenceK: number;
   readonly uCalibrationRelative: number;
   readonly incrementsFrom: string | null;
   readonly origins: readonly CurveOrigin[];
@@ -46,13 +48,15 @@ export interface PhaseShape {
 /**
  * The curve of one phase from its series, preferred first. The preferred series gives its whole range; the others give what
  * lies beyond it, joined at its ends, H and S running on. A series that does not reach yet waits for one that closes the way;
- * a gap is bridged only when none does, and no wider than a phase is continued.
+ * a gap is bridged only when none does, and no wider than a phase is continued. Where an anchor states S within the range
+ * (`entropyAnchorsK`), the third law is not needed for it.
  */
 export function phaseShape(
   phase: string,
   series: readonly { readonly series: Series; readonly named: readonly NamedCell[] }[],
   metal: boolean,
   policy: Policy,
+  entropyAnchorsK: readonly number[] = [],
 ): PhaseShape | null {
   let stretch: Stretch | null = null;
   const origins: CurveOrigin[] = [];
@@ -86,7 +90,7 @@ export function phaseShape(
     if (!sources.includes(one.table.source)) sources.push(one.table.source);
     stretch = added.extended.stretch;
   }
-  return finish(phase, stretch, origins, sources, metal, policy);
+  return finish(phase, stretch, origins, sources, metal, policy, entropyAnchorsK);
 }
 
 interface Added {
@@ -133,6 +137,7 @@ function finish(
   sources: readonly string[],
   metal: boolean,
   policy: Policy,
+  entropyAnchorsK: readonly number[],
 ): PhaseShape {
   const main = whole.series;
   const referenceTemperature = whole.referenceK;
@@ -144,9 +149,14 @@ function finish(
   const exactK = inside ? referenceTemperature : nearer(referenceTemperature, measuredFromK, measuredToK);
   const crystal = !phase.startsWith('g') && !phase.startsWith('l');
   const tail = crystal && measuredFromK > 0 ? debyeTail(stretch.temperatureK, stretch.heatCapacity, metal) : null;
-  const thirdLaw = crystal && !stretch.hasS && (tail !== null || measuredFromK === 0);
-  const countsThere = inside && stretch.countsFromItself;
-  const run = runChain(stretch, exactK, thirdLaw ? measuredFromK : exactK, countsThere);
+  const anchored = entropyAnchorsK.some((t) => t >= measuredFromK && t <= measuredToK);
+  const thirdLaw = crystal && !stretch.hasS && !anchored && (tail !== null || measuredFromK === 0);
+  const run = runChain(stretch, {
+    enthalpyK: exactK,
+    entropyK: thirdLaw ? measuredFromK : exactK,
+    entropyVar: thirdLaw && tail !== null ? tailIntegrals(tail, measuredFromK).uS ** 2 : 0,
+    countsThere: inside && stretch.countsFromItself,
+  });
   const { chain } = run;
   bend(stretch, run);
 
@@ -177,6 +187,7 @@ function finish(
     entropyMeans: stretch.hasS || thirdLaw ? 'declared' : 'relative',
     thirdLaw,
     referenceK: exactK,
+    entropyReferenceK: thirdLaw ? 0 : exactK,
     uCalibrationRelative: stretch.hasH || stretch.hasS ? 0 : (cp?.uSharedRelative ?? 0),
     incrementsFrom: main.incrementsFrom,
     origins,

@@ -68,6 +68,7 @@ export function curve(phase: string, family = STANDARD, changes: Partial<PhaseCu
     uEntropyLevelJPerMolK: 0,
     uCalibrationRelative: 0,
     referenceK: 298.15,
+    entropyReferenceK: 298.15,
     sources: ['desk'],
     carriedThrough: -1,
     continuationGrowthPerK: 0.001,

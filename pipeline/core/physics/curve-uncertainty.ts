@@ -14,6 +14,7 @@ export interface UncertainCurve extends CurveArrays {
   readonly uEntropyLevelJPerMolK: number;
   readonly uCalibrationRelative: number;
   readonly referenceK: number;
+  readonly entropyReferenceK: number;
   readonly continuationGrowthPerK: number;
 }
 
@@ -49,7 +50,7 @@ export function stateCovariance(curve: UncertainCurve, temperatureK: number): St
   if (curve.uCalibrationRelative > 0) {
     const u2 = curve.uCalibrationRelative * curve.uCalibrationRelative;
     const dh = enthalpyAt(curve, temperatureK, i) - enthalpyAt(curve, curve.referenceK);
-    const ds = entropyAt(curve, temperatureK, i) - entropyAt(curve, curve.referenceK);
+    const ds = entropyAt(curve, temperatureK, i) - entropyAt(curve, curve.entropyReferenceK);
     hh += u2 * dh * dh;
     hs += u2 * dh * ds;
     ss += u2 * ds * ds;
@@ -107,7 +108,7 @@ export function crossCovariance(
   if (curve.uCalibrationRelative > 0) {
     const u2 = curve.uCalibrationRelative * curve.uCalibrationRelative;
     const h0 = enthalpyAt(curve, curve.referenceK);
-    const s0 = entropyAt(curve, curve.referenceK);
+    const s0 = entropyAt(curve, curve.entropyReferenceK);
     const h1 = enthalpyAt(curve, first) - h0;
     const s1 = entropyAt(curve, first) - s0;
     const h2 = enthalpyAt(curve, second) - h0;

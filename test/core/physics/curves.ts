@@ -83,6 +83,7 @@ export function uncertainCurve(seed: number, n: number, rest: Partial<UncertainC
     uEntropyLevelJPerMolK: 0,
     uCalibrationRelative: 0,
     referenceK: knots[1],
+    entropyReferenceK: knots[1],
     continuationGrowthPerK: 0.001,
     ...rest,
   };
