@@ -1,0 +1,189 @@
+import { describe, expect, it } from 'vitest';
+import { enthalpyAt, entropyAt, gibbsAt } from '../../pipeline/core/physics/curve.js';
+import { stateCovariance } from '../../pipeline/core/physics/curve-uncertainty.js';
+import type { TableMeaning } from '../../schemas/table-meaning.js';
+import { anchorOf, assembled, type CaseParts, curveOfPhase, datum, seriesOf, transitionOf } from './cases.js';
+import { steps, TR, withReference } from './model.js';
+
+const MEASURED: Partial<TableMeaning> = { basis: 'measured', source: 'bench' };
+
+/** Cp constant, no H or S printed. */
+const bare = (phase: string, low: number, high: number, cp: number, table: Partial<TableMeaning> = {}) => {
+  const temperatureK = steps(low, high, (high - low) / 10);
+  return seriesOf({ phase, temperatureK, cp: { values: temperatureK.map(() => cp), decimals: 4 }, table });
+};
+
+/** Cp constant, H - H(Tr) and S printed; `increment` at Tr. */
+const printed = (phase: string, temperatureK: number[], cp: number, s: number, increment = 0, from?: string) =>
+  seriesOf({
+    phase,
+    temperatureK,
+    cp: { values: temperatureK.map(() => cp), decimals: 4 },
+    s: { values: temperatureK.map((t) => s + cp * Math.log(t / TR)), decimals: 4 },
+    increment: { values: temperatureK.map((t) => increment + cp * (t - TR)), decimals: 2 },
+    ...(from === undefined ? {} : { incrementsFrom: from }),
+  });
+
+const GRID = withReference(steps(250, 900, 50));
+
+describe('levels of H and S', () => {
+  it('come from an anchor at its reference temperature for a bare table, H and S each', () => {
+    const curve = curveOfPhase(
+      assembled({
+        series: [bare('l', 280, 500, 80)],
+        anchors: [anchorOf('l', { h: datum(-285000, 40), s: datum(70, 0.2) }, { source: 'other' })],
+      }),
+      'l',
+    );
+    expect(enthalpyAt(curve, TR)).toBeCloseTo(-285000, 6);
+    expect(entropyAt(curve, TR)).toBeCloseTo(70, 9);
+    expect(enthalpyAt(curve, 400)).toBeCloseTo(-285000 + 80 * (400 - TR), 5);
+    expect(entropyAt(curve, 400)).toBeCloseTo(70 + 80 * Math.log(400 / TR), 8);
+    expect(Math.sqrt(stateCovariance(curve, TR).hh)).toBeCloseTo(40, 6);
+    expect(Math.sqrt(stateCovariance(curve, TR).ss)).toBeCloseTo(0.2, 8);
+    expect([curve.enthalpyLevelFrom, curve.entropyLevelFrom, curve.enthalpyAnchor, curve.entropyAnchor]).toEqual([
+      'anchor',
+      'anchor',
+      0,
+      0,
+    ]);
+  });
+
+  it('take the rounding of the anchor alone where it stands in the same evaluated source, else its own u', () => {
+    const level = (source: string): number =>
+      curveOfPhase(
+        assembled({
+          series: [printed('cr', GRID, 50, 60)],
+          anchors: [anchorOf('cr', { h: datum(-1e5, 300, 5) }, { source })],
+        }),
+        'cr',
+      ).uEnthalpyLevelJPerMol;
+    expect(level('desk')).toBeCloseTo(5 / Math.sqrt(3), 9);
+    expect(level('elsewhere')).toBeCloseTo(Math.hypot(300, 5 / Math.sqrt(3)), 9);
+  });
+
+  it('prefer the anchor of better rank, and among equals that of the own source', () => {
+    const result = assembled({
+      series: [printed('cr', GRID, 50, 60)],
+      anchors: [
+        anchorOf('cr', { h: datum(1) }, { source: 'elsewhere', rank: 1 }),
+        anchorOf('cr', { h: datum(2) }, { source: 'desk', rank: 1 }),
+        anchorOf('cr', { h: datum(3) }, { source: 'elsewhere', rank: 0.4 }),
+      ],
+    });
+    expect(curveOfPhase(result, 'cr').enthalpyAnchor).toBe(2);
+  });
+
+  it('are the increments from another phase where the table counts them so', () => {
+    const curve = curveOfPhase(
+      assembled({
+        series: [printed('l', GRID, 70, 90, 12000, 'cr')],
+        anchors: [anchorOf('cr', { h: datum(-400000) }), anchorOf('l', { h: datum(-1) })],
+      }),
+      'l',
+    );
+    expect(enthalpyAt(curve, TR)).toBeCloseTo(-400000 + 12000, 2);
+    expect(curve.enthalpyAnchor).toBe(0);
+  });
+
+  it('are left alone where the table declares H and S themselves', () => {
+    const temperatureK = GRID;
+    const absolute = seriesOf({
+      phase: 'g',
+      temperatureK,
+      cp: { values: temperatureK.map(() => 30), decimals: 4 },
+      s: { values: temperatureK.map((t) => 190 + 30 * Math.log(t / TR)), decimals: 4 },
+      h: { values: temperatureK.map((t) => -5000 + 30 * t), decimals: 2 },
+      g: { values: temperatureK.map((t) => -5000 + 30 * t - t * (190 + 30 * Math.log(t / TR))), decimals: 2 },
+    });
+    const curve = curveOfPhase(assembled({ series: [absolute], anchors: [anchorOf('g', { h: datum(777) })] }), 'g');
+    expect(curve.enthalpyLevelFrom).toBe('table');
+    expect(Math.abs(enthalpyAt(curve, 600) - (-5000 + 18000))).toBeLessThan(0.01);
+    expect(Math.abs(gibbsAt(curve, 600) - (13000 - 600 * (190 + 30 * Math.log(600 / TR))))).toBeLessThan(0.05);
+  });
+
+  it('reach across to a continued curve at the reference temperature, no farther than 150 K, with its growing u', () => {
+    const near = curveOfPhase(
+      assembled({
+        series: [bare('l', 320, 500, 80, MEASURED)],
+        anchors: [anchorOf('l', { h: datum(-285000), s: datum(70) }, MEASURED)],
+      }),
+      'l',
+    );
+    expect(enthalpyAt(near, TR)).toBeCloseTo(-285000, 6);
+    const x = 320 - TR;
+    expect(near.uEnthalpyLevelJPerMol).toBeCloseTo((0.001 * 80 * x * x) / 2, 6);
+    const far = curveOfPhase(
+      assembled({ series: [bare('l', 600, 900, 80)], anchors: [anchorOf('l', { h: datum(-285000), s: datum(70) })] }),
+      'l',
+    );
+    expect(far.enthalpyAnchor).toBe(-1);
+  });
+});
+
+/** A crystal with levels, and what its phases are carried through: II > I at 400 K, I > l at 600 K. */
+function ladder(extra: Partial<CaseParts> = {}, uH = 30) {
+  return assembled({
+    series: [
+      bare('cr-II', 250, 420, 50, MEASURED),
+      bare('cr-I', 390, 620, 60, MEASURED),
+      bare('l', 590, 900, 75, MEASURED),
+    ],
+    anchors: [anchorOf('cr-II', { h: datum(-300000, 500), s: datum(80, 0.3) }, MEASURED)],
+    transitions: [
+      transitionOf('cr-I', 'l', datum(600, 0.1), { h: datum(18000, uH) }, MEASURED),
+      transitionOf('cr-II', 'cr-I', datum(400, 0.1), { s: datum(5, 0.02) }, MEASURED),
+    ],
+    ...extra,
+  });
+}
+
+describe('levels carried through transitions', () => {
+  const result = ladder();
+  const [ii, i, l] = ['cr-II', 'cr-I', 'l'].map((phase) => curveOfPhase(result, phase));
+
+  it('put dH and dS of each transition between the curves, one from the other by dH = T dS', () => {
+    expect(enthalpyAt(i, 400) - enthalpyAt(ii, 400)).toBeCloseTo(400 * 5, 6);
+    expect(entropyAt(i, 400) - entropyAt(ii, 400)).toBeCloseTo(5, 9);
+    expect(enthalpyAt(l, 600) - enthalpyAt(i, 600)).toBeCloseTo(18000, 6);
+    expect(entropyAt(l, 600) - entropyAt(i, 600)).toBeCloseTo(30, 9);
+    expect([i.carriedThrough, l.carriedThrough]).toEqual([1, 0]);
+    expect([i.enthalpyLevelFrom, l.entropyLevelFrom]).toEqual(['transition', 'transition']);
+  });
+
+  it('so cross where it was stated, both ways along the ladder', () => {
+    const at = result.crossings
+      .filter((c) => c.stable)
+      .map((c) => [c.from, c.to, Math.round(c.temperatureK * 1e6) / 1e6]);
+    expect(at).toEqual([
+      ['cr-II', 'cr-I', 400],
+      ['cr-I', 'l', 600],
+    ]);
+    const downwards = ladder({ anchors: [anchorOf('l', { h: datum(0), s: datum(0) }, MEASURED, 600)] });
+    expect(downwards.crossings.filter((c) => c.stable).map((c) => Math.round(c.temperatureK * 1e6) / 1e6)).toEqual([
+      400, 600,
+    ]);
+    expect(enthalpyAt(curveOfPhase(downwards, 'cr-II'), 400)).toBeCloseTo(-18000 - 60 * 200 - 2000, 4);
+  });
+
+  it('count from the first phase where nothing is anchored, and say so', () => {
+    const free = ladder({ anchors: [] });
+    expect(free.curves.map((c) => c.hasEnthalpyLevel && c.hasEntropyLevel)).toEqual([true, true, true]);
+    expect(curveOfPhase(free, 'cr-II').enthalpyLevelFrom).toBe('none');
+    expect(free.crossings.filter((c) => c.stable).length).toBe(2);
+  });
+
+  it('stay open where a continuous or a glass transition, or one without dH and dS, is all there is', () => {
+    for (const order of ['continuous', 'glass'] as const) {
+      const open = ladder({
+        transitions: [
+          transitionOf('cr-II', 'cr-I', datum(400), { h: datum(0), order }),
+          transitionOf('cr-I', 'l', datum(600)),
+        ],
+      });
+      expect(curveOfPhase(open, 'cr-I').hasEnthalpyLevel).toBe(false);
+      expect(curveOfPhase(open, 'l').hasEntropyLevel).toBe(false);
+      expect(open.crossings).toEqual([]);
+    }
+  });
+});
