@@ -46,12 +46,14 @@ describe('published curves', () => {
         const scale = Math.max(cp, 1);
         // Rounding of the differences themselves: some 1e-16 of the value over the step.
         const rounding = (value: number): number => (3e-16 * Math.abs(value)) / step;
+        // What five points leave out of the slope of S, h^4/30 of its fifth derivative, 24 c3/T^2 where Cp bends sharply.
+        const leftOut = (0.8 * Math.abs(curve.c3[i]) * step ** 4) / t;
         const dH = derivative((x) => enthalpyAt(curve, x, i), t, step);
         const dS = derivative((x) => entropyAt(curve, x, i), t, step);
         const dG = derivative((x) => gibbsAt(curve, x, i), t, step);
         const where = `${name} at ${t} K`;
         expect(Math.abs(dH - cp), where).toBeLessThan(1e-9 * scale + rounding(enthalpyAt(curve, t)));
-        expect(Math.abs(t * dS - cp), where).toBeLessThan(1e-9 * scale + t * rounding(entropyAt(curve, t)));
+        expect(Math.abs(t * dS - cp), where).toBeLessThan(1e-9 * scale + leftOut + t * rounding(entropyAt(curve, t)));
         const s = entropyAt(curve, t);
         expect(Math.abs(dG + s), where).toBeLessThan(
           1e-9 * Math.abs(s) + rounding(enthalpyAt(curve, t)) + rounding(t * s),
