@@ -22,6 +22,17 @@ export interface CurveOrigin {
   readonly stepHeatCapacityJPerMolK: number | null;
 }
 
+/** Where the level of H or of S comes from, for what two phases share to cancel between them. */
+export interface LevelOrigin {
+  /** The curve that it was carried from through a transition, at `atK`; null where it is a datum itself. */
+  readonly from: PhaseCurve | null;
+  readonly atK: number;
+  /** How many of its units make one of this curve's (S8 vapour: 8); 1 for all others. */
+  readonly scale: number;
+  /** Standard errors by datum, signed. */
+  readonly errors: readonly { readonly key: string; readonly u: number }[];
+}
+
 /**
  * Cp(T) = c0 + c1 x + c2 x^2 + c3 x^3 with x = T - knotK[i] in interval i; n knots, n - 1 intervals.
  * H and S at the knots are on the family's zeros where `hasEnthalpyLevel` / `hasEntropyLevel`, else relative to the first knot.
@@ -55,6 +66,9 @@ export interface PhaseCurve {
   readonly gain: Float64Array;
   readonly uEnthalpyLevelJPerMol: number;
   readonly uEntropyLevelJPerMolK: number;
+  /** Which data the levels owe their errors to; absent where they are the curve's own. */
+  readonly enthalpyLevel?: LevelOrigin | undefined;
+  readonly entropyLevel?: LevelOrigin | undefined;
   /** Relative standard uncertainty of a calibration common to the whole curve, acting on H counted from `referenceK`. */
   readonly uCalibrationRelative: number;
   readonly referenceK: number;

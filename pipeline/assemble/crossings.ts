@@ -1,8 +1,8 @@
 import type { Crossing, PhaseCurve } from '../../schemas/curves.js';
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
-import { enthalpyAt, entropyAt } from '../core/physics/curve.js';
 import { crossingsOf, gibbsInDiagram } from '../core/physics/diagram.js';
+import { equilibrium } from '../core/physics/equilibrium.js';
 import {
   type DiagramSetting,
   gapUncertainty,
@@ -78,9 +78,7 @@ function crossingAt(
   const step = Math.max(1e-3, 1e-6 * temperatureK);
   const below = gibbsInDiagram(a, temperatureK - step) - gibbsInDiagram(b, temperatureK - step);
   const [from, to] = below < 0 ? [a, b] : [b, a];
-  const perUnit = (p: Placed, x: number): number => x / p.formulaUnits;
-  const dS = perUnit(to, entropyAt(to.curve, temperatureK)) - perUnit(from, entropyAt(from.curve, temperatureK));
-  const dH = perUnit(to, enthalpyAt(to.curve, temperatureK)) - perUnit(from, enthalpyAt(from.curve, temperatureK));
+  const { enthalpyJPerMol, entropyJPerMolK } = equilibrium(from, to, temperatureK);
   const uGap = gapUncertainty(from, to, temperatureK, setting.pressurePa);
   const g = gibbsInDiagram(from, temperatureK);
   let stable = true;
@@ -97,9 +95,9 @@ function crossingAt(
     pressurePa: setting.pressurePa,
     gas: gas ? setting.gas : null,
     temperatureK,
-    uK: uGap / Math.abs(dS),
-    enthalpyJPerMol: dH,
-    entropyJPerMolK: dS,
+    uK: uGap / Math.abs(entropyJPerMolK),
+    enthalpyJPerMol,
+    entropyJPerMolK,
     stable,
     measured: inData(a) && inData(b),
   };

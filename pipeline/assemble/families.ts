@@ -34,8 +34,7 @@ export function curvesOf(substance: HarmonisedCase, named: readonly NamedCell[],
       if (shape !== null) shapes.push(shape);
     }
     if (shapes.length > 0) {
-      const residual = substance.substance.residualEntropyJPerMolK;
-      curves.push(...levelled(shapes, comparable, substance.transitions, family, policy, substance.anchors, residual));
+      curves.push(...levelled(shapes, { zeros: family, substance, anchors: comparable }, policy));
     }
   }
   return curves;

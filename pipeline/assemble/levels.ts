@@ -1,20 +1,17 @@
-import type { CurveFamily, PhaseCurve } from '../../schemas/curves.js';
-import type { Anchor, Datum, StatedTransition } from '../../schemas/harmonised.js';
+import type { CurveFamily, LevelOrigin, PhaseCurve } from '../../schemas/curves.js';
+import type { Anchor, Datum, HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { Room } from '../core/numeric/room.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
+import { carryAll, type Level, type Origin, relative } from './carry-levels.js';
 import type { PhaseShape } from './phase-shape.js';
 
-interface Level {
-  h: number | null;
-  s: number | null;
-  uH: number;
-  uS: number;
-  hFrom: PhaseCurve['enthalpyLevelFrom'];
-  sFrom: PhaseCurve['entropyLevelFrom'];
-  through: number;
-  hAnchor: Anchor | null;
-  sAnchor: Anchor | null;
+/** Puts levels on the shapes of one family: see `levelled`. */
+export interface Family {
+  readonly zeros: CurveFamily;
+  readonly substance: HarmonisedCase;
+  /** On the family's zeros and pressure. */
+  readonly anchors: readonly Anchor[];
 }
 
 /**
@@ -22,26 +19,30 @@ interface Level {
  * anchor at the reference temperature, from the third law (S, with what is left of it at 0 K), and through a stated transition
  * from a phase whose level is known. A family in which nothing is anchored counts from its first phase.
  */
-export function levelled(
-  shapes: readonly PhaseShape[],
-  anchors: readonly Anchor[],
-  transitions: readonly StatedTransition[],
-  family: CurveFamily,
-  policy: Policy,
-  all: readonly Anchor[],
-  residualEntropyJPerMolK: number,
-): PhaseCurve[] {
+export function levelled(shapes: readonly PhaseShape[], family: Family, policy: Policy): PhaseCurve[] {
   const growth = policy.continuation.relativePer100K / 100;
-  const levels = shapes.map((shape) => ownLevel(shape, anchors, growth, residualEntropyJPerMolK));
+  const residual = family.substance.substance.residualEntropyJPerMolK;
+  const levels = shapes.map((shape) => ownLevel(shape, family.anchors, growth, residual));
   for (;;) {
-    carryAll(shapes, levels, transitions);
-    const openH = levels.every((l) => l.h === null) ? 0 : -1;
-    const openS = levels.every((l) => l.s === null) ? 0 : -1;
-    if (openH < 0 && openS < 0) break;
-    if (openH === 0) levels[0] = { ...levels[0], h: 0, uH: 0, hFrom: 'none' };
-    if (openS === 0) levels[0] = { ...levels[0], s: 0, uS: 0, sFrom: 'none' };
+    carryAll(shapes, levels, family);
+    const openH = levels.every((l) => l.h === null);
+    const openS = levels.every((l) => l.s === null);
+    if (!openH && !openS) break;
+    if (openH) levels[0] = { ...levels[0], h: 0, uH: 0, hFrom: 'none' };
+    if (openS) levels[0] = { ...levels[0], s: 0, uS: 0, sFrom: 'none' };
   }
-  return shapes.map((shape, k) => curveOf(shape, levels[k], family, growth, all));
+  const curves = shapes.map((shape, k) => curveOf(shape, levels[k], family, growth));
+  curves.forEach((curve, k) => {
+    const { hOrigin, sOrigin } = levels[k];
+    if (hOrigin !== null) Object.assign(curve, { enthalpyLevel: originOf(hOrigin, curves) });
+    if (sOrigin !== null) Object.assign(curve, { entropyLevel: originOf(sOrigin, curves) });
+  });
+  return curves;
+}
+
+function originOf(origin: Origin, curves: readonly PhaseCurve[]): LevelOrigin {
+  const { source, atK, scale, errors } = origin;
+  return { from: source < 0 ? null : curves[source], atK, scale, errors };
 }
 
 function ownLevel(
@@ -60,9 +61,13 @@ function ownLevel(
     through: -1,
     hAnchor: null,
     sAnchor: null,
+    hOrigin: null,
+    sOrigin: null,
   };
-  const own = preferredAnchor(anchors, shape, shape.phase);
-  const home = shape.incrementsFrom === null ? own : preferredAnchor(anchors, shape, shape.incrementsFrom);
+  const own = preferredAnchor(anchors, shape, shape.phase, 'enthalpyOfFormation');
+  const ownS = preferredAnchor(anchors, shape, shape.phase, 'entropy');
+  const home =
+    shape.incrementsFrom === null ? own : preferredAnchor(anchors, shape, shape.incrementsFrom, 'enthalpyOfFormation');
   const arrays = relative(shape);
   if (shape.enthalpyMeans === 'declared') {
     level.h = 0;
@@ -74,30 +79,50 @@ function ownLevel(
       level.uH = uOf(datum, home, shape);
       level.hFrom = 'anchor';
       level.hAnchor = home ?? null;
+      level.hOrigin = datumOf(anchors, home, 'H', level.uH, shape, 0);
     }
   } else if (own?.enthalpyOfFormation != null) {
     const at = valueAt(arrays, shape, own.referenceTemperatureK, growth, enthalpyAt);
     if (at !== null) {
       level.h = own.enthalpyOfFormation.value - at.value;
-      level.uH = Math.hypot(uOf(own.enthalpyOfFormation, own, shape), at.u);
+      const u = uOf(own.enthalpyOfFormation, own, shape);
+      level.uH = Math.hypot(u, at.u);
       level.hFrom = 'anchor';
       level.hAnchor = own;
+      level.hOrigin = datumOf(anchors, own, 'H', u, shape, at.u);
     }
   }
   if (shape.entropyMeans === 'declared') {
     level.s = shape.thirdLaw ? residualEntropyJPerMolK : 0;
     level.sFrom = shape.thirdLaw ? 'third-law' : 'table';
   }
-  if (own?.entropy != null && (shape.entropyMeans === 'relative' || shape.thirdLaw)) {
-    const at = valueAt(arrays, shape, own.referenceTemperatureK, growth, entropyAt);
+  if (ownS?.entropy != null && (shape.entropyMeans === 'relative' || shape.thirdLaw)) {
+    const at = valueAt(arrays, shape, ownS.referenceTemperatureK, growth, entropyAt);
     if (at !== null) {
-      level.s = own.entropy.value - at.value;
-      level.uS = Math.hypot(uOf(own.entropy, own, shape), at.u / own.referenceTemperatureK);
+      const u = uOf(ownS.entropy, ownS, shape);
+      const uReach = at.u / ownS.referenceTemperatureK;
+      level.s = ownS.entropy.value - at.value;
+      level.uS = Math.hypot(u, uReach);
       level.sFrom = 'anchor';
-      level.sAnchor = own;
+      level.sAnchor = ownS;
+      level.sOrigin = datumOf(anchors, ownS, 'S', u, shape, uReach);
     }
   }
   return level;
+}
+
+/** The anchor's own error, and that of reaching it beyond the data. */
+function datumOf(
+  anchors: readonly Anchor[],
+  anchor: Anchor | undefined,
+  what: 'H' | 'S',
+  u: number,
+  shape: PhaseShape,
+  uReach: number,
+): Origin {
+  const errors = [{ key: `${what} of anchor ${anchor === undefined ? -1 : anchors.indexOf(anchor)}`, u }];
+  if (uReach > 0) errors.push({ key: `${what} reached by ${shape.phase}`, u: uReach });
+  return { source: -1, atK: 0, scale: 1, errors };
 }
 
 /** Rounding alone within one compiled source; what is stated, or the default, where sources meet. */
@@ -107,10 +132,16 @@ function uOf(datum: Datum, anchor: Anchor | undefined, shape: PhaseShape): numbe
   return one ? datum.uRounding : datum.u;
 }
 
-export function preferredAnchor(anchors: readonly Anchor[], shape: PhaseShape, phase: string): Anchor | undefined {
+/** The preferred anchor of the phase that states the quantity. */
+function preferredAnchor(
+  anchors: readonly Anchor[],
+  shape: PhaseShape,
+  phase: string,
+  quantity: 'enthalpyOfFormation' | 'entropy',
+): Anchor | undefined {
   let best: Anchor | undefined;
   for (const a of anchors) {
-    if (a.phase !== phase) continue;
+    if (a.phase !== phase || a[quantity] === null) continue;
     if (best === undefined || cost(a, shape) < cost(best, shape)) best = a;
   }
   return best;
@@ -118,18 +149,6 @@ export function preferredAnchor(anchors: readonly Anchor[], shape: PhaseShape, p
 
 function cost(a: Anchor, shape: PhaseShape): number {
   return a.table.rank - (a.table.source === shape.main.table.source ? 0.5 : 0);
-}
-
-function relative(shape: PhaseShape): CurveArrays {
-  return {
-    knotK: shape.knotK,
-    c0: shape.c0,
-    c1: shape.c1,
-    c2: shape.c2,
-    c3: shape.c3,
-    enthalpyJPerMol: shape.enthalpy,
-    entropyJPerMolK: shape.entropy,
-  };
 }
 
 /** How far beyond its data a phase may be continued to meet an anchor [K]. */
@@ -151,75 +170,13 @@ function valueAt(
   return { value: f(arrays, temperatureK), u: (growth * cp * beyond * beyond) / 2 };
 }
 
-function carryAll(shapes: readonly PhaseShape[], levels: Level[], transitions: readonly StatedTransition[]): void {
-  for (let moved = true; moved; ) {
-    moved = false;
-    for (let t = 0; t < transitions.length; t++) {
-      const stated = transitions[t];
-      if (stated.from === stated.to || stated.order !== 'first') continue;
-      const from = shapes.findIndex((s) => s.phase === stated.from);
-      const to = shapes.findIndex((s) => s.phase === stated.to);
-      if (from < 0 || to < 0) continue;
-      moved = carry(shapes, levels, stated, t, from, to, 1) || moved;
-      moved = carry(shapes, levels, stated, t, to, from, -1) || moved;
-    }
-  }
-}
-
-function carry(
-  shapes: readonly PhaseShape[],
-  levels: Level[],
-  stated: StatedTransition,
-  index: number,
-  known: number,
-  open: number,
-  sign: number,
-): boolean {
-  const temperatureK = stated.temperature.value;
-  let moved = false;
-  const target = levels[open];
-  const source = levels[known];
-  if (stated.enthalpy === null && stated.entropy === null) return false;
-  const dH = stated.enthalpy?.value ?? (stated.entropy as Datum).value * temperatureK;
-  const uDH = stated.enthalpy?.u ?? (stated.entropy as Datum).u * temperatureK;
-  const dS = stated.entropy?.value ?? dH / temperatureK;
-  const uDS = stated.entropy?.u ?? uDH / temperatureK;
-  const a = relative(shapes[known]);
-  const b = relative(shapes[open]);
-  if (!reaches(shapes[known], temperatureK) || !reaches(shapes[open], temperatureK)) return false;
-  if (target.h === null && source.h !== null) {
-    target.h = source.h + enthalpyAt(a, temperatureK) + sign * dH - enthalpyAt(b, temperatureK);
-    target.uH = Math.hypot(source.uH, uDH);
-    target.hFrom = 'transition';
-    target.through = index;
-    moved = true;
-  }
-  if (target.s === null && source.s !== null) {
-    target.s = source.s + entropyAt(a, temperatureK) + sign * dS - entropyAt(b, temperatureK);
-    target.uS = Math.hypot(source.uS, uDS);
-    target.sFrom = 'transition';
-    target.through = index;
-    moved = true;
-  }
-  return moved;
-}
-
-function reaches(shape: PhaseShape, temperatureK: number): boolean {
-  return temperatureK >= shape.knotK[0] && temperatureK <= shape.knotK[shape.knotK.length - 1];
-}
-
-function curveOf(
-  shape: PhaseShape,
-  level: Level,
-  family: CurveFamily,
-  growth: number,
-  all: readonly Anchor[],
-): PhaseCurve {
+function curveOf(shape: PhaseShape, level: Level, family: Family, growth: number): PhaseCurve {
+  const all = family.substance.anchors;
   const h = level.h ?? 0;
   const s = level.s ?? 0;
   return {
     phase: shape.phase,
-    family,
+    family: family.zeros,
     knotK: shape.knotK,
     c0: shape.c0,
     c1: shape.c1,

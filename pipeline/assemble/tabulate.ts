@@ -85,7 +85,8 @@ export function tabulated(
     basis: new Uint8Array(rows),
     side: side.subarray(0, rows),
   };
-  const plain = curve.uCalibrationRelative === 0;
+  const carried = curve.enthalpyLevelFrom === 'transition' || curve.entropyLevelFrom === 'transition';
+  const plain = curve.uCalibrationRelative === 0 && !carried;
   for (let r = 0; r < rows; r++) {
     const i = interval[r];
     const k = atKnot[r];

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { enthalpyAt, entropyAt, gibbsAt } from '../../pipeline/core/physics/curve.js';
 import { stateCovariance } from '../../pipeline/core/physics/curve-uncertainty.js';
 import type { TableMeaning } from '../../schemas/table-meaning.js';
+import { seeded } from '../core/numeric/random.js';
 import { anchorOf, assembled, type CaseParts, curveOfPhase, datum, seriesOf, transitionOf } from './cases.js';
 import { steps, TR, withReference } from './model.js';
 
@@ -72,6 +73,32 @@ describe('levels of H and S', () => {
       ],
     });
     expect(curveOfPhase(result, 'cr').enthalpyAnchor).toBe(2);
+  });
+
+  it('are taken from two anchors where one states H and the other S', () => {
+    const curve = curveOfPhase(
+      assembled({
+        series: [bare('l', 280, 500, 80)],
+        anchors: [anchorOf('l', { s: datum(70) }), anchorOf('l', { h: datum(-285000) }, { rank: 2, source: 'other' })],
+      }),
+      'l',
+    );
+    expect(enthalpyAt(curve, TR)).toBeCloseTo(-285000, 6);
+    expect(entropyAt(curve, TR)).toBeCloseTo(70, 9);
+    expect([curve.enthalpyAnchor, curve.entropyAnchor]).toEqual([1, 0]);
+  });
+
+  it('share the error of one anchor: phases whose increments count from one H(Tr) differ by their tables alone', () => {
+    const u = (uAnchor: number): number => {
+      const result = assembled({
+        series: [printed('cr', GRID, 50, 60), printed('l', GRID, 60, 90, 15000, 'cr')],
+        anchors: [anchorOf('cr', { h: datum(-400000, uAnchor) }, { source: 'other' })],
+      });
+      expect(result.crossings.length).toBe(1);
+      return result.crossings[0].uK;
+    };
+    expect(u(5000)).toBeCloseTo(u(0), 9);
+    expect(u(0)).toBeGreaterThan(0);
   });
 
   it('are the increments from another phase where the table counts them so', () => {
@@ -166,6 +193,72 @@ describe('levels carried through transitions', () => {
     expect(enthalpyAt(curveOfPhase(downwards, 'cr-II'), 400)).toBeCloseTo(-18000 - 60 * 200 - 2000, 4);
   });
 
+  it('owe their crossing to the stated temperature alone: what dH, the anchor and the tables below share cancels there', () => {
+    const [first, second] = result.crossings.filter((c) => c.stable);
+    // By construction dG is 0 at the stated temperature, whatever dS is; u(T) of the crossing is the temperature's own. Where
+    // dS is stated and dH = T dS, it moves as well.
+    expect(second.uK).toBeCloseTo(0.1, 4);
+    expect(first.uK).toBeCloseTo(0.1, 4);
+    const wide = ladder({}, 3000).crossings.filter((c) => c.stable);
+    expect(wide[1].uK).toBeCloseTo(0.1, 4);
+  });
+
+  it('bring the errors of all that they came through: u(H) of the liquid from the anchor, both dH and both tables', () => {
+    const { hh } = stateCovariance(l, 600);
+    const own = stateCovariance({ ...ii, uEnthalpyLevelJPerMol: 0, uEntropyLevelJPerMolK: 0 }, 400).hh;
+    const tables = hh - (500 ** 2 + 30 ** 2 + (400 * 0.02) ** 2 + (5 * 0.1) ** 2);
+    expect(tables).toBeGreaterThan(own * 0.99);
+    expect(tables).toBeLessThan(own + 60);
+  });
+
+  it('spread as they say: 500 draws of every datum, H and G of the liquid and its crossing', () => {
+    const { normal } = seeded(9);
+    const draws = 500;
+    let sumH = 0;
+    let sumG = 0;
+    let sumT = 0;
+    const t = 750;
+    const other = bare('cr-I', 390, 620, 60, MEASURED);
+    for (let k = 0; k < draws; k++) {
+      const drawn = ladder({
+        series: [bare('cr-II', 250, 420, 50, MEASURED), other, bare('l', 590, 900, 75, MEASURED)],
+        anchors: [
+          anchorOf('cr-II', { h: datum(-300000 + 500 * normal(), 500), s: datum(80 + 0.3 * normal(), 0.3) }, MEASURED),
+        ],
+        transitions: [
+          transitionOf(
+            'cr-I',
+            'l',
+            datum(600 + 0.1 * normal(), 0.1),
+            { h: datum(18000 + 30 * normal(), 30) },
+            MEASURED,
+          ),
+          transitionOf(
+            'cr-II',
+            'cr-I',
+            datum(400 + 0.1 * normal(), 0.1),
+            { s: datum(5 + 0.02 * normal(), 0.02) },
+            MEASURED,
+          ),
+        ],
+      });
+      const liquid = curveOfPhase(drawn, 'l');
+      sumH += (enthalpyAt(liquid, t) - enthalpyAt(l, t)) ** 2 / draws;
+      sumG += (gibbsAt(liquid, t) - gibbsAt(l, t)) ** 2 / draws;
+      const melting = drawn.crossings.find((c) => c.from === 'cr-I' && c.to === 'l');
+      sumT += ((melting?.temperatureK ?? Number.NaN) - 600) ** 2 / draws;
+    }
+    const { hh, hs, ss } = stateCovariance(l, t);
+    // The tables themselves are not drawn: their digits and interpolation widen u by a few joules per mole. An rms of 500
+    // draws is uncertain by 3 %.
+    expect(Math.sqrt(sumH / hh)).toBeGreaterThan(0.9);
+    expect(Math.sqrt(sumH / hh)).toBeLessThan(1.1);
+    expect(Math.sqrt(sumG / (hh - 2 * t * hs + t * t * ss))).toBeGreaterThan(0.9);
+    expect(Math.sqrt(sumG / (hh - 2 * t * hs + t * t * ss))).toBeLessThan(1.1);
+    expect(Math.sqrt(sumT) / 0.1).toBeGreaterThan(0.9);
+    expect(Math.sqrt(sumT) / 0.1).toBeLessThan(1.1);
+  });
+
   it('count from the first phase where nothing is anchored, and say so', () => {
     const free = ladder({ anchors: [] });
     expect(free.curves.map((c) => c.hasEnthalpyLevel && c.hasEntropyLevel)).toEqual([true, true, true]);
@@ -185,5 +278,54 @@ describe('levels carried through transitions', () => {
       expect(curveOfPhase(open, 'l').hasEntropyLevel).toBe(false);
       expect(open.crossings).toEqual([]);
     }
+  });
+});
+
+describe('levels of a gas', () => {
+  const identity = {
+    criticalTemperatureK: 562.05,
+    criticalPressurePa: 4.895e6,
+    acentricFactor: 0.2103,
+    polarA: 0,
+    polarB: 0,
+    class: 'molecular' as const,
+  };
+  const boil = (kind: 'real' | 'ideal', pressurePa: number, extra: Partial<CaseParts['substance']> = {}) =>
+    assembled({
+      series: [bare('l', 290, 370, 135), bare('g', 290, 600, 90)],
+      anchors: [anchorOf('l', { h: datum(49000), s: datum(173) })],
+      transitions: [transitionOf('l', 'g', datum(353.2), { h: datum(30700), gas: kind, pressurePa })],
+      substance: { ...identity, ...extra },
+    });
+
+  it.each([
+    ['real', 101325],
+    ['real', 50000],
+    ['ideal', 100000],
+    ['ideal', 101325],
+  ] as const)(
+    "carried through boiling (%s, %d Pa) cross there at the transition's own pressure",
+    (kind, pressurePa) => {
+      const result = boil(kind, pressurePa);
+      const c = result.crossings.find((x) => x.pressurePa === pressurePa && x.gas === kind);
+      expect(c?.temperatureK).toBeCloseTo(353.2, 5);
+      expect(c?.enthalpyJPerMol).toBeCloseTo(30700, 4);
+      expect(c?.entropyJPerMolK).toBeCloseTo(30700 / 353.2, 6);
+    },
+  );
+
+  it('are those of the ideal gas at 1 bar: S by R ln(p/p0) above the vapour of 101 325 Pa', () => {
+    const atBar = boil('ideal', 100000);
+    const atAtmosphere = boil('ideal', 101325);
+    const s = (r: ReturnType<typeof boil>): number => entropyAt(curveOfPhase(r, 'g'), TR);
+    // 0.1094 J/(mol K) (IUPAC Green Book, 3rd ed., 2.11.1: the change of the standard pressure).
+    expect(s(atAtmosphere) - s(atBar)).toBeCloseTo(0.1094, 4);
+  });
+
+  it('count one mole of the vapour species', () => {
+    const result = boil('ideal', 100000, { vapourSpecies: { formula: 'X2', formulaUnits: 2 } });
+    const [l, g] = ['l', 'g'].map((phase) => curveOfPhase(result, phase));
+    expect(enthalpyAt(g, 353.2) / 2 - enthalpyAt(l, 353.2)).toBeCloseTo(30700, 4);
+    expect(result.crossings.find((c) => c.gas === 'ideal')?.temperatureK).toBeCloseTo(353.2, 5);
   });
 });

@@ -22,19 +22,21 @@ export function equilibrium(from: PlacedPhase, to: PlacedPhase, temperatureK: nu
   };
 }
 
-/** H with the real gas's departure: from the pressure term by Gibbs and Helmholtz, H = G - T dG/dT. */
 function enthalpyOf(phase: PlacedPhase, temperatureK: number): number {
-  const h = enthalpyAt(phase.curve, temperatureK);
-  if (phase.shift === null) return h / phase.formulaUnits;
-  return (h + phase.shift(temperatureK) - temperatureK * slope(phase.shift, temperatureK)) / phase.formulaUnits;
+  return (enthalpyAt(phase.curve, temperatureK) + departure(phase.shift, temperatureK).enthalpy) / phase.formulaUnits;
 }
 
 function entropyOf(phase: PlacedPhase, temperatureK: number): number {
-  const s = entropyAt(phase.curve, temperatureK);
-  return (phase.shift === null ? s : s - slope(phase.shift, temperatureK)) / phase.formulaUnits;
+  return (entropyAt(phase.curve, temperatureK) + departure(phase.shift, temperatureK).entropy) / phase.formulaUnits;
 }
 
-function slope(f: (t: number) => number, temperatureK: number): number {
+/** What a pressure term adds to H and S, by Gibbs and Helmholtz: H = G - T dG/dT, S = -dG/dT. */
+export function departure(
+  shift: ((temperatureK: number) => number) | null,
+  temperatureK: number,
+): { readonly enthalpy: number; readonly entropy: number } {
+  if (shift === null) return { enthalpy: 0, entropy: 0 };
   const step = 1e-3 * temperatureK;
-  return (f(temperatureK + step) - f(temperatureK - step)) / (2 * step);
+  const slope = (shift(temperatureK + step) - shift(temperatureK - step)) / (2 * step);
+  return { enthalpy: shift(temperatureK) - temperatureK * slope, entropy: -slope };
 }

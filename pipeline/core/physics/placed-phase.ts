@@ -1,4 +1,4 @@
-import { gibbsUncertainty, type UncertainCurve } from './curve-uncertainty.js';
+import { gibbsDifferenceUncertainty, type UncertainCurve } from './curve-uncertainty.js';
 import type { DiagramPhase } from './diagram.js';
 import type { GasIdentity } from './gas-imperfection.js';
 import { condensedTermUncertainty, gasTerm, type PressureTerm } from './pressure-terms.js';
@@ -47,10 +47,10 @@ export function placePhase<Curve extends PhaseInFamily>(
   };
 }
 
-/** u(dG) at T [J/mol]: both curves, the gas term, and the unknown volumes of condensed phases off the standard pressure. */
+/** u(dG) at T [J/mol]: both curves less what they share, the gas term, and the unknown volumes of condensed phases off the standard pressure. */
 export function gapUncertainty(a: PlacedPhase, b: PlacedPhase, temperatureK: number, pressurePa: number): number {
-  const part = (p: PlacedPhase): number => gibbsUncertainty(p.source, temperatureK) / p.formulaUnits;
+  const curves = gibbsDifferenceUncertainty(a.source, 1 / a.formulaUnits, b.source, 1 / b.formulaUnits, temperatureK);
   const gas = (p: PlacedPhase): number => (p.term === null ? 0 : p.term.u(temperatureK) / p.formulaUnits);
   const volume = a.source.family.isobarPa === null ? condensedTermUncertainty(pressurePa) : 0;
-  return Math.hypot(part(a), part(b), gas(a), gas(b), volume);
+  return Math.hypot(curves, gas(a), gas(b), volume);
 }

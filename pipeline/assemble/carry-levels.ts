@@ -1,0 +1,144 @@
+import type { CurveFamily, LevelOrigin, PhaseCurve } from '../../schemas/curves.js';
+import type { Anchor, Datum, HarmonisedCase, StatedTransition } from '../../schemas/harmonised.js';
+import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
+import { departure } from '../core/physics/equilibrium.js';
+import { isGas } from '../core/physics/placed-phase.js';
+import { gasTerm } from '../core/physics/pressure-terms.js';
+import { boilingOf } from './crossings.js';
+import type { PhaseShape } from './phase-shape.js';
+
+/** Where a level is from, the other curve by its index among the shapes; -1 where it is a datum. */
+export interface Origin extends Omit<LevelOrigin, 'from'> {
+  readonly source: number;
+}
+
+/** What is to be added to a shape's H and S; null while it is not known. */
+export interface Level {
+  h: number | null;
+  s: number | null;
+  uH: number;
+  uS: number;
+  hFrom: PhaseCurve['enthalpyLevelFrom'];
+  sFrom: PhaseCurve['entropyLevelFrom'];
+  through: number;
+  hAnchor: Anchor | null;
+  sAnchor: Anchor | null;
+  hOrigin: Origin | null;
+  sOrigin: Origin | null;
+}
+
+interface Carried {
+  readonly zeros: CurveFamily;
+  readonly substance: HarmonisedCase;
+}
+
+/** Carries known levels through stated first-order transitions, as long as one moves. */
+export function carryAll(shapes: readonly PhaseShape[], levels: readonly Level[], family: Carried): void {
+  const { transitions } = family.substance;
+  for (let moved = true; moved; ) {
+    moved = false;
+    for (let t = 0; t < transitions.length; t++) {
+      const stated = transitions[t];
+      if (stated.from === stated.to || stated.order !== 'first') continue;
+      const from = shapes.findIndex((s) => s.phase === stated.from);
+      const to = shapes.findIndex((s) => s.phase === stated.to);
+      if (from < 0 || to < 0) continue;
+      moved = carry(shapes, levels, family, t, from, to, 1) || moved;
+      moved = carry(shapes, levels, family, t, to, from, -1) || moved;
+    }
+  }
+}
+
+/** From `known` to `open`, `sign` times the stated dH and dS apart, each per formula unit at the transition's own pressure. */
+function carry(
+  shapes: readonly PhaseShape[],
+  levels: readonly Level[],
+  family: Carried,
+  index: number,
+  known: number,
+  open: number,
+  sign: number,
+): boolean {
+  const stated = family.substance.transitions[index];
+  const { value: temperatureK, u: uT } = stated.temperature;
+  const target = levels[open];
+  const source = levels[known];
+  const wantsH = target.h === null && source.h !== null;
+  const wantsS = target.s === null && source.s !== null;
+  if (!wantsH && !wantsS) return false;
+  if (stated.enthalpy === null && stated.entropy === null) return false;
+  if (!reaches(shapes[known], temperatureK) || !reaches(shapes[open], temperatureK)) return false;
+  const a = atPressure(shapes[known], stated, family);
+  const b = atPressure(shapes[open], stated, family);
+  const scale = b.units / a.units;
+  const origin = { source: known, atK: temperatureK, scale };
+  const key = (what: string): string => `${what} of transition ${index}`;
+  const by = sign * b.units;
+  if (wantsH) {
+    const dH = stated.enthalpy?.value ?? (stated.entropy as Datum).value * temperatureK;
+    target.h = scale * (a.h + (source.h ?? 0)) + by * dH - b.h;
+    const errors =
+      stated.enthalpy !== null
+        ? [{ key: key('dH'), u: by * stated.enthalpy.u }]
+        : [
+            { key: key('dS'), u: by * temperatureK * (stated.entropy as Datum).u },
+            { key: key('T'), u: by * (stated.entropy as Datum).value * uT },
+          ];
+    target.hOrigin = { ...origin, errors };
+    target.uH = Math.hypot(scale * source.uH, ...errors.map((e) => e.u));
+    target.hFrom = 'transition';
+  }
+  if (wantsS) {
+    const dS = stated.entropy?.value ?? (stated.enthalpy as Datum).value / temperatureK;
+    target.s = scale * (a.s + (source.s ?? 0)) + by * dS - b.s;
+    const errors =
+      stated.entropy !== null
+        ? [{ key: key('dS'), u: by * stated.entropy.u }]
+        : [
+            { key: key('dH'), u: (by * (stated.enthalpy as Datum).u) / temperatureK },
+            { key: key('T'), u: (-by * dS * uT) / temperatureK },
+          ];
+    target.sOrigin = { ...origin, errors };
+    target.uS = Math.hypot(scale * source.uS, ...errors.map((e) => e.u));
+    target.sFrom = 'transition';
+  }
+  target.through = index;
+  return true;
+}
+
+/** H and S of the shape at the transition, its level apart, with what the pressure adds to a gas; its formula units. */
+function atPressure(
+  shape: PhaseShape,
+  stated: StatedTransition,
+  { zeros, substance }: Carried,
+): { readonly h: number; readonly s: number; readonly units: number } {
+  const temperatureK = stated.temperature.value;
+  const gas = isGas(shape.phase);
+  const term =
+    gas && zeros.isobarPa === null
+      ? gasTerm(substance.substance, stated.gas ?? 'real', stated.pressurePa, boilingOf(substance))
+      : null;
+  const { enthalpy, entropy } = departure(term === null ? null : term.shift, temperatureK);
+  const arrays = relative(shape);
+  return {
+    h: enthalpyAt(arrays, temperatureK) + enthalpy,
+    s: entropyAt(arrays, temperatureK) + entropy,
+    units: gas ? (substance.substance.vapourSpecies?.formulaUnits ?? 1) : 1,
+  };
+}
+
+export function relative(shape: PhaseShape): CurveArrays {
+  return {
+    knotK: shape.knotK,
+    c0: shape.c0,
+    c1: shape.c1,
+    c2: shape.c2,
+    c3: shape.c3,
+    enthalpyJPerMol: shape.enthalpy,
+    entropyJPerMolK: shape.entropy,
+  };
+}
+
+function reaches(shape: PhaseShape, temperatureK: number): boolean {
+  return temperatureK >= shape.knotK[0] && temperatureK <= shape.knotK[shape.knotK.length - 1];
+}
