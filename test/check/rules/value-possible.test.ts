@@ -71,9 +71,11 @@ describe('value-possible', () => {
     const raw: Law = { parts: [{ fromK: 0, cp }], entropy: 0, enthalpy: 0 };
     const law = { ...raw, entropy: -entropyOf(raw, 0) };
     const printed = medium();
-    printed.tables = { cr: rowsOf(law, [0, 10, 20, 40, 60, 80, 100, 150, 200, 250, TR, 300, 350, 400]) };
+    printed.tables = { cr: rowsOf(law, [0, 4, 10, 20, 40, 60, 80, 100, 150, 200, 250, TR, 300, 350, 400]) };
     expect(printed.tables.cr![0]!.slice(CP, F)).toEqual(['0.000', '0.000']);
     expect(printed.tables.cr![0]![F]).toBe('');
+    // So cold that Cp is printed as zero.
+    expect(printed.tables.cr![1]![CP]).toBe('0.000');
     expect(Number(printed.tables.cr![0]![H])).toBeCloseTo(enthalpyOf(law, 0) / 1000, 3);
     const { findings } = examined(printed);
     expect(findings).toEqual([]);
