@@ -87,65 +87,75 @@ export function tabulated(
   };
   const carried = curve.enthalpyLevelFrom === 'transition' || curve.entropyLevelFrom === 'transition';
   const plain = curve.uCalibrationRelative === 0 && !carried;
+  const { c0, c1, c2, c3, varH, covHS, varS, measuredFromK, measuredToK, knotKind } = curve;
+  const enthalpy = curve.enthalpyJPerMol;
+  const entropy = curve.entropyJPerMolK;
+  const own = curve.uHeatCapacityJPerMolK;
+  const calibration = curve.uCalibrationRelative;
+  const growth = curve.continuationGrowthPerK;
+  const levelHH = curve.uEnthalpyLevelJPerMol * curve.uEnthalpyLevelJPerMol;
+  const levelSS = curve.uEntropyLevelJPerMolK * curve.uEntropyLevelJPerMolK;
+  const { heatCapacityJPerMolK, enthalpyJPerMol, entropyJPerMolK, gibbsEnergyJPerMol, basis } = out;
+  const { uHeatCapacityJPerMolK, uEnthalpyJPerMol, uEntropyJPerMolK, uGibbsEnergyJPerMol } = out;
   for (let r = 0; r < rows; r++) {
     const i = interval[r];
     const k = atKnot[r];
-    const x = t[r] - knots[i];
-    const { c0, c1, c2, c3 } = curve;
+    const at = t[r];
+    const x = at - knots[i];
     const cp = cubicValue(c0[i], c1[i], c2[i], c3[i], x);
-    const h =
-      k >= 0 ? curve.enthalpyJPerMol[k] : curve.enthalpyJPerMol[i] + cubicIntegral(c0[i], c1[i], c2[i], c3[i], x);
-    const s =
-      k >= 0
-        ? curve.entropyJPerMolK[k]
-        : curve.entropyJPerMolK[i] + cubicIntegralOverT(c0[i], c1[i], c2[i], c3[i], knots[i], x);
-    out.heatCapacityJPerMolK[r] = rounded(cp, 1e9);
-    out.enthalpyJPerMol[r] = rounded(h, 1e6);
-    out.entropyJPerMolK[r] = rounded(s, 1e9);
-    out.gibbsEnergyJPerMol[r] = rounded(h - t[r] * s, 1e6);
-    const beyond = Math.max(curve.measuredFromK - t[r], t[r] - curve.measuredToK, 0);
-    const own = curve.uHeatCapacityJPerMolK;
+    const h = k >= 0 ? enthalpy[k] : enthalpy[i] + cubicIntegral(c0[i], c1[i], c2[i], c3[i], x);
+    const s = k >= 0 ? entropy[k] : entropy[i] + cubicIntegralOverT(c0[i], c1[i], c2[i], c3[i], knots[i], x);
+    heatCapacityJPerMolK[r] = Math.round(cp * NINE_PLACES) / NINE_PLACES;
+    enthalpyJPerMol[r] = Math.round(h * SIX_PLACES) / SIX_PLACES;
+    entropyJPerMolK[r] = Math.round(s * NINE_PLACES) / NINE_PLACES;
+    gibbsEnergyJPerMol[r] = Math.round((h - at * s) * SIX_PLACES) / SIX_PLACES;
+    const beyond = at < measuredFromK ? measuredFromK - at : at > measuredToK ? at - measuredToK : 0;
     const near = k >= 0 ? own[k] : Math.max(own[i], own[i + 1]);
-    const common = curve.uCalibrationRelative * cp;
-    const grown = curve.continuationGrowthPerK * cp * beyond;
-    out.uHeatCapacityJPerMolK[r] = short(Math.sqrt(near * near + common * common + grown * grown));
-    const { hh, hs, ss } = k >= 0 && beyond === 0 && plain ? atKnotCovariance(curve, k) : stateCovariance(curve, t[r]);
-    out.uEnthalpyJPerMol[r] = short(Math.sqrt(Math.max(0, hh)));
-    out.uEntropyJPerMolK[r] = short(Math.sqrt(Math.max(0, ss)));
-    out.uGibbsEnergyJPerMol[r] = short(Math.sqrt(Math.max(0, hh - 2 * t[r] * hs + t[r] * t[r] * ss)));
-    out.basis[r] =
-      beyond > 0 ? BASIS_EXTRAPOLATED : k >= 0 && curve.knotKind[k] === 0 ? BASIS_MEASURED : BASIS_INTERPOLATED;
+    const common = calibration * cp;
+    const grown = growth * cp * beyond;
+    uHeatCapacityJPerMolK[r] = short(Math.sqrt(near * near + common * common + grown * grown));
+    let hh: number;
+    let hs: number;
+    let ss: number;
+    if (k >= 0 && beyond === 0 && plain) {
+      // At a knot the smoothed covariance itself, and the levels.
+      hh = varH[k] + levelHH;
+      hs = covHS[k];
+      ss = varS[k] + levelSS;
+    } else {
+      const state = stateCovariance(curve, at);
+      hh = state.hh;
+      hs = state.hs;
+      ss = state.ss;
+    }
+    uEnthalpyJPerMol[r] = short(Math.sqrt(Math.max(0, hh)));
+    uEntropyJPerMolK[r] = short(Math.sqrt(Math.max(0, ss)));
+    uGibbsEnergyJPerMol[r] = short(Math.sqrt(Math.max(0, hh - 2 * at * hs + at * at * ss)));
+    basis[r] = beyond > 0 ? BASIS_EXTRAPOLATED : k >= 0 && knotKind[k] === 0 ? BASIS_MEASURED : BASIS_INTERPOLATED;
   }
   return out;
 }
-
-const atKnot = { hh: 0, hs: 0, ss: 0 };
 
 /**
  * Published values end nine decimals after J/(mol K) and six after J/mol, far below any uncertainty; what is exact to the
  * last bit stands in the pieces.
  */
-function rounded(value: number, scale: number): number {
-  return Math.round(value * scale) / scale;
-}
+const NINE_PLACES = 1e9;
+const SIX_PLACES = 1e6;
 
-/** At a knot the smoothed covariance itself, and the levels. */
-function atKnotCovariance(curve: PhaseCurve, k: number): { hh: number; hs: number; ss: number } {
-  atKnot.hh = curve.varH[k] + curve.uEnthalpyLevelJPerMol * curve.uEnthalpyLevelJPerMol;
-  atKnot.hs = curve.covHS[k];
-  atKnot.ss = curve.varS[k] + curve.uEntropyLevelJPerMolK * curve.uEntropyLevelJPerMolK;
-  return atKnot;
-}
-
-/** Uncertainties are published with four significant digits; more would say nothing. */
+/** Uncertainties are published with four or five significant digits; more would say nothing. */
 function short(u: number): number {
-  if (!(u > 1e-12 && u < 1e15)) return u;
-  const scale = POWERS[Math.floor(Math.log10(u)) + 12];
+  if (!(u > 1e-12 && u < 1e12)) return u;
+  double[0] = u;
+  const scale = SCALES[((words[1] >>> 20) & 0x7ff) - LOWEST_EXPONENT];
   return Math.round(u * scale) / scale;
 }
 
-/** 10^(3 - e) for e from -12 up. */
-const POWERS = Float64Array.from({ length: 28 }, (_, k) => 10 ** (15 - k));
+const double = new Float64Array(1);
+const words = new Uint32Array(double.buffer);
+const LOWEST_EXPONENT = 1023 - 40;
+/** By the binary exponent e from -40 on: the power of ten that leaves four digits of 2^e before the point. */
+const SCALES = Float64Array.from({ length: 81 }, (_, k) => 10 ** (3 - Math.floor((k - 40) * Math.log10(2))));
 
 function stability(
   curve: PhaseCurve,
