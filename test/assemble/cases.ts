@@ -55,7 +55,7 @@ export function tableOf(rest: Partial<TableMeaning> = {}): TableMeaning {
   };
 }
 
-/** A printed column: rounded to `decimals` of the printed unit, `factor` of which make one SI unit. NaN: nothing printed. */
+/** A printed column, given in SI: rounded to `decimals` of the printed unit, `factor` of which make one SI unit. NaN: nothing printed. */
 export interface Printed {
   readonly values: readonly number[];
   readonly decimals: number;
