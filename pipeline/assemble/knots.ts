@@ -79,8 +79,14 @@ export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | nu
         knots.uHeatCapacity[previous] = u === 0 ? 0 : 1 / Math.sqrt(w1 + w2);
         continue;
       }
-      if (n > 1 && knots.temperatureK[n - 2] === t) continue;
-      const apart = differs(H, row, knots.row[previous]) || differs(S, row, knots.row[previous]);
+      // Of three rows at one temperature the last is the upper side; the one between repeats the lower, with a note.
+      if (n > 1 && knots.temperatureK[n - 2] === t) {
+        n--;
+        knots.hVar[n] = Number.POSITIVE_INFINITY;
+        knots.sVar[n] = Number.POSITIVE_INFINITY;
+        knots.fVar[n] = Number.POSITIVE_INFINITY;
+      }
+      const apart = differs(H, row, knots.row[n - 1]) || differs(S, row, knots.row[n - 1]);
       knots.twin[n] = 1;
       knots.jump[n] = apart ? 1 : 0;
     }

@@ -21,7 +21,8 @@ export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, p
   const { factor, offset } = conversion;
   const value = cell.value * factor + offset;
   const constant = cell.column === FROM_DESCRIPTOR;
-  const halfUnit = constant ? 0 : halfUnitOf(lastPlace(cell), factor);
+  const defined = cell.value === 0 && FORMATION.has(quantity);
+  const halfUnit = constant || defined ? 0 : halfUnitOf(lastPlace(cell, quantity), factor);
   const uRounding = halfUnit / Math.sqrt(3);
   const { parts, origin } = statedParts(row, cell, quantity, factor, book, policy);
   let variance = uRounding ** 2;
@@ -45,9 +46,17 @@ export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, p
   };
 }
 
-/** Decimals of a single cell: its own, and the column's usual ones for a zero ("0." is not zero decimals). */
-function lastPlace({ value, decimals, usualDecimals }: RawCell): number {
-  return value === 0 ? usualDecimals : decimals;
+/** Zero of a formation quantity is a definition. */
+const FORMATION: ReadonlySet<NumberQuantity> = new Set(['enthalpy-of-formation', 'gibbs-energy-of-formation']);
+
+/**
+ * Decimals of a single cell: its own, or the column's usual ones where it leaves zeros at its end out ("0." is not zero
+ * decimals). A temperature that leaves out two or more is a coarser one: 1184 among 600.60 is known to a kelvin.
+ */
+function lastPlace({ value, decimals, usualDecimals }: RawCell, quantity: NumberQuantity): number {
+  if (value === 0) return usualDecimals;
+  if (quantity === 'transition-temperature' && decimals < usualDecimals - 1) return decimals;
+  return Math.max(decimals, usualDecimals);
 }
 
 /** `datum` moved by `shift`, with a further standard uncertainty for the move; its rounding stays. */

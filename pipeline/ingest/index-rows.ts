@@ -259,7 +259,7 @@ function usualDecimals(plan: TablePlan, bytes: Uint8Array, header: TableHeader, 
       count.add(reader.value, reader.decimals);
     }
   }
-  return Int8Array.from(counts, (count) => count?.usual() ?? NO_CELL);
+  return Int8Array.from(counts, (count) => count?.usual('most') ?? NO_CELL);
 }
 
 /** Corrections that no row will meet: their line holds no row, or their column is none of the file's. */

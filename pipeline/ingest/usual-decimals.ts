@@ -2,8 +2,9 @@
 import { NO_CELL } from '../../schemas/raw.js';
 
 /**
- * The largest number of decimals that at least a fifth of the non-zero cells print (a cell with four prints three too).
- * A column of zeros gives its largest, an empty one NO_CELL.
+ * The largest number of decimals that enough of the non-zero cells print (a cell with four prints three too): a fifth of
+ * a long column; more than half of a row table's, whose few cells say less. A column of zeros gives its largest, an empty
+ * one NO_CELL.
  */
 export class DecimalsCount {
   private readonly nonZero = new Uint32Array(256);
@@ -24,12 +25,12 @@ export class DecimalsCount {
     if (place > this.highest) this.highest = place;
   }
 
-  usual(): number {
+  usual(enough: 'a fifth' | 'most' = 'a fifth'): number {
     if (this.cells === 0) return this.mostOfZeros;
     let cells = 0;
     for (let place = this.highest; place > this.lowest; place--) {
       cells += this.nonZero[place]!;
-      if (cells * 5 >= this.cells) return place - 128;
+      if (enough === 'most' ? cells * 2 > this.cells : cells * 5 >= this.cells) return place - 128;
     }
     return this.lowest - 128;
   }

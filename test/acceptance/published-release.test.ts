@@ -103,9 +103,12 @@ describe('the computed temperatures', () => {
     ['lead', 'cr', 'l', 0.08],
     ['aluminium', 'cr', 'l', 0.06],
     ['copper', 'cr', 'l', 0.08],
+    ['titanium', 'cr-alpha', 'cr-beta', 0.21],
+    ['titanium', 'cr-beta', 'l', 0.13],
     ['iron', 'cr-alpha', 'cr-gamma', 1.0],
     ['iron', 'cr-gamma', 'cr-alpha', 1.8],
     ['iron', 'cr-alpha', 'l', 0.12],
+    ['sodium-chloride', 'cr', 'l', 0.03],
     ['magnesium-oxide', 'cr', 'l', 0.06],
   ])('of %s %s > %s are known to %d K or better', (substance, from, to, atMostK) => {
     const u = number(transition(substance, from, to), 'u_computed_temperature_K');

@@ -59,9 +59,9 @@ describe('a stated number', () => {
   });
 
   it.each([
-    ['-94.1', 2, 0.05],
-    ['-94', 2, 0.5],
-    ['0', 2, 0.005],
+    ['-94.1', 2, 0.005],
+    ['-94', 2, 0.005],
+    ['0', 2, 0],
     ['-94.052', 2, 0.0005],
   ])('printed as %s where %d decimals are usual is known to %d', (printed, usualDecimals, half) => {
     const table = tableOf([columnOf('dfH', 'enthalpy-of-formation', 'J/mol')], { holds: 'anchors' });

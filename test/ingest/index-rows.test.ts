@@ -211,10 +211,10 @@ describe('usual decimals of a row table', () => {
     return readDescriptor('desk', text, ['a.csv']).plans[0]!;
   };
 
-  it('are counted over the whole file, zeros aside', () => {
+  it('are those that more than half of the cells print, over the whole file, zeros aside', () => {
     const rows = ['lead,0.,64.785', 'tin,-2.03,51.2', 'lead,4.28,71.71', 'tin,7,60.1', 'lead,0.000,1.1'];
     const index = indexRows(plan(), encode(`Name,H,S\n${rows.join('\n')}\n`), BOTH);
-    expect([...index.usualDecimals]).toEqual([2, 3, NO_CELL]);
+    expect([...index.usualDecimals]).toEqual([2, 1, NO_CELL]);
   });
 
   it('of a column that holds nothing are no number', () => {

@@ -346,7 +346,7 @@ describe('transitions', () => {
     expect(melting!.cells['transition-temperature']).toMatchObject({
       value: 600.6,
       decimals: 1,
-      usualDecimals: 3,
+      usualDecimals: 0,
       printed: '600.6',
     });
     expect(boiling!.words).toMatchObject({ order: 'first', gas: 'ideal' });
