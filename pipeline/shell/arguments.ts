@@ -12,6 +12,8 @@ export interface Request {
   /** For `help`: the command that help is wanted for, or null. */
   readonly about: CommandName | null;
   readonly operand: string | null;
+  /** The words after the operand: for `trace` the phase and the temperature. */
+  readonly further: readonly string[];
   readonly sources: string;
   readonly out: string;
   readonly policy: string | null;
@@ -23,6 +25,16 @@ export interface Request {
   /** null: all substances. */
   readonly only: readonly string[] | null;
   readonly pressure: string | null;
+  /** For `correct`: which suspect, counted from 1, and the cell as it should be; null: as proposed. */
+  readonly suspect: number;
+  readonly value: string | null;
+  /** For `correct` and `accept`. */
+  readonly reason: string | null;
+  readonly by: string | null;
+  /** YYYY-MM-DD. */
+  readonly until: string | null;
+  readonly yes: boolean;
+  readonly all: boolean;
   readonly log: LogStyle;
 }
 
@@ -32,6 +44,7 @@ export function readArguments(words: readonly string[], today: string): Request 
     command: 'help',
     about: null,
     operand: null,
+    further: [],
     sources: './sources',
     out: './out',
     policy: null,
@@ -41,6 +54,13 @@ export function readArguments(words: readonly string[], today: string): Request 
     jobs: availableParallelism(),
     only: null,
     pressure: null,
+    suspect: 1,
+    value: null,
+    reason: null,
+    by: null,
+    until: null,
+    yes: false,
+    all: false,
     log: 'text',
   };
   const [first, ...rest] = words;
@@ -64,8 +84,8 @@ function commandPage(name: string): CommandPage {
 
 function readOptions(page: CommandPage, words: readonly string[]): Partial<Request> {
   const known = page.options.map((option) => `--${option.name}`);
-  const { tokens } = parseArgs({
-    args: [...words],
+  const { tokens: parsed } = parseArgs({
+    args: words.map(shielded),
     strict: false,
     allowPositionals: true,
     tokens: true,
@@ -76,6 +96,9 @@ function readOptions(page: CommandPage, words: readonly string[]): Partial<Reque
       ]),
     ),
   });
+  const tokens = parsed.map((token) =>
+    token.kind === 'option-terminator' || token.value === undefined ? token : { ...token, value: bare(token.value) },
+  );
   const asked: Partial<Record<keyof Request, unknown>> = {};
   const only: string[] = [];
   const loose: string[] = [];
@@ -102,7 +125,16 @@ function readOptions(page: CommandPage, words: readonly string[]): Partial<Reque
     else Object.assign(asked, readOption(option.name, token.value));
   }
   if (only.length > 0) asked.only = [...new Set(only.filter((word) => word !== ''))];
-  return { ...asked, operand: readOperand(page, loose) } as Partial<Request>;
+  return { ...asked, ...readOperands(page, loose) } as Partial<Request>;
+}
+
+/** A negative number is no option. The shield is a character that no argument of a process can hold. */
+function shielded(word: string): string {
+  return /^-[\d.,]/.test(word) ? `\u0000${word}` : word;
+}
+
+function bare(word: string): string {
+  return word.startsWith('\u0000') ? word.slice(1) : word;
 }
 
 function readOption(name: string, value: string | undefined): Partial<Record<keyof Request, unknown>> {
@@ -118,7 +150,19 @@ function readOption(name: string, value: string | undefined): Partial<Record<key
       return { jobs: Number(value) };
     }
     case 'date':
-      return { date: readDate(value!) };
+      return { date: readDate('date', value!, 'Leave it out for today.') };
+    case 'until':
+      return { until: readDate('until', value!, 'Name the last day on which it is to hold.') };
+    case 'yes':
+      return { yes: true };
+    case 'all':
+      return { all: true };
+    case 'suspect': {
+      if (!/^[1-9]\d{0,3}$/.test(value!)) {
+        throw usage(`--suspect is "${value}"; a whole number from 1 was expected.`, 'Leave it out for the first.');
+      }
+      return { suspect: Number(value) };
+    }
     case 'log': {
       if (value !== 'text' && value !== 'json') {
         throw usage(`--log is "${value}"; text or json was expected.`, 'Write --log json for one JSON object a line.');
@@ -130,25 +174,26 @@ function readOption(name: string, value: string | undefined): Partial<Record<key
   }
 }
 
-function readDate(text: string): string {
+function readDate(option: string, text: string, next: string): string {
   const time = /^\d{4}-\d{2}-\d{2}$/.test(text) ? Date.parse(`${text}T00:00:00Z`) : Number.NaN;
   if (Number.isNaN(time) || new Date(time).toISOString().slice(0, 10) !== text) {
-    throw usage(`--date is "${text}"; a day such as 2026-03-31 was expected.`, 'Leave it out for today.');
+    throw usage(`--${option} is "${text}"; a day such as 2026-03-31 was expected.`, next);
   }
   return text;
 }
 
-function readOperand(page: CommandPage, loose: readonly string[]): string | null {
+function readOperands(page: CommandPage, loose: readonly string[]): Pick<Request, 'operand' | 'further'> {
   const [first, second] = loose;
   if (page.operand === null) {
-    if (first === undefined) return null;
+    if (first === undefined) return { operand: null, further: [] };
     const meant = page.options.some(({ name }) => name === 'only') ? ` Did you mean --only ${loose.join(' ')}?` : '';
     throw usage(
       `"${page.name}" does not know what to do with "${first}".${meant}`,
       `See cuspline ${page.name} --help.`,
     );
   }
-  if (second !== undefined) {
+  const { further = [] } = page;
+  if (second !== undefined && further.length === 0) {
     throw usage(`"${page.name}" takes one ${page.operand.name}, and "${second}" is a second.`, 'Name one at a time.');
   }
   if (first === undefined && page.operand.required) {
@@ -157,7 +202,17 @@ function readOperand(page: CommandPage, loose: readonly string[]): string | null
       `For example: ${page.examples[0]!.line}`,
     );
   }
-  return first ?? null;
+  const [, ...rest] = loose;
+  const missing = further[rest.length];
+  if (missing !== undefined) {
+    throw usage(
+      `"${page.name}" needs a ${missing.name} after "${loose.join(' ')}": ${missing.means}.`,
+      `For example: ${page.examples[0]!.line}`,
+    );
+  }
+  const last = Math.max(0, further.length - 1);
+  const words = further.length === 0 ? [] : [...rest.slice(0, last), rest.slice(last).join(' ')];
+  return { operand: first ?? null, further: words };
 }
 
 function usage(message: string, next: string): Stop {

@@ -35,6 +35,12 @@ async function run(request: Request, log: Log): Promise<ExitStatus> {
       return (await import('./check-command.js')).check(request, log);
     case 'show':
       return (await import('./show-command.js')).show(request, log);
+    case 'trace':
+      return (await import('./trace-command.js')).traceCommand(request, log);
+    case 'correct':
+      return (await import('./correct-command.js')).correct(request, log);
+    case 'accept':
+      return (await import('./accept-command.js')).accept(request, log);
     case 'rules':
       return (await import('./rules-command.js')).rules(request, log);
     case 'verify':

@@ -14,13 +14,15 @@ export interface CommandPage {
   readonly does: string;
   /** The word that follows the command; null where it takes none. */
   readonly operand: { readonly name: string; readonly required: boolean; readonly means: string } | null;
+  /** Words that must follow that one; further words belong to the last of them. */
+  readonly further?: readonly { readonly name: string; readonly means: string }[];
   readonly options: readonly OptionPage[];
   /** Paragraphs that teach. */
   readonly teaches: readonly string[];
   readonly examples: readonly { readonly line: string; readonly does: string }[];
 }
 
-export type CommandName = 'nightly' | 'check' | 'show' | 'rules' | 'verify';
+export type CommandName = 'nightly' | 'check' | 'show' | 'trace' | 'correct' | 'accept' | 'rules' | 'verify';
 
 const sources: OptionPage = { name: 'sources', value: 'DIR', means: 'where the raw tables are (default ./sources)' };
 const out: OptionPage = { name: 'out', value: 'DIR', means: 'where releases are kept (default ./out)' };
@@ -50,6 +52,13 @@ const log: OptionPage = {
   name: 'log',
   value: 'text|json',
   means: 'json: one JSON object a line on standard output, for programs',
+};
+
+const by: OptionPage = { name: 'by', value: 'NAME', means: 'who answers for the entry' };
+const finding = {
+  name: 'FINDING',
+  required: false,
+  means: 'its id or the beginning of it; left out: lists the findings and their ids',
 };
 
 export const COMMANDS: readonly CommandPage[] = [
@@ -122,6 +131,84 @@ export const COMMANDS: readonly CommandPage[] = [
     examples: [
       { line: 'cuspline show lead', does: 'at the policy’s pressure' },
       { line: 'cuspline show water --pressure "1 atm"', does: 'at another pressure' },
+    ],
+  },
+  {
+    name: 'trace',
+    does: 'the raw numbers behind H, S and G of a phase, by their weight',
+    operand: { name: 'SUBSTANCE', required: true, means: 'its id, as in substances.csv' },
+    further: [
+      { name: 'PHASE', means: 'cr, l, g, cr-alpha … as the tables and transitions call it' },
+      { name: 'TEMPERATURE', means: '600, 600 K, 25 Cel …' },
+    ],
+    options: [{ name: 'all', value: null, means: 'every number, not the 20 largest' }, sources, policy, date, log],
+    teaches: [
+      'Each raw cell of the substance is moved in turn, up and down by a quarter of its last digit, and all is calculated again. That gives its sensitivity: by how much G changes for one SI unit of the cell. A formation enthalpy counts one to one, an entropy anchor −T, and one entropy in a smooth table far less, since its neighbours hold the curve.',
+      'Times the cell’s own standard uncertainty this is its weight in J/mol; its square is the cell’s share of u(G)². The numbers with the largest shares are those to measure again. What is left to 100 % lies between the rows, or beyond them.',
+      'The temperatures of rows are taken as exact; a transition’s temperature counts where a level was carried through it. Cells that the checks name are left out of the curve and listed apart.',
+    ],
+    examples: [
+      { line: 'cuspline trace lead l 700', does: 'the 20 numbers that matter most to liquid lead at 700 K' },
+      { line: 'cuspline trace water g "25 Cel" --all', does: 'every one, at 25 °C' },
+    ],
+  },
+  {
+    name: 'correct',
+    does: 'say in corrections.json what a suspect cell should say',
+    operand: finding,
+    options: [
+      { name: 'suspect', value: 'N', means: 'the suspect to correct, as numbered (default 1)' },
+      { name: 'value', value: 'TEXT', means: 'the cell as it should be, in its own unit (default as proposed)' },
+      { name: 'reason', value: 'TEXT', means: 'why; the original compared, say (default the finding’s own words)' },
+      { ...by, means: `${by.means} (default your login name)` },
+      { name: 'yes', value: null, means: 'write it without asking' },
+      sources,
+      policy,
+      { ...date, means: 'the date of the entry (default today)' },
+      jobs,
+      only,
+      log,
+    ],
+    teaches: [
+      'A raw file is never edited. The entry stands beside it, in the corrections.json of its source: file, line, column, what the cell says, what it should say, why, who and when. If the file changes there, the entry is out of date; it is then reported and no longer applied.',
+      'First you see the entry, the cells that the data cannot tell from this one, and the crossings, findings and verdict before and after, calculated with the correction in force. On a terminal you are asked; elsewhere nothing is written without --yes. Compare the cell with the original first: the proposal is what fits, not what was measured.',
+      'Status: 0 written, or findings listed; 1 nothing was written; 2 used wrongly.',
+    ],
+    examples: [
+      { line: 'cuspline correct --only lead', does: 'the findings about one substance, with their ids' },
+      { line: 'cuspline correct bb82d1c0', does: 'look at what would change, and decide' },
+      {
+        line: 'cuspline correct bb82d1c0 --value 600.61 --reason "page 12" --by Kim --yes',
+        does: 'another value than the proposed one, from a script',
+      },
+    ],
+  },
+  {
+    name: 'accept',
+    does: 'let a disagreement stand, until a day',
+    operand: finding,
+    options: [
+      { name: 'reason', value: 'TEXT', means: 'why it may stand' },
+      by,
+      { name: 'until', value: 'YYYY-MM-DD', means: 'the last day on which it holds' },
+      sources,
+      policy,
+      { ...date, means: 'the date of the entry, from which it holds (default today)' },
+      jobs,
+      only,
+      log,
+    ],
+    teaches: [
+      'Writes an entry with the finding’s id and the hash of its evidence to accepted.json in the sources; an older entry for the same finding is replaced. An accepted finding stays in the release, marked so, and no longer withholds its substance.',
+      'It lapses after its last day, and as soon as one of the printed cells behind the finding changes. Accept what is right and merely unusual; what is wrong wants cuspline correct.',
+      'Status: 0 written, or findings listed; 1 nothing was written; 2 used wrongly.',
+    ],
+    examples: [
+      { line: 'cuspline accept', does: 'the findings and their ids' },
+      {
+        line: 'cuspline accept bb82d1c0 --reason "new sample" --by Kim --until 2027-06-30',
+        does: 'until the end of June 2027',
+      },
     ],
   },
   {

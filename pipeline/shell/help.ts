@@ -32,8 +32,16 @@ function overview(): string[] {
 }
 
 function commandHelp(name: CommandName): string[] {
-  const { does, operand, options, teaches, examples } = COMMANDS.find((command) => command.name === name)!;
-  const word = operand === null ? '' : operand.required ? ` ${operand.name}` : ` [${operand.name}]`;
+  const {
+    does,
+    operand,
+    further = [],
+    options,
+    teaches,
+    examples,
+  } = COMMANDS.find((command) => command.name === name)!;
+  const first = operand === null ? '' : operand.required ? ` ${operand.name}` : ` [${operand.name}]`;
+  const word = [first, ...further.map((one) => one.name)].join(' ');
   const width = Math.max(...options.map(({ name: option, value }) => `--${option} ${value ?? ''}`.length)) + 2;
   return [
     `cuspline ${name}: ${does}`,
@@ -41,7 +49,7 @@ function commandHelp(name: CommandName): string[] {
     `Usage: cuspline ${name}${word} [options]`,
     ...teaches.flatMap((paragraph) => ['', ...wrap(paragraph, WIDTH)]),
     '',
-    ...(operand ? entry(operand.name, operand.means, width) : []),
+    ...[...(operand === null ? [] : [operand]), ...further].flatMap((one) => entry(one.name, one.means, width)),
     ...options.flatMap(({ name: option, value, means }) => entry(`--${option} ${value ?? ''}`.trim(), means, width)),
     '',
     examples.length === 1 ? 'Example:' : 'Examples:',
