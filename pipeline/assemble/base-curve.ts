@@ -1,5 +1,5 @@
 import { cubicIntegral } from '../core/numeric/cubic.js';
-import { Room } from '../core/numeric/room.js';
+import { numbers } from '../core/numeric/room.js';
 import { smoothedOrdinates } from '../core/numeric/smoothing-spline.js';
 import { notAKnotSpline } from '../core/numeric/spline.js';
 import type { Knots } from './knots.js';
@@ -13,8 +13,6 @@ export interface BaseCurve {
   readonly errorJPerMol: Float64Array;
 }
 
-const room = new Room();
-
 /**
  * A not-a-knot spline for each stretch between split points (rows printed twice). Points with scatter of their own
  * (`scatter`) are smoothed within it first. The interpolation error is the larger change of an interval's integral when
@@ -22,11 +20,11 @@ const room = new Room();
  */
 export function baseCurve(knots: Knots, scatter: boolean): BaseCurve {
   const n = knots.n;
-  const c0 = room.numbers(n - 1);
-  const c1 = room.numbers(n - 1);
-  const c2 = room.numbers(n - 1);
-  const c3 = room.numbers(n - 1);
-  const errorJPerMol = room.numbers(n - 1);
+  const c0 = numbers(n - 1);
+  const c1 = numbers(n - 1);
+  const c2 = numbers(n - 1);
+  const c3 = numbers(n - 1);
+  const errorJPerMol = numbers(n - 1);
   let from = 0;
   for (let i = 1; i <= n; i++) {
     if (i < n && knots.twin[i] === 0) continue;

@@ -1,9 +1,7 @@
 import { cubicIntegral, cubicIntegralOverT } from '../core/numeric/cubic.js';
 import { type ChainResult, smoothChain } from '../core/numeric/gaussian-chain.js';
-import { Room } from '../core/numeric/room.js';
+import { numbers } from '../core/numeric/room.js';
 import type { Stretch } from './stretch.js';
-
-const room = new Room();
 
 /** A chain run over a stretch, with the steps that it was given. */
 export interface ChainRun {
@@ -30,13 +28,13 @@ export interface Zero {
 
 export function runChain(stretch: Stretch, zero: Zero): ChainRun {
   const { n, temperatureK: t } = stretch;
-  const stepH = room.numbers(n);
-  const stepS = room.numbers(n);
-  const stepVarH = room.numbers(n);
-  const stepCovHS = room.numbers(n);
-  const stepVarS = room.numbers(n);
-  const alphas = room.numbers(n);
-  const betas = room.numbers(n);
+  const stepH = numbers(n);
+  const stepS = numbers(n);
+  const stepVarH = numbers(n);
+  const stepCovHS = numbers(n);
+  const stepVarS = numbers(n);
+  const alphas = numbers(n);
+  const betas = numbers(n);
   for (let i = 0; i < n - 1; i++) {
     const w = t[i + 1] - t[i];
     if (w === 0) {
@@ -60,7 +58,7 @@ export function runChain(stretch: Stretch, zero: Zero): ChainRun {
     stepVarS[i] = a * a * alpha * alpha + b * b * beta * beta + stretch.ownVarH[i] * alpha * alpha;
   }
   const copy = (a: Float64Array): Float64Array => {
-    const out = room.numbers(n);
+    const out = numbers(n);
     out.set(a);
     return out;
   };

@@ -1,8 +1,7 @@
 import type { ChainResult } from '../core/numeric/gaussian-chain.js';
-import { Room } from '../core/numeric/room.js';
+import { numbers } from '../core/numeric/room.js';
 import type { Stretch } from './stretch.js';
 
-const room = new Room();
 const CONTINUED = 2;
 const FRONT = 2;
 const BACK = 1;
@@ -39,7 +38,7 @@ export class CurveDraft {
     this.end = FRONT + n;
     const size = n + FRONT + BACK;
     const from = (x: Float64Array): Float64Array => {
-      const out = room.numbers(size);
+      const out = numbers(size);
       out.set(x, FRONT);
       return out;
     };
@@ -58,7 +57,7 @@ export class CurveDraft {
     };
     this.kind = new Uint8Array(size);
     this.kind.set(stretch.kind, FRONT);
-    this.gain = room.numbers(4 * size);
+    this.gain = numbers(4 * size);
     this.gain.set(chain.gain, 4 * FRONT);
   }
 

@@ -1,6 +1,6 @@
 import type { NamedCell } from '../../schemas/checked.js';
 import type { Series, SeriesQuantity } from '../../schemas/harmonised.js';
-import { Room } from '../core/numeric/room.js';
+import { numbers } from '../core/numeric/room.js';
 
 /**
  * The rows of one series as knots in rising temperature: Cp, and the printed H, S and -[G - H]/T as observations with
@@ -29,8 +29,6 @@ export interface Knots {
   readonly hasS: boolean;
 }
 
-const room = new Room();
-
 /** `named` holds this series' named cells only; they are left out, a row without Cp too. */
 export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | null {
   const cp = series.heatCapacity;
@@ -47,15 +45,15 @@ export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | nu
 
   const size = order.length;
   const knots = {
-    temperatureK: room.numbers(size),
-    heatCapacity: room.numbers(size),
-    uHeatCapacity: room.numbers(size),
-    h: room.numbers(size),
-    hVar: room.numbers(size).fill(Number.POSITIVE_INFINITY),
-    s: room.numbers(size),
-    sVar: room.numbers(size).fill(Number.POSITIVE_INFINITY),
-    f: room.numbers(size),
-    fVar: room.numbers(size).fill(Number.POSITIVE_INFINITY),
+    temperatureK: numbers(size),
+    heatCapacity: numbers(size),
+    uHeatCapacity: numbers(size),
+    h: numbers(size),
+    hVar: numbers(size).fill(Number.POSITIVE_INFINITY),
+    s: numbers(size),
+    sVar: numbers(size).fill(Number.POSITIVE_INFINITY),
+    f: numbers(size),
+    fVar: numbers(size).fill(Number.POSITIVE_INFINITY),
     row: new Int32Array(size),
     twin: new Uint8Array(size),
     jump: new Uint8Array(size),

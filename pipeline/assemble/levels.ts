@@ -1,7 +1,7 @@
 import type { CurveFamily, LevelOrigin, PhaseCurve } from '../../schemas/curves.js';
 import type { Anchor, Datum, HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
-import { Room } from '../core/numeric/room.js';
+import { numbers } from '../core/numeric/room.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
 import { carryAll, type Level, type Origin, relative } from './carry-levels.js';
 import type { PhaseShape } from './phase-shape.js';
@@ -210,11 +210,9 @@ function curveOf(shape: PhaseShape, level: Level, family: Family, growth: number
   };
 }
 
-const room = new Room();
-
 function raised(values: Float64Array, by: number): Float64Array {
   if (by === 0) return values;
-  const out = room.numbers(values.length);
+  const out = numbers(values.length);
   for (let i = 0; i < out.length; i++) out[i] = values[i] + by;
   return out;
 }

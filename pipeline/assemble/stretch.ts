@@ -1,9 +1,7 @@
 import type { Series } from '../../schemas/harmonised.js';
-import { Room } from '../core/numeric/room.js';
+import { numbers } from '../core/numeric/room.js';
 import type { BaseCurve } from './base-curve.js';
 import type { Knots } from './knots.js';
-
-const room = new Room();
 
 /** Knots, cubics, step errors and observations of one stretch; what the chain runs over. n knots, n - 1 intervals. */
 export class Stretch {
@@ -145,7 +143,7 @@ export class Stretch {
 
 export function stretchOf(knots: Knots, base: BaseCurve, series: Series, scatter: boolean): Stretch {
   const n = knots.n;
-  const own = room.numbers(n - 1);
+  const own = numbers(n - 1);
   if (scatter) {
     for (let i = 0; i < n - 1; i++) {
       const w = knots.temperatureK[i + 1] - knots.temperatureK[i];
@@ -192,7 +190,7 @@ export function splitAt(stretch: Stretch, temperatureK: number): Stretch {
   const d1 = c1[i] + x * (2 * c2[i] + 3 * x * c3[i]);
   const d2 = c2[i] + 3 * x * c3[i];
   const put = (a: Float64Array, at: number, value: number): Float64Array => {
-    const out = room.numbers(a.length + 1);
+    const out = numbers(a.length + 1);
     out.set(a.subarray(0, at), 0);
     out[at] = value;
     out.set(a.subarray(at), at + 1);

@@ -2,12 +2,10 @@ import type { Crossing, FunctionRows, PhaseCurve } from '../../schemas/curves.js
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { cubicIntegral, cubicIntegralOverT, cubicValue } from '../core/numeric/cubic.js';
-import { Room } from '../core/numeric/room.js';
+import { numbers } from '../core/numeric/room.js';
 import { stateCovariance } from '../core/physics/curve-uncertainty.js';
 import { gibbsInDiagram } from '../core/physics/diagram.js';
 import { place } from './crossings.js';
-
-const room = new Room();
 
 const BASIS_MEASURED = 0;
 const BASIS_INTERPOLATED = 1;
@@ -42,7 +40,7 @@ export function tabulated(
   const knots = curve.knotK;
   const n = knots.length;
   const size = n + extra.length;
-  const t = room.numbers(size);
+  const t = numbers(size);
   const interval = new Int32Array(size);
   const atKnot = new Int32Array(size);
   const side = new Uint8Array(size);
@@ -73,14 +71,14 @@ export function tabulated(
     family: curve.family,
     rows,
     temperatureK: t.subarray(0, rows),
-    heatCapacityJPerMolK: room.numbers(rows),
-    entropyJPerMolK: room.numbers(rows),
-    enthalpyJPerMol: room.numbers(rows),
-    gibbsEnergyJPerMol: room.numbers(rows),
-    uHeatCapacityJPerMolK: room.numbers(rows),
-    uEntropyJPerMolK: room.numbers(rows),
-    uEnthalpyJPerMol: room.numbers(rows),
-    uGibbsEnergyJPerMol: room.numbers(rows),
+    heatCapacityJPerMolK: numbers(rows),
+    entropyJPerMolK: numbers(rows),
+    enthalpyJPerMol: numbers(rows),
+    gibbsEnergyJPerMol: numbers(rows),
+    uHeatCapacityJPerMolK: numbers(rows),
+    uEntropyJPerMolK: numbers(rows),
+    uEnthalpyJPerMol: numbers(rows),
+    uGibbsEnergyJPerMol: numbers(rows),
     stable: stability(curve, all, t, rows, mine, substance, policy),
     basis: new Uint8Array(rows),
     side: side.subarray(0, rows),

@@ -3,7 +3,7 @@ import type { Finding } from '../../schemas/finding.js';
 import type { Anchor, HarmonisedCase, StatedTransition } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import type { RawCase } from '../../schemas/raw.js';
-import { Room } from '../core/numeric/room.js';
+
 import { harmoniseAnchor } from './anchors.js';
 import { type Draft, finished } from './draft.js';
 import { countFromReference } from './reference-temperature.js';
@@ -24,22 +24,21 @@ export function harmonise(
   { policy }: HarmoniseSettings,
 ): { readonly artefact: readonly HarmonisedCase[]; readonly findings: readonly Finding[] } {
   const all: Finding[] = [];
-  const room = new Room();
   const artefact = cases.map((raw) => {
     const findings: Finding[] = [];
-    const harmonised = harmoniseCase(raw, policy, room, findings);
+    const harmonised = harmoniseCase(raw, policy, findings);
     for (const finding of findings) all.push(finding);
     return harmonised;
   });
   return { artefact, findings: all };
 }
 
-function harmoniseCase(raw: RawCase, policy: Policy, room: Room, findings: Finding[]): HarmonisedCase {
+function harmoniseCase(raw: RawCase, policy: Policy, findings: Finding[]): HarmonisedCase {
   const { substance } = raw;
   const book = new UnitBook(substance, findings);
   const drafts: Draft[] = [];
   for (const series of raw.series) {
-    const draft = draftSeries(series, substance.id, book, policy, room, findings);
+    const draft = draftSeries(series, substance.id, book, policy, findings);
     if (draft !== null) drafts.push(draft);
   }
   const anchors: Anchor[] = [];

@@ -1,6 +1,6 @@
 /** What the printed digits leave open. */
 import { NO_CELL } from '../../schemas/raw.js';
-import type { Room } from '../core/numeric/room.js';
+import { constant, numbers } from '../core/numeric/room.js';
 
 /** Half a unit of the place `decimals`, in SI. */
 export function halfUnitOf(decimals: number, factor: number): number {
@@ -18,15 +18,14 @@ export function halfUnits(
   decimals: Int8Array,
   usualDecimals: number,
   factor: number,
-  room: Room,
 ): Float64Array {
   const usual = halfUnitOf(usualDecimals, factor);
   let coarse = 0;
   for (let i = 0; i < decimals.length; i++) if (decimals[i] < usualDecimals) coarse++;
   if (coarse * 5 < decimals.length || !keepsSignificantDigits(values, decimals, usualDecimals)) {
-    return room.constant(values.length, usual);
+    return constant(values.length, usual);
   }
-  const halves = room.numbers(values.length).fill(usual);
+  const halves = numbers(values.length).fill(usual);
   for (let i = 0; i < values.length; i++) {
     if (isCoarse(values[i], decimals[i], usualDecimals)) halves[i] = halfUnitOf(decimals[i], factor);
   }

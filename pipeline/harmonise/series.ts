@@ -3,7 +3,7 @@ import type { Finding } from '../../schemas/finding.js';
 import type { Policy } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
 import { NO_CELL, type RawColumn, type RawSeries } from '../../schemas/raw.js';
-import type { Room } from '../core/numeric/room.js';
+import { constant, numbers, ones } from '../core/numeric/room.js';
 import { type Draft, type DraftQuantity, writable } from './draft.js';
 import { isGas, standardPressureTerm } from './gas-pressure.js';
 import { readingFinding } from './reading-finding.js';
@@ -19,7 +19,6 @@ export function draftSeries(
   substance: string,
   book: UnitBook,
   policy: Policy,
-  room: Room,
   findings: Finding[],
 ): Draft | null {
   const temperature = given.columns.find((column) => column.is === 'temperature');
@@ -54,7 +53,7 @@ export function draftSeries(
   const quantities: Partial<Record<NumberQuantity, DraftQuantity>> = {};
   for (const entry of raw.columns) {
     if (entry.is === 'temperature' || quantities[entry.is] !== undefined) continue;
-    const quantity = draftQuantity(raw, entry, book, policy, room);
+    const quantity = draftQuantity(raw, entry, book, policy);
     if (quantity !== null) quantities[entry.is] = quantity;
   }
   const heatCapacityColumn = quantities['heat-capacity']?.column ?? FROM_DESCRIPTOR;
@@ -72,28 +71,22 @@ export function draftSeries(
   return draft;
 }
 
-function draftQuantity(
-  raw: RawSeries,
-  column: RawColumn,
-  book: UnitBook,
-  policy: Policy,
-  room: Room,
-): DraftQuantity | null {
+function draftQuantity(raw: RawSeries, column: RawColumn, book: UnitBook, policy: Policy): DraftQuantity | null {
   const conversion = book.conversion(raw.table, column.column, column.is);
   if (conversion === null) return null;
   const { factor, offset } = conversion;
   const { decimals, is } = column;
-  const present = presence(decimals, room);
+  const present = presence(decimals);
   let values = column.values;
   const owned = factor !== 1 || offset !== 0;
   if (owned) {
-    values = room.numbers(raw.rows);
+    values = numbers(raw.rows);
     for (let i = 0; i < raw.rows; i++) if (present[i] === 1) values[i] = column.values[i] * factor + offset;
   }
   const halfUnit =
     column.column === FROM_DESCRIPTOR
-      ? room.constant(raw.rows, 0)
-      : halfUnits(column.values, decimals, column.usualDecimals, factor, room);
+      ? constant(raw.rows, 0)
+      : halfUnits(column.values, decimals, column.usualDecimals, factor);
   const { uOwn, uSharedRelative, origin } = seriesUncertainty(
     raw,
     is,
@@ -103,13 +96,12 @@ function draftQuantity(
     factor,
     book,
     policy,
-    room,
   );
   return { is, column: column.column, values, owned, present, halfUnit, uOwn, uSharedRelative, origin };
 }
 
-function presence(decimals: Int8Array, room: Room): Uint8Array {
-  if (decimals.indexOf(NO_CELL) < 0) return room.ones(decimals.length);
+function presence(decimals: Int8Array): Uint8Array {
+  if (decimals.indexOf(NO_CELL) < 0) return ones(decimals.length);
   const present = new Uint8Array(decimals.length);
   for (let i = 0; i < present.length; i++) present[i] = decimals[i] === NO_CELL ? 0 : 1;
   return present;

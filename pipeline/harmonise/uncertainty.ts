@@ -4,7 +4,7 @@ import type { Policy } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
 import { NO_CELL, type RawSeries } from '../../schemas/raw.js';
 import type { Basis, StatedUncertainty, TableMeaning } from '../../schemas/table-meaning.js';
-import type { Room } from '../core/numeric/room.js';
+import { constant, numbers } from '../core/numeric/room.js';
 import type { UnitBook } from './unit-book.js';
 
 export interface OwnUncertainty {
@@ -37,15 +37,14 @@ export function seriesUncertainty(
   factor: number,
   book: UnitBook,
   policy: Policy,
-  room: Room,
 ): OwnUncertainty {
   const { table } = raw;
   const declared = column < 0 ? [] : table.columns[column].uncertainty;
   const printed = raw.uncertainties.filter((entry) => entry.of === quantity);
   if (declared.length === 0 && printed.length === 0 && !takesDefault(table.basis)) {
-    return { uOwn: room.constant(values.length, 0), uSharedRelative: 0, origin: 'printed digits' };
+    return { uOwn: constant(values.length, 0), uSharedRelative: 0, origin: 'printed digits' };
   }
-  const uOwn = room.numbers(values.length);
+  const uOwn = numbers(values.length);
   let sharedVariance = 0;
 
   const own = declared.filter((entry) => !entry.shared).map((entry) => partOf(entry, factor));

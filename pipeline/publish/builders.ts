@@ -19,10 +19,9 @@ function grown<S extends Store>(store: S, needed: number): S {
   return larger;
 }
 
-/** A long column stays where it was filled; a short one gives its spare room back. */
-function cut<S extends Store>(store: S, length: number): S {
-  if (store.length === length) return store;
-  return (length > 4096 && length > store.length / 2 ? store.subarray(0, length) : store.slice(0, length)) as S;
+/** `lent`: the builder's own store, good until the builder is filled again. */
+function cut<S extends Store>(store: S, length: number, lent: boolean): S {
+  return (lent ? store.subarray(0, length) : store.slice(0, length)) as S;
 }
 
 /** Numbers, integers and flags: values with absence marked beside them. An absent cell holds 0. */
@@ -56,11 +55,33 @@ class ValueBuilder<S extends Float64Array | Int32Array | Uint8Array> {
     this.length += count;
   }
 
-  protected finish(): { values: S; absent: Uint8Array | null } {
+  /** Takes back all from row `length` on. */
+  truncate(length: number): void {
+    if (this.#anyAbsent) this.#absent.fill(0, length);
+    this.#values.fill(0, length, this.length);
+    this.length = length;
+    if (length === 0) this.#anyAbsent = false;
+  }
+
+  /** The first row from `from` on that holds a number that is none and is not marked absent; -1 where there is none. */
+  firstBroken(from: number): number {
+    for (let row = from; row < this.length; row++) {
+      const value = this.#values[row]!;
+      if (value - value !== 0 && !(this.#anyAbsent && this.#absent[row] === 1)) return row;
+    }
+    return -1;
+  }
+
+  valueAt(row: number): number {
+    return this.#values[row]!;
+  }
+
+  protected finish(lent: boolean): { values: S; absent: Uint8Array | null } {
     const length = this.length;
+    this.#absent = this.#anyAbsent ? grown(this.#absent, length) : this.#absent;
     return {
-      values: cut(this.#values, length),
-      absent: this.#anyAbsent ? cut(grown(this.#absent, length), length) : null,
+      values: cut(this.#values, length, lent),
+      absent: this.#anyAbsent ? cut(this.#absent, length, lent) : null,
     };
   }
 
@@ -79,8 +100,8 @@ export class NumberBuilder extends ValueBuilder<Float64Array> {
   constructor(capacity: number) {
     super(new Float64Array(capacity));
   }
-  column(): NumberColumn {
-    return { kind: 'number', ...this.finish() };
+  column(lent = false): NumberColumn {
+    return { kind: 'number', ...this.finish(lent) };
   }
 }
 
@@ -88,8 +109,8 @@ export class IntegerBuilder extends ValueBuilder<Int32Array> {
   constructor(capacity: number) {
     super(new Int32Array(capacity));
   }
-  column(): IntegerColumn {
-    return { kind: 'integer', ...this.finish() };
+  column(lent = false): IntegerColumn {
+    return { kind: 'integer', ...this.finish(lent) };
   }
 }
 
@@ -100,8 +121,8 @@ export class BooleanBuilder extends ValueBuilder<Uint8Array> {
   pushFlag(value: boolean | null): void {
     this.push(value === null ? null : value ? 1 : 0);
   }
-  column(): BooleanColumn {
-    return { kind: 'boolean', ...this.finish() };
+  column(lent = false): BooleanColumn {
+    return { kind: 'boolean', ...this.finish(lent) };
   }
 }
 
@@ -154,8 +175,14 @@ export class TextBuilder {
     return code;
   }
 
-  column(): TextColumn {
-    return { kind: 'text', codes: cut(this.#codes, this.length), words: [...this.#codeOf.keys()] };
+  /** Takes back all from row `length` on; the words of what was taken back stay in the dictionary until it is empty. */
+  truncate(length: number): void {
+    this.length = length;
+    if (length === 0) this.#codeOf.clear();
+  }
+
+  column(lent = false): TextColumn {
+    return { kind: 'text', codes: cut(this.#codes, this.length, lent), words: [...this.#codeOf.keys()] };
   }
 }
 
@@ -191,14 +218,21 @@ function builder(kind: FieldKind, rows: number): BuilderOf[FieldKind] {
   }
 }
 
+export type AnyBuilders = Readonly<Record<string, BuilderOf[FieldKind]>>;
+
+/** Takes back all rows from `length` on. */
+export function truncateTable(builders: AnyBuilders, length: number): void {
+  for (const made of Object.values(builders)) made.truncate(length);
+}
+
 /** Throws where the columns are not equally long: a cell was forgotten or written twice. */
-export function finishTable(builders: Readonly<Record<string, BuilderOf[FieldKind]>>): ColumnTable {
+export function finishTable(builders: AnyBuilders, lent = false): ColumnTable {
   const columns: Record<string, Column> = {};
   let rows = -1;
   for (const [name, made] of Object.entries(builders)) {
     if (rows < 0) rows = made.length;
     if (made.length !== rows) throw new Error(`column ${name} has ${made.length} rows, the first column ${rows}`);
-    columns[name] = made.column();
+    columns[name] = made.column(lent);
   }
   return { rows: Math.max(0, rows), columns };
 }

@@ -12,19 +12,10 @@ const SIDES = [null, 'below', 'above'] as const;
 
 export type ValueBuilders = ReturnType<typeof valueBuilders>;
 
-/** The two long tables get room for all of their rows at once. */
-export function valueBuilders(published: readonly ReconciledCase[]) {
-  let functionRows = 0;
-  let pieceRows = 0;
-  for (const { checked } of published) {
-    for (const { rows } of checked.assembled.functions) functionRows += rows;
-    for (const { knotK } of checked.assembled.curves) {
-      for (let i = 1; i < knotK.length; i++) if (knotK[i] !== knotK[i - 1]) pieceRows++;
-    }
-  }
+export function valueBuilders() {
   return {
-    functions: buildersFor(RELEASE_TABLES.functions, functionRows),
-    pieces: buildersFor(RELEASE_TABLES.pieces, pieceRows),
+    functions: buildersFor(RELEASE_TABLES.functions),
+    pieces: buildersFor(RELEASE_TABLES.pieces),
     phases: buildersFor(RELEASE_TABLES.phases),
     provenance: buildersFor(RELEASE_TABLES.provenance),
   };

@@ -4,10 +4,10 @@ import type { FileRecord } from '../../schemas/contents.js';
 import type { Finding, Suspect } from '../../schemas/finding.js';
 import type { ReleaseTables, TableName } from '../../schemas/release.js';
 import type { Substance } from '../../schemas/substances.js';
+import { emptyRoom } from '../core/numeric/room.js';
 import { type IngestPart, selectRuns } from '../ingest/ingest.js';
-import { concatTables, publish } from '../publish/publish.js';
+import { Publication } from '../publish/publish.js';
 import { sayFinding } from '../report/report.js';
-import { refuseBrokenNumbers } from './broken-calculation.js';
 import type { ParquetWriter } from './duckdb.js';
 import { failedCase } from './failed-case.js';
 import { PART_TABLES, writePart } from './release-tables.js';
@@ -15,7 +15,7 @@ import { runStages, type StageSettings } from './stages.js';
 import { type VerdictLine, verdictLine } from './verdict-line.js';
 
 /** Substances that go through the stages together: enough to be quick, few enough to bound memory. */
-const BATCH = 1024;
+const BATCH = 64;
 
 /** The whole night's work as plain data, so that a worker can be given it; bytes of files are shared, not copied. */
 export interface NightWork {
@@ -60,19 +60,19 @@ export async function workPartition(
   const lines: VerdictLine[] = [];
   const said: FoundOut[] = [];
   const general = new Map<string, Finding>();
-  const tables: ReleaseTables[] = [];
+  publication.clear();
   for (const batch of batches(from, to, work.wanted)) {
     const judged = judge(work, parts, batch.from, batch.to);
     for (const finding of judged.findings) general.set(finding.id, finding);
-    const published = work.release === null ? null : publishSafely(judged.cases);
-    if (published !== null) tables.push(published.tables);
-    for (const one of published?.cases ?? judged.cases) {
+    for (const one of work.release === null ? judged.cases : publishSafely(judged.cases)) {
       lines.push(verdictLine(one));
       if (work.findings) said.push(foundOut(one));
     }
     onProgress(batch.to - batch.from);
+    // What is kept of a batch are findings, lines and published columns: none of its own arrays.
+    emptyRoom();
   }
-  const { large, small } = split(work.release === null ? null : concatTables([publishNothing(), ...tables]));
+  const { large, small } = split(work.release === null ? null : publication);
   const records =
     work.release === null
       ? []
@@ -107,27 +107,20 @@ export function judge(
   }
 }
 
-/** The published tables of a batch; a substance whose numbers are none is withheld before it reaches a file. */
-function publishSafely(cases: readonly ReconciledCase[]): {
-  readonly cases: readonly ReconciledCase[];
-  readonly tables: ReleaseTables;
-} {
-  try {
-    const tables = publish(cases, { sentence: sayFinding }).artefact;
-    for (const [name, table] of Object.entries(tables)) refuseBrokenNumbers(name, table);
-    return { cases, tables };
-  } catch (error) {
-    if (cases.length === 1) {
-      const failed = [failedCase(cases[0]!.checked.assembled.examined.harmonised.substance, error)];
-      return { cases: failed, tables: publish(failed, { sentence: sayFinding }).artefact };
-    }
-    const alone = cases.map((one) => publishSafely([one]));
-    return { cases: alone.flatMap((one) => one.cases), tables: concatTables(alone.map((one) => one.tables)) };
-  }
-}
+/** One store for all partitions of this thread: used memory is cheaper than fresh. */
+const publication = new Publication({ sentence: sayFinding });
 
-function publishNothing(): ReleaseTables {
-  return publish([], { sentence: sayFinding }).artefact;
+/** Adds a batch to the published tables; a substance whose numbers are none is withheld before it reaches a file. */
+function publishSafely(cases: readonly ReconciledCase[]): readonly ReconciledCase[] {
+  try {
+    publication.add(cases);
+    return cases;
+  } catch (error) {
+    if (cases.length > 1) return cases.flatMap((one) => publishSafely([one]));
+    const failed = [failedCase(cases[0]!.checked.assembled.examined.harmonised.substance, error)];
+    publication.add(failed);
+    return failed;
+  }
 }
 
 function foundOut({ checked, findings, suspects }: ReconciledCase): FoundOut {
@@ -153,13 +146,14 @@ function* batches(from: number, to: number, wanted: Uint8Array | null): Generato
   }
 }
 
-function split(tables: ReleaseTables | null): {
+/** The large tables go into this partition's parts, the small ones back to where all are joined. */
+function split(filled: Publication | null): {
   readonly large: Partial<Record<TableName, ColumnTable>>;
   readonly small: Partial<ReleaseTables> | null;
 } {
-  if (tables === null) return { large: {}, small: null };
+  if (filled === null) return { large: {}, small: null };
   const isLarge = (name: string): boolean => (PART_TABLES as readonly string[]).includes(name);
-  const pick = (keep: (name: string) => boolean) =>
-    Object.fromEntries(Object.entries(tables).filter(([name]) => keep(name)));
+  const tables = Object.entries(filled.tables(isLarge));
+  const pick = (keep: (name: string) => boolean) => Object.fromEntries(tables.filter(([name]) => keep(name)));
   return { large: pick(isLarge), small: pick((name) => !isLarge(name)) };
 }

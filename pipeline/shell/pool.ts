@@ -4,7 +4,7 @@ import { Worker } from 'node:worker_threads';
 export type WorkerMessage<Result> = { readonly progress: number } | { readonly result: Result };
 
 /** Columns of a batch die young; with more room for them the collector copies less (24 to 20 s of processor time on a million rows). */
-const LIMITS = { maxYoungGenerationSizeMb: 64 };
+const LIMITS = { maxYoungGenerationSizeMb: 32 };
 
 /**
  * Tasks 0…count − 1, each by one worker thread, at most `jobs` at a time, each started once with `data`. Results come

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { Room } from '../../pipeline/core/numeric/room.js';
+
 import { halfUnitOf, halfUnits } from '../../pipeline/harmonise/rounding.js';
 import { columnOf, harmonised, seriesOf, tableOf } from './raw.js';
 
@@ -11,18 +11,12 @@ describe('half a unit of the last place', () => {
   });
 
   it('is the usual one where a zero or a round number leaves its zeros out', () => {
-    const halves = halfUnits(Float64Array.of(0, 24.426, 25.87, 26.648), Int8Array.of(0, 3, 2, 3), 3, 1, new Room());
+    const halves = halfUnits(Float64Array.of(0, 24.426, 25.87, 26.648), Int8Array.of(0, 3, 2, 3), 3, 1);
     expect(Array.from(halves)).toEqual([0.0005, 0.0005, 0.0005, 0.0005]);
   });
 
   it('is the row’s own where larger numbers are printed with fewer decimals throughout', () => {
-    const halves = halfUnits(
-      Float64Array.of(1.234, 9.876, 12.34, 98.76, 123.4),
-      Int8Array.of(3, 3, 2, 2, 1),
-      3,
-      1,
-      new Room(),
-    );
+    const halves = halfUnits(Float64Array.of(1.234, 9.876, 12.34, 98.76, 123.4), Int8Array.of(3, 3, 2, 2, 1), 3, 1);
     expect(Array.from(halves)).toEqual([0.0005, 0.0005, 0.005, 0.005, 0.05]);
   });
 

@@ -1,4 +1,4 @@
-import { Room } from '../../core/numeric/room.js';
+import { numbers } from '../../core/numeric/room.js';
 import {
   bumpOverT,
   cubicAt,
@@ -32,8 +32,6 @@ export interface Residuals {
 
 export const TWIN = 2;
 
-const room = new Room();
-
 const central = newStencil();
 const coarse = newStencil();
 const two = new Float64Array(2);
@@ -52,12 +50,12 @@ function integralBy(stencil: Stencil, rows: TableRows, i: number): number {
  */
 export function residuals(rows: TableRows, careful = false): Residuals {
   const { n, t } = rows;
-  const q = room.numbers(n - 1);
-  const p = room.numbers(n - 1);
-  const e = room.numbers(n - 1);
-  const c = room.numbers(n - 1);
-  const open = room.numbers(n - 1);
-  const own = room.numbers(n - 1);
+  const q = numbers(n - 1);
+  const p = numbers(n - 1);
+  const e = numbers(n - 1);
+  const c = numbers(n - 1);
+  const open = numbers(n - 1);
+  const own = numbers(n - 1);
   const usable = new Uint8Array(n - 1);
   for (let i = 0; i < n - 1; i++) {
     if (t[i + 1] === t[i]) {
@@ -81,7 +79,7 @@ export function residuals(rows: TableRows, careful = false): Residuals {
     }
     own[i] = (w * w * (rows.uCp[i] * rows.uCp[i] + rows.uCp[i + 1] * rows.uCp[i + 1])) / 2;
   }
-  const closure = room.numbers(n);
+  const closure = numbers(n);
   const hasClosure = new Uint8Array(n);
   const { h, s, f } = rows;
   if (h !== null && s !== null && f !== null) {

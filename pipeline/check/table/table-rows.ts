@@ -1,7 +1,5 @@
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
-import { Room } from '../../core/numeric/room.js';
-
-const room = new Room();
+import { numbers } from '../../core/numeric/room.js';
 
 /** The rows of one series in rising temperature, as the row checks see them; n rows. Absent values are NaN-free and flagged. */
 export interface TableRows {
@@ -38,9 +36,9 @@ export function tableRows(series: Series): TableRows | null {
   if (!sorted) order = Array.from(order).sort((a, b) => temperature[a] - temperature[b] || a - b);
   // A measured run that returns to a temperature stands once here: its first row.
   const measured = series.table.basis === 'measured';
-  const t = room.numbers(n);
-  const y = room.numbers(n);
-  const u = room.numbers(n);
+  const t = numbers(n);
+  const y = numbers(n);
+  const u = numbers(n);
   const row = new Int32Array(n);
   let k = 0;
   for (let j = 0; j < n; j++) {

@@ -1,6 +1,4 @@
-import { Room } from './room.js';
-
-const room = new Room();
+import { numbers } from './room.js';
 
 /**
  * A chain of two-component states x_k = (H_k, S_k) with known steps and Gaussian step errors, observed through printed
@@ -43,12 +41,12 @@ export interface ChainResult {
 
 export function smoothChain(input: ChainInput): ChainResult {
   const { n, temperatureK, stepH, stepS, stepVarH, stepCovHS, stepVarS } = input;
-  const h = room.numbers(n);
-  const s = room.numbers(n);
-  const varH = room.numbers(n);
-  const covHS = room.numbers(n);
-  const varS = room.numbers(n);
-  const gain = room.numbers(4 * n);
+  const h = numbers(n);
+  const s = numbers(n);
+  const varH = numbers(n);
+  const covHS = numbers(n);
+  const varS = numbers(n);
+  const gain = numbers(4 * n);
 
   let xh = input.startH;
   let xs = input.startS;

@@ -1,5 +1,5 @@
 import { cubicValue } from '../numeric/cubic.js';
-import { Room } from '../numeric/room.js';
+import { numbers } from '../numeric/room.js';
 import { rootBetween } from '../numeric/root.js';
 import { type CurveArrays, enthalpyAt, entropyAt, gibbsAt, intervalOf } from './curve.js';
 
@@ -154,10 +154,8 @@ function slopeOf(phase: DiagramPhase, temperatureK: number): number {
   return (s - d) / phase.formulaUnits;
 }
 
-const room = new Room();
-
 function merged(a: Float64Array, b: Float64Array, low: number, high: number): Float64Array {
-  const out = room.numbers(a.length + b.length + 2);
+  const out = numbers(a.length + b.length + 2);
   let n = 0;
   out[n++] = low;
   let i = 0;
