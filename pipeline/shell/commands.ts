@@ -145,7 +145,7 @@ export const COMMANDS: readonly CommandPage[] = [
     teaches: [
       'Each raw cell of the substance is moved in turn, up and down by a quarter of its last digit, and all is calculated again. That gives its sensitivity: by how much G changes for one SI unit of the cell. A formation enthalpy counts one to one, an entropy anchor −T, and one entropy in a smooth table far less, since its neighbours hold the curve.',
       'Times the cell’s own standard uncertainty this is its weight in J/mol; its square is the cell’s share of u(G)². The numbers with the largest shares are those to measure again. What is left to 100 % lies between the rows, or beyond them.',
-      'The temperatures of rows are taken as exact; a transition’s temperature counts where a level was carried through it. Cells that the checks name are left out of the curve and listed apart.',
+      'A heat capacity also tells how well the table can be interpolated, so that its sensitivity holds for changes below its last digit only; the others hold for changes of any size. The temperatures of rows are taken as exact; a transition’s temperature counts where a level was carried through it. Cells that the checks name are left out of the curve and listed apart.',
     ],
     examples: [
       { line: 'cuspline trace lead l 700', does: 'the 20 numbers that matter most to liquid lead at 700 K' },

@@ -69,8 +69,8 @@ export async function correct(request: Request, log: Log, ask: Ask = askOnTermin
   }
   writeAtomically(planned.list.path, withEntry(planned.list, planned.entry));
   log.tell({ ...event, written: true }, [
-    `Written to ${planned.list.path}. The raw file is as it was; cuspline nightly uses`,
-    'the entry from now on. To take it back, remove the entry.',
+    `Written to ${planned.list.path}.`,
+    ...wrap('The raw file is as it was; the next cuspline nightly uses the entry. To take it back, remove it.', 80),
   ]);
   return EXIT.done;
 }
