@@ -30,6 +30,7 @@ async function run(request: Request, log: Log): Promise<ExitStatus> {
       log.tell({ event: 'version', version: programVersion() }, [`cuspline ${programVersion()}`]);
       return EXIT.done;
     case 'nightly':
+      await import('./tier-up.js');
       return (await import('./nightly.js')).nightly(request, log);
     case 'check':
       return (await import('./check-command.js')).check(request, log);

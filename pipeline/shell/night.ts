@@ -19,11 +19,12 @@ export async function workThrough(
   log.begin('calculate', total, 'substance');
   const results =
     jobs > 1 && work.partitions.length > 1
-      ? await runPool<PartitionResult>(
+      ? await runPool<NightWork, PartitionResult>(
           new URL('./worker.js', import.meta.url),
           work,
           work.partitions.length,
           jobs,
+          (index) => workPartition(work, index, openWriter, onProgress),
           onProgress,
         )
       : await oneAfterTheOther(work, openWriter, onProgress);

@@ -1,52 +1,62 @@
 import { Worker } from 'node:worker_threads';
 
-/** What a worker says: how far it is within its task, or that the task is done. */
-export type WorkerMessage<Result> = { readonly progress: number } | { readonly result: Result };
+/** What a worker says: how far it is within its task, that a task is done, or that there are none left. */
+export type WorkerMessage<Result> =
+  | { readonly progress: number }
+  | { readonly task: number; readonly result: Result }
+  | { readonly over: true };
+
+/** What a worker is started with: its data, and the number of the next task, shared by all who take tasks. */
+export interface WorkerStart<Data> {
+  readonly data: Data;
+  readonly next: Int32Array;
+  readonly count: number;
+}
 
 /** Columns of a batch die young; with more room for them the collector copies less (24 to 20 s of processor time on a million rows). */
 const LIMITS = { maxYoungGenerationSizeMb: 32 };
 
+/** The next task of those that are left; -1 where there is none. */
+export function takeTask(next: Int32Array, count: number): number {
+  const task = Atomics.add(next, 0, 1);
+  return task < count ? task : -1;
+}
+
 /**
- * Tasks 0…count − 1, each by one worker thread, at most `jobs` at a time, each started once with `data`. Results come
- * back in the order of the tasks, whichever worker was faster. A worker that breaks ends them all.
+ * Tasks 0…count − 1 by `jobs` threads, this one among them: each takes the next task when it is through with one. Workers
+ * are started once with `data`; `own` does a task here. Results come back in the order of the tasks, whoever did them. A
+ * worker that breaks ends them all.
  */
-export async function runPool<Result>(
+export async function runPool<Data, Result>(
   script: URL,
-  data: unknown,
+  data: Data,
   count: number,
   jobs: number,
+  own: (task: number) => Promise<Result>,
   onProgress: (done: number) => void,
 ): Promise<Result[]> {
   const results: Result[] = new Array(count);
-  let next = 0;
+  const next = new Int32Array(new SharedArrayBuffer(4));
+  const start: WorkerStart<Data> = { data, next, count };
   const workers = Array.from(
-    { length: Math.min(jobs, count) },
-    () => new Worker(script, { workerData: data, resourceLimits: LIMITS }),
+    { length: Math.min(jobs, count) - 1 },
+    () => new Worker(script, { workerData: start, resourceLimits: LIMITS }),
   );
-  const runOne = (worker: Worker): Promise<void> =>
+  const untilOver = (worker: Worker): Promise<void> =>
     new Promise((resolve, reject) => {
-      let task = -1;
-      const takeNext = (): void => {
-        if (next >= count) {
-          resolve();
-          return;
-        }
-        task = next++;
-        worker.postMessage(task);
-      };
       worker.on('error', reject);
       worker.on('exit', (code) => reject(new Error(`A worker ended with code ${code} in the middle of its work.`)));
       worker.on('message', (message: WorkerMessage<Result>) => {
         if ('progress' in message) onProgress(message.progress);
-        else {
-          results[task] = message.result;
-          takeNext();
-        }
+        else if ('over' in message) resolve();
+        else results[message.task] = message.result;
       });
-      takeNext();
     });
+  const here = async (): Promise<void> => {
+    for (let task = takeTask(next, count); task >= 0; task = takeTask(next, count)) results[task] = await own(task);
+  };
   try {
-    await Promise.all(workers.map(runOne));
+    await Promise.all([...workers.map(untilOver), here()]);
   } finally {
     await Promise.all(workers.map((worker) => worker.terminate()));
   }

@@ -1,27 +1,23 @@
-/** A worker thread: takes the numbers of partitions, one at a time, and hands back what became of them. */
+/** A worker thread: takes partitions, one at a time, and hands back what became of them. */
 import { parentPort, workerData } from 'node:worker_threads';
 import { ParquetWriter } from './duckdb.js';
 import { type NightWork, type PartitionResult, workPartition } from './night-work.js';
-import type { WorkerMessage } from './pool.js';
+import { takeTask, type WorkerMessage, type WorkerStart } from './pool.js';
 
 const port = parentPort!;
-const work = workerData as NightWork;
+const { data: work, next, count } = workerData as WorkerStart<NightWork>;
 let writer: Promise<ParquetWriter> | null = null;
+const openWriter = (): Promise<ParquetWriter> => {
+  writer ??= ParquetWriter.open();
+  return writer;
+};
 
-port.on('message', (partition: number) => {
-  const openWriter = (): Promise<ParquetWriter> => {
-    writer ??= ParquetWriter.open();
-    return writer;
-  };
-  workPartition(work, partition, openWriter, (progress) => say({ progress })).then(
-    (result) => say({ result }),
-    // Thrown outside the promise, so that the thread ends and the night with it.
-    (error: unknown) =>
-      setImmediate(() => {
-        throw error;
-      }),
-  );
-});
+// A rejection is not caught: the thread ends with it, and the night too.
+for (let task = takeTask(next, count); task >= 0; task = takeTask(next, count)) {
+  const result = await workPartition(work, task, openWriter, (progress) => say({ progress }));
+  say({ task, result });
+}
+say({ over: true });
 
 function say(message: WorkerMessage<PartitionResult>): void {
   port.postMessage(message);
