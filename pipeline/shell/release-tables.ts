@@ -12,6 +12,7 @@ import { writeCsv } from './write-csv.js';
 export const PART_TABLES = [
   'functions',
   'pieces',
+  'phases',
   'transitions',
   'coverage',
   'provenance',

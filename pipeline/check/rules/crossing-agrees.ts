@@ -31,18 +31,19 @@ export function crossingAgrees({ substance, view, policy, limits }: TransitionCo
   const dS = pair.at.entropyJPerMolK;
   const uK = Math.hypot(pair.uGapJPerMol / Math.abs(dS), view.uStatedK);
   const smallestDetectable = 4.13 * uK;
-  const base = {
-    rule,
-    substance,
-    fromPhase: stated.from,
-    toPhase: stated.to,
-    temperatureK: statedK,
-    unit: 'K',
-    address: stated.temperature.address,
-    evidence: statedCells(view),
-    transition: transitionKey(view),
-    observed: statedK,
-  } as const;
+  const base = () =>
+    ({
+      rule,
+      substance,
+      fromPhase: stated.from,
+      toPhase: stated.to,
+      temperatureK: statedK,
+      unit: 'K',
+      address: stated.temperature.address,
+      evidence: statedCells(view),
+      transition: transitionKey(view),
+      observed: statedK,
+    }) as const;
   if (crossing === null) {
     // Without a crossing the distance is known from the gap's slope alone, and is at least that of the tables' ends.
     const distance = pair.at.gapJPerMol / dS;
@@ -54,7 +55,7 @@ export function crossingAgrees({ substance, view, policy, limits }: TransitionCo
       };
     }
     const finding = makeFinding({
-      ...base,
+      ...base(),
       severity,
       tolerance: limits.fault * uK,
       detail: { code: 'transition', what: 'not-crossed', statedK, computedK: null, smallestDetectable },
@@ -74,7 +75,7 @@ export function crossingAgrees({ substance, view, policy, limits }: TransitionCo
     };
   }
   const finding = makeFinding({
-    ...base,
+    ...base(),
     severity,
     expected: crossing.temperatureK,
     difference,

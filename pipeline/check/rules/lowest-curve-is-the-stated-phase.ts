@@ -1,7 +1,7 @@
 import type { PhaseCurve } from '../../../schemas/curves.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
 import type { Policy } from '../../../schemas/policy.js';
-import { gibbsInDiagram } from '../../core/physics/diagram.js';
+import { gibbsInDiagram, walk } from '../../core/physics/diagram.js';
 import { gapUncertainty, type PlacedPhase } from '../../core/physics/placed-phase.js';
 import { isFirstOrder, type Judgement } from '../curve/judgement.js';
 import type { Thresholds } from '../curve/significance.js';
@@ -41,33 +41,19 @@ export function lowestCurveIsTheStatedPhase(
     placed.set(v.stated.from, placed.get(v.stated.from) ?? v.pair.from);
     placed.set(v.stated.to, placed.get(v.stated.to) ?? v.pair.to);
   }
-  let worst: {
-    ratio: number;
-    atK: number;
-    gap: number;
-    tolerance: number;
-    lower: string;
-    stated: string;
-    lowK: number;
-    highK: number;
-  } | null = null;
-  for (const [name, phase] of placed) {
-    for (const t of phase.curve.knotK) {
-      if (!(t > 0) || t < phase.source.measuredFromK || t > phase.source.measuredToK) continue;
-      if (family.some((v) => Math.abs(t - v.stated.temperature.value) < 0.03 * t)) continue;
-      const stated = statedAt(steps, t);
-      if (stated === null || stated === name) continue;
-      const other = placed.get(stated);
-      if (other === undefined || t < other.source.measuredFromK || t > other.source.measuredToK) continue;
-      const gap = gibbsInDiagram(other, t) - gibbsInDiagram(phase, t);
-      if (gap <= 0) continue;
-      const u = gapUncertainty(other, phase, t, policy.pressurePa);
-      const tolerance = limits.fault * u;
-      if (gap <= tolerance + policy.material.transitionTemperatureK) continue;
-      const ratio = gap / tolerance;
-      if (worst === null || ratio > worst.ratio) {
-        worst = { ratio, atK: t, gap, tolerance, lower: name, stated, lowK: t, highK: t };
-      }
+  const spared = Float64Array.from(family, (v) => v.stated.temperature.value);
+  let worst: (Lower & { readonly lower: string; readonly stated: string; readonly ratio: number }) | null = null;
+  for (const { stated, lowK, highK } of rangesOf(steps)) {
+    const other = placed.get(stated);
+    if (other === undefined) continue;
+    for (const [name, phase] of placed) {
+      if (name === stated) continue;
+      const found = lowestBelow(phase, other, lowK, highK, spared, policy.material.transitionTemperatureK);
+      if (found === null) continue;
+      const tolerance = limits.fault * gapUncertainty(other, phase, found.atK, policy.pressurePa);
+      if (found.gap <= tolerance + policy.material.transitionTemperatureK) continue;
+      const ratio = found.gap / tolerance;
+      if (worst === null || ratio > worst.ratio) worst = { ...found, lower: name, stated, ratio };
     }
   }
   const evidence = testable.every((v) => v.evidence === 'arithmetic') ? 'arithmetic' : 'independent';
@@ -87,11 +73,11 @@ export function lowestCurveIsTheStatedPhase(
         observed: worst.gap,
         expected: 0,
         difference: worst.gap,
-        tolerance: worst.tolerance,
+        tolerance: worst.gap / worst.ratio,
         unit: 'J/mol',
         address: about?.address ?? null,
         evidence: about === undefined ? [] : [{ ...about.address, printed: about.printed }],
-        detail: { code: 'phase-order', lower: worst.lower, stated: worst.stated, lowK: worst.lowK, highK: worst.highK },
+        detail: { code: 'phase-order', lower: worst.lower, stated: worst.stated, lowK: worst.fromK, highK: worst.toK },
       }),
     ],
   };
@@ -117,15 +103,66 @@ function sequenceOf(views: readonly TransitionView[]): Step[] {
   return steps;
 }
 
-/** The phase that the sequence says at T; null where it does not hang together (a gap between `to` and the next `from`). */
-function statedAt(steps: readonly Step[], temperatureK: number): string | null {
-  let below: Step | null = null;
-  let above: Step | null = null;
-  for (const s of steps) {
-    if (s.atK <= temperatureK) below = s;
-    else if (above === null) above = s;
+interface Range {
+  readonly stated: string;
+  readonly lowK: number;
+  readonly highK: number;
+}
+
+/** Where the sequence says which phase is stable; nowhere between two steps that do not hang together. */
+function rangesOf(steps: readonly Step[]): Range[] {
+  const ranges: Range[] = [];
+  for (let k = 0; k <= steps.length; k++) {
+    const below = k > 0 ? steps[k - 1] : null;
+    const above = k < steps.length ? steps[k] : null;
+    const stated = below?.to ?? above?.from;
+    if (stated === undefined || (below !== null && above !== null && below.to !== above.from)) continue;
+    ranges.push({ stated, lowK: below?.atK ?? 0, highK: above?.atK ?? Number.POSITIVE_INFINITY });
   }
-  if (below === null) return above === null ? null : above.from;
-  if (above === null) return below.to;
-  return below.to === above.from ? below.to : null;
+  return ranges;
+}
+
+interface Lower {
+  readonly atK: number;
+  /** G(stated) - G(phase) there [J/mol]. */
+  readonly gap: number;
+  /** From the first to the last row at which the phase lies lower. */
+  readonly fromK: number;
+  readonly toK: number;
+}
+
+/** Where `phase` lies furthest below the stated one, at its own knots, both within their data, away from the transitions. */
+function lowestBelow(
+  phase: PlacedPhase<PhaseCurve>,
+  stated: PlacedPhase<PhaseCurve>,
+  lowK: number,
+  highK: number,
+  spared: Float64Array,
+  least: number,
+): Lower | null {
+  const knots = phase.curve.knotK;
+  const low = Math.max(lowK, phase.source.measuredFromK, stated.source.measuredFromK);
+  const high = Math.min(highK, phase.source.measuredToK, stated.source.measuredToK);
+  let at = 0;
+  let atK = 0;
+  let most = least;
+  let fromK = 0;
+  let toK = 0;
+  for (let k = 0; k < knots.length; k++) {
+    const t = knots[k];
+    if (!(t > 0) || t < low || t > high) continue;
+    let near = false;
+    for (let j = 0; j < spared.length; j++) if (Math.abs(t - spared[j]) < 0.03 * t) near = true;
+    if (near) continue;
+    at = walk(stated.curve, at, t);
+    const gap = gibbsInDiagram(stated, t, at) - gibbsInDiagram(phase, t, Math.min(k, knots.length - 2));
+    if (gap <= least) continue;
+    if (fromK === 0) fromK = t;
+    toK = t;
+    if (gap > most) {
+      most = gap;
+      atK = t;
+    }
+  }
+  return atK === 0 ? null : { atK, gap: most, fromK, toK };
 }

@@ -44,21 +44,22 @@ export function statedTransitionJumps({ substance, view, policy, limits }: Trans
     outcome: outcome(substance, rule, view.place, 'agrees', view.evidence, { smallestDetectable }),
     findings: [],
   };
-  const base = {
-    rule,
-    substance,
-    fromPhase: stated.from,
-    toPhase: stated.to,
-    temperatureK: t,
-    observed: jump,
-    expected: first ? null : 0,
-    difference: first ? null : jump,
-    tolerance: limits.fault * u,
-    unit: 'J/(mol.K)',
-    address: stated.entropy?.address ?? stated.temperature.address,
-    evidence: statedCells(view),
-    transition: transitionKey(view),
-  } as const;
+  const base = () =>
+    ({
+      rule,
+      substance,
+      fromPhase: stated.from,
+      toPhase: stated.to,
+      temperatureK: t,
+      observed: jump,
+      expected: first ? null : 0,
+      difference: first ? null : jump,
+      tolerance: limits.fault * u,
+      unit: 'J/(mol.K)',
+      address: stated.entropy?.address ?? stated.temperature.address,
+      evidence: statedCells(view),
+      transition: transitionKey(view),
+    }) as const;
   if (first) {
     // No jump although one is stated: S of both curves is the same within a small u.
     if (Math.abs(jump) > limits.doubt * u || u > materialS) return agrees;
@@ -66,7 +67,7 @@ export function statedTransitionJumps({ substance, view, policy, limits }: Trans
       outcome: outcome(substance, rule, view.place, 'disagrees', view.evidence, { smallestDetectable }),
       findings: [
         makeFinding({
-          ...base,
+          ...base(),
           severity: 'doubt',
           detail: { code: 'transition', what: 'no-jump', statedK: t, computedK: null, smallestDetectable },
         }),
@@ -79,7 +80,7 @@ export function statedTransitionJumps({ substance, view, policy, limits }: Trans
     outcome: outcome(substance, rule, view.place, 'disagrees', view.evidence, { smallestDetectable }),
     findings: [
       makeFinding({
-        ...base,
+        ...base(),
         severity,
         detail: { code: 'transition', what: 'jump', statedK: t, computedK: null, smallestDetectable },
       }),
