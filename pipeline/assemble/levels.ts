@@ -34,8 +34,8 @@ export function levelled(shapes: readonly PhaseShape[], family: Family, policy: 
   const curves = shapes.map((shape, k) => curveOf(shape, levels[k], family, growth));
   curves.forEach((curve, k) => {
     const { hOrigin, sOrigin } = levels[k];
-    if (hOrigin !== null) Object.assign(curve, { enthalpyLevel: originOf(hOrigin, curves) });
-    if (sOrigin !== null) Object.assign(curve, { entropyLevel: originOf(sOrigin, curves) });
+    if (hOrigin !== null) curve.enthalpyLevel = originOf(hOrigin, curves);
+    if (sOrigin !== null) curve.entropyLevel = originOf(sOrigin, curves);
   });
   return curves;
 }
@@ -170,7 +170,13 @@ function valueAt(
   return { value: f(arrays, temperatureK), u: (growth * cp * beyond * beyond) / 2 };
 }
 
-function curveOf(shape: PhaseShape, level: Level, family: Family, growth: number): PhaseCurve {
+/** A curve whose level's origin is filled in once all curves of the family stand: it may be another of them. */
+interface OpenCurve extends PhaseCurve {
+  enthalpyLevel: LevelOrigin | undefined;
+  entropyLevel: LevelOrigin | undefined;
+}
+
+function curveOf(shape: PhaseShape, level: Level, family: Family, growth: number): OpenCurve {
   const all = family.substance.anchors;
   const h = level.h ?? 0;
   const s = level.s ?? 0;
@@ -207,6 +213,8 @@ function curveOf(shape: PhaseShape, level: Level, family: Family, growth: number
     carriedThrough: level.through,
     continuationGrowthPerK: growth,
     origins: shape.origins,
+    enthalpyLevel: undefined,
+    entropyLevel: undefined,
   };
 }
 

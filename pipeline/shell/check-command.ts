@@ -4,19 +4,24 @@ import type { Request } from './arguments.js';
 import { EXIT, type ExitStatus } from './exit-status.js';
 import { openLibrary } from './library.js';
 import type { Log } from './log.js';
-import { workThrough } from './night.js';
+import { withCrew, workThrough } from './night.js';
 import type { FoundOut } from './night-work.js';
+import type { Crew } from './pool.js';
 import { cautionLines, tally, verdictLines } from './summary-lines.js';
 import { wrap } from './text.js';
 import { declaredUnitLines, declaredUnits } from './unit-lines.js';
 
 /** `cuspline check`: all that nightly does but publishing; every finding is printed. */
-export async function check(request: Request, log: Log): Promise<ExitStatus> {
+export function check(request: Request, log: Log): Promise<ExitStatus> {
+  return withCrew(request, (crew) => checkWith(request, log, crew));
+}
+
+async function checkWith(request: Request, log: Log, crew: Crew | null): Promise<ExitStatus> {
   const library = openLibrary(request, log);
   const units = declaredUnits(library.parts.map(({ plan }) => plan.meaning));
   log.tell({ event: 'units', columns: units }, ['Units as declared', ...declaredUnitLines(units).map(indented), '']);
   const work = library.work({ release: null, findings: true });
-  const results = await workThrough(work, request.jobs, log, () => {
+  const results = await workThrough(work, crew, log, () => {
     throw new Error('check writes nothing');
   });
   for (const finding of library.general(results)) tellFinding(log, finding, []);

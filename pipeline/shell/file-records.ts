@@ -1,6 +1,6 @@
 /** Size and SHA-256 of files, and the files of a folder. */
 import { createHash } from 'node:crypto';
-import { createReadStream } from 'node:fs';
+import { createReadStream, readdirSync, statSync } from 'node:fs';
 import { open, readdir } from 'node:fs/promises';
 import { join, relative, sep } from 'node:path';
 import type { FileRecord } from '../../schemas/contents.js';
@@ -23,6 +23,19 @@ export async function filesIn(folder: string): Promise<string[]> {
     .filter((entry) => !entry.isDirectory())
     .map((entry) => relative(folder, join(entry.parentPath, entry.name)).split(sep).join('/'))
     .sort();
+}
+
+/** Bytes of all files below the folder; 0 where it cannot be read: whoever reads it says so. */
+export function folderBytes(folder: string): number {
+  let bytes = 0;
+  try {
+    for (const entry of readdirSync(folder, { recursive: true, withFileTypes: true })) {
+      if (entry.isFile()) bytes += statSync(join(entry.parentPath, entry.name)).size;
+    }
+  } catch {
+    return 0;
+  }
+  return bytes;
 }
 
 /** Waits until the file's bytes, or the folder's entries, are on the disk. */

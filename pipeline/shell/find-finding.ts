@@ -7,8 +7,9 @@ import { EXIT, Stop } from './exit-status.js';
 import { type Library, openLibrary } from './library.js';
 import type { Log } from './log.js';
 import { nearest } from './nearest.js';
-import { workThrough } from './night.js';
+import { withCrew, workThrough } from './night.js';
 import { judge } from './night-work.js';
+import type { Crew } from './pool.js';
 import type { StageSettings } from './stages.js';
 import { count, wrap } from './text.js';
 
@@ -29,9 +30,13 @@ export interface FoundFinding {
 }
 
 /** Every finding of the library, or of `--only`. */
-export async function findAll(request: Request, log: Log): Promise<FoundInLibrary> {
+export function findAll(request: Request, log: Log): Promise<FoundInLibrary> {
+  return withCrew(request, (crew) => findAllWith(request, log, crew));
+}
+
+async function findAllWith(request: Request, log: Log, crew: Crew | null): Promise<FoundInLibrary> {
   const library = openLibrary(request, log);
-  const results = await workThrough(library.work({ release: null, findings: true }), request.jobs, log, () => {
+  const results = await workThrough(library.work({ release: null, findings: true }), crew, log, () => {
     throw new Error('looking for findings writes nothing');
   });
   const said = results.flatMap((result) => result.said);

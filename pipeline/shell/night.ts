@@ -1,12 +1,35 @@
+import type { Request } from './arguments.js';
 import type { ParquetWriter } from './duckdb.js';
+import { folderBytes } from './file-records.js';
 import type { Log } from './log.js';
 import { type NightWork, type PartitionResult, workPartition } from './night-work.js';
-import { runPool } from './pool.js';
+import { PARTITION_BYTES } from './partition.js';
+import { Crew, runPool } from './pool.js';
 
-/** Works through every partition on at most `jobs` threads, results in the order of the partitions. */
+/**
+ * Calls the crew before the sources are read, so that the workers load meanwhile, and dismisses it afterwards. There is none
+ * where one job is asked for, or so little is to be read that it will be one partition.
+ *
+ * @param partitionBytes as the partitions will be cut
+ */
+export async function withCrew<Result>(
+  { sources, jobs }: Pick<Request, 'sources' | 'jobs'>,
+  use: (crew: Crew | null) => Promise<Result>,
+  partitionBytes = PARTITION_BYTES,
+): Promise<Result> {
+  const most = Math.min(jobs, Math.ceil(folderBytes(sources) / partitionBytes));
+  const crew = most > 1 ? new Crew(new URL('./worker.js', import.meta.url), most - 1) : null;
+  try {
+    return await use(crew);
+  } finally {
+    await crew?.dismiss();
+  }
+}
+
+/** Works through every partition with the crew, or without one, results in the order of the partitions. */
 export async function workThrough(
   work: NightWork,
-  jobs: number,
+  crew: Crew | null,
   log: Log,
   openWriter: () => Promise<ParquetWriter>,
 ): Promise<PartitionResult[]> {
@@ -18,12 +41,11 @@ export async function workThrough(
   };
   log.begin('calculate', total, 'substance');
   const results =
-    jobs > 1 && work.partitions.length > 1
+    crew !== null
       ? await runPool<NightWork, PartitionResult>(
-          new URL('./worker.js', import.meta.url),
+          crew,
           work,
           work.partitions.length,
-          jobs,
           (index) => workPartition(work, index, openWriter, onProgress),
           onProgress,
         )

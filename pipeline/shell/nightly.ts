@@ -9,9 +9,10 @@ import { ParquetWriter } from './duckdb.js';
 import type { ExitStatus } from './exit-status.js';
 import { type Library, openLibrary } from './library.js';
 import type { Log } from './log.js';
-import { workThrough } from './night.js';
+import { withCrew, workThrough } from './night.js';
 import type { PartitionResult } from './night-work.js';
 import { outcomeOf } from './outcome.js';
+import type { Crew } from './pool.js';
 import {
   type CurrentRelease,
   currentRelease,
@@ -32,7 +33,11 @@ export interface NightSettings {
 }
 
 /** The nightly build: read, calculate, check, publish. Ends with the status for the scheduler. */
-export async function nightly(request: Request, log: Log, settings: NightSettings = {}): Promise<ExitStatus> {
+export function nightly(request: Request, log: Log, settings: NightSettings = {}): Promise<ExitStatus> {
+  return withCrew(request, (crew) => build(request, log, settings, crew), settings.partitionBytes);
+}
+
+async function build(request: Request, log: Log, settings: NightSettings, crew: Crew | null): Promise<ExitStatus> {
   const library = openLibrary(request, log, settings.partitionBytes);
   const version = programIdentity();
   const id = contentId({
@@ -49,7 +54,7 @@ export async function nightly(request: Request, log: Log, settings: NightSetting
   };
   try {
     const work = library.work({ release: { folder: draft.folder, contentId: id }, findings: false });
-    const results = await workThrough(work, request.jobs, log, openWriter);
+    const results = await workThrough(work, crew, log, openWriter);
     const made = await writeRelease(draft, library, results, await openWriter(), version, request.date);
     return await conclude(request, log, draft, library, results, made);
   } finally {

@@ -69,11 +69,12 @@ function isCarried(curve: UncertainCurve): boolean {
 }
 
 function shareDatum(a: UncertainCurve, b: UncertainCurve): boolean {
-  const of = (curve: UncertainCurve): LevelError[] => [
-    ...(curve.enthalpyLevel?.errors ?? []),
-    ...(curve.entropyLevel?.errors ?? []),
-  ];
-  return of(a).some((x) => of(b).some((y) => x.key === y.key));
+  for (const x of [a.enthalpyLevel, a.entropyLevel]) {
+    for (const y of [b.enthalpyLevel, b.entropyLevel]) {
+      if (x?.errors.some((one) => y?.errors.some((other) => one.key === other.key))) return true;
+    }
+  }
+  return false;
 }
 
 /** A linear combination of independent errors: of curves' rows at temperatures, and of data that fix levels. */
