@@ -5,7 +5,7 @@ import type { FileRecord } from '../../schemas/contents.js';
 import { TABLE_NAMES, type TableName } from '../../schemas/release.js';
 import { type PublishedTable, RELEASE_TABLES } from '../../schemas/release-tables.js';
 import type { ParquetWriter } from './duckdb.js';
-import { recordOf } from './file-records.js';
+import { recordOf, sync } from './file-records.js';
 import { writeCsv } from './write-csv.js';
 
 /** The tables that are written in parts when the library is large; the others are always one file. */
@@ -38,6 +38,8 @@ export async function writePart(
     const csv = partName(name, 'csv', partIndex, partCount);
     await writer.write(join(folder, parquet), name, table, parquetMetadata(name, contentId));
     records.push(await recordOf(folder, parquet, table.rows), writeCsv(join(folder, csv), csv, name, table));
+    // The disk may begin; whether all is there is waited for, and answered, when the release is finished.
+    for (const file of [parquet, csv]) sync(join(folder, file)).catch(() => undefined);
   }
   return records;
 }
