@@ -1,28 +1,9 @@
 /** What the checks hand on: verdicts on tables, then on curves and transitions, then the suspects. */
 import type { AssembledCase } from './curves.js';
 import type { EvidenceKind, Finding, Outcome, OutcomeKind, Suspect } from './finding.js';
-import type { HarmonisedCase, StatedTransition } from './harmonised.js';
-import type { NumberQuantity } from './quantities.js';
+import type { StatedTransition } from './harmonised.js';
 
-/** A cell that the row checks name; it is left out when the curve is made. */
-export interface NamedCell {
-  /** Index into `HarmonisedCase.series`. */
-  readonly series: number;
-  readonly row: number;
-  readonly quantity: NumberQuantity;
-  /** Id of the finding that names it. */
-  readonly finding: string;
-}
-
-/** After the tables are checked row by row, before a curve is made. */
-export interface ExaminedCase {
-  readonly harmonised: HarmonisedCase;
-  readonly named: readonly NamedCell[];
-  readonly outcomes: readonly Outcome[];
-  /** Includes the findings of reading and harmonising. */
-  readonly findings: readonly Finding[];
-  readonly suspects: readonly Suspect[];
-}
+export type { ExaminedCase, NamedCell } from './examined.js';
 
 /** A stated transition beside what the curves give. */
 export interface JudgedTransition {

@@ -1,5 +1,5 @@
 /** What assemble hands on: one Cp curve a phase, H and S its exact integrals, with covariances at the knots. */
-import type { ExaminedCase } from './checked.js';
+import type { ExaminedCase } from './examined.js';
 
 /** Which curves may be compared with each other: same zeros, same pressure convention. */
 export interface CurveFamily {

@@ -1,5 +1,5 @@
 /** A finding is data: a code of a closed union with typed evidence. Sentences are made in one file, `pipeline/report/words.ts`. */
-import type { Address } from './harmonised.js';
+import type { Address } from './address.js';
 
 export const RULES = [
   'row-readable',

@@ -1,18 +1,13 @@
 /** What harmonise hands on: SI, molar, ITS-90 as far as known, standard pressure 1 bar, k = 1 uncertainties. */
+import type { Address } from './address.js';
 import type { Finding } from './finding.js';
 import type { NumberQuantity } from './quantities.js';
 import type { Substance } from './substances.js';
 import type { TableMeaning } from './table-meaning.js';
 
-export type UncertaintyOrigin = 'stated' | 'source default' | 'policy default' | 'printed digits';
+export type { Address } from './address.js';
 
-/** Where a value was printed. `line` 0: the descriptor itself (`constants`). */
-export interface Address {
-  readonly source: string;
-  readonly file: string;
-  readonly line: number;
-  readonly column: string;
-}
+export type UncertaintyOrigin = 'stated' | 'source default' | 'policy default' | 'printed digits';
 
 /** One quantity of one series, in SI. */
 export interface SeriesQuantity {

@@ -2,9 +2,8 @@ import type { CurveFamily, LevelOrigin, PhaseCurve } from '../../schemas/curves.
 import type { Anchor, Datum, HarmonisedCase, StatedTransition } from '../../schemas/harmonised.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
 import { departure } from '../core/physics/equilibrium.js';
-import { isGas } from '../core/physics/placed-phase.js';
+import { boilingTemperature, isGas } from '../core/physics/placed-phase.js';
 import { gasTerm } from '../core/physics/pressure-terms.js';
-import { boilingOf } from './crossings.js';
 import type { PhaseShape } from './phase-shape.js';
 
 /** Where a level is from, the other curve by its index among the shapes; -1 where it is a datum. */
@@ -116,7 +115,7 @@ function atPressure(
   const gas = isGas(shape.phase);
   const term =
     gas && zeros.isobarPa === null
-      ? gasTerm(substance.substance, stated.gas ?? 'real', stated.pressurePa, boilingOf(substance))
+      ? gasTerm(substance.substance, stated.gas ?? 'real', stated.pressurePa, boilingTemperature(substance.transitions))
       : null;
   const { enthalpy, entropy } = departure(term === null ? null : term.shift, temperatureK);
   const arrays = relative(shape);

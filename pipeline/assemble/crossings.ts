@@ -4,6 +4,7 @@ import type { Policy } from '../../schemas/policy.js';
 import { crossingsOf, gibbsInDiagram } from '../core/physics/diagram.js';
 import { equilibrium } from '../core/physics/equilibrium.js';
 import {
+  boilingTemperature,
   type DiagramSetting,
   gapUncertainty,
   isGas,
@@ -58,13 +59,7 @@ function settingsOf(substance: HarmonisedCase, policy: Policy, hasGas: boolean):
 }
 
 export function place(curve: PhaseCurve, substance: HarmonisedCase, setting: DiagramSetting): Placed {
-  return placePhase(curve, substance.substance, setting, boilingOf(substance));
-}
-
-/** The stated boiling or sublimation temperature, for the simple-fluid estimate; 500 K where none is stated. */
-export function boilingOf(substance: HarmonisedCase): number {
-  for (const t of substance.transitions) if (isGas(t.to)) return t.temperature.value;
-  return 500;
+  return placePhase(curve, substance.substance, setting, boilingTemperature(substance.transitions));
 }
 
 function crossingAt(

@@ -1,11 +1,12 @@
-import type { CheckedCase, JudgedTransition } from '../../schemas/checked.js';
+import type { CheckedCase } from '../../schemas/checked.js';
 import type { PhaseCurve } from '../../schemas/curves.js';
-import type { Anchor, Datum, HarmonisedCase } from '../../schemas/harmonised.js';
 import { entropyAt } from '../core/physics/curve.js';
 import { crossCovariance, stateCovariance } from '../core/physics/curve-uncertainty.js';
-import { type Equilibrium, equilibrium } from '../core/physics/equilibrium.js';
-import { isGas, type PlacedPhase, placePhase } from '../core/physics/placed-phase.js';
+import { equilibrium } from '../core/physics/equilibrium.js';
+import { boilingTemperature, placePhase } from '../core/physics/placed-phase.js';
 import { condensedTermUncertainty } from '../core/physics/pressure-terms.js';
+import { type ConditionDatum, dataOf } from './condition-data.js';
+import { type Anchored, type Joined, type Row, usesOf } from './condition-rows.js';
 
 /**
  * What is stated about a substance's transitions and anchors as conditions y = 0 with covariance Q (m x m, row-major):
@@ -19,41 +20,13 @@ export interface ConditionSystem {
   readonly data: readonly ConditionDatum[];
 }
 
-export interface ConditionDatum {
-  readonly kind: 'temperature' | 'enthalpy' | 'entropy' | 'formation-enthalpy' | 'anchor-entropy';
-  readonly datum: Datum;
-  readonly u: number;
-  /** dy/d(datum), m long. */
-  readonly direction: Float64Array;
-  /** For a transition's data: which one. */
-  readonly transition: number;
-  readonly phase: string;
-  /** For a temperature: the conditions re-solved with the crossing in its place; null where there is none. */
-  readonly resolved: { readonly value: number; readonly y: Float64Array } | null;
-}
-
-interface Row {
-  readonly kind: 'gap' | 'enthalpy' | 'entropy' | 'anchor' | 'closure';
-  readonly transition: number;
-  readonly value: number;
-}
-
-interface Joined {
-  readonly judged: JudgedTransition;
-  readonly from: PlacedPhase<PhaseCurve>;
-  readonly to: PlacedPhase<PhaseCurve>;
-  readonly atK: number;
-  readonly at: Equilibrium;
-  readonly within: boolean;
-}
-
 /** The system of one family of curves (`isobarPa`); null where there is nothing to compare. */
 export function conditionsOf(checked: CheckedCase, isobarPa: number | null): ConditionSystem | null {
   const { assembled } = checked;
   const substance = assembled.examined.harmonised;
   const { curves } = assembled;
   const joined: Joined[] = [];
-  const boiling = boilingOf(substance);
+  const boiling = boilingTemperature(substance.transitions);
   for (const j of checked.judged) {
     const { stated } = j;
     if (!(stated.pressurePa > 0)) continue;
@@ -107,7 +80,7 @@ export function conditionsOf(checked: CheckedCase, isobarPa: number | null): Con
       });
     }
   });
-  const anchored: { curve: PhaseCurve; anchor: Anchor }[] = [];
+  const anchored: Anchored[] = [];
   for (const c of curves) {
     if (c.family.isobarPa !== isobarPa || c.entropyAnchor >= 0 || c.entropyLevelFrom === 'transition') continue;
     const anchor = substance.anchors.find(
@@ -133,43 +106,11 @@ export function conditionsOf(checked: CheckedCase, isobarPa: number | null): Con
   return { m, y, q, data };
 }
 
-/** How a curve's H and S at a row's temperature enter the row: signs for (H, S) of `to` and, opposite, of `from`. */
-function weights(row: Row, j: Joined): [number, number] {
-  if (row.kind === 'gap') return [1, -j.atK];
-  if (row.kind === 'enthalpy') return [1, 0];
-  return [0, 1];
-}
-
-interface Use {
-  readonly curve: PhaseCurve;
-  readonly atK: number;
-  readonly h: number;
-  readonly s: number;
-}
-
-function usesOf(
-  row: Row,
-  joined: readonly Joined[],
-  anchored: readonly { curve: PhaseCurve; anchor: Anchor }[],
-): Use[] {
-  if (row.kind === 'closure') return [];
-  if (row.kind === 'anchor') {
-    const { curve, anchor } = anchored[row.transition];
-    return [{ curve, atK: anchor.referenceTemperatureK, h: 0, s: -1 }];
-  }
-  const j = joined[row.transition];
-  const [h, s] = weights(row, j);
-  return [
-    { curve: j.to.source, atK: j.atK, h: h / j.to.formulaUnits, s: s / j.to.formulaUnits },
-    { curve: j.from.source, atK: j.atK, h: -h / j.from.formulaUnits, s: -s / j.from.formulaUnits },
-  ];
-}
-
 function addCurveNoise(
   q: Float64Array,
   rows: readonly Row[],
   joined: readonly Joined[],
-  anchored: readonly { curve: PhaseCurve; anchor: Anchor }[],
+  anchored: readonly Anchored[],
 ): void {
   const m = rows.length;
   const uses = rows.map((r) => usesOf(r, joined, anchored));
@@ -207,189 +148,4 @@ function addCurveNoise(
 /** Levels are data of their own here. */
 function withoutLevels(curve: PhaseCurve): PhaseCurve {
   return { ...curve, uEnthalpyLevelJPerMol: 0, uEntropyLevelJPerMolK: 0 };
-}
-
-function dataOf(
-  rows: readonly Row[],
-  joined: readonly Joined[],
-  anchored: readonly { curve: PhaseCurve; anchor: Anchor }[],
-  substance: HarmonisedCase,
-  curves: readonly PhaseCurve[],
-): ConditionDatum[] {
-  const m = rows.length;
-  const data: ConditionDatum[] = [];
-  const add = (
-    kind: ConditionDatum['kind'],
-    datum: Datum,
-    u: number,
-    transition: number,
-    phase: string,
-    fill: (row: Row, i: number) => number,
-    resolved: ConditionDatum['resolved'] = null,
-  ): void => {
-    const direction = new Float64Array(m);
-    let any = false;
-    rows.forEach((row, i) => {
-      direction[i] = fill(row, i);
-      if (direction[i] !== 0) any = true;
-    });
-    if (any) data.push({ kind, datum, u, direction, transition, phase, resolved });
-  };
-  joined.forEach((j, k) => {
-    const { stated } = j.judged;
-    const { at } = j;
-    const place = `${stated.from}>${stated.to}`;
-    const uT = j.within ? stated.temperature.uRounding : stated.temperature.u;
-    add(
-      'temperature',
-      stated.temperature,
-      uT,
-      j.judged.index,
-      place,
-      (row) => {
-        if (row.kind === 'anchor' || row.transition !== k) return 0;
-        if (row.kind === 'gap') return -at.entropyJPerMolK;
-        if (row.kind === 'enthalpy') return at.heatCapacityJPerMolK;
-        if (row.kind === 'entropy') return at.heatCapacityJPerMolK / j.atK;
-        return -(stated.entropy?.value ?? 0);
-      },
-      resolvedAt(rows, joined, k),
-    );
-    const arithmetic = j.within || stated.table.basis !== 'measured';
-    if (stated.enthalpy !== null) {
-      const own = arithmetic ? stated.enthalpy.uRounding : stated.enthalpy.u;
-      add('enthalpy', stated.enthalpy, own, j.judged.index, place, (row) => {
-        if (row.kind === 'anchor') return 0;
-        if (row.transition === k && row.kind === 'enthalpy') return -1;
-        if (row.transition === k && row.kind === 'closure') return 1;
-        return (
-          carriedEnthalpy(row, joined, curves, j.judged.index) +
-          (stated.entropy === null ? carriedEntropy(row, joined, curves, j.judged.index) / stated.temperature.value : 0)
-        );
-      });
-    }
-    if (stated.entropy !== null) {
-      const own = arithmetic ? stated.entropy.uRounding : stated.entropy.u;
-      add('entropy', stated.entropy, own, j.judged.index, place, (row) => {
-        if (row.kind === 'anchor') return 0;
-        if (row.transition === k && row.kind === 'entropy') return -1;
-        if (row.transition === k && row.kind === 'closure') return -stated.temperature.value;
-        return (
-          carriedEntropy(row, joined, curves, j.judged.index) +
-          (stated.enthalpy === null
-            ? stated.temperature.value * carriedEnthalpy(row, joined, curves, j.judged.index)
-            : 0)
-        );
-      });
-    }
-  });
-  substance.anchors.forEach((anchor, index) => {
-    const { enthalpyOfFormation: h, entropy: s } = anchor;
-    if (h !== null) {
-      const u = levelU(curves, index, 'h', h);
-      add('formation-enthalpy', h, u, -1, anchor.phase, (row) => {
-        let v = 0;
-        for (const use of usesOf(row, joined, anchored))
-          if (restsOn(use.curve, curves, substance, index, 'h')) v += use.h;
-        return v;
-      });
-    }
-    if (s !== null) {
-      const u = levelU(curves, index, 's', s);
-      add('anchor-entropy', s, u, -1, anchor.phase, (row) => {
-        if (row.kind === 'anchor') return anchored[row.transition].anchor === anchor ? 1 : 0;
-        let v = 0;
-        for (const use of usesOf(row, joined, anchored))
-          if (restsOn(use.curve, curves, substance, index, 's')) v += use.s;
-        return v;
-      });
-    }
-  });
-  return data;
-}
-
-function levelU(curves: readonly PhaseCurve[], index: number, what: 'h' | 's', datum: Datum): number {
-  for (const c of curves) {
-    if (what === 'h' && c.enthalpyAnchor === index) return c.uEnthalpyLevelJPerMol;
-    if (what === 's' && c.entropyAnchor === index) return c.uEntropyLevelJPerMolK;
-  }
-  return datum.uRounding > 0 ? Math.max(datum.uRounding, datum.origin === 'printed digits' ? 0 : datum.u) : datum.u;
-}
-
-/** Whether a curve's level comes from this anchor, itself or through transitions. */
-function restsOn(
-  curve: PhaseCurve,
-  curves: readonly PhaseCurve[],
-  substance: HarmonisedCase,
-  anchor: number,
-  what: 'h' | 's',
-): boolean {
-  let at: PhaseCurve | undefined = curve;
-  for (let step = 0; at !== undefined && step < curves.length; step++) {
-    if ((what === 'h' ? at.enthalpyAnchor : at.entropyAnchor) === anchor) return true;
-    const from = what === 'h' ? at.enthalpyLevelFrom : at.entropyLevelFrom;
-    if (from !== 'transition') return false;
-    at = otherSide(at, curves, substance);
-  }
-  return false;
-}
-
-function otherSide(
-  curve: PhaseCurve,
-  curves: readonly PhaseCurve[],
-  substance: HarmonisedCase,
-): PhaseCurve | undefined {
-  const stated = substance.transitions[curve.carriedThrough];
-  const other = stated.from === curve.phase ? stated.to : stated.from;
-  return curves.find((c) => c.phase === other && c.family.isobarPa === curve.family.isobarPa);
-}
-
-/** How a stated dH enters another transition's rows, through a level that it carries. */
-function carriedEnthalpy(row: Row, joined: readonly Joined[], curves: readonly PhaseCurve[], index: number): number {
-  return carried(row, joined, curves, index, 'h');
-}
-
-function carriedEntropy(row: Row, joined: readonly Joined[], curves: readonly PhaseCurve[], index: number): number {
-  return carried(row, joined, curves, index, 's');
-}
-
-function carried(
-  row: Row,
-  joined: readonly Joined[],
-  _curves: readonly PhaseCurve[],
-  index: number,
-  what: 'h' | 's',
-): number {
-  if (row.kind === 'anchor' || row.kind === 'closure') return 0;
-  let v = 0;
-  for (const use of usesOf(row, joined, [])) {
-    const from = what === 'h' ? use.curve.enthalpyLevelFrom : use.curve.entropyLevelFrom;
-    if (use.curve.carriedThrough !== index || from !== 'transition') continue;
-    const stated = joined.find((j) => j.judged.index === index)?.judged.stated;
-    const sign = stated?.to === use.curve.phase ? 1 : -1;
-    v += sign * (what === 'h' ? use.h : use.s);
-  }
-  return v;
-}
-
-/** The conditions with transition k taken at its computed crossing: a large shift is re-solved, not linearised. */
-function resolvedAt(rows: readonly Row[], joined: readonly Joined[], k: number): ConditionDatum['resolved'] {
-  const j = joined[k];
-  const crossing = j.judged.computedK;
-  if (crossing === null) return null;
-  const there = equilibrium(j.from, j.to, crossing);
-  const { stated } = j.judged;
-  const y = Float64Array.from(rows, (row) => {
-    if (row.kind === 'anchor' || row.transition !== k) return row.value;
-    if (row.kind === 'gap') return -there.gapJPerMol;
-    if (row.kind === 'enthalpy') return there.enthalpyJPerMol - (stated.enthalpy?.value ?? 0);
-    if (row.kind === 'entropy') return there.entropyJPerMolK - (stated.entropy?.value ?? 0);
-    return (stated.enthalpy?.value ?? 0) - crossing * (stated.entropy?.value ?? 0);
-  });
-  return { value: crossing, y };
-}
-
-function boilingOf(substance: HarmonisedCase): number {
-  for (const t of substance.transitions) if (isGas(t.to)) return t.temperature.value;
-  return 500;
 }

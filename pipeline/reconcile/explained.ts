@@ -3,6 +3,7 @@ import type { Finding, Suspect } from '../../schemas/finding.js';
 import type { Datum, HarmonisedCase, Series, SeriesQuantity } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
+import { printedNumber } from '../core/numeric/printed-like.js';
 import { explain, type SuspectContext } from './explain.js';
 
 /** Suspects with the usual slip that leads to their proposed value, where one does. */
@@ -37,7 +38,7 @@ function tableContext(substance: HarmonisedCase, suspect: Suspect): SuspectConte
     if (q === null || q.present[row] === 0) continue;
     const above = row > 0 && q.present[row - 1] === 1 ? row - 1 : -1;
     const printed = series.text(row, q.column);
-    const number = Number(printed.trim().replace('−', '-').replace(',', '.'));
+    const number = printedNumber(printed);
     const observed = q.values[row];
     return {
       quantity: q.is,

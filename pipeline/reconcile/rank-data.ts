@@ -1,5 +1,6 @@
 import { chiSquareOf, testDatum, type Whitened, whitened } from '../core/physics/adjustment.js';
-import type { ConditionDatum, ConditionSystem } from './conditions.js';
+import type { ConditionDatum } from './condition-data.js';
+import type { ConditionSystem } from './conditions.js';
 
 /** One datum under suspicion, with what the conditions say of it. */
 export interface RankedDatum {

@@ -42,7 +42,7 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
     const rooted = withCauses(checked, groups);
     findings = rooted.findings;
     for (const { finding, group, number } of rooted.groups) {
-      suspects.push(...suspectsOf(checked, finding, group, number, policy));
+      suspects.push(...suspectsOf(checked, finding, group, number));
     }
     suspects = explained(checked, suspects, policy);
     findings = withExplanations(findings, suspects);

@@ -59,7 +59,7 @@ function tellFinding(log: Log, finding: Finding, suspects: readonly Suspect[], i
   const { substance, severity, rule, address } = finding;
   const place = address === null ? '' : `  ${sayPlace(address)}`;
   const lines = [
-    `${substance === '' ? 'source' : substance}  ${severity}  ${rule}${place}`,
+    `${substance === '' ? 'source' : substance}  ${severity}  ${rule}${place}  [${finding.id.slice(0, 8)}]`,
     ...wrap(message, 76 - indent.length).map(indented),
     ...saySuspects(suspects).map(indented),
     '',

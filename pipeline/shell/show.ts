@@ -86,7 +86,7 @@ function findingLines({ findings, suspects }: ReconciledCase): string[] {
     const own = suspects.filter((suspect) => suspect.finding === finding.id);
     const place = finding.address === null ? '' : `  ${sayPlace(finding.address)}`;
     return [
-      `${finding.severity}  ${finding.rule}${place}`,
+      `${finding.severity}  ${finding.rule}${place}  [${finding.id.slice(0, 8)}]`,
       ...wrap(sayFinding(finding), WIDTH - 6).map((line) => `    ${line}`),
       ...saySuspects(own).map((line) => `    ${line}`),
     ];

@@ -3,6 +3,7 @@ import type { EvidenceKind } from '../../../schemas/finding.js';
 import type { HarmonisedCase, StatedTransition } from '../../../schemas/harmonised.js';
 import { type Equilibrium, equilibrium } from '../../core/physics/equilibrium.js';
 import {
+  boilingTemperature,
   type DiagramSetting,
   gapUncertainty,
   isGas,
@@ -83,7 +84,7 @@ function viewOf(
   const evidence: EvidenceKind = within ? 'arithmetic' : 'independent';
   const unlevelled = [a, b].find((c) => !c.hasEnthalpyLevel || !c.hasEntropyLevel);
   const setting: DiagramSetting = { pressurePa: stated.pressurePa, gas: stated.gas ?? 'real' };
-  const boiling = boilingOf(substance);
+  const boiling = boilingTemperature(substance.transitions);
   const from = placePhase(a, substance.substance, setting, boiling);
   const to = placePhase(b, substance.substance, setting, boiling);
   const crossing = nearestCrossing(stated, a, assembled.crossings, temperatureK);
@@ -191,9 +192,4 @@ function nearestCrossing(
       best = c;
   }
   return best;
-}
-
-function boilingOf(substance: HarmonisedCase): number {
-  for (const t of substance.transitions) if (isGas(t.to)) return t.temperature.value;
-  return 500;
 }

@@ -4,8 +4,10 @@ import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
 import type { Policy } from '../../../schemas/policy.js';
 import type { NumberQuantity } from '../../../schemas/quantities.js';
+import { printedLike, printedNumber } from '../../core/numeric/printed-like.js';
 import { addressOf, evidenceOf } from '../place.js';
-import { type Anomaly, materialS, type SuspectCell, type TableVerdict } from '../table/name-cells.js';
+import { type Anomaly, materialS } from '../table/left-over.js';
+import type { SuspectCell, TableVerdict } from '../table/name-cells.js';
 
 /** What one table rule makes of a table's verdict: shared by the four of them, each of which says only what is its own. */
 export interface TableRule {
@@ -201,22 +203,16 @@ function suspectOf(
     redundancy,
     proposed: cell.proposed,
     uProposed: cell.uProposed,
-    proposedPrinted: printedLike(series.text(cell.row, q.column), cell.observed, cell.proposed),
+    proposedPrinted: proposedPrinted(series.text(cell.row, q.column), cell.observed, cell.proposed),
     smallestDetectable: 4.13 * cell.uProposed,
     explanation: null,
     explainedPrinted: null,
   };
 }
 
-/** The proposed value as it would stand in the column: the printed number's own unit and decimals, by proportion. */
-export function printedLike(printed: string, observed: number, proposed: number): string {
-  const plain = printed.trim().replace('−', '-');
-  const comma = plain.includes(',') && !plain.includes('.');
-  const number = Number(comma ? plain.replace(',', '.') : plain);
+/** By proportion, since a series carries no factor of its unit; empty where the cell cannot be read so. */
+function proposedPrinted(printed: string, observed: number, proposed: number): string {
+  const number = printedNumber(printed);
   if (!Number.isFinite(number) || observed === 0 || number === 0) return '';
-  const point = plain.search(/[.,]/);
-  const exponent = plain.search(/[eEdD]/);
-  const decimals = point < 0 ? 0 : (exponent < 0 ? plain.length : exponent) - point - 1;
-  const text = ((proposed * number) / observed).toFixed(Math.max(0, Math.min(12, decimals)));
-  return comma ? text.replace('.', ',') : text;
+  return printedLike(printed, (proposed * number) / observed);
 }

@@ -1,7 +1,8 @@
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import type { Policy } from '../../../schemas/policy.js';
 import type { NumberQuantity } from '../../../schemas/quantities.js';
-import { digitU, type Residuals, residuals, standoff, standoffWithout } from './residuals.js';
+import { type Anomaly, type Detectable, leftOver, smallest } from './left-over.js';
+import { type Residuals, residuals, standoff, standoffWithout } from './residuals.js';
 import { cellU, type TableRows, tableRows } from './table-rows.js';
 import { type Hypothesis, type Pattern, testHeatCapacity, Window } from './window.js';
 
@@ -25,28 +26,10 @@ export interface SuspectCell {
   }[];
 }
 
-/** A place that does not close and that no single cell explains. */
-export interface Anomaly {
-  readonly check: 'entropy' | 'enthalpy' | 'closure' | 'heat-capacity';
-  readonly row: number;
-  readonly nextRow: number;
-  readonly difference: number;
-  readonly tolerance: number;
-  readonly material: boolean;
-  /** More than a tenth of what the interval itself changes by: no step between two fits, but something broken. */
-  readonly gross: boolean;
-}
-
 export interface TableVerdict {
   readonly cells: readonly SuspectCell[];
   readonly anomalies: readonly Anomaly[];
-  /** The smallest error of a cell that would have been named wherever it stood. */
-  readonly detectable: {
-    entropy: number | null;
-    enthalpy: number | null;
-    closure: number | null;
-    heatCapacity: number | null;
-  };
+  readonly detectable: Detectable;
 }
 
 const MOST_NAMES = 12;
@@ -269,106 +252,4 @@ function withoutCells(series: Series, cell: SuspectCell): Series {
     enthalpy: blank(series.enthalpy, p === 'enthalpy' || p === 'enthalpy+gibbs'),
     gibbsFunction: blank(series.gibbsFunction, p === 'gibbs-function' || p.endsWith('+gibbs')),
   };
-}
-
-function leftOver(rows: TableRows, res: Residuals, policy: Policy): Anomaly[] {
-  const out: Anomaly[] = [];
-  const { n, h, s, f } = rows;
-  const limit = policy.cell.threshold;
-  const worst: Partial<Record<Anomaly['check'], Anomaly>> = {};
-  const keep = (a: Anomaly): void => {
-    const before = worst[a.check];
-    if (before === undefined || Math.abs(a.difference) / a.tolerance > Math.abs(before.difference) / before.tolerance) {
-      worst[a.check] = a;
-    }
-  };
-  for (let i = 0; i < n; i++) {
-    const r = rows.row[i];
-    if (res.hasClosure[i] === 1 && s !== null && h !== null && f !== null) {
-      // Only rounding can explain a difference here: its worst case is the tolerance.
-      const bound = s.halfUnit[r] + f.halfUnit[r] + h.halfUnit[r] / rows.t[i];
-      const own = Math.hypot(s.uOwn[r], f.uOwn[r], h.uOwn[r] / rows.t[i]);
-      const tolerance = 1.05 * bound + limit * own;
-      if (Math.abs(res.closure[i]) > 2 * tolerance) {
-        keep({
-          check: 'closure',
-          row: r,
-          nextRow: r,
-          difference: res.closure[i],
-          tolerance,
-          material: Math.abs(res.closure[i]) > materialS(policy, s.values[r]),
-          gross: Math.abs(res.closure[i]) > 0.1 * Math.abs(s.values[r]),
-        });
-      }
-    }
-    if (i === n - 1 || res.usable[i] !== 1) continue;
-    const next = rows.row[i + 1];
-    const digits = digitU(rows, i);
-    const e = Math.sqrt(res.e[i] * res.e[i] + res.own[i]);
-    if (h !== null && h.present[r] === 1 && h.present[next] === 1) {
-      const difference = h.values[next] - h.values[r] - res.q[i];
-      const tolerance = limit * Math.hypot(digits.h, e);
-      if (Math.abs(difference) > tolerance)
-        keep({
-          check: 'enthalpy',
-          row: r,
-          nextRow: next,
-          difference,
-          tolerance,
-          material: Math.abs(difference) > policy.material.enthalpyJPerMol,
-          gross: Math.abs(difference) > 0.1 * Math.abs(res.q[i]),
-        });
-    }
-    if (s !== null && s.present[r] === 1 && s.present[next] === 1) {
-      const difference = s.values[next] - s.values[r] - res.p[i];
-      const tolerance = limit * Math.hypot(digits.s, e * Math.hypot(res.c[i], res.open[i]));
-      if (Math.abs(difference) > tolerance)
-        keep({
-          check: 'entropy',
-          row: r,
-          nextRow: next,
-          difference,
-          tolerance,
-          material: Math.abs(difference) > materialS(policy, s.values[r]),
-          gross: Math.abs(difference) > 0.1 * Math.abs(res.p[i]),
-        });
-    }
-  }
-  for (const a of Object.values(worst)) out.push(a);
-  return out;
-}
-
-export function materialS(policy: Policy, value: number): number {
-  return Math.max(policy.material.entropyRelative * Math.abs(value), policy.material.entropyJPerMolK);
-}
-
-function smallest(rows: TableRows, res: Residuals, policy: Policy): TableVerdict['detectable'] {
-  // Power 80 % at the naming threshold: threshold + 0.84 standard deviations of the interval's check.
-  const times = policy.cell.threshold + 0.84;
-  const out: TableVerdict['detectable'] = { entropy: null, enthalpy: null, closure: null, heatCapacity: null };
-  const { h, s } = rows;
-  for (let i = 0; i < rows.n - 1; i++) {
-    const r = rows.row[i];
-    const next = rows.row[i + 1];
-    if (res.usable[i] !== 1) continue;
-    const digits = digitU(rows, i);
-    const e = Math.sqrt(res.e[i] * res.e[i] + res.own[i]);
-    if (h !== null && h.present[r] === 1 && h.present[next] === 1)
-      out.enthalpy = Math.max(out.enthalpy ?? 0, times * Math.hypot(digits.h, e), 10 * h.halfUnit[r]);
-    if (s !== null && s.present[r] === 1 && s.present[next] === 1)
-      out.entropy = Math.max(out.entropy ?? 0, times * Math.hypot(digits.s, e * res.open[i]), 10 * s.halfUnit[r]);
-    if (res.hasClosure[i] === 1 && s !== null) out.closure = Math.max(out.closure ?? 0, 10 * s.halfUnit[r]);
-    if (i > rows.from[i] && res.usable[i - 1] === 1 && rows.to[i] - rows.from[i] >= 4) {
-      // An even table's stand-off is as unsure as the thinned integral beside it, per kelvin.
-      const left = res.e[i - 1] / (rows.t[i] - rows.t[i - 1]);
-      const right = res.e[i] / (rows.t[i + 1] - rows.t[i]);
-      const spread = Math.max(left, right);
-      out.heatCapacity = Math.max(
-        out.heatCapacity ?? 0,
-        times * Math.sqrt(spread * spread + (1.45 * rows.uCp[i]) ** 2),
-        policy.material.heatCapacityRelative * Math.abs(rows.cp[i]),
-      );
-    }
-  }
-  return out;
 }

@@ -25,6 +25,14 @@ export function isGas(phase: string): boolean {
   return phase === 'g' || phase.startsWith('g-');
 }
 
+/** The stated boiling or sublimation temperature [K], for the simple-fluid estimate; 500 K where none is stated. */
+export function boilingTemperature(
+  transitions: readonly { readonly to: string; readonly temperature: { readonly value: number } }[],
+): number {
+  for (const t of transitions) if (isGas(t.to)) return t.temperature.value;
+  return 500;
+}
+
 /** A gas on the standard state gets its pressure term; a real fluid's isobar has it in its values already. */
 export function placePhase<Curve extends PhaseInFamily>(
   curve: Curve,
