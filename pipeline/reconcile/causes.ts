@@ -1,5 +1,6 @@
 import type { CheckedCase } from '../../schemas/checked.js';
 import type { Finding } from '../../schemas/finding.js';
+import type { ConditionDatum } from './condition-data.js';
 import type { SuspectGroup } from './rank-data.js';
 
 const RANK: Readonly<Record<string, number>> = {
@@ -55,7 +56,7 @@ export function withCauses(
   const numbers = new Map<string, number>();
   for (const group of groups) {
     const first = group.members[0];
-    const wanted = candidates(findings.filter(open), first.of.kind, first.of.phase);
+    const wanted = candidates(findings.filter(open), first.of);
     const root = wanted.find((f) => !rooted.some((r) => r.finding === f)) ?? wanted[0] ?? rooted[0]?.finding;
     if (root === undefined) continue;
     const number = (numbers.get(root.id) ?? 0) + 1;
@@ -79,17 +80,15 @@ export function withCauses(
   };
 }
 
-function candidates(findings: readonly Finding[], kind: string, place: string): Finding[] {
+function candidates(findings: readonly Finding[], datum: ConditionDatum): Finding[] {
+  const { kind } = datum;
   const wanted =
     kind === 'enthalpy' || kind === 'entropy'
       ? ['heating-raises-entropy', 'transition-entropy-closes', 'gibbs-continuous', 'crossing-agrees']
       : ['gibbs-continuous', 'crossing-agrees', 'transition-entropy-closes'];
   const score = (f: Finding): number => {
     const at = wanted.indexOf(f.rule);
-    const places = place.split('>');
-    const touch = places.includes(f.fromPhase ?? '') || places.includes(f.toPhase ?? '');
-    const same = `${f.fromPhase}>${f.toPhase}` === place;
-    return (at < 0 ? wanted.length : at) + (same ? 0 : touch ? 10 : 20);
+    return (at < 0 ? wanted.length : at) + (isItsTransition(datum, f) ? 0 : touchesPhase(datum, f) ? 10 : 20);
   };
   return findings.filter((f) => RANK[f.rule] >= 4).sort((a, b) => score(a) - score(b));
 }
@@ -102,14 +101,22 @@ const OF_STATED_SIZE: ReadonlySet<string> = new Set([
 
 /** A stated dH or dS shows in its own transition's closure, a stated temperature in all that its transition is asked, an anchor in all that its phase is. */
 function explains(rooted: RootedGroup, f: Finding): boolean {
-  const { kind, phase } = rooted.group.members[0].of;
-  const same = `${f.fromPhase}>${f.toPhase}` === phase;
+  const datum = rooted.group.members[0].of;
+  const { kind } = datum;
+  const same = isItsTransition(datum, f);
   if (kind === 'enthalpy' || kind === 'entropy') return same && OF_STATED_SIZE.has(f.rule);
   if (kind === 'temperature') return same || (f.rule === 'lowest-curve-is-the-stated-phase' && touches(rooted, f));
   return touches(rooted, f);
 }
 
 function touches(rooted: RootedGroup, f: Finding): boolean {
-  const places = rooted.group.members[0].of.phase.split('>');
-  return places.includes(f.fromPhase ?? '') || places.includes(f.toPhase ?? '');
+  return touchesPhase(rooted.group.members[0].of, f);
+}
+
+function touchesPhase({ phases }: ConditionDatum, f: Finding): boolean {
+  return phases.includes(f.fromPhase ?? '') || phases.includes(f.toPhase ?? '');
+}
+
+function isItsTransition({ transition, phases }: ConditionDatum, f: Finding): boolean {
+  return transition >= 0 && phases[0] === f.fromPhase && phases[1] === f.toPhase;
 }

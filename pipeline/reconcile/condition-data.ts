@@ -12,7 +12,8 @@ export interface ConditionDatum {
   readonly direction: Float64Array;
   /** For a transition's data: which one. */
   readonly transition: number;
-  readonly phase: string;
+  /** The phases that it bears on: a transition's two, or those whose level rests on the anchor. */
+  readonly phases: readonly string[];
   /** For a temperature: the conditions re-solved with the crossing in its place; null where there is none. */
   readonly resolved: { readonly value: number; readonly y: Float64Array } | null;
 }
@@ -32,7 +33,7 @@ export function dataOf(
     datum: Datum,
     u: number,
     transition: number,
-    phase: string,
+    phases: readonly string[],
     fill: (row: Row, i: number) => number,
     resolved: ConditionDatum['resolved'] = null,
   ): void => {
@@ -42,12 +43,12 @@ export function dataOf(
       direction[i] = fill(row, i);
       if (direction[i] !== 0) any = true;
     });
-    if (any) data.push({ kind, datum, u, direction, transition, phase, resolved });
+    if (any) data.push({ kind, datum, u, direction, transition, phases, resolved });
   };
   joined.forEach((j, k) => {
     const { stated } = j.judged;
     const { at } = j;
-    const place = `${stated.from}>${stated.to}`;
+    const place = [stated.from, stated.to];
     const uT = j.within ? stated.temperature.uRounding : stated.temperature.u;
     add(
       'temperature',
@@ -94,9 +95,13 @@ export function dataOf(
   });
   substance.anchors.forEach((anchor, index) => {
     const { enthalpyOfFormation: h, entropy: s } = anchor;
+    const restingOn = (what: 'h' | 's'): string[] => {
+      const found = curves.filter((c) => restsOn(c, curves, substance, index, what)).map((c) => c.phase);
+      return found.includes(anchor.phase) ? found : [anchor.phase, ...found];
+    };
     if (h !== null) {
       const u = levelU(curves, index, 'h', h);
-      add('formation-enthalpy', h, u, -1, anchor.phase, (row) => {
+      add('formation-enthalpy', h, u, -1, restingOn('h'), (row) => {
         let v = 0;
         for (const use of usesOf(row, joined, anchored))
           if (restsOn(use.curve, curves, substance, index, 'h')) v += use.h;
@@ -105,7 +110,7 @@ export function dataOf(
     }
     if (s !== null) {
       const u = levelU(curves, index, 's', s);
-      add('anchor-entropy', s, u, -1, anchor.phase, (row) => {
+      add('anchor-entropy', s, u, -1, restingOn('s'), (row) => {
         if (row.kind === 'anchor') return anchored[row.transition].anchor === anchor ? 1 : 0;
         let v = 0;
         for (const use of usesOf(row, joined, anchored))

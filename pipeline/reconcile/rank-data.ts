@@ -1,4 +1,4 @@
-import { chiSquareOf, testDatum, type Whitened, whitened } from '../core/physics/adjustment.js';
+import { FreeData, whitened } from '../core/physics/adjustment.js';
 import type { ConditionDatum } from './condition-data.js';
 import type { ConditionSystem } from './conditions.js';
 
@@ -23,47 +23,54 @@ const MOST_ERRORS = 4;
 const ONE_GROUP = 9;
 
 /**
- * Removes one suspect at a time, the rest tested again, until the conditions close at `threshold` or nothing explains them.
- * A removed datum stays in with a variance that lets it be anything.
+ * Sets one suspect free at a time, the rest tested again, until the conditions close at `threshold` or nothing explains
+ * them.
  */
 export function suspectGroups(system: ConditionSystem, threshold: number): SuspectGroup[] {
   const groups: SuspectGroup[] = [];
-  const { m } = system;
-  let q = system.q;
+  const whole = whitened(system.y, system.q, system.m);
+  if (whole === null) return groups;
+  const free = new FreeData(whole);
   let y = system.y;
   const removed = new Set<ConditionDatum>();
-  while (groups.length < Math.min(MOST_ERRORS, m)) {
-    const now = whitened(y, q, m);
-    if (now === null) break;
+  while (groups.length < Math.min(MOST_ERRORS, system.m)) {
+    const before = free.chiSquareOf(y);
     const ranked: RankedDatum[] = [];
     for (const d of system.data) {
-      if (removed.has(d)) continue;
-      const one = rank(now, d);
+      const one = removed.has(d) ? null : rank(free, y, before, system.y, d);
       if (one !== null) ranked.push(one);
     }
     ranked.sort((a, b) => Math.abs(b.w) - Math.abs(a.w));
     const best = ranked[0];
     if (best === undefined || Math.abs(best.w) <= threshold) break;
-    const members = ranked.filter((r) => best.w * best.w - r.w * r.w < ONE_GROUP && Math.abs(r.w) > threshold / 2);
-    groups.push({ members, before: now.chiSquare, after: now.chiSquare - best.w * best.w });
+    const near = (r: RankedDatum): boolean =>
+      best.w * best.w - r.w * r.w < ONE_GROUP + ROUNDING * best.w * best.w && Math.abs(r.w) > threshold / 2;
+    groups.push({ members: ranked.filter(near), before, after: before - best.w * best.w });
     removed.add(best.of);
-    if (best.of.resolved !== null && best.of.kind === 'temperature') {
-      // Every condition of this transition is taken at the crossing from here on.
-      y = merged(y, system.y, best.of.resolved.y);
-    }
-    q = freed(q, m, best.of.direction, best.uProposed);
+    // Every condition of a transition whose temperature is wrong is taken at the crossing from here on.
+    if (best.of.resolved !== null) y = merged(y, system.y, best.of.resolved.y);
+    free.free(best.of.direction);
   }
   return groups;
 }
 
-function rank(now: Whitened, d: ConditionDatum): RankedDatum | null {
-  const test = testDatum(now, d.direction, d.u);
+/** Of a very large chi square, differences below this share are rounding. */
+const ROUNDING = 1e-10;
+
+function rank(
+  free: FreeData,
+  y: Float64Array,
+  before: number,
+  original: Float64Array,
+  d: ConditionDatum,
+): RankedDatum | null {
+  const test = free.test(y, d.direction, d.u);
   if (test === null) return null;
   let { w } = test;
   let proposed = d.datum.value - test.error;
-  if (d.kind === 'temperature' && d.resolved !== null && Math.abs(d.resolved.value - d.datum.value) > 5) {
-    const left = chiSquareOf(now, d.resolved.y);
-    w = Math.sign(test.w || 1) * Math.sqrt(Math.max(0, now.chiSquare - left));
+  if (d.resolved !== null && Math.abs(d.resolved.value - d.datum.value) > 5) {
+    const left = free.chiSquareOf(merged(y, original, d.resolved.y));
+    w = Math.sign(test.w || 1) * Math.sqrt(Math.max(0, before - left));
     proposed = d.resolved.value;
   }
   return {
@@ -78,11 +85,4 @@ function rank(now: Whitened, d: ConditionDatum): RankedDatum | null {
 
 function merged(current: Float64Array, original: Float64Array, resolved: Float64Array): Float64Array {
   return current.map((v, i) => (resolved[i] !== original[i] ? resolved[i] : v));
-}
-
-function freed(q: Float64Array, m: number, d: Float64Array, u: number): Float64Array {
-  const big = (1e4 * u) ** 2;
-  const out = q.slice();
-  for (let i = 0; i < m; i++) for (let j = 0; j < m; j++) out[i * m + j] += big * d[i] * d[j];
-  return out;
 }

@@ -42,32 +42,64 @@ export function whitened(y: Float64Array, q: Float64Array, m: number): Whitened 
   return { m, factor, y: z, chiSquare };
 }
 
-/** Null where the datum does not show in any condition. */
-export function testDatum(system: Whitened, direction: Float64Array, u: number): DatumTest | null {
-  const z = direction.slice(0, system.m);
-  whiten(system.factor, system.m, z);
-  let zz = 0;
-  let zy = 0;
-  for (let i = 0; i < system.m; i++) {
-    zz += z[i] * z[i];
-    zy += z[i] * system.y[i];
+/**
+ * The same conditions with some data set free: each takes one direction of the whitened space out of y and of every other
+ * datum, exactly as an unknown for its error would.
+ */
+export class FreeData {
+  private readonly basis: Float64Array[] = [];
+
+  constructor(private readonly system: Whitened) {}
+
+  /** Whitened, with what the free data can explain taken out. */
+  reduced(vector: Float64Array): Float64Array {
+    const { m, factor } = this.system;
+    const z = vector.slice(0, m);
+    whiten(factor, m, z);
+    for (const e of this.basis) subtract(z, e);
+    return z;
   }
-  if (!(zz > 0)) return null;
-  const root = Math.sqrt(zz);
-  return {
-    w: zy / root,
-    error: zy / zz,
-    uError: 1 / root,
-    redundancy: Math.min(1, u * u * zz),
-    smallestDetectable: NON_CENTRALITY / root,
-  };
+
+  free(direction: Float64Array): void {
+    const z = this.reduced(direction);
+    const norm = Math.sqrt(dot(z, z));
+    if (norm > 0) this.basis.push(z.map((v) => v / norm));
+  }
+
+  /** The statistic that is left of the misclosures y. */
+  chiSquareOf(y: Float64Array): number {
+    const z = this.reduced(y);
+    return dot(z, z);
+  }
+
+  /** Null where the datum does not show in any condition, or not beside the free ones. */
+  test(y: Float64Array, direction: Float64Array, u: number): DatumTest | null {
+    const z = this.reduced(direction);
+    const zz = dot(z, z);
+    const { m, factor } = this.system;
+    const whole = direction.slice(0, m);
+    whiten(factor, m, whole);
+    if (!(zz > 1e-10 * dot(whole, whole))) return null;
+    const zy = dot(z, this.reduced(y));
+    const root = Math.sqrt(zz);
+    return {
+      w: zy / root,
+      error: zy / zz,
+      uError: 1 / root,
+      redundancy: Math.min(1, u * u * zz),
+      smallestDetectable: NON_CENTRALITY / root,
+    };
+  }
 }
 
-/** The statistic of other misclosures under the same covariance. */
-export function chiSquareOf(system: Whitened, y: Float64Array): number {
-  const z = y.slice(0, system.m);
-  whiten(system.factor, system.m, z);
+function dot(a: Float64Array, b: Float64Array): number {
   let sum = 0;
-  for (let i = 0; i < system.m; i++) sum += z[i] * z[i];
+  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
   return sum;
+}
+
+/** Takes the part along the unit vector e out of z. */
+function subtract(z: Float64Array, e: Float64Array): void {
+  const along = dot(z, e);
+  for (let i = 0; i < z.length; i++) z[i] -= along * e[i];
 }

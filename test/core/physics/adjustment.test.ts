@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { chiSquareOf, NON_CENTRALITY, testDatum, whitened } from '../../../pipeline/core/physics/adjustment.js';
+import { FreeData, NON_CENTRALITY, whitened } from '../../../pipeline/core/physics/adjustment.js';
 import { column, type Matrix, product, solved, transposed } from '../numeric/dense.js';
 import { seeded } from '../numeric/random.js';
 
@@ -32,8 +32,10 @@ function system(u: readonly number[], y: readonly number[], conditions: Matrix) 
   const q = product(scaled, transposed(conditions));
   const result = whitened(Float64Array.from(y), Float64Array.from(q.flat()), conditions.length);
   if (result === null) throw new Error('the conditions repeat each other');
-  return result;
+  return { chiSquare: result.chiSquare, y: Float64Array.from(y), free: new FreeData(result) };
 }
+
+const testDatum = (s: ReturnType<typeof system>, d: Float64Array, u: number) => s.free.test(s.y, d, u);
 
 const direction = (conditions: Matrix, i: number): Float64Array => Float64Array.from(conditions, (row) => row[i]);
 
@@ -99,7 +101,7 @@ describe('adjustment in condition form', () => {
     expect(sum).toBeCloseTo(CONDITIONS.length, 10);
     const vPv = other.residuals.reduce((total, v, i) => total + (v / u[i]) ** 2, 0);
     expect(s.chiSquare).toBeCloseTo(vPv, 9);
-    expect(chiSquareOf(s, Float64Array.from(misclosures))).toBeCloseTo(s.chiSquare, 12);
+    expect(s.free.chiSquareOf(Float64Array.from(misclosures))).toBeCloseTo(s.chiSquare, 12);
   });
 
   it("reveals Baarda's smallest detectable error in 80 +- 3 % of 4000 draws, and accuses a clean datum in 0.1 %", () => {
@@ -137,6 +139,19 @@ describe('adjustment in condition form', () => {
       expect(w.indexOf(Math.max(...w))).toBe(bad);
       expect(testDatum(s, direction(CONDITIONS, bad), u[bad])?.error).toBeCloseTo(1.5, 9);
     }
+  });
+
+  it('finds two errors, one set free after the other, as large as they are', () => {
+    const u = LINES.map((line) => 0.05 * Math.sqrt(line.miles));
+    const errors = [800, 0, 0, 0, 3, 0, 0];
+    const y = product(CONDITIONS, column(errors)).map((row) => row[0]);
+    const s = system(u, y, CONDITIONS);
+    s.free.free(direction(CONDITIONS, 0));
+    const second = testDatum(s, direction(CONDITIONS, 4), u[4]);
+    expect(second?.error).toBeCloseTo(3, 8);
+    s.free.free(direction(CONDITIONS, 4));
+    expect(s.free.chiSquareOf(s.y)).toBeLessThan(1e-9);
+    expect(testDatum(s, direction(CONDITIONS, 0), u[0])).toBeNull();
   });
 
   it('says so where a datum shows in no condition, and where conditions repeat each other', () => {
