@@ -35,7 +35,7 @@ export interface LevelOrigin {
 
 /**
  * Cp(T) = c0 + c1 x + c2 x^2 + c3 x^3 with x = T - knotK[i] in interval i; n knots, n - 1 intervals.
- * H and S at the knots are on the family's zeros where `hasEnthalpyLevel` / `hasEntropyLevel`, else relative to the first knot.
+ * H and S at the knots are on the family's zeros where `hasEnthalpyLevel` / `hasEntropyLevel`, else from a zero of the family's own, which its `family` names.
  */
 export interface PhaseCurve {
   readonly phase: string;
@@ -47,16 +47,16 @@ export interface PhaseCurve {
   readonly c3: Float64Array;
   readonly enthalpyJPerMol: Float64Array;
   readonly entropyJPerMolK: Float64Array;
-  /** 0 measured knot (a printed row), 1 made by us (298.15 K, joins, tail), 2 continuation. */
+  /** 0 measured knot (a printed row), 1 inserted (298.15 K, joins, tail), 2 continuation. */
   readonly knotKind: Uint8Array;
   readonly measuredFromK: number;
   readonly measuredToK: number;
   readonly hasEnthalpyLevel: boolean;
   readonly hasEntropyLevel: boolean;
-  /** How the levels are known: 'anchor' | 'table' | 'third-law' | the index of the transition they were carried through. */
+  /** How the levels are known; `transition`: carried through the one that `carriedThrough` names. */
   readonly enthalpyLevelFrom: 'anchor' | 'table' | 'transition' | 'none';
   readonly entropyLevelFrom: 'anchor' | 'table' | 'third-law' | 'transition' | 'none';
-  /** Relative standard uncertainty of Cp between knots beyond its integrals, and of the continuation. */
+  /** Standard uncertainty of Cp at the knots [J/(mol K)]; calibration and continuation come on top. */
   readonly uHeatCapacityJPerMolK: Float64Array;
   /** State covariance of (H, S) at each knot, rows' errors only (levels apart): var H, cov HS, var S. */
   readonly varH: Float64Array;

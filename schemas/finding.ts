@@ -42,6 +42,7 @@ export type ReadingProblem =
   | 'name-unmapped'
   | 'phase-unmapped'
   | 'substance-unknown'
+  | 'substance-twice'
   | 'file-missing'
   | 'file-unreadable'
   | 'encoding-converted'

@@ -23,21 +23,33 @@ export function levelled(shapes: readonly PhaseShape[], family: Family, policy: 
   const growth = policy.continuation.relativePer100K / 100;
   const residual = family.substance.substance.residualEntropyJPerMolK;
   const levels = shapes.map((shape) => ownLevel(shape, family.anchors, growth, residual));
+  let { zeros } = family;
   for (;;) {
     carryAll(shapes, levels, family);
     const openH = levels.every((l) => l.h === null);
     const openS = levels.every((l) => l.s === null);
     if (!openH && !openS) break;
-    if (openH) levels[0] = { ...levels[0], h: 0, uH: 0, hFrom: 'none' };
-    if (openS) levels[0] = { ...levels[0], s: 0, uS: 0, sFrom: 'none' };
+    // Nothing anchors the family: it counts from its first phase, and says so.
+    if (openH) {
+      levels[0] = { ...levels[0], h: 0, uH: 0, hFrom: 'none' };
+      zeros = { ...zeros, enthalpyZero: ownZero(shapes[0].phase, shapes[0].referenceK) };
+    }
+    if (openS) {
+      levels[0] = { ...levels[0], s: 0, uS: 0, sFrom: 'none' };
+      zeros = { ...zeros, entropyZero: ownZero(shapes[0].phase, shapes[0].entropyReferenceK) };
+    }
   }
-  const curves = shapes.map((shape, k) => curveOf(shape, levels[k], family, growth));
+  const curves = shapes.map((shape, k) => curveOf(shape, levels[k], { ...family, zeros }, growth));
   curves.forEach((curve, k) => {
     const { hOrigin, sOrigin } = levels[k];
     if (hOrigin !== null) curve.enthalpyLevel = originOf(hOrigin, curves);
     if (sOrigin !== null) curve.entropyLevel = originOf(sOrigin, curves);
   });
   return curves;
+}
+
+function ownZero(phase: string, atK: number): string {
+  return `${phase} at ${atK} K`;
 }
 
 function originOf(origin: Origin, curves: readonly PhaseCurve[]): LevelOrigin {

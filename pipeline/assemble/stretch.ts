@@ -25,7 +25,7 @@ export class Stretch {
     readonly f: Float64Array,
     readonly fVar: Float64Array,
     readonly jump: Uint8Array,
-    /** 0 a printed row, 1 made by us. */
+    /** 0 a printed row, 1 inserted. */
     readonly kind: Uint8Array,
     readonly absoluteH: boolean,
     readonly hasH: boolean,

@@ -2,7 +2,7 @@ import type { ExaminedCase, NamedCell } from '../../schemas/checked.js';
 import type { Finding, Outcome, Suspect } from '../../schemas/finding.js';
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
-import { kindOf, outcome } from './place.js';
+import { kindOf, outcome, placeOf } from './place.js';
 import { enthalpyFollowsHeatCapacity } from './rules/enthalpy-follows-heat-capacity.js';
 import { entropyFollowsHeatCapacity } from './rules/entropy-follows-heat-capacity.js';
 import { functionsClose } from './rules/functions-close.js';
@@ -44,7 +44,7 @@ function examineCase(harmonised: HarmonisedCase, policy: Policy): ExaminedCase {
     for (const rule of TABLE_RULES) {
       const judged = judgeTable(rule, id, series, index, verdict, policy);
       outcomes.push(
-        outcome(id, rule.rule, series.phase, judged.outcome, evidence, {
+        outcome(id, rule.rule, placeOf(series), judged.outcome, evidence, {
           missing: judged.missing,
           smallestDetectable: judged.smallestDetectable,
         }),

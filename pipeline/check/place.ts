@@ -22,6 +22,12 @@ export function outcome(
   };
 }
 
+/** Where a series' outcomes stand in the coverage: its phase, and the isobar of a real fluid's table. */
+export function placeOf(series: Series): string {
+  const { isobarPa } = series.table;
+  return isobarPa === null ? series.phase : `${series.phase} at ${isobarPa} Pa`;
+}
+
 export function addressOf(series: Series, row: number, column: number): Address {
   return {
     source: series.table.source,

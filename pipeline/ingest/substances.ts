@@ -103,7 +103,7 @@ export function readSubstances(bytes: Uint8Array): SubstancesResult {
     if (earlier !== undefined) {
       report(
         {
-          problem: 'substance-unknown',
+          problem: 'substance-twice',
           substance: id,
           read: id,
           wanted: `each id once; it stands in line ${earlier} too`,

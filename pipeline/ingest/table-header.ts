@@ -61,9 +61,11 @@ export function readHeader(plan: TablePlan, bytes: Uint8Array, splitter: RowSpli
     missing = readingFinding({
       problem: 'column-missing',
       address: address(header),
-      read: found ? headers.join(' | ') || `${cells} columns without a header` : 'no header line',
+      read: found
+        ? headers.join(' | ') || `${cells} columns without a header`
+        : 'nothing: the file ends before a header line',
       wanted: `a column "${header}"${nearestWords(header, headers)}`,
-      remedy: `correct the header that the descriptor names, or its skipLines and delimiter; until then nothing of table ${meaning.table} is used`,
+      remedy: `write the column's name as the file has it under tables[${meaning.table.replace('#', '')}].columns in source.json, or mend skipLines and delimiter there; until then nothing of this table is used`,
     });
   }
   const known = new Set([...named, ...plan.where.map((clause) => clause.header), ...plan.namedElsewhere]);

@@ -255,7 +255,8 @@ function namedElsewhere({ named, index }: TableSetting, file: string): string[] 
 }
 
 function fileMissing({ json, index, sourceId, fileNames }: TableSetting, pattern: string): Finding {
-  const wanted = `a file of the folder ${sourceId}: ${fileNames.slice(0, 20).join(', ')}`;
+  const there = fileNames.length === 0 ? 'which holds none' : fileNames.slice(0, 20).join(', ');
+  const wanted = `a file of the folder ${sourceId}: ${there}`;
   const remedy = 'put the file there or correct the name; * stands for any letters, ? for one';
   return jsonFinding(json, 'file-missing', ['tables', index, 'file'], wanted, pattern, remedy);
 }

@@ -7,6 +7,7 @@ import { acceptedOf } from './acceptances.js';
 import { withCauses } from './causes.js';
 import { conditionsOf } from './conditions.js';
 import { explained, withExplanations } from './explained.js';
+import { oneOutcomeAPlace } from './one-outcome.js';
 import { type SuspectGroup, suspectGroups } from './rank-data.js';
 import { suspectsOf } from './suspects.js';
 
@@ -57,7 +58,7 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
     : open.some((f) => f.severity === 'doubt')
       ? 'flagged'
       : 'cleared';
-  return { checked, findings: ordered, outcomes: checked.outcomes, suspects, verdict };
+  return { checked, findings: ordered, outcomes: oneOutcomeAPlace(checked.outcomes), suspects, verdict };
 }
 
 /** Only where a transition rule disagrees is the system solved; what the rules say of clean data stands already. */

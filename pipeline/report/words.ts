@@ -17,14 +17,14 @@ export function sayFinding(finding: Finding): string {
 
 /** `lead-study/points.csv line 412, column S`; a line of 0 is the descriptor or the whole file. */
 export function sayAddress({ source, file, line, column }: Address): string {
-  const path = file === '' ? source : `${source}/${file}`;
+  const path = source === '' || file === '' ? source + file : `${source}/${file}`;
   const what = /^character \d+$/.test(column) ? column : `column ${column}`;
   return `${path}${line > 0 ? ` line ${line}` : ''}${column === '' ? '' : `, ${what}`}`;
 }
 
 /** `lead-study/points.csv:412 S`, as editors and terminals like it. */
 export function sayPlace({ source, file, line, column }: Address): string {
-  const path = file === '' ? source : `${source}/${file}`;
+  const path = source === '' || file === '' ? source + file : `${source}/${file}`;
   return `${path}${line > 0 ? `:${line}` : ''}${column === '' ? '' : ` ${column}`}`;
 }
 
@@ -136,7 +136,8 @@ const READING: Readonly<Record<ReadingProblem, (quoted: string, read: string) =>
   'name-unmapped': (read) => `No substance is called ${read}`,
   'phase-unmapped': (read) => `No phase is called ${read}`,
   'substance-unknown': (read) => `${read} is no substance of substances.csv`,
-  'file-missing': (read) => `There is no file ${read}`,
+  'substance-twice': (read) => `The substance ${read} is listed twice`,
+  'file-missing': (read) => `There is no file: ${read}`,
   'file-unreadable': (read) => `The file cannot be read: ${read}`,
   'encoding-converted': (read) => `The file is not UTF-8 and was read as ${read}`,
   'descriptor-unreadable': (read) => `The descriptor is not JSON that can be read: ${read}`,

@@ -27,7 +27,8 @@ export function accountForAll(
         problem: 'key-without-row',
         read: substance.id,
         wanted: 'at least one row in a table of a source',
-        remedy: 'Add a table, map the name that a source gives it, or take it out of substances.csv',
+        remedy:
+          'Mend the sources that could not be read, if any are named above; else add a table, map the name that a source gives it, or take it out of substances.csv',
       },
     });
     made.push(finding);

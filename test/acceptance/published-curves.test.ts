@@ -39,7 +39,7 @@ function published(cell: SourceCell): number {
   return cell.unit === 'kJ/mol' ? si / 1000 : si;
 }
 
-/** The prototype's own worst. */
+/** The two tables with real steps or a lambda peak. */
 function allowed({ substance, place }: SourceCell): number {
   return (substance === 'iron' && place === 'cr-alpha') || (substance === 'aluminium' && place === 'g') ? 0.9 : 0.65;
 }

@@ -59,18 +59,18 @@ describe('the published sets', () => {
 
 describe('the computed temperatures', () => {
   it.each([
-    ['lead', 'cr', 'l', 600.6, 0.1],
-    ['aluminium', 'cr', 'l', 933.45, 0.1],
-    ['copper', 'cr', 'l', 1358, 0.1],
-    ['titanium', 'cr-beta', 'l', 1939, 0.1],
-    ['iron', 'cr-alpha', 'l', 1809, 0.1],
-    ['sodium-chloride', 'cr', 'l', 1073.8, 0.1],
-    ['magnesium-oxide', 'cr', 'l', 3105, 0.1],
-    ['lead', 'l', 'g', 2019.022, 0.02],
-    ['aluminium', 'l', 'g', 2790.812, 0.02],
-    ['copper', 'l', 'g', 2843.261, 0.02],
-    ['titanium', 'l', 'g', 3630.956, 0.02],
-    ['iron', 'l', 'g', 3133.345, 0.02],
+    ['lead', 'cr', 'l', 600.6, 0.09],
+    ['aluminium', 'cr', 'l', 933.45, 0.09],
+    ['copper', 'cr', 'l', 1358, 0.09],
+    ['titanium', 'cr-beta', 'l', 1939, 0.09],
+    ['iron', 'cr-alpha', 'l', 1809, 0.09],
+    ['sodium-chloride', 'cr', 'l', 1073.8, 0.09],
+    ['magnesium-oxide', 'cr', 'l', 3105, 0.09],
+    ['lead', 'l', 'g', 2019.022, 0.005],
+    ['aluminium', 'l', 'g', 2790.812, 0.005],
+    ['copper', 'l', 'g', 2843.261, 0.005],
+    ['titanium', 'l', 'g', 3630.956, 0.005],
+    ['iron', 'l', 'g', 3133.345, 0.005],
     ['titanium', 'cr-alpha', 'cr-beta', 1166, 0.15],
     ['iron', 'cr-alpha', 'cr-gamma', 1184, 1],
     ['iron', 'cr-gamma', 'cr-alpha', 1665, 1.6],
@@ -137,17 +137,17 @@ describe('the computed temperatures', () => {
 });
 
 describe('water', () => {
-  it('freezes and boils on the 101325 Pa isobars where IAPWS says, to 2 mK', () => {
+  it('freezes and boils on the 101325 Pa isobars where IAPWS says, to 0.1 mK', () => {
     const also = { isobar_Pa: 101325, pressure_Pa: 101325 };
     const ice = transition('water', 'cr-Ih', 'l', also);
     const steam = transition('water', 'l', 'g', also);
-    expect(Math.abs(number(ice, 'computed_temperature_K') - 273.1525)).toBeLessThan(0.002);
-    expect(Math.abs(number(steam, 'computed_temperature_K') - 373.1243)).toBeLessThan(0.002);
+    expect(Math.abs(number(ice, 'computed_temperature_K') - 273.1525)).toBeLessThan(0.0001);
+    expect(Math.abs(number(steam, 'computed_temperature_K') - 373.1243)).toBeLessThan(0.0001);
   });
 
   it('boils at 372.78 K and 1 bar by the ideal-gas tables with the gas term', () => {
     const row = transition('water', 'l', 'g', { isobar_Pa: null, gas: 'real', pressure_Pa: 100000 });
-    expect(Math.abs(number(row, 'computed_temperature_K') - 372.78)).toBeLessThan(0.1);
+    expect(Math.abs(number(row, 'computed_temperature_K') - 372.78)).toBeLessThan(0.02);
   });
 });
 

@@ -194,7 +194,10 @@ describe('the index of a table', () => {
 
   it('an empty file lacks its header line', () => {
     const index = indexRows(planOf({}), encode(''), BOTH);
-    expect(reading(index.findings[0])).toMatchObject({ problem: 'column-missing', read: 'no header line' });
+    expect(reading(index.findings[0])).toMatchObject({
+      problem: 'column-missing',
+      read: 'nothing: the file ends before a header line',
+    });
     expect(index.runs.count).toBe(0);
   });
 });

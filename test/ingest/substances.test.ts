@@ -70,7 +70,7 @@ describe('the list of substances', () => {
     expect(substances).toHaveLength(1);
     expect(brief(findings)).toEqual([
       'doubt - column-unknown substances.csv:1 moler_mass',
-      'fault lead substance-unknown substances.csv:3 substance',
+      'fault lead substance-twice substances.csv:3 substance',
       'fault - substance-unknown substances.csv:4 substance',
     ]);
     expect(reading(findings[0]).wanted).toContain('nearest: molar_mass');

@@ -12,7 +12,7 @@ const REPORTING_SEED = 700_001;
 const SLIPS = Number(process.env.SLIPS ?? 70);
 const FIRST_SEED = Number(process.env.SLIP_SEED ?? REPORTING_SEED);
 const SOURCES = process.env.SLIP_SOURCES ?? 'test/published';
-const sizes = process.env.SLIP_SIZES === 'design' ? 'design' : 'printed';
+const sizes = process.env.SLIP_SIZES === 'material' ? 'material' : 'printed';
 const LEAST_SHARE = 0.97;
 
 it(

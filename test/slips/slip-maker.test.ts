@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { readDelimited } from './delimited.js';
 import { seededRandom } from './random.js';
-import { designLimit, plantSlip, SLIP_KINDS } from './slip-maker.js';
+import { materialLimit, plantSlip, SLIP_KINDS } from './slip-maker.js';
 import { listCells } from './source-cells.js';
 
 const PUBLISHED = 'test/published';
@@ -63,9 +63,9 @@ describe('the slip maker', () => {
 
   it('takes the larger of the last place and what a user would notice as the least change', () => {
     const cell = listCells(PUBLISHED).find((c) => c.source === 'handbook-lead' && c.quantity === 'entropy')!;
-    expect(designLimit({ ...cell, value: 200, decimals: 3 })).toBeCloseTo(0.2, 12);
-    expect(designLimit({ ...cell, value: 20, decimals: 3 })).toBeCloseTo(0.05, 12);
-    expect(designLimit({ ...cell, value: 20, decimals: 1 })).toBeCloseTo(0.5, 12);
+    expect(materialLimit({ ...cell, value: 200, decimals: 3 })).toBeCloseTo(0.2, 12);
+    expect(materialLimit({ ...cell, value: 20, decimals: 3 })).toBeCloseTo(0.05, 12);
+    expect(materialLimit({ ...cell, value: 20, decimals: 1 })).toBeCloseTo(0.5, 12);
   });
 
   it('reads quoted cells, comments, title lines, CRLF and a byte-order mark', () => {

@@ -47,7 +47,7 @@ export interface SlipWish {
   readonly random: Random;
   /** Times the least change; for cells of tables. Default: log-uniform from 1 to 20, at most half of the figure. */
   readonly size?: number;
-  /** Least change of a cell in its own unit; Infinity where none is ever seen. Default `designLimit`. */
+  /** Least change of a cell in its own unit; Infinity where none is ever seen. Default `materialLimit`. */
   readonly least?: (cell: SourceCell) => number;
 }
 
@@ -72,7 +72,7 @@ const LARGEST_SHARE = 0.5;
  */
 export function plantSlip(sourcesDir: string, wish: SlipWish, known?: readonly SourceCell[]): Slip | null {
   const { kind, random } = wish;
-  const least = wish.least ?? designLimit;
+  const least = wish.least ?? materialLimit;
   const cells = known ?? listCells(sourcesDir);
   const candidates = cells.filter(
     (cell) => (wish.substance === undefined || cell.substance === wish.substance) && canHold(kind, cell, cells),
@@ -108,7 +108,7 @@ export function plantSlip(sourcesDir: string, wish: SlipWish, known?: readonly S
  * The least change in the cell's own unit that is to be found where nothing else is printed: five units of the last place
  * and what a user would notice (0.1 % and 0.05 J/(mol K) of S and -[G - H]/T, 0.05 kJ/mol of H, 1 % of Cp).
  */
-export function designLimit(cell: SourceCell): number {
+export function materialLimit(cell: SourceCell): number {
   const lastPlaces = 5 * 10 ** -cell.decimals;
   switch (cell.quantity) {
     case 'entropy':

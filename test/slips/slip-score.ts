@@ -1,6 +1,6 @@
 /** Holds what a run says about a spoilt library against the slip that was planted, and against the clean library's run. */
 import type { Slip } from './slip-maker.js';
-import { designLimit } from './slip-maker.js';
+import { materialLimit } from './slip-maker.js';
 import type { SourceCell } from './source-cells.js';
 
 /** What a run says, as far as the score needs it; field for field as published. */
@@ -105,7 +105,7 @@ const TESTED_TIMES_T: Readonly<Record<string, readonly string[]>> = { 'enthalpy-
 export const TIMES_DETECTABLE = 1.5;
 
 /**
- * Least change of a cell, in its own unit: the design's limit, and 1.5 times the printed smallest detectable error where
+ * Least change of a cell, in its own unit: what a user would notice, and 1.5 times the printed smallest detectable error where
  * one is printed (of several rules the sharpest). Infinity where each rule that could test the cell is untestable there.
  */
 export function leastFrom(clean: Seen): (cell: SourceCell) => number {
@@ -126,7 +126,7 @@ export function leastFrom(clean: Seen): (cell: SourceCell) => number {
       ...timesT.flatMap((row) => (row.smallestDetectable ?? Number.NaN) * cell.temperatureK),
     ].filter((smallest) => !Number.isNaN(smallest));
     const si = printed.length === 0 ? 0 : Math.min(...printed);
-    return Math.max(designLimit(cell), (TIMES_DETECTABLE * si) / (cell.unit.startsWith('k') ? 1000 : 1));
+    return Math.max(materialLimit(cell), (TIMES_DETECTABLE * si) / (cell.unit.startsWith('k') ? 1000 : 1));
   };
 }
 

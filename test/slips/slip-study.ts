@@ -3,7 +3,7 @@ import { cpSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { seededRandom } from './random.js';
-import { designLimit, plantSlip, SLIP_KINDS, type Slip, type SlipKind } from './slip-maker.js';
+import { materialLimit, plantSlip, SLIP_KINDS, type Slip, type SlipKind } from './slip-maker.js';
 import { leastFrom, type Seen, type SlipScore, scoreSlip } from './slip-score.js';
 import { listCells } from './source-cells.js';
 
@@ -21,8 +21,8 @@ export interface Study {
 
 export interface StudyOptions {
   readonly kinds?: readonly SlipKind[];
-  /** `printed`: slips from 1.5 times the printed smallest detectable error up; `design`: from the design's limits up, though the clean run may say that so little would not be seen. */
-  readonly sizes?: 'printed' | 'design';
+  /** `printed`: slips from 1.5 times the printed smallest detectable error up; `material`: from what a user would notice up, though the clean run may say that so little would not be seen. */
+  readonly sizes?: 'printed' | 'material';
 }
 
 /**
@@ -37,7 +37,7 @@ export async function studySlips(
 ): Promise<Study> {
   const clean = await run(sourcesDir);
   const cells = listCells(sourcesDir);
-  const least = sizes === 'printed' ? leastFrom(clean) : designLimit;
+  const least = sizes === 'printed' ? leastFrom(clean) : materialLimit;
   const studied: Studied[] = [];
   const without: { seed: number; kind: SlipKind }[] = [];
   for (const [turn, seed] of seeds.entries()) {

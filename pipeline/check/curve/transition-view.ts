@@ -49,8 +49,9 @@ function viewOf(
   substance: HarmonisedCase,
 ): TransitionView {
   const { curves } = assembled;
-  const place = `${stated.from}>${stated.to}`;
   const [fromCurve, toCurve] = pairOf(stated, curves);
+  const isobarPa = fromCurve < 0 ? null : curves[fromCurve].family.isobarPa;
+  const place = `${stated.from}>${stated.to}${isobarPa === null ? '' : ` at ${isobarPa} Pa`}`;
   const temperatureK = stated.temperature.value;
   const base = { stated, index, place, fromCurve, toCurve };
   if (!(stated.pressurePa > 0)) {

@@ -1,4 +1,5 @@
 import { makeFinding } from '../../../schemas/make-finding.js';
+import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import {
   isFirstOrder,
   type Judgement,
@@ -30,7 +31,7 @@ export function crossingAgrees({ substance, view, policy, limits }: TransitionCo
   const statedK = stated.temperature.value;
   const dS = pair.at.entropyJPerMolK;
   const uK = Math.hypot(pair.uGapJPerMol / Math.abs(dS), view.uStatedK);
-  const smallestDetectable = 4.13 * uK;
+  const smallestDetectable = NON_CENTRALITY * uK;
   const base = () =>
     ({
       rule,

@@ -1,6 +1,7 @@
 import type { Finding, Outcome } from '../../../schemas/finding.js';
 import type { Series } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
+import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import { stateCovariance } from '../../core/physics/curve-uncertainty.js';
 import {
   isFirstOrder,
@@ -9,7 +10,7 @@ import {
   type TransitionContext,
   transitionKey,
 } from '../curve/judgement.js';
-import { addressOf, evidenceOf, kindOf, outcome } from '../place.js';
+import { addressOf, evidenceOf, kindOf, outcome, placeOf } from '../place.js';
 
 /** S rises with T inside a table: a row whose S lies below the row before it by more than both roundings. */
 export function entropyRisesInTable(
@@ -18,7 +19,7 @@ export function entropyRisesInTable(
   named: (row: number) => boolean,
 ): { outcome: Outcome; findings: Finding[] } {
   const s = series.entropy;
-  const place = series.phase;
+  const place = placeOf(series);
   if (s === null) {
     return {
       outcome: outcome(substance, 'entropy-rises', place, 'untestable', null, { missing: 'a column of entropies' }),
@@ -38,7 +39,7 @@ export function entropyRisesInTable(
             rule: 'entropy-rises',
             severity: 'fault',
             substance,
-            fromPhase: place,
+            fromPhase: series.phase,
             temperatureK: series.temperatureK[i],
             observed: s.values[i],
             expected: s.values[last],
@@ -80,7 +81,7 @@ export function entropyRisesAcross({ substance, view, limits }: TransitionContex
   if (dS >= -limits.fault * u) {
     return {
       outcome: outcome(substance, 'entropy-rises', view.place, 'agrees', view.evidence, {
-        smallestDetectable: 4.13 * u,
+        smallestDetectable: NON_CENTRALITY * u,
       }),
       findings: [],
     };

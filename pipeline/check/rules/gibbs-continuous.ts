@@ -1,4 +1,5 @@
 import { makeFinding } from '../../../schemas/make-finding.js';
+import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import {
   isFirstOrder,
   type Judgement,
@@ -31,7 +32,7 @@ export function gibbsContinuous({ substance, view, policy, limits }: TransitionC
   const u = Math.hypot(pair.uGapJPerMol, dS * view.uStatedK);
   const material = policy.material.transitionTemperatureK * Math.abs(dS);
   const severity = gravity(pair.at.gapJPerMol, u, material, limits);
-  const smallestDetectable = 4.13 * u;
+  const smallestDetectable = NON_CENTRALITY * u;
   if (severity === null) {
     return {
       outcome: outcome(substance, rule, view.place, 'agrees', view.evidence, { smallestDetectable }),

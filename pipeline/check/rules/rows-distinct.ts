@@ -1,7 +1,7 @@
 import type { Finding, Outcome } from '../../../schemas/finding.js';
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
-import { addressOf, evidenceOf, kindOf, outcome } from '../place.js';
+import { addressOf, evidenceOf, kindOf, outcome, placeOf } from '../place.js';
 
 /**
  * No two rows of a series at one temperature disagree, two-sided rows aside (equal S and H, other Cp: a glass or lambda
@@ -68,11 +68,14 @@ export function rowsDistinct(substance: string, series: Series): { outcome: Outc
     );
   }
   const kind = findings.length > 0 ? 'disagrees' : 'agrees';
-  return { outcome: outcome(substance, 'rows-distinct', series.phase, kind, kindOf([series.table])), findings };
+  return { outcome: outcome(substance, 'rows-distinct', placeOf(series), kind, kindOf([series.table])), findings };
 }
 
 function untestable(substance: string, series: Series, missing: string): { outcome: Outcome; findings: Finding[] } {
-  return { outcome: outcome(substance, 'rows-distinct', series.phase, 'untestable', null, { missing }), findings: [] };
+  return {
+    outcome: outcome(substance, 'rows-distinct', placeOf(series), 'untestable', null, { missing }),
+    findings: [],
+  };
 }
 
 /** Where a measured series returns to a temperature, its heat capacities agree within five standard uncertainties. */
@@ -96,7 +99,7 @@ function runsAgree(substance: string, series: Series): { outcome: Outcome; findi
   }
   const evidence = kindOf([series.table]);
   if (worst === null) {
-    return { outcome: outcome(substance, 'rows-distinct', series.phase, 'agrees', evidence), findings: [] };
+    return { outcome: outcome(substance, 'rows-distinct', placeOf(series), 'agrees', evidence), findings: [] };
   }
   const { a, b, tolerance } = worst;
   const finding = makeFinding({
@@ -120,7 +123,7 @@ function runsAgree(substance: string, series: Series): { outcome: Outcome; findi
       second: series.text(b, cp.column),
     },
   });
-  return { outcome: outcome(substance, 'rows-distinct', series.phase, 'disagrees', evidence), findings: [finding] };
+  return { outcome: outcome(substance, 'rows-distinct', placeOf(series), 'disagrees', evidence), findings: [finding] };
 }
 
 function disagreement(series: Series, a: number, b: number): { q: SeriesQuantity; both: boolean } | null {

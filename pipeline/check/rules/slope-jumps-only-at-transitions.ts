@@ -1,7 +1,7 @@
 import type { Finding, Outcome } from '../../../schemas/finding.js';
 import type { Series, StatedTransition } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
-import { addressOf, evidenceOf, kindOf, outcome } from '../place.js';
+import { addressOf, evidenceOf, kindOf, outcome, placeOf } from '../place.js';
 
 /** No jump of S and H between two rows at one temperature inside a phase where no first-order transition is stated. */
 export function slopeJumpsOnlyAtTransitions(
@@ -16,7 +16,7 @@ export function slopeJumpsOnlyAtTransitions(
   const t = series.temperatureK;
   if (s === null && h === null) {
     return {
-      outcome: outcome(substance, rule, series.phase, 'untestable', null, {
+      outcome: outcome(substance, rule, placeOf(series), 'untestable', null, {
         missing: 'a column of entropies or enthalpies',
       }),
       findings,
@@ -24,7 +24,7 @@ export function slopeJumpsOnlyAtTransitions(
   }
   if (series.table.basis === 'measured') {
     return {
-      outcome: outcome(substance, rule, series.phase, 'untestable', null, {
+      outcome: outcome(substance, rule, placeOf(series), 'untestable', null, {
         missing: 'an evaluated table: a measured series may return to a temperature',
       }),
       findings,
@@ -66,5 +66,5 @@ export function slopeJumpsOnlyAtTransitions(
     );
   }
   const kind = findings.length > 0 ? 'disagrees' : 'agrees';
-  return { outcome: outcome(substance, rule, series.phase, kind, kindOf([series.table])), findings };
+  return { outcome: outcome(substance, rule, placeOf(series), kind, kindOf([series.table])), findings };
 }

@@ -1,4 +1,5 @@
 import { makeFinding } from '../../../schemas/make-finding.js';
+import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import { stateCovariance } from '../../core/physics/curve-uncertainty.js';
 import {
   isFirstOrder,
@@ -39,7 +40,7 @@ export function statedTransitionJumps({ substance, view, policy, limits }: Trans
       findings: [],
     };
   }
-  const smallestDetectable = 4.13 * u;
+  const smallestDetectable = NON_CENTRALITY * u;
   const agrees: Judgement = {
     outcome: outcome(substance, rule, view.place, 'agrees', view.evidence, { smallestDetectable }),
     findings: [],

@@ -5,6 +5,7 @@ import { makeFinding } from '../../../schemas/make-finding.js';
 import type { Policy } from '../../../schemas/policy.js';
 import type { NumberQuantity } from '../../../schemas/quantities.js';
 import { printedLike, printedNumber } from '../../core/numeric/printed-like.js';
+import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import { addressOf, evidenceOf } from '../place.js';
 import { type Anomaly, materialS } from '../table/left-over.js';
 import type { SuspectCell, TableVerdict } from '../table/name-cells.js';
@@ -204,7 +205,7 @@ function suspectOf(
     proposed: cell.proposed,
     uProposed: cell.uProposed,
     proposedPrinted: proposedPrinted(series.text(cell.row, q.column), cell.observed, cell.proposed),
-    smallestDetectable: 4.13 * cell.uProposed,
+    smallestDetectable: NON_CENTRALITY * cell.uProposed,
     explanation: null,
     explainedPrinted: null,
   };

@@ -1,5 +1,6 @@
 import type { Datum } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
+import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import {
   isFirstOrder,
   type Judgement,
@@ -73,7 +74,7 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
   const dS = Math.abs(entropy?.value ?? (enthalpy as Datum).value / t);
   const material = policy.material.transitionTemperatureK * Math.max(dS, Math.abs(worst.expected) / t);
   const severity = gravity(difference, worst.u, material, limits);
-  const smallestDetectable = 4.13 * worst.u;
+  const smallestDetectable = NON_CENTRALITY * worst.u;
   if (severity === null) {
     return {
       outcome: outcome(substance, rule, view.place, 'agrees', view.evidence, { smallestDetectable }),

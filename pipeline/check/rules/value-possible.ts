@@ -1,7 +1,7 @@
 import type { Finding, Outcome } from '../../../schemas/finding.js';
 import type { Datum, HarmonisedCase, Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
-import { addressOf, evidenceOf, kindOf, outcome } from '../place.js';
+import { addressOf, evidenceOf, kindOf, outcome, placeOf } from '../place.js';
 
 /** Above this a temperature in kelvin or a molar heat capacity per kelvin is no longer one (order of magnitude only). */
 const HOTTEST_K = 50_000;
@@ -62,7 +62,7 @@ export function valuePossible(substance: string, series: Series): { outcome: Out
       );
   }
   const kind = findings.length > 0 ? 'disagrees' : 'agrees';
-  return { outcome: outcome(substance, 'value-possible', series.phase, kind, kindOf([series.table])), findings };
+  return { outcome: outcome(substance, 'value-possible', placeOf(series), kind, kindOf([series.table])), findings };
 }
 
 function impossibleCp(cp: SeriesQuantity, i: number, temperatureK: number): boolean {
