@@ -270,6 +270,7 @@ describe('the words of a finding', () => {
       'name-unmapped': true,
       'phase-unmapped': true,
       'substance-unknown': true,
+      'substance-twice': true,
       'file-missing': true,
       'file-unreadable': true,
       'encoding-converted': true,
