@@ -1,6 +1,6 @@
 import type { NamedCell } from '../../schemas/checked.js';
 import type { Series, SeriesQuantity } from '../../schemas/harmonised.js';
-import { numbers } from '../core/numeric/room.js';
+import { integers, numbers } from '../core/numeric/room.js';
 
 /**
  * The rows of one series as knots in rising temperature: Cp, and the printed H, S and -[G - H]/T as observations with
@@ -54,7 +54,7 @@ export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | nu
     sVar: numbers(size).fill(Number.POSITIVE_INFINITY),
     f: numbers(size),
     fVar: numbers(size).fill(Number.POSITIVE_INFINITY),
-    row: new Int32Array(size),
+    row: integers(size),
     twin: new Uint8Array(size),
     jump: new Uint8Array(size),
   };
@@ -153,7 +153,7 @@ function differs(q: SeriesQuantity | null, a: number, b: number): boolean {
 /** Row indices in rising temperature, file order kept among equals; the common case is already sorted. */
 function rising(series: Series): ArrayLike<number> & Iterable<number> {
   const t = series.temperatureK;
-  const order = new Int32Array(series.rows);
+  const order = integers(series.rows);
   let sorted = true;
   for (let i = 0; i < series.rows; i++) {
     order[i] = i;

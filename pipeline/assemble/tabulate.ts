@@ -2,7 +2,7 @@ import type { Crossing, FunctionRows, PhaseCurve } from '../../schemas/curves.js
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { cubicIntegral, cubicIntegralOverT, cubicValue } from '../core/numeric/cubic.js';
-import { numbers } from '../core/numeric/room.js';
+import { integers, numbers } from '../core/numeric/room.js';
 import { stateCovariance } from '../core/physics/curve-uncertainty.js';
 import { gibbsInDiagram } from '../core/physics/diagram.js';
 import { place } from './crossings.js';
@@ -41,8 +41,8 @@ export function tabulated(
   const n = knots.length;
   const size = n + extra.length;
   const t = numbers(size);
-  const interval = new Int32Array(size);
-  const atKnot = new Int32Array(size);
+  const interval = integers(size);
+  const atKnot = integers(size);
   const side = new Uint8Array(size);
   let rows = 0;
   let e = 0;

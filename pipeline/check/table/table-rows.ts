@@ -1,5 +1,5 @@
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
-import { numbers } from '../../core/numeric/room.js';
+import { integers, numbers } from '../../core/numeric/room.js';
 
 /** The rows of one series in rising temperature, as the row checks see them; n rows. Absent values are NaN-free and flagged. */
 export interface TableRows {
@@ -24,7 +24,7 @@ export function tableRows(series: Series): TableRows | null {
   const cp = series.heatCapacity;
   if (cp === null) return null;
   const temperature = series.temperatureK;
-  let order: Int32Array | number[] = new Int32Array(series.rows);
+  let order: Int32Array | number[] = integers(series.rows);
   let sorted = true;
   let n = 0;
   for (let i = 0; i < series.rows; i++) {
@@ -39,7 +39,7 @@ export function tableRows(series: Series): TableRows | null {
   const t = numbers(n);
   const y = numbers(n);
   const u = numbers(n);
-  const row = new Int32Array(n);
+  const row = integers(n);
   let k = 0;
   for (let j = 0; j < n; j++) {
     const i = order[j];
@@ -51,8 +51,8 @@ export function tableRows(series: Series): TableRows | null {
     k++;
   }
   if (k < 2) return null;
-  const from = new Int32Array(k);
-  const to = new Int32Array(k);
+  const from = integers(k);
+  const to = integers(k);
   let start = 0;
   for (let i = 1; i <= k; i++) {
     if (i < k && t[i] !== t[i - 1]) continue;

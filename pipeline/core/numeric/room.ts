@@ -6,26 +6,48 @@
 const BLOCK = 1 << 15;
 const MOST_KEPT = 32;
 
-const blocks: Float64Array[] = [];
-let at = -1;
-let used = BLOCK;
-/** Blocks below this index have been written to before: what is taken from them is cleared first. */
-let dirty = 0;
+/** Blocks of one kind of array, used from the first on; those below `dirty` have been written to before. */
+class Blocks<A extends Float64Array | Int32Array> {
+  private readonly blocks: A[] = [];
+  private at = -1;
+  private used = BLOCK;
+  private dirty = 0;
+
+  constructor(private readonly make: (length: number) => A) {}
+
+  take(length: number): A {
+    if (length > BLOCK / 8) return this.make(length);
+    if (this.used + length > BLOCK) {
+      this.at++;
+      this.used = 0;
+      if (this.at === this.blocks.length) this.blocks.push(this.make(BLOCK));
+    }
+    const view = this.blocks[this.at].subarray(this.used, this.used + length) as A;
+    this.used += length;
+    if (this.at < this.dirty) view.fill(0);
+    return view;
+  }
+
+  empty(): void {
+    this.dirty = Math.max(this.dirty, this.at + 1);
+    this.at = -1;
+    this.used = BLOCK;
+  }
+}
+
+const doubles = new Blocks((length) => new Float64Array(length));
+const whole = new Blocks((length) => new Int32Array(length));
 const same = new Map<number, Map<number, Float64Array>>();
 const one = new Map<number, Uint8Array>();
 
 /** `length` zeros that belong to the caller until `emptyRoom`. */
 export function numbers(length: number): Float64Array {
-  if (length > BLOCK / 8) return new Float64Array(length);
-  if (used + length > BLOCK) {
-    at++;
-    used = 0;
-    if (at === blocks.length) blocks.push(new Float64Array(BLOCK));
-  }
-  const view = blocks[at].subarray(used, used + length);
-  used += length;
-  if (at < dirty) view.fill(0);
-  return view;
+  return doubles.take(length);
+}
+
+/** The same for whole numbers. */
+export function integers(length: number): Int32Array {
+  return whole.take(length);
 }
 
 /** `value`, `length` times, shared by many: never to be written to. */
@@ -57,8 +79,7 @@ export function ones(length: number): Uint8Array {
 
 /** Takes all of it back. Only for whoever has let go of every array of the batch: they are handed out again. */
 export function emptyRoom(): void {
-  dirty = Math.max(dirty, at + 1);
-  at = -1;
-  used = BLOCK;
+  doubles.empty();
+  whole.empty();
   same.clear();
 }
