@@ -64,7 +64,7 @@ export class ParquetWriter {
       await bindings.query(
         this.#connection,
         `COPY (SELECT ${columns.join(', ')} FROM columns_at_hand()) TO ${literal(path)} ` +
-          `(FORMAT parquet, COMPRESSION snappy${keyValues})`,
+          `(FORMAT parquet, COMPRESSION snappy, DICTIONARY_SIZE_LIMIT 4096, WRITE_BLOOM_FILTER false${keyValues})`,
       );
     } finally {
       this.#feed = null;
