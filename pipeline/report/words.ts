@@ -1,9 +1,10 @@
 /** Every sentence that people read about findings is made here, and nowhere else. */
 
-import type { Finding, FindingDetail, ReadingProblem, Suspect } from '../../schemas/finding.js';
+import type { Finding, FindingDetail, Suspect } from '../../schemas/finding.js';
 import type { Address } from '../../schemas/harmonised.js';
 import { sayExplanation } from './explanations.js';
 import { figure, plusMinus, unitInWords } from './figures.js';
+import { READING } from './reading-words.js';
 
 type Detail<Code extends FindingDetail['code']> = Extract<FindingDetail, { code: Code }>;
 
@@ -122,38 +123,6 @@ function reading({ problem, read, wanted, remedy }: Detail<'reading'>): string {
     `${READING[problem](quote(read), read)}${wanted === '' ? '' : `; expected was ${wanted}`}`,
     capital(remedy),
   );
-}
-
-const READING: Readonly<Record<ReadingProblem, (quoted: string, read: string) => string>> = {
-  'cell-not-a-number': (read) => `${read} is not a number`,
-  'cell-not-finite': (read) => `${read} is no finite number`,
-  'row-too-short': (read) => `The row has too few cells: ${read}`,
-  'row-too-long': (read) => `The row has too many cells: ${read}`,
-  'column-missing': (read) => `The header says ${read}`,
-  'column-unknown': (read) => `The descriptor does not say what column ${read} is`,
-  'unit-unknown': (read) => `${read} is no unit that is known here`,
-  'unit-unfit': (read) => `The unit ${read} does not fit the quantity`,
-  'name-unmapped': (read) => `No substance is called ${read}`,
-  'phase-unmapped': (read) => `No phase is called ${read}`,
-  'substance-unknown': (read) => `${read} is no substance of substances.csv`,
-  'substance-twice': (read) => `The substance ${read} is listed twice`,
-  'file-missing': (read) => `There is no file: ${read}`,
-  'file-unreadable': (read) => `The file cannot be read: ${read}`,
-  'encoding-converted': (read) => `The file is not UTF-8 and was read as ${read}`,
-  'descriptor-unreadable': (read) => `The descriptor is not JSON that can be read: ${read}`,
-  'descriptor-invalid': (read) => `The descriptor says ${read}`,
-  'correction-out-of-date': (read) => `A correction is out of date, the file says ${read}`,
-  'required-missing': (quoted, read) => missing(quoted, read),
-  'kind-not-yet-read': (read) => `${read} is not read yet`,
-  'key-without-row': (read) => `Nothing was read for ${read}`,
-  'molar-mass-unknown': (read) => `No molar mass follows from ${read}`,
-  'acceptance-lapsed': (read) => `An acceptance no longer holds: ${read}`,
-};
-
-/** What is missing may be named by its maker, or shown by what stands in its place. */
-function missing(quoted: string, read: string): string {
-  if (read === '' || read === 'nothing') return 'A value is missing';
-  return /^(The|A|An) /.test(read) ? `${read} is missing` : `A value is missing where the file says ${quoted}`;
 }
 
 function interval(finding: Finding, { quantity, lowK, highK, named }: Detail<'interval'>): string {
