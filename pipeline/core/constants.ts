@@ -18,7 +18,6 @@ const SI_2019 = 'SI Brochure, 9th ed. (BIPM 2019), defining constants; CODATA 20
 
 export const BOLTZMANN_CONSTANT = exact(1.380649e-23, 'J/K', SI_2019);
 export const AVOGADRO_CONSTANT = exact(6.02214076e23, '/mol', SI_2019);
-export const ELEMENTARY_CHARGE = exact(1.602176634e-19, 'C', SI_2019);
 /** The product of the Avogadro and Boltzmann constants, all of its digits. */
 export const GAS_CONSTANT = exact(8.31446261815324, 'J/(mol.K)', SI_2019);
 

@@ -73,8 +73,8 @@ export function dataOf(
         if (row.transition === k && row.kind === 'enthalpy') return -1;
         if (row.transition === k && row.kind === 'closure') return 1;
         return (
-          carriedEnthalpy(row, joined, curves, j.judged.index) +
-          (stated.entropy === null ? carriedEntropy(row, joined, curves, j.judged.index) / stated.temperature.value : 0)
+          carried(row, joined, j.judged.index, 'h') +
+          (stated.entropy === null ? carried(row, joined, j.judged.index, 's') / stated.temperature.value : 0)
         );
       });
     }
@@ -85,10 +85,8 @@ export function dataOf(
         if (row.transition === k && row.kind === 'entropy') return -1;
         if (row.transition === k && row.kind === 'closure') return -stated.temperature.value;
         return (
-          carriedEntropy(row, joined, curves, j.judged.index) +
-          (stated.enthalpy === null
-            ? stated.temperature.value * carriedEnthalpy(row, joined, curves, j.judged.index)
-            : 0)
+          carried(row, joined, j.judged.index, 's') +
+          (stated.enthalpy === null ? stated.temperature.value * carried(row, joined, j.judged.index, 'h') : 0)
         );
       });
     }
@@ -158,22 +156,8 @@ function otherSide(
   return curves.find((c) => c.phase === other && c.family.isobarPa === curve.family.isobarPa);
 }
 
-/** How a stated dH enters another transition's rows, through a level that it carries. */
-function carriedEnthalpy(row: Row, joined: readonly Joined[], curves: readonly PhaseCurve[], index: number): number {
-  return carried(row, joined, curves, index, 'h');
-}
-
-function carriedEntropy(row: Row, joined: readonly Joined[], curves: readonly PhaseCurve[], index: number): number {
-  return carried(row, joined, curves, index, 's');
-}
-
-function carried(
-  row: Row,
-  joined: readonly Joined[],
-  _curves: readonly PhaseCurve[],
-  index: number,
-  what: 'h' | 's',
-): number {
+/** How a stated dH or dS enters another transition's rows, through a level that it carries. */
+function carried(row: Row, joined: readonly Joined[], index: number, what: 'h' | 's'): number {
   if (row.kind === 'anchor' || row.kind === 'closure') return 0;
   let v = 0;
   for (const use of usesOf(row, joined, [])) {

@@ -8,8 +8,12 @@ export class BrokenCalculation extends Error {
   }
 }
 
-/** Throws BrokenCalculation at the first NaN or infinity that is not marked absent. */
+/** Tables that were looked through: each is written twice, as Parquet and as CSV. */
+const whole = new WeakSet<ColumnTable>();
+
+/** Throws BrokenCalculation at the first NaN or infinity that is not marked absent. A table must not change once it was passed. */
 export function refuseBrokenNumbers(name: string, table: ColumnTable): void {
+  if (whole.has(table)) return;
   for (const [column, { kind, ...cells }] of Object.entries(table.columns)) {
     if (kind !== 'number') continue;
     const { values, absent } = cells as { values: Float64Array; absent: Uint8Array | null };
@@ -18,4 +22,5 @@ export function refuseBrokenNumbers(name: string, table: ColumnTable): void {
       if (value - value !== 0 && absent?.[row] !== 1) throw new BrokenCalculation(name, column, row, value);
     }
   }
+  whole.add(table);
 }

@@ -6,6 +6,7 @@
 import { randomBytes } from 'node:crypto';
 import { lstat, mkdir, readdir, readFile, readlink, rename, rm, symlink, writeFile } from 'node:fs/promises';
 import { basename, dirname, join } from 'node:path';
+import pLimit from 'p-limit';
 import type { ColumnTable } from '../../schemas/columns.js';
 import type { Contents, FileRecord, InputFile } from '../../schemas/contents.js';
 import { TABLE_NAMES, type TableName } from '../../schemas/release.js';
@@ -179,10 +180,14 @@ async function writeJson(folder: string, name: string, value: object): Promise<v
   await writeFile(join(folder, name), `${JSON.stringify(value, null, 2)}\n`);
 }
 
+/** Files open at one time while the disk is waited for: a large release has hundreds. */
+const MOST_OPEN = 16;
+
 async function syncTree(folder: string): Promise<void> {
   const files = await filesIn(folder);
   const folders = new Set(['.', ...files.map((path) => dirname(path))]);
-  await Promise.all([...files, ...folders].map((path) => sync(join(folder, path))));
+  const few = pLimit(MOST_OPEN);
+  await Promise.all([...files, ...folders].map((path) => few(() => sync(join(folder, path)))));
 }
 
 /** `contents.json` last: until then the release does not verify. */

@@ -91,7 +91,6 @@ const PACKAGES: Readonly<Record<string, { readonly for: readonly Area[]; readonl
   'node:': { for: ['pipeline/shell'], why: 'only the shell touches the world' },
   zod: { for: ['schemas'], why: 'schemas are made in one place' },
   '@atomic-ehr/ucum': { for: ['pipeline/core/units'], why: 'units are converted behind one guarded door' },
-  'chemical-elements': { for: ['pipeline/core', 'pipeline/core/physics'], why: 'atomic weights are constants' },
   papaparse: { for: ['pipeline/shell', 'pipeline/ingest'], why: 'it parses text and touches nothing' },
   '@duckdb/node-api': { for: ['pipeline/shell'], why: 'it writes files' },
   '@duckdb/node-bindings': { for: ['pipeline/shell'], why: 'it writes files' },
