@@ -153,6 +153,8 @@ export interface Suspect {
   readonly substance: string;
   readonly place: number;
   readonly group: number;
+  /** How many cells the hypothesis touches: 1 for a single cell; for a whole column the address is that of its first. */
+  readonly cells: number;
   readonly address: Address;
   readonly printed: string;
   readonly observed: number;

@@ -214,6 +214,7 @@ const suspects = {
     substance,
     integer('place', 'The likeliest is 1'),
     integer('group', 'Suspects that the data cannot tell apart share a group'),
+    integer('cells', 'Number of cells that the hypothesis touches'),
     ...address('the cell'),
     text('printed', 'The cell as printed', optional),
     number('observed', null, 'The cell in SI'),

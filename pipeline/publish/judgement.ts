@@ -92,6 +92,7 @@ function addSuspect(to: Builders<typeof RELEASE_TABLES.suspects>, suspect: Suspe
   to.substance.push(suspect.substance);
   to.place.push(suspect.place);
   to.group.push(suspect.group);
+  to.cells.push(suspect.cells);
   to.source.push(suspect.address.source);
   to.file.push(suspect.address.file);
   to.line.push(suspect.address.line);

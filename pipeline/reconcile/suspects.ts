@@ -13,6 +13,7 @@ export function suspectsOf(checked: CheckedCase, finding: Finding, group: Suspec
       substance,
       place: 100 * (number - 1) + k + 1,
       group: number,
+      cells: 1,
       address: datum.address,
       printed: datum.printed,
       observed: datum.value,

@@ -291,6 +291,7 @@ export function suspect(of: string, substance: string): Suspect {
     substance,
     place: 1,
     group: 1,
+    cells: 1,
     address: { source: 'desk', file: 'points.csv', line: 8, column: 'S' },
     printed: '58.75',
     observed: 58.75,

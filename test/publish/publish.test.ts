@@ -231,6 +231,16 @@ describe('publish', () => {
     expect(rowsOf(artefact.substances)[0]).toMatchObject({ formula: null, doubts: 0, accepted: 1 });
   });
 
+  test('a suspect says how many cells its hypothesis touches', () => {
+    const column = { ...suspect('f1', 'brine'), cells: 14 };
+    const cell = { ...suspect('f1', 'brine'), place: 2 };
+    const { artefact } = publish([reconciled('brine', { suspects: [column, cell] })], settings);
+    expect(rowsOf(artefact.suspects).map(({ place, line, cells }) => [place, line, cells])).toEqual([
+      [1, 8, 14],
+      [2, 8, 1],
+    ]);
+  });
+
   test('provenance tells the stretches of each curve with the step at the join, the anchors and the transitions', () => {
     const rows = rowsOf(publish([reconciled('oil')], settings).artefact.provenance);
     expect(

@@ -197,6 +197,7 @@ function suspectOf(
     substance,
     place,
     group,
+    cells: 1,
     address: addressOf(series, cell.row, q.column),
     printed: series.text(cell.row, q.column),
     observed: cell.observed,
