@@ -29,8 +29,15 @@ export interface LevelOrigin {
   readonly atK: number;
   /** How many of its units make one of this curve's (S8 vapour: 8); 1 for all others. */
   readonly scale: number;
-  /** Standard errors by datum, signed. */
-  readonly errors: readonly { readonly key: string; readonly u: number }[];
+  /** By datum: its standard uncertainty, and by how much the level moves with it. */
+  readonly errors: readonly LevelError[];
+}
+
+/** `key` names the datum: `H of anchor 2`, `dS of transition 0`; what two curves owe to one key cancels between them. */
+export interface LevelError {
+  readonly key: string;
+  readonly by: number;
+  readonly u: number;
 }
 
 /**

@@ -78,13 +78,13 @@ function carry(
     target.h = scale * (a.h + (source.h ?? 0)) + by * dH - b.h;
     const errors =
       stated.enthalpy !== null
-        ? [{ key: key('dH'), u: by * stated.enthalpy.u }]
+        ? [{ key: key('dH'), by, u: stated.enthalpy.u }]
         : [
-            { key: key('dS'), u: by * temperatureK * (stated.entropy as Datum).u },
-            { key: key('T'), u: by * (stated.entropy as Datum).value * uT },
+            { key: key('dS'), by: by * temperatureK, u: (stated.entropy as Datum).u },
+            { key: key('T'), by: by * (stated.entropy as Datum).value, u: uT },
           ];
     target.hOrigin = { ...origin, errors };
-    target.uH = Math.hypot(scale * source.uH, ...errors.map((e) => e.u));
+    target.uH = Math.hypot(scale * source.uH, ...errors.map((e) => e.by * e.u));
     target.hFrom = 'transition';
   }
   if (wantsS) {
@@ -92,13 +92,13 @@ function carry(
     target.s = scale * (a.s + (source.s ?? 0)) + by * dS - b.s;
     const errors =
       stated.entropy !== null
-        ? [{ key: key('dS'), u: by * stated.entropy.u }]
+        ? [{ key: key('dS'), by, u: stated.entropy.u }]
         : [
-            { key: key('dH'), u: (by * (stated.enthalpy as Datum).u) / temperatureK },
-            { key: key('T'), u: (-by * dS * uT) / temperatureK },
+            { key: key('dH'), by: by / temperatureK, u: (stated.enthalpy as Datum).u },
+            { key: key('T'), by: (-by * dS) / temperatureK, u: uT },
           ];
     target.sOrigin = { ...origin, errors };
-    target.uS = Math.hypot(scale * source.uS, ...errors.map((e) => e.u));
+    target.uS = Math.hypot(scale * source.uS, ...errors.map((e) => e.by * e.u));
     target.sFrom = 'transition';
   }
   target.through = index;

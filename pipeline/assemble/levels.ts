@@ -22,7 +22,8 @@ export interface Family {
 export function levelled(shapes: readonly PhaseShape[], family: Family, policy: Policy): PhaseCurve[] {
   const growth = policy.continuation.relativePer100K / 100;
   const residual = family.substance.substance.residualEntropyJPerMolK;
-  const levels = shapes.map((shape) => ownLevel(shape, family.anchors, growth, residual));
+  const levels = shapes.map((shape) => ownLevel(shape, family, growth, residual));
+  shareEvaluations(levels);
   let { zeros } = family;
   for (;;) {
     carryAll(shapes, levels, family);
@@ -59,7 +60,7 @@ function originOf(origin: Origin, curves: readonly PhaseCurve[]): LevelOrigin {
 
 function ownLevel(
   shape: PhaseShape,
-  anchors: readonly Anchor[],
+  { anchors, substance }: Family,
   growth: number,
   residualEntropyJPerMolK: number,
 ): Level {
@@ -91,7 +92,7 @@ function ownLevel(
       level.uH = uOf(datum, home, shape);
       level.hFrom = 'anchor';
       level.hAnchor = home ?? null;
-      level.hOrigin = datumOf(anchors, home, 'H', level.uH, shape, 0);
+      level.hOrigin = datumOf(substance, home, 'H', level.uH, datum, shape, 0);
     }
   } else if (own?.enthalpyOfFormation != null) {
     const at = valueAt(arrays, shape, own.referenceTemperatureK, growth, enthalpyAt);
@@ -101,7 +102,7 @@ function ownLevel(
       level.uH = Math.hypot(u, at.u);
       level.hFrom = 'anchor';
       level.hAnchor = own;
-      level.hOrigin = datumOf(anchors, own, 'H', u, shape, at.u);
+      level.hOrigin = datumOf(substance, own, 'H', u, own.enthalpyOfFormation, shape, at.u);
     }
   }
   if (shape.entropyMeans === 'declared') {
@@ -117,25 +118,65 @@ function ownLevel(
       level.uS = Math.hypot(u, uReach);
       level.sFrom = 'anchor';
       level.sAnchor = ownS;
-      level.sOrigin = datumOf(anchors, ownS, 'S', u, shape, uReach);
+      level.sOrigin = datumOf(substance, ownS, 'S', u, ownS.entropy, shape, uReach);
     }
   }
   return level;
 }
 
-/** The anchor's own error, and that of reaching it beyond the data. */
+/**
+ * The anchor's own error, that of reaching it beyond the data, and, where one evaluated source states more than the rounding,
+ * the error of its evaluation: common to all that it anchors, so that it cancels between its phases.
+ */
 function datumOf(
-  anchors: readonly Anchor[],
+  substance: HarmonisedCase,
   anchor: Anchor | undefined,
   what: 'H' | 'S',
   u: number,
+  datum: Datum,
   shape: PhaseShape,
   uReach: number,
 ): Origin {
-  const errors = [{ key: `${what} of anchor ${anchor === undefined ? -1 : anchors.indexOf(anchor)}`, u }];
-  if (uReach > 0) errors.push({ key: `${what} reached by ${shape.phase}`, u: uReach });
+  const errors = [
+    { key: `${what} of anchor ${anchor === undefined ? -1 : substance.anchors.indexOf(anchor)}`, by: 1, u },
+  ];
+  if (uReach > 0) errors.push({ key: `${what} reached by ${shape.phase}`, by: 1, u: uReach });
+  const common = Math.sqrt(Math.max(0, datum.u * datum.u - u * u));
+  if (common > 1e-9 * datum.u) {
+    errors.push({ key: `${what}${EVALUATED}${anchor?.table.source ?? ''}`, by: 1, u: common });
+  }
   return { source: -1, atK: 0, scale: 1, errors };
 }
+
+/** Each evaluation's common error is one number, the largest that it states; the levels' own u takes it in. */
+function shareEvaluations(levels: readonly Level[]): void {
+  const largest = new Map<string, number>();
+  for (const { hOrigin, sOrigin } of levels) {
+    for (const origin of [hOrigin, sOrigin]) {
+      if (origin === null || origin.errors.length < 2) continue;
+      for (const { key, u } of origin.errors) {
+        if (key.includes(EVALUATED)) largest.set(key, Math.max(u, largest.get(key) ?? 0));
+      }
+    }
+  }
+  if (largest.size === 0) return;
+  for (const level of levels) {
+    const widened = (origin: Origin): Origin => ({
+      ...origin,
+      errors: origin.errors.map((error) => ({ ...error, u: largest.get(error.key) ?? error.u })),
+    });
+    if (level.hOrigin !== null) {
+      level.hOrigin = widened(level.hOrigin);
+      level.uH = Math.hypot(...level.hOrigin.errors.map((error) => error.by * error.u));
+    }
+    if (level.sOrigin !== null) {
+      level.sOrigin = widened(level.sOrigin);
+      level.uS = Math.hypot(...level.sOrigin.errors.map((error) => error.by * error.u));
+    }
+  }
+}
+
+const EVALUATED = ' as evaluated by ';
 
 /** Rounding alone within one compiled source; what is stated, or the default, where sources meet. */
 function uOf(datum: Datum, anchor: Anchor | undefined, shape: PhaseShape): number {

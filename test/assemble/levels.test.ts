@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { enthalpyAt, entropyAt, gibbsAt } from '../../pipeline/core/physics/curve.js';
-import { stateCovariance } from '../../pipeline/core/physics/curve-uncertainty.js';
+import { gibbsDifferenceUncertainty, stateCovariance } from '../../pipeline/core/physics/curve-uncertainty.js';
+import { rowsCovariance } from '../../pipeline/core/physics/rows-covariance.js';
+import type { PhaseCurve } from '../../schemas/curves.js';
 import type { TableMeaning } from '../../schemas/table-meaning.js';
 import { seeded } from '../core/numeric/random.js';
 import { anchorOf, assembled, type CaseParts, curveOfPhase, datum, seriesOf, transitionOf } from './cases.js';
@@ -24,6 +26,12 @@ const printed = (phase: string, temperatureK: number[], cp: number, s: number, i
     increment: { values: temperatureK.map((t) => increment + cp * (t - TR)), decimals: 2 },
     ...(from === undefined ? {} : { incrementsFrom: from }),
   });
+
+/** u(G) at the reference temperature from the rows alone. */
+const rowsU = (curve: PhaseCurve): number => {
+  const { hh, hs, ss } = rowsCovariance(curve, TR);
+  return Math.sqrt(hh - 2 * TR * hs + TR * TR * ss);
+};
 
 const GRID = withReference(steps(250, 900, 50));
 
@@ -50,17 +58,29 @@ describe('levels of H and S', () => {
     ]);
   });
 
-  it('take the rounding of the anchor alone where it stands in the same evaluated source, else its own u', () => {
-    const level = (source: string): number =>
-      curveOfPhase(
-        assembled({
-          series: [printed('cr', GRID, 50, 60)],
-          anchors: [anchorOf('cr', { h: datum(-1e5, 300, 5) }, { source })],
-        }),
-        'cr',
-      ).uEnthalpyLevelJPerMol;
-    expect(level('desk')).toBeCloseTo(5 / Math.sqrt(3), 9);
-    expect(level('elsewhere')).toBeCloseTo(Math.hypot(300, 5 / Math.sqrt(3)), 9);
+  it('share what one evaluated source states between its phases, so that only the rounding is left of their difference', () => {
+    const curves = (source: string) => {
+      const made = assembled({
+        series: [printed('cr', GRID, 50, 60), printed('l', GRID, 60, 80)],
+        anchors: [
+          anchorOf('cr', { h: datum(-1e5, 300, 5) }, { source }),
+          anchorOf('l', { h: datum(-9e4, 200, 5) }, { source }),
+        ],
+      });
+      return [curveOfPhase(made, 'cr'), curveOfPhase(made, 'l')] as const;
+    };
+    const rounding = 5 / Math.sqrt(3);
+    const [cr, l] = curves('desk');
+    expect(cr.uEnthalpyLevelJPerMol).toBeCloseTo(Math.hypot(300, rounding), 6);
+    expect(l.uEnthalpyLevelJPerMol).toBeCloseTo(Math.hypot(300, rounding), 6);
+    const rows = Math.hypot(rowsU(cr), rowsU(l));
+    expect(gibbsDifferenceUncertainty(cr, 1, l, 1, TR)).toBeCloseTo(Math.hypot(rounding * Math.SQRT2, rows), 6);
+    const [other, another] = curves('elsewhere');
+    expect(other.uEnthalpyLevelJPerMol).toBeCloseTo(Math.hypot(300, rounding), 9);
+    expect(gibbsDifferenceUncertainty(other, 1, another, 1, TR)).toBeCloseTo(
+      Math.hypot(300, 200, rounding * Math.SQRT2, rows),
+      6,
+    );
   });
 
   it('prefer the anchor of better rank, and among equals that of the own source', () => {
