@@ -97,10 +97,23 @@ export interface StatedTransition {
   readonly entropy: Datum | null;
 }
 
+/** One measured or evaluated (T, p) of the vapour over a condensed phase. */
+export interface VapourPressure {
+  readonly table: TableMeaning;
+  /** The condensed phase. */
+  readonly phase: string;
+  /** K, ITS-90 where the scale is known. */
+  readonly temperature: Datum;
+  /** Pa. */
+  readonly pressure: Datum;
+}
+
 export interface HarmonisedCase {
   readonly substance: Substance;
   readonly series: readonly Series[];
   readonly anchors: readonly Anchor[];
   readonly transitions: readonly StatedTransition[];
+  /** In file order; T and p as stated, so that either may be impossible (`value-possible` says so). */
+  readonly vapourPressures: readonly VapourPressure[];
   readonly findings: readonly Finding[];
 }

@@ -1,6 +1,6 @@
 /**
  * What ingest hands on: raw tables gathered by substance, numbers as printed (units not yet touched), every cell with
- * its address. Long tables are columns; anchors and transitions, a few a substance, are rows.
+ * its address. Long tables are columns; anchors, transitions and vapour pressures, a few a substance, are rows.
  */
 import type { Finding } from './finding.js';
 import type { NumberQuantity, TextQuantity } from './quantities.js';
@@ -62,7 +62,7 @@ export interface RawCell {
   readonly uncertainty: number | null;
 }
 
-/** One row of `anchors` or `transitions`. */
+/** One row of `anchors`, `transitions` or `vapour-pressures`. */
 export interface RawRow {
   readonly table: TableMeaning;
   readonly line: number;
@@ -77,5 +77,7 @@ export interface RawCase {
   readonly anchors: readonly RawRow[];
   /** `words['from-phase']` and `words['to-phase']` are set. */
   readonly transitions: readonly RawRow[];
+  /** `words.phase` is set: the condensed phase; `cells` hold `temperature` and `pressure`. */
+  readonly vapourPressures: readonly RawRow[];
   readonly findings: readonly Finding[];
 }

@@ -3,10 +3,9 @@ import { z } from 'zod';
 import { QUANTITY_UNITS, TEXT_QUANTITIES } from './quantities.js';
 
 /** Kinds of tables that are read. */
-export const READ_KINDS = ['thermal-functions', 'anchors', 'transitions'] as const;
+export const READ_KINDS = ['thermal-functions', 'anchors', 'transitions', 'vapour-pressures'] as const;
 /** Kinds that a descriptor may declare and that are not read yet. */
 export const PLANNED_KINDS = [
-  'vapour-pressures',
   'vapour-pressure-equations',
   'heat-capacity-equations',
   'volumes',

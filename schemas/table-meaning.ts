@@ -38,7 +38,7 @@ export interface TableMeaning {
   readonly file: string;
   /** The table's id, or its position: `#0`. */
   readonly table: string;
-  readonly holds: 'thermal-functions' | 'anchors' | 'transitions';
+  readonly holds: 'thermal-functions' | 'anchors' | 'transitions' | 'vapour-pressures';
   readonly basis: Basis;
   /** Sources and table ids that this one was computed from. */
   readonly restsOn: readonly string[];

@@ -1,4 +1,4 @@
-/** One stated number of an anchor or a transition, in SI, with its uncertainty and its address. */
+/** One stated number of an anchor, a transition or a vapour pressure, in SI, with its uncertainty and its address. */
 import type { Datum } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
@@ -55,7 +55,8 @@ const FORMATION: ReadonlySet<NumberQuantity> = new Set(['enthalpy-of-formation',
  */
 function lastPlace({ value, decimals, usualDecimals }: RawCell, quantity: NumberQuantity): number {
   if (value === 0) return usualDecimals;
-  if (quantity === 'transition-temperature' && decimals < usualDecimals - 1) return decimals;
+  const temperature = quantity === 'transition-temperature' || quantity === 'temperature';
+  if (temperature && decimals < usualDecimals - 1) return decimals;
   return Math.max(decimals, usualDecimals);
 }
 

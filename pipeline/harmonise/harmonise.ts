@@ -10,6 +10,7 @@ import { countFromReference } from './reference-temperature.js';
 import { draftSeries } from './series.js';
 import { harmoniseTransition } from './transitions.js';
 import { UnitBook } from './unit-book.js';
+import { harmoniseVapourPressures } from './vapour-pressures.js';
 
 export interface HarmoniseSettings {
   readonly policy: Policy;
@@ -51,12 +52,14 @@ function harmoniseCase(raw: RawCase, policy: Policy, findings: Finding[]): Harmo
     const transition = harmoniseTransition(row, substance.id, book, policy, findings);
     if (transition !== null) transitions.push(transition);
   }
+  const vapourPressures = harmoniseVapourPressures(raw.vapourPressures, substance.id, book, policy, findings);
   countFromReference(drafts, anchors, substance.id, findings);
   return {
     substance,
     series: drafts.map(finished),
     anchors,
     transitions,
+    vapourPressures,
     findings: findings.length === 0 ? raw.findings : [...raw.findings, ...findings],
   };
 }

@@ -3,8 +3,8 @@ import type { Finding } from '../../schemas/finding.js';
 import type { Datum, StatedTransition } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import type { RawRow } from '../../schemas/raw.js';
-import { possibleDifferenceK, toIts90 } from '../core/units/temperature-scale.js';
-import { datumOf, moved } from './datum.js';
+import { datumOf } from './datum.js';
+import { datumOnIts90, publishedRange } from './datum-on-its90.js';
 import { isGas } from './gas-pressure.js';
 import { type ReadingNote, readingFinding } from './reading-finding.js';
 import type { UnitBook } from './unit-book.js';
@@ -80,17 +80,16 @@ function onIts90(
   say: (note: Pick<ReadingNote, 'read' | 'wanted' | 'remedy' | 'column' | 'severity'>) => void,
 ): Datum {
   const { temperatureScale } = row.table;
-  const { temperatureK, converted } = toIts90(printed.value, temperatureScale);
-  if (converted) return temperatureK === printed.value ? printed : moved(printed, temperatureK - printed.value);
-  const doubtK = possibleDifferenceK(printed.value, temperatureScale);
+  const { datum, doubtK } = datumOnIts90(printed, temperatureScale);
+  if (doubtK === null) return datum;
   say({
     read: `A published difference between ${temperatureScale} and ITS-90 at ${printed.value} K`,
-    wanted: temperatureScale === 'IPTS-68' ? '73.15 K or more' : '93.15 to 533.15 K',
+    wanted: publishedRange(temperatureScale),
     remedy: `The temperature stays as printed; what it may be off by, ${doubtK.toPrecision(2)} K, is in its uncertainty.`,
     column: printed.address.column,
     severity: 'note',
   });
-  return moved(printed, 0, doubtK / Math.sqrt(3));
+  return datum;
 }
 
 function headerOf(row: RawRow, is: string): string {

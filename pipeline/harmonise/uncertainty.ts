@@ -127,6 +127,7 @@ export function policyPart(policy: Policy, quantity: NumberQuantity): Part {
     case 'enthalpy-of-formation':
     case 'gibbs-energy-of-formation':
       return { relative: 0, absolute: defaults.enthalpyOfFormationJPerMol };
+    case 'temperature':
     case 'transition-temperature':
       return relative(defaults.transitionTemperatureRelative);
     case 'transition-enthalpy':

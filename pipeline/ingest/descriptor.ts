@@ -1,6 +1,6 @@
 /** Reads a source's descriptor into one plan for each table of each file. */
 import type { Finding } from '../../schemas/finding.js';
-import { PLANNED_KINDS, type SourceHead, sourceHeadSchema, tableSchema } from '../../schemas/source.js';
+import { PLANNED_KINDS, READ_KINDS, type SourceHead, sourceHeadSchema, tableSchema } from '../../schemas/source.js';
 import { brokenPlans } from './broken-plan.js';
 import { matchFiles } from './glob.js';
 import { readJson } from './json-place.js';
@@ -65,7 +65,7 @@ export function readDescriptor(
           json,
           'kind-not-yet-read',
           [...path, 'holds'],
-          'thermal-functions, anchors or transitions',
+          READ_KINDS.join(', '),
           undefined,
           'nothing to do: the table is kept for a later version and not used yet',
           'note',

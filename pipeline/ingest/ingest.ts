@@ -10,6 +10,7 @@ import { readRows } from './read-rows.js';
 import { SeriesGatherer } from './read-series.js';
 import { Readings, readingFinding } from './reading.js';
 import { RowReader } from './row-reader.js';
+import type { Kind } from './table-quantities.js';
 
 export { CORRECTIONS_FILE, type CorrectionsResult, readCorrections } from './corrections.js';
 export { DESCRIPTOR_FILE, readDescriptor } from './descriptor.js';
@@ -67,8 +68,11 @@ export function ingest(input: IngestInput, settings: IngestSettings = {}): Inges
   for (const [place, substance] of substances.entries()) {
     readings = new Readings(substance.id, settings.mostEvidence ?? 1000);
     const series: RawSeries[] = [];
-    const anchors: RawRow[] = [];
-    const transitions: RawRow[] = [];
+    const rows: Readonly<Record<Exclude<Kind, 'thermal-functions'>, RawRow[]>> = {
+      anchors: [],
+      transitions: [],
+      'vapour-pressures': [],
+    };
     const findings: Finding[] = [];
     for (const { part, reader, gatherer, runsOf } of tables) {
       const runs = runsOf(place);
@@ -78,10 +82,11 @@ export function ingest(input: IngestInput, settings: IngestSettings = {}): Inges
       if (broken !== null) continue;
       const { holds } = part.plan.meaning;
       if (holds === 'thermal-functions') series.push(...gatherer.read(substance.id, runs));
-      else (holds === 'anchors' ? anchors : transitions).push(...readRows(part, reader, substance.id, runs));
+      else for (const row of readRows(part, reader, substance.id, runs)) rows[holds].push(row);
     }
     findings.push(...readings.findings());
-    artefact.push({ substance, series, anchors, transitions, findings: distinct(findings) });
+    const { anchors, transitions, 'vapour-pressures': vapourPressures } = rows;
+    artefact.push({ substance, series, anchors, transitions, vapourPressures, findings: distinct(findings) });
   }
   return {
     artefact,

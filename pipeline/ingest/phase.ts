@@ -13,6 +13,14 @@ export function resolvePhase(phases: TablePlan['phases'], substance: string, wor
   return LABEL.test(label) ? label : null;
 }
 
+/** True for `g` and its polymorph-like labels. */
+export function isGasLabel(label: string): boolean {
+  return /^g(?:-|$)/.test(label);
+}
+
+/** What a vapour pressure's phase may be. */
+export const CONDENSED_WANTED = 'the condensed phase that the vapour stands over, such as l or cr';
+
 export const phaseWanted = (word: string, phases: TablePlan['phases']): string =>
   `one of ${SYMBOLS.join(', ')}, optionally with a polymorph label (cr-alpha), or a word of the source's "phases" map${nearestWords(
     word,

@@ -1,9 +1,11 @@
-/** Reads the rows of `anchors` and `transitions` tables. */
+/** Reads the rows of `anchors`, `transitions` and `vapour-pressures` tables. */
 import type { NumberQuantity, TextQuantity } from '../../schemas/quantities.js';
 import type { RawCell, RawRow } from '../../schemas/raw.js';
+import { CONDENSED_WANTED, isGasLabel } from './phase.js';
 import type { IngestPart } from './plan.js';
 import type { RowReader } from './row-reader.js';
 import { readPhase, wordOf } from './row-words.js';
+import { neededNumbers } from './table-quantities.js';
 
 const ORDERS: Readonly<Record<string, string>> = {
   '': 'first',
@@ -26,8 +28,7 @@ export function readRows(part: IngestPart, reader: RowReader, id: string, runs: 
     reader.start(index.runs.byteStart[run]!, index.runs.byteEnd[run]!, index.runs.firstLine[run]!);
     while (reader.next()) {
       if (reader.isBlank()) continue;
-      const words =
-        plan.meaning.holds === 'anchors' ? anchorWords(part, reader, id) : transitionWords(part, reader, id);
+      const words = wordsOf(part, reader, id);
       const cells = readCells(part, reader);
       if (words === null || cells === null) continue;
       rows.push({ table: plan.meaning, line: reader.line, cells, words });
@@ -38,9 +39,27 @@ export function readRows(part: IngestPart, reader: RowReader, id: string, runs: 
 
 type Words = Partial<Record<TextQuantity, string>>;
 
+function wordsOf(part: IngestPart, reader: RowReader, id: string): Words | null {
+  switch (part.plan.meaning.holds) {
+    case 'transitions':
+      return transitionWords(part, reader, id);
+    case 'vapour-pressures':
+      return vapourWords(part, reader, id);
+    default:
+      return anchorWords(part, reader, id);
+  }
+}
+
 function anchorWords(part: IngestPart, reader: RowReader, id: string): Words | null {
   const phase = readPhase(part, reader, id, 'phase');
   return phase === null ? null : { ...otherWords(part, reader), phase };
+}
+
+function vapourWords(part: IngestPart, reader: RowReader, id: string): Words | null {
+  const words = anchorWords(part, reader, id);
+  if (words === null || !isGasLabel(words.phase!)) return words;
+  report(part, reader, 'phase', wordOf(reader, part.plan.words.phase), CONDENSED_WANTED);
+  return null;
 }
 
 function transitionWords(part: IngestPart, reader: RowReader, id: string): Words | null {
@@ -51,7 +70,7 @@ function transitionWords(part: IngestPart, reader: RowReader, id: string): Words
   const gas = wordOf(reader, words.gas).toLowerCase();
   const known = ORDERS[order.toLowerCase()];
   if (known === undefined) report(part, reader, 'order', order, 'first, continuous (lambda, second order) or glass');
-  const hasGas = [from, to].some((phase) => phase !== null && /^g(?:-|$)/.test(phase));
+  const hasGas = [from, to].some((phase) => phase !== null && isGasLabel(phase));
   if (gas === '' && hasGas)
     report(
       part,
@@ -77,7 +96,13 @@ function otherWords(part: IngestPart, reader: RowReader): Words {
   return note === undefined ? {} : { note: wordOf(reader, note) };
 }
 
-function report(part: IngestPart, reader: RowReader, quantity: 'order' | 'gas', read: string, wanted: string): void {
+function report(
+  part: IngestPart,
+  reader: RowReader,
+  quantity: 'phase' | 'order' | 'gas',
+  read: string,
+  wanted: string,
+): void {
   const from = part.plan.words[quantity];
   const address =
     from !== undefined && 'column' in from ? reader.address(from.column) : { ...reader.address(-1), column: quantity };
@@ -124,18 +149,18 @@ function readCells(part: IngestPart, reader: RowReader): RawRow['cells'] | null 
       uncertainty: uncertainty.get(is) ?? null,
     };
   }
-  if (holds === 'transitions' && cells['transition-temperature'] === undefined) {
-    const position = columns.findIndex((column) => column.is === 'transition-temperature');
+  const lacking = neededNumbers(holds).filter((quantity) => cells[quantity] === undefined);
+  for (const quantity of lacking) {
+    const position = columns.findIndex((column) => column.is === quantity);
     const read = reader.printed(position);
     if (read === '' || part.plan.layout.missing.includes(read))
       reader.readings().add({
         problem: 'required-missing',
         address: reader.address(position),
         read,
-        wanted: 'a transition temperature in every row',
+        wanted: `a ${quantity.replace('-', ' ')} in every row`,
         remedy: 'give it by an entry in corrections.json, or withdraw the row there ("column": null)',
       });
-    return null;
   }
-  return cells;
+  return lacking.length === 0 ? cells : null;
 }

@@ -48,6 +48,8 @@ interface PlanResult {
 const ANY_SUBSTANCE = { molarMassGPerMol: 1, atomsPerFormula: 1 } as const;
 /** A constant's unit must stand for itself. */
 const NO_SUBSTANCE = { molarMassGPerMol: Number.NaN, atomsPerFormula: null, per: null } as const;
+/** Kinds whose rows have a pressure each, which the table's own "pressure" may give; for the others that is an isobar. */
+const OWN_PRESSURE: ReadonlySet<Kind> = new Set(['transitions', 'vapour-pressures']);
 /** Constants are exact as written. */
 const EXACT_DECIMALS = 20;
 
@@ -164,7 +166,7 @@ function tableNumbers(
     else numbers[quantity] = constant(quantity, given, path);
   }
   const { pressure } = table;
-  if (kind === 'transitions' && pressure !== undefined && !columns.some(({ is }) => is === 'pressure'))
+  if (OWN_PRESSURE.has(kind) && pressure !== undefined && !columns.some(({ is }) => is === 'pressure'))
     numbers.pressure ??= constant('pressure', pressure, ['pressure']);
   return numbers;
 }
@@ -184,7 +186,7 @@ function checkRequired(
     fault([], `"${quantity}" in a table of ${kind}`, 'required-missing', 'no column or constant of it', remedy);
   }
   const values = NUMBERS[kind].filter((quantity) => quantity !== 'temperature');
-  if (kind !== 'transitions' && !values.some(has))
+  if (!OWN_PRESSURE.has(kind) && !values.some(has))
     fault(['columns'], `a column of one of ${values.join(', ')}`, 'required-missing');
 }
 
@@ -223,7 +225,7 @@ function tableMeaning(
         : (referenceTemperature ?? 298.15),
     enthalpyZero: table.enthalpyZero ?? null,
     entropyZero: table.entropyZero ?? null,
-    isobarPa: kind === 'transitions' || pressure === undefined ? null : toSi('pressure', pressure, ['pressure'], fault),
+    isobarPa: OWN_PRESSURE.has(kind) || pressure === undefined ? null : toSi('pressure', pressure, ['pressure'], fault),
     incrementsFromZeroK:
       table.from === 0 || Object.values(table.columns).some((column) => 'from' in column && column.from === 0),
     columns,

@@ -8,6 +8,7 @@ export const WORDS: Readonly<Record<Kind, readonly TextQuantity[]>> = {
   'thermal-functions': ['substance', 'phase', 'increments-from', 'series', 'note'],
   anchors: ['substance', 'phase', 'note'],
   transitions: ['substance', 'from-phase', 'to-phase', 'order', 'gas', 'note'],
+  'vapour-pressures': ['substance', 'phase', 'note'],
 };
 
 export const NUMBERS: Readonly<Record<Kind, readonly NumberQuantity[]>> = {
@@ -22,10 +23,17 @@ export const NUMBERS: Readonly<Record<Kind, readonly NumberQuantity[]>> = {
   ],
   anchors: ['enthalpy-of-formation', 'entropy', 'gibbs-energy-of-formation', 'enthalpy-from-zero', 'heat-capacity'],
   transitions: ['transition-temperature', 'pressure', 'transition-enthalpy', 'transition-entropy'],
+  'vapour-pressures': ['temperature', 'pressure'],
 };
 
 export const REQUIRED: Readonly<Record<Kind, readonly (NumberQuantity | TextQuantity)[]>> = {
   'thermal-functions': ['substance', 'phase', 'temperature'],
   anchors: ['substance', 'phase'],
   transitions: ['substance', 'from-phase', 'to-phase', 'transition-temperature'],
+  'vapour-pressures': ['substance', 'phase', 'temperature', 'pressure'],
 };
+
+/** The numbers that no row of such a table can do without. */
+export function neededNumbers(kind: Kind): readonly NumberQuantity[] {
+  return NUMBERS[kind].filter((quantity) => REQUIRED[kind].includes(quantity));
+}

@@ -3,7 +3,7 @@ import { TEXT_QUANTITIES, type TextQuantity } from '../../schemas/quantities.js'
 import type { TableDescriptor } from '../../schemas/source.js';
 import type { ColumnMeaning } from '../../schemas/table-meaning.js';
 import { tidyHeader, wordMeaning } from './column-meaning.js';
-import { phaseWanted, resolvePhase } from './phase.js';
+import { CONDENSED_WANTED, isGasLabel, phaseWanted, resolvePhase } from './phase.js';
 import type { TablePlan, WordFrom } from './plan.js';
 import type { Fault } from './table-plan.js';
 import { type Kind, WORDS } from './table-quantities.js';
@@ -40,18 +40,28 @@ export function tableWords(table: TableDescriptor, kind: Kind, columns: ColumnMe
     if (typeof constant === 'string') set(key as TextQuantity, { constant }, ['constants', key]);
     else fault(['constants', key], 'a word in double quotes');
   }
-  checkPhases(table, words, table.phases ?? {}, fault);
+  checkPhases(table, kind, words, table.phases ?? {}, fault);
   return words;
 }
 
 /** A constant phase is looked up at once, unless its meaning waits for the substance. */
-function checkPhases(table: TableDescriptor, words: Words, phases: TablePlan['phases'], fault: Fault): void {
+function checkPhases(
+  table: TableDescriptor,
+  kind: Kind,
+  words: Words,
+  phases: TablePlan['phases'],
+  fault: Fault,
+): void {
   if (Object.values(phases).some((value) => typeof value === 'object')) return;
   for (const quantity of ['phase', 'from-phase', 'to-phase', 'increments-from'] as const) {
     const from = words[quantity];
-    if (from === undefined || 'column' in from || resolvePhase(phases, '', from.constant) !== null) continue;
+    if (from === undefined || 'column' in from) continue;
+    const label = resolvePhase(phases, '', from.constant);
+    const gas = kind === 'vapour-pressures' && label !== null && isGasLabel(label);
+    if (label !== null && !gas) continue;
     const key = quantity === 'increments-from' ? 'incrementsFrom' : quantity;
-    fault(key in table ? [key] : ['constants', quantity], phaseWanted(from.constant, phases));
+    const wanted = gas ? CONDENSED_WANTED : phaseWanted(from.constant, phases);
+    fault(key in table ? [key] : ['constants', quantity], wanted);
   }
 }
 

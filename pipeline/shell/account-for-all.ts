@@ -14,8 +14,8 @@ export function accountForAll(
   const artefact = cases.map((read) => {
     const listed = settings.listed.get(read.substance.id);
     const raw = listed === undefined ? read : { ...read, findings: [...listed, ...read.findings] };
-    const { substance, series, anchors, transitions, findings } = raw;
-    const has = series.length + anchors.length + transitions.length > 0;
+    const { substance, series, anchors, transitions, vapourPressures, findings } = raw;
+    const has = series.length + anchors.length + transitions.length + vapourPressures.length > 0;
     if (has || findings.some(({ severity }) => severity === 'fault')) return raw;
     const finding = makeFinding({
       rule: 'row-readable',

@@ -20,7 +20,7 @@ export function failedCase(substance: Substance, error: unknown): ReconciledCase
 }
 
 function withheldCase(substance: Substance, findings: readonly Finding[]): ReconciledCase {
-  const harmonised = { substance, series: [], anchors: [], transitions: [], findings };
+  const harmonised = { substance, series: [], anchors: [], transitions: [], vapourPressures: [], findings };
   const examined = { harmonised, named: [], outcomes: [], findings, suspects: [] };
   const assembled = { examined, curves: [], crossings: [], functions: [] };
   const checked = { assembled, judged: [], outcomes: [], findings };

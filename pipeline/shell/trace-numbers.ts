@@ -11,7 +11,7 @@ export interface RawNumber {
   readonly quantity: NumberQuantity;
   /** `cr`, or `cr>l` for a transition. */
   readonly place: string;
-  /** Temperature of its row [K]; null for anchors and transitions. */
+  /** Temperature of its row [K]; null for anchors, transitions and vapour pressures. */
   readonly temperatureK: number | null;
   /** Own standard uncertainty as the curve takes it, and the relative one that it shares with its series; SI. */
   readonly u: number;
@@ -36,8 +36,8 @@ const SERIES_FIELDS: readonly SeriesField[] = [
 ];
 
 /**
- * A copy of the raw tables whose cells can be moved, and the list of them: tables' cells but temperatures, anchors and
- * transitions. A cell that several tables of one file read is one number. Cells that harmonising left out are none.
+ * A copy of the raw tables whose cells can be moved, and the list of them: tables' cells but temperatures, anchors,
+ * transitions and vapour pressures. A cell that several tables of one file read is one number. Cells that harmonising left out are none.
  */
 export function movable(
   raw: RawCase,
@@ -63,6 +63,10 @@ export function movable(
     addDatum(temperature, 'transition-temperature', place, null, (h) => h.transitions[index]!.temperature, add);
     addDatum(enthalpy, 'transition-enthalpy', place, null, (h) => h.transitions[index]!.enthalpy, add);
     addDatum(entropy, 'transition-entropy', place, null, (h) => h.transitions[index]!.entropy, add);
+  }
+  for (const [index, { phase, temperature, pressure }] of harmonised.vapourPressures.entries()) {
+    addDatum(temperature, 'temperature', phase, null, (h) => h.vapourPressures[index]!.temperature, add);
+    addDatum(pressure, 'pressure', phase, null, (h) => h.vapourPressures[index]!.pressure, add);
   }
   return { raw: copy, numbers: [...numbers.values()] };
 }
@@ -171,7 +175,7 @@ function moversOf(raw: RawCase): Map<string, Mover> {
       }
     }
   }
-  for (const { table, line, cells } of [...raw.anchors, ...raw.transitions]) {
+  for (const { table, line, cells } of [...raw.anchors, ...raw.transitions, ...raw.vapourPressures]) {
     for (const cell of Object.values(cells) as { -readonly [Key in keyof RawCell]: RawCell[Key] }[]) {
       const { value } = cell;
       add(table, line, cell.column, stepOf(value, cell.decimals), (by) => {
@@ -198,6 +202,7 @@ function ownCopy(raw: RawCase): RawCase {
     series: raw.series.map((series) => ({ ...series, columns: series.columns.map(column) })),
     anchors: raw.anchors.map(row),
     transitions: raw.transitions.map(row),
+    vapourPressures: raw.vapourPressures.map(row),
   };
 }
 

@@ -10,6 +10,7 @@ import type {
   Series,
   SeriesQuantity,
   StatedTransition,
+  VapourPressure,
 } from '../../schemas/harmonised.js';
 import { type Policy, policySchema } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
@@ -190,6 +191,7 @@ export interface CaseParts {
   readonly series: readonly Series[];
   readonly anchors?: readonly Anchor[];
   readonly transitions?: readonly StatedTransition[];
+  readonly vapourPressures?: readonly VapourPressure[];
   readonly substance?: Partial<Substance>;
   readonly named?: readonly NamedCell[];
 }
@@ -200,6 +202,7 @@ export function assembled(parts: CaseParts, policy: Policy = POLICY): AssembledC
     series: parts.series,
     anchors: parts.anchors ?? [],
     transitions: parts.transitions ?? [],
+    vapourPressures: parts.vapourPressures ?? [],
     findings: [],
   };
   const examined: ExaminedCase = { harmonised, named: parts.named ?? [], outcomes: [], findings: [], suspects: [] };

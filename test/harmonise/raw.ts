@@ -100,7 +100,7 @@ export function seriesOf(
   };
 }
 
-/** A row of anchors or transitions; numbers as printed, by column. */
+/** A row of anchors, transitions or vapour pressures; numbers as printed, by column. */
 export function rowOf(
   table: TableMeaning,
   words: RawRow['words'],
@@ -126,7 +126,15 @@ export function rowOf(
 }
 
 export function harmonised(parts: Partial<RawCase>, policy: Policy = POLICY) {
-  const raw: RawCase = { substance: SUBSTANCE, series: [], anchors: [], transitions: [], findings: [], ...parts };
+  const raw: RawCase = {
+    substance: SUBSTANCE,
+    series: [],
+    anchors: [],
+    transitions: [],
+    vapourPressures: [],
+    findings: [],
+    ...parts,
+  };
   const { artefact, findings } = harmonise([raw], { policy });
   return { ...artefact[0], made: findings };
 }

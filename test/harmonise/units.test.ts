@@ -83,6 +83,7 @@ describe('units of a series', () => {
       series: [seriesOf(meaning, 'cr', rows)],
       anchors: [],
       transitions: [],
+      vapourPressures: [],
       findings: [],
     });
     const { artefact, findings } = harmonise([raw('a', table), raw('b', good), raw('c', table)], { policy: POLICY });

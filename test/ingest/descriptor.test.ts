@@ -252,7 +252,6 @@ describe('a descriptor that cannot be read', () => {
 describe('what is described and not yet read', () => {
   it('is a note for the kinds of tables to come', () => {
     for (const holds of [
-      'vapour-pressures',
       'heat-capacity-equations',
       'volumes',
       'second-virials',

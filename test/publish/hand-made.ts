@@ -263,6 +263,7 @@ export function reconciled(id: string, parts: Parts = {}): ReconciledCase {
             series: [],
             anchors: [anchor],
             transitions: [stated],
+            vapourPressures: [],
             findings: [],
           },
           named: [],

@@ -7,7 +7,8 @@ export function rowReadable(substance: HarmonisedCase, read: readonly Finding[])
   const id = substance.substance.id;
   const bad = read.some((f) => f.rule === 'row-readable' && f.severity !== 'note');
   if (bad) return outcome(id, 'row-readable', '', 'disagrees', 'arithmetic');
-  const any = substance.series.length + substance.anchors.length + substance.transitions.length > 0;
+  const { series, anchors, transitions, vapourPressures } = substance;
+  const any = series.length + anchors.length + transitions.length + vapourPressures.length > 0;
   return any
     ? outcome(id, 'row-readable', '', 'agrees', 'arithmetic')
     : outcome(id, 'row-readable', '', 'untestable', null, { missing: 'a table that mentions the substance' });
