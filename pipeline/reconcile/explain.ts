@@ -1,6 +1,7 @@
 /** What probably happened to a suspect cell: the usual slips that lead to the value proposed for it. */
 import { printCandidate, readCell } from './slips/cell.js';
 import type { Candidate, SuspectContext } from './slips/slip.js';
+import { unknownDensity } from './slips/unknown-error.js';
 import { USUAL_SLIPS } from './slips/usual-slips.js';
 
 export type { PrintedCell, SuspectContext } from './slips/slip.js';
@@ -64,16 +65,12 @@ export function explain(
   return [...best.values()].sort((a, b) => b.score - a.score);
 }
 
-/** Weight of an error of no known kind, on the scale of the slips' weights; judgement. */
-const UNKNOWN_WEIGHT = 0.2;
-/** Such an error is equally likely at every order of magnitude, over this many factors of e. */
-const UNKNOWN_RANGE = 15;
 /** Share of proposals that are wrong by more than they say, by up to the material limit. */
 const LOOSE_SHARE = 0.05;
 
 /**
  * Whether the slip makes the proposal likelier than an error of no known kind does: prior * p(proposed | slip) against
- * weight / (2 |needed| range).
+ * the density of such errors.
  */
 function beatsChance(
   candidate: Candidate,
@@ -86,6 +83,5 @@ function beatsChance(
   if (candidate.told === true) return true;
   const sharp = Math.exp(-0.5 * (distance / spread) ** 2) / (spread * Math.sqrt(2 * Math.PI));
   const loose = distance <= material ? 1 / (2 * material) : 0;
-  const unknown = 1 / (2 * needed * UNKNOWN_RANGE);
-  return prior * ((1 - LOOSE_SHARE) * sharp + LOOSE_SHARE * loose) > UNKNOWN_WEIGHT * unknown;
+  return prior * ((1 - LOOSE_SHARE) * sharp + LOOSE_SHARE * loose) > unknownDensity(needed);
 }

@@ -21,6 +21,21 @@ export const EXPLANATIONS: Readonly<Record<string, string>> = {
   'log10-taken-for-ln': 'decimal logarithm taken for the natural one, or the reverse',
   'torr-read-as-pascal': 'torr read as pascal',
   'pascal-read-as-torr': 'pascal read as torr',
+  'bar-or-atmosphere-read-as-pascal': 'bar or atmospheres where another unit of pressure is declared',
+  'pascal-read-as-bar-or-atmosphere': 'pascal or kilopascal where bar or atmospheres are declared',
+  'kilocalorie-read-as-joule': 'kilocalories where joules are declared',
+  'calorie-read-as-kilojoule': 'calories where kilojoules are declared',
+  'kilojoule-read-as-calorie': 'kilojoules where calories are declared',
+  'joule-read-as-kilocalorie': 'joules where kilocalories are declared',
+  'kilo-per-mole-read-as-per-gram': 'kilojoules or kilocalories per mole where per gram is declared',
+  'per-gram-read-as-kilo-per-mole': 'per gram where kilojoules or kilocalories per mole are declared',
+  'calorie-per-gram-read-as-joule-per-mole': 'calories per gram where joules per mole are declared',
+  'calorie-per-mole-read-as-joule-per-gram': 'calories per mole where joules per gram are declared',
+  'other-formula-molar-mass': 'the molar mass of a hydrate or of another formula unit',
+  'old-temperature-scale': 'an old temperature scale not converted, or one converted twice',
+  'counted-from-zero-kelvin': 'counted from 0 K instead of 298.15 K, or the reverse',
+  'different-enthalpy-scales': 'enthalpies of two phases or sources from different scales',
+  'transition-left-out': 'a transition left out, or counted in',
 };
 
 /** A usual slip in words, from its code. */

@@ -19,6 +19,8 @@ const context = (printed: string, observed: number, more: Partial<SuspectContext
 const kilo = { factor: 1000, unit: 'kJ/mol' };
 const cal = { factor: 4.184, unit: 'cal_th/(mol.K)' };
 const celsius = { quantity: 'transition-temperature', offset: 273.15, unit: 'Cel' } as const;
+const perGram = { quantity: 'transition-enthalpy', factor: 18.015, unit: 'J/g' } as const;
+const fusion = { quantity: 'transition-enthalpy', unit: 'J/mol' } as const;
 const fahrenheit = { ...celsius, factor: 5 / 9, offset: (459.67 * 5) / 9, unit: '[degF]' } as const;
 
 /** Slip, printed, observed in SI, proposed in SI, its u, as it should stand, and what else differs from the entropy. */
@@ -120,6 +122,110 @@ const CASES: readonly Case[] = [
     2,
     '23.760',
     { quantity: 'pressure', factor: 133.322387415, unit: 'mm[Hg]', rowAbove: { printed: '22.390', observed: 2985.1 } },
+  ],
+  // Fusion of water: 6009.5 J/mol = 1436.3 cal_th/mol = 333.58 J/g = 79.73 cal_th/g.
+  ['kilocalorie-read-as-joule', '1.4363', 1.4363, 6009.5, 0.3, '6009.5', fusion],
+  ['calorie-read-as-kilojoule', '1436.3', 1436300, 6009.5, 0.3, '6.0095', { ...fusion, ...kilo }],
+  [
+    'kilojoule-read-as-calorie',
+    '6.0095',
+    6.0095 * 4.184,
+    6009.5,
+    0.3,
+    '1436.30',
+    { ...fusion, factor: 4.184, unit: 'cal_th/mol' },
+  ],
+  [
+    'joule-read-as-kilocalorie',
+    '6009.5',
+    6009.5 * 4184,
+    6009.5,
+    0.3,
+    '1.43630',
+    { ...fusion, factor: 4184, unit: 'kcal_th/mol' },
+  ],
+  ['kilo-per-mole-read-as-per-gram', '6,0095', 6.0095 * 18.015, 6009.5, 2, '333,583', perGram],
+  ['per-gram-read-as-kilo-per-mole', '333.58', 333580, 6009.5, 2, '6.0094', { ...fusion, ...kilo }],
+  ['calorie-per-gram-read-as-joule-per-mole', '79.73', 79.73, 6009.5, 2, '6009.6', fusion],
+  ['calorie-per-mole-read-as-joule-per-gram', '1436.3', 1436.3 * 18.015, 6009.5, 2, '333.6', perGram],
+  // Sodium acetate, 82.034 g/mol, by the mass of its trihydrate, 136.08 g/mol.
+  [
+    'other-formula-molar-mass',
+    '132.8',
+    132.8 * 82.034,
+    220.29 * 82.034,
+    3,
+    '220.3',
+    { ...perGram, factor: 82.034, molarMassGPerMol: 82.034 },
+  ],
+  ['other-formula-molar-mass', '139.90', 139.9, 69.95, 0.01, '69.95', {}],
+  // Copper freezes at 1084.62 degrees Celsius; it was 1084.88 (1968).
+  [
+    'old-temperature-scale',
+    '1358.02',
+    1358.02,
+    1357.77,
+    0.01,
+    '1357.76',
+    { quantity: 'transition-temperature', unit: 'K' },
+  ],
+  [
+    'old-temperature-scale',
+    '1357.77',
+    1357.52,
+    1357.77,
+    0.01,
+    '1358.03',
+    { quantity: 'transition-temperature', unit: 'K', temperatureScale: 'IPTS-68' },
+  ],
+  // H(Tr) - H(0) of liquid water, from ice: 13.273 kJ/mol.
+  [
+    'counted-from-zero-kelvin',
+    '20.928',
+    20928,
+    7655,
+    2,
+    '7.655',
+    { quantity: 'enthalpy-increment', ...kilo, enthalpiesFromZero: [{ value: 13273, u: 1 }] },
+  ],
+  // The vapour's formation enthalpy counted from the liquid: 44.004 instead of 44.004 - 285.830.
+  [
+    'different-enthalpy-scales',
+    '44.004',
+    44004,
+    -241826,
+    20,
+    '-241.826',
+    { quantity: 'enthalpy-of-formation', ...kilo, enthalpyScaleSteps: [{ value: -285830, u: 0 }] },
+  ],
+  ['transition-left-out', '47.95', 47.95, 69.95, 0.02, '69.95', { transitionEntropies: [{ value: 22, u: 0.01 }] }],
+  // Sublimation stated for vaporization.
+  [
+    'transition-left-out',
+    '51.059',
+    51059,
+    45050,
+    5,
+    '45.049',
+    { ...fusion, ...kilo, transitionEnthalpies: [{ value: 6010, u: 1 }] },
+  ],
+  [
+    'bar-or-atmosphere-read-as-pascal',
+    '0.031677',
+    0.031677,
+    3167.7,
+    2,
+    '3167.7',
+    { quantity: 'pressure', unit: 'Pa', rowAbove: { printed: '2985.1', observed: 2985.1 } },
+  ],
+  [
+    'pascal-read-as-bar-or-atmosphere',
+    '3.168',
+    3.168 * 101325,
+    3167.7,
+    2,
+    '0.03127',
+    { quantity: 'pressure', factor: 101325, unit: 'atm', rowAbove: { printed: '0.02946', observed: 2985.1 } },
   ],
 ];
 
@@ -226,6 +332,25 @@ describe('where a slip cannot be', () => {
     ['torr-read-as-pascal', context('23.76', 23.76), 3167.7],
     ['log10-taken-for-ln', context('30.379', 30.379, { quantity: 'heat-capacity' }), 69.95],
     ['per-gram-read-as-per-mole', context('3.883', 3.883, { molarMassGPerMol: Number.NaN }), 69.95],
+    ['kilo-per-mole-read-as-per-gram', context('6.0095', 6009.5, { ...fusion, ...kilo }), 333583],
+    ['old-temperature-scale', context('1358.02', 1358.02), 1357.77],
+    [
+      'old-temperature-scale',
+      context('1358.02', 1358.02, { ...celsius, offset: 0, temperatureScale: 'thermodynamic' }),
+      1357.77,
+    ],
+    ['counted-from-zero-kelvin', context('20.928', 20.928, { enthalpiesFromZero: [{ value: 13.273, u: 0 }] }), 7.655],
+    [
+      'different-enthalpy-scales',
+      context('44.004', 44004, { ...fusion, ...kilo, enthalpyScaleSteps: [{ value: 4000, u: 0 }] }),
+      48004,
+    ],
+    [
+      'transition-left-out',
+      context('47.95', 47.95, { quantity: 'heat-capacity', transitionEntropies: [{ value: 22, u: 0.01 }] }),
+      69.95,
+    ],
+    ['bar-or-atmosphere-read-as-pascal', context('0.6995', 0.6995), 69950],
   ] as const)('%s is not proposed', (slip, cell, proposed) => {
     expect(explain(cell, proposed, 0.002, 0.05).map((each) => each.slip)).not.toContain(slip);
   });

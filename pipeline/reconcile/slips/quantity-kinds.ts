@@ -11,6 +11,8 @@ const ENTHALPY: readonly NumberQuantity[] = [
   'transition-enthalpy',
 ];
 
+/** Enthalpies, which a transition or another zero moves. */
+export const isEnthalpy = (quantity: NumberQuantity): boolean => ENTHALPY.includes(quantity);
 export const isPerKelvin = (quantity: NumberQuantity): boolean => PER_KELVIN.includes(quantity);
 export const isEntropy = (quantity: NumberQuantity): boolean => quantity !== 'heat-capacity' && isPerKelvin(quantity);
 export const isGibbsEnergy = (quantity: NumberQuantity): boolean => GIBBS.includes(quantity);

@@ -1,5 +1,6 @@
 /** What a usual slip is: from a printed cell to what may have been meant. */
 import type { NumberQuantity } from '../../../schemas/quantities.js';
+import type { TemperatureScale } from '../../../schemas/table-meaning.js';
 import type { PrintedNumber } from './printed-number.js';
 
 /** A printed cell and the SI value that it was read as. */
@@ -23,6 +24,22 @@ export interface SuspectContext extends PrintedCell {
   /** The other of the enthalpy and the entropy of one transition. */
   readonly partner: PrintedCell | null;
   readonly gas: boolean;
+  /** What the source says its temperatures are on; absent where nothing is known. */
+  readonly temperatureScale?: TemperatureScale;
+  /** H(Tr) - H(0) of the phase [J/mol], each way that it is stated. */
+  readonly enthalpiesFromZero?: readonly KnownStep[];
+  /** What lies between two scales of enthalpy that meet in this substance [J/mol]. */
+  readonly enthalpyScaleSteps?: readonly KnownStep[];
+  /** Of the substance's stated transitions, the cell's own left out: enthalpies [J/mol] and entropies [J/(mol K)]. */
+  readonly transitionEnthalpies?: readonly KnownStep[];
+  readonly transitionEntropies?: readonly KnownStep[];
+}
+
+/** A difference that is stated somewhere else about the same substance, SI. */
+export interface KnownStep {
+  readonly value: number;
+  /** Standard uncertainty. */
+  readonly u: number;
 }
 
 /** The cell with its digits read. */

@@ -2,18 +2,36 @@
 import { calorieReadAsJoule, jouleReadAsCalorie } from './calorie.js';
 import { celsiusReadAsKelvin, kelvinReadAsCelsius } from './celsius.js';
 import { decimalPointMoved } from './decimal-point.js';
+import { differentEnthalpyScales } from './enthalpy-scales.js';
 import { digitsExchanged } from './exchanged-digits.js';
 import { enthalpyAndEntropyExchanged } from './exchanged-pair.js';
 import { fahrenheitNotConverted, readAsFahrenheit } from './fahrenheit.js';
+import { countedFromZeroKelvin } from './from-zero-kelvin.js';
 import { kiloAdded, kiloDropped } from './kilo.js';
+import {
+  calorieReadAsKilojoule,
+  jouleReadAsKilocalorie,
+  kilocalorieReadAsJoule,
+  kilojouleReadAsCalorie,
+} from './kilocalorie.js';
 import { log10TakenForLn } from './logarithm.js';
+import { otherFormulaMolarMass } from './molar-mass.js';
+import { oldTemperatureScale } from './old-scale.js';
 import { oneDigitWrong } from './one-digit.js';
 import { perGramReadAsPerMole, perMoleReadAsPerGram } from './per-gram.js';
+import {
+  caloriePerGramReadAsJoulePerMole,
+  caloriePerMoleReadAsJoulePerGram,
+  kiloPerMoleReadAsPerGram,
+  perGramReadAsKiloPerMole,
+} from './per-gram-compound.js';
+import { barReadAsPascal, pascalReadAsBar } from './pressure-units.js';
 import { copiedFromRowAbove } from './row-above.js';
 import { signLost } from './sign.js';
 import type { Slip } from './slip.js';
 import { atmosphereForBar } from './standard-pressure.js';
 import { pascalReadAsTorr, torrReadAsPascal } from './torr.js';
+import { transitionLeftOut } from './transition-left-out.js';
 import { unitsOfR } from './units-of-r.js';
 
 export const USUAL_SLIPS: readonly Slip[] = [
@@ -38,4 +56,19 @@ export const USUAL_SLIPS: readonly Slip[] = [
   log10TakenForLn,
   torrReadAsPascal,
   pascalReadAsTorr,
+  barReadAsPascal,
+  pascalReadAsBar,
+  kilocalorieReadAsJoule,
+  calorieReadAsKilojoule,
+  kilojouleReadAsCalorie,
+  jouleReadAsKilocalorie,
+  kiloPerMoleReadAsPerGram,
+  perGramReadAsKiloPerMole,
+  caloriePerGramReadAsJoulePerMole,
+  caloriePerMoleReadAsJoulePerGram,
+  otherFormulaMolarMass,
+  oldTemperatureScale,
+  countedFromZeroKelvin,
+  differentEnthalpyScales,
+  transitionLeftOut,
 ];

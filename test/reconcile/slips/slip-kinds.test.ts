@@ -1,37 +1,63 @@
 import { describe, expect, it } from 'vitest';
-import { explain, SLIP_CODES } from '../../../pipeline/reconcile/explain.js';
-import type { SuspectContext } from '../../../pipeline/reconcile/slips/slip.js';
-import { type Random, seededRandom } from '../../slips/random.js';
-import { disturbedCell, SPOILT_KINDS, type SpoiltCell, spoilCell } from './spoil-cell.js';
+import { SLIP_CODES } from '../../../pipeline/reconcile/explain.js';
+import { seededRandom } from '../../slips/random.js';
+import { explained, study, studyMix, type Tally } from './slip-study.js';
+import { disturbedCell, SPOILT_KINDS } from './spoil-cell.js';
 
-const CELLS = 2000;
-const SEED = 20260;
+const CELLS = Number(process.env.CELLS ?? 600);
+/** Priors were chosen on seeds below 100 000; these are only reported. */
+const SEED = Number(process.env.SEED ?? 700_000);
 
-interface Tally {
-  readonly kind: string;
-  readonly first: number;
-  readonly valueRight: number;
-  readonly none: number;
-}
+/** Slips that are smaller than six times a thousandfold u in every cell. */
+const NEVER_SEEN_AT_1000 = ['atmosphere-for-bar', 'old-temperature-scale'];
 
-describe('2000 spoilt cells of each kind', { timeout: 60_000 }, () => {
+/** How often each is met, of a hundred, as one expects of tables typed by hand; the rest are rare. */
+const USUAL: readonly (readonly [string, number])[] = [
+  ['one-digit-wrong', 30],
+  ['digits-exchanged', 12],
+  ['decimal-point-moved', 8],
+  ['copied-from-row-above', 5],
+  ['sign-lost', 5],
+  ['calorie-read-as-joule', 5],
+  ['joule-read-as-calorie', 3],
+  ['kilo-dropped', 4],
+  ['kilo-added', 4],
+  ['celsius-read-as-kelvin', 5],
+  ['kelvin-read-as-celsius', 3],
+];
+
+describe(`${CELLS} spoilt cells of each kind`, { timeout: 120_000 }, () => {
   it('cover every kind that is explained', () => {
     expect([...SPOILT_KINDS].sort()).toEqual([...SLIP_CODES].sort());
   });
 
   it('are explained rightly first in 90 % where the proposal is as sharp as the printed digits', () => {
-    const tallies = SPOILT_KINDS.map((kind) => study(kind, 1, SEED));
+    const tallies = SPOILT_KINDS.map((kind, i) => study(kind, 1, SEED + i, CELLS));
     print('u = printed digits', tallies);
     for (const tally of tallies) expect(tally.first, tally.kind).toBeGreaterThanOrEqual(0.9);
   });
 
   it('are explained rightly first in 75 % where the proposal is a thousand times less sharp', () => {
-    // A tenth of a joule per kelvin is never seen then.
-    const tallies = SPOILT_KINDS.filter((kind) => kind !== 'atmosphere-for-bar').map((kind) =>
-      study(kind, 1000, SEED + 1),
-    );
+    const seen = SPOILT_KINDS.filter((kind) => !NEVER_SEEN_AT_1000.includes(kind));
+    const tallies = seen.map((kind, i) => study(kind, 1000, SEED + 1000 + i, CELLS));
     print('u = 1000 printed digits', tallies);
     for (const tally of tallies) expect(tally.first, tally.kind).toBeGreaterThanOrEqual(0.75);
+  });
+});
+
+describe('a mix of kinds as usual as they are met', { timeout: 120_000 }, () => {
+  it.each([
+    [1, 0.9],
+    [1000, 0.75],
+  ])('is explained rightly first at u = %i printed digits in a share of %d', (timesDigits, least) => {
+    const kinds = SPOILT_KINDS.filter((kind) => timesDigits === 1 || !NEVER_SEEN_AT_1000.includes(kind));
+    const usual = new Map(USUAL);
+    const rest = kinds.filter((kind) => !usual.has(kind));
+    const left = 100 - USUAL.reduce((sum, [, share]) => sum + share, 0);
+    const weights = new Map(kinds.map((kind) => [kind, usual.get(kind) ?? left / rest.length]));
+    const tally = studyMix(weights, timesDigits, SEED + 2000 + timesDigits, 5 * CELLS);
+    print(`mix, u = ${timesDigits} printed digits`, [tally]);
+    expect(tally.first).toBeGreaterThanOrEqual(least);
   });
 });
 
@@ -41,9 +67,9 @@ describe('2000 cells that are wrong by an amount of no meaning', () => {
     [1, 0.15],
     [1000, 0.5],
   ])('find an explanation by chance at u = %i printed digits in a share below %d', (timesDigits, most) => {
-    const random = seededRandom(SEED + 2);
+    const random = seededRandom(SEED + 4000);
     const found = new Map<string, number>();
-    for (let i = 0; i < CELLS; ) {
+    for (let i = 0; i < 2000; ) {
       const cell = disturbedCell(random);
       const result = explained(cell, timesDigits, random);
       if (result === null) continue;
@@ -52,77 +78,16 @@ describe('2000 cells that are wrong by an amount of no meaning', () => {
       found.set(code, (found.get(code) ?? 0) + 1);
     }
     if (process.env.SHOW !== undefined) console.log(timesDigits, Object.fromEntries(found));
-    expect(1 - (found.get('none') ?? 0) / CELLS).toBeLessThan(most);
+    expect(1 - (found.get('none') ?? 0) / 2000).toBeLessThan(most);
   });
 });
-
-function study(kind: string, timesDigits: number, seed: number): Tally {
-  const random = seededRandom(seed + SPOILT_KINDS.indexOf(kind));
-  let [first, valueRight, none, draws] = [0, 0, 0, 0];
-  for (let i = 0; i < CELLS; ) {
-    if (draws++ > 1000 * CELLS) throw new Error(`no cell can hold ${kind}`);
-    const cell = spoilCell(kind, random);
-    const result = cell === null ? null : explained(cell, timesDigits, random);
-    if (cell === null || result === null) continue;
-    i++;
-    const best = result[0];
-    if (best === undefined) none++;
-    else if (best.slip === kind) {
-      first++;
-      const near = Math.max(0.01 * Math.abs(cell.truth - numberOf(cell)), 3 * cell.lastPlace);
-      if (Math.abs(best.corrected - cell.truth) <= near) valueRight++;
-    }
-  }
-  return { kind, first: first / CELLS, valueRight: valueRight / CELLS, none: none / CELLS };
-}
-
-/** null where nobody would have suspected the cell: off by less than 6 u or five units of the last place. */
-function explained(cell: SpoiltCell, timesDigits: number, random: Random) {
-  const u = (timesDigits * cell.lastPlace) / Math.sqrt(12);
-  const observed = numberOf(cell);
-  const proposed = cell.truth + u * normal(random);
-  if (Math.abs(observed - proposed) < Math.max(6 * u, 5 * cell.lastPlace)) return null;
-  return explain(contextOf(cell, observed), proposed, u, materialOf(cell));
-}
-
-function contextOf(cell: SpoiltCell, observed: number): SuspectContext {
-  const si = (text: string) => Number(text) * cell.factor + cell.offset;
-  return {
-    ...{ quantity: cell.quantity, printed: cell.printed, observed, factor: cell.factor, offset: cell.offset },
-    ...{ unit: cell.unit, molarMassGPerMol: cell.molarMassGPerMol, temperatureK: null, gas: cell.gas },
-    rowAbove: { printed: cell.above, observed: si(cell.above) },
-    partner: cell.partner === null ? null : { printed: cell.partner, observed: Number.NaN },
-  };
-}
-
-const numberOf = (cell: SpoiltCell): number => Number(cell.printed) * cell.factor + cell.offset;
-
-/** What a user would notice, as the policy has it by default. */
-function materialOf({ quantity, truth }: SpoiltCell): number {
-  switch (quantity) {
-    case 'entropy':
-    case 'gibbs-function':
-    case 'transition-entropy':
-      return Math.max(0.05, 0.001 * Math.abs(truth));
-    case 'heat-capacity':
-    case 'pressure':
-      return 0.01 * Math.abs(truth);
-    case 'temperature':
-    case 'transition-temperature':
-      return 0.5;
-    default:
-      return 50;
-  }
-}
-
-/** Box and Muller (1958). */
-function normal(random: Random): number {
-  return Math.sqrt(-2 * Math.log(1 - random.unit())) * Math.cos(2 * Math.PI * random.unit());
-}
 
 function print(title: string, tallies: readonly Tally[]): void {
   if (process.env.SHOW === undefined) return;
   const percent = (share: number) => (100 * share).toFixed(1).padStart(6);
-  const lines = tallies.map((t) => `${t.kind.padEnd(32)}${percent(t.first)}${percent(t.valueRight)}${percent(t.none)}`);
-  console.log([`${title}: first, first with the value, none [%]`, ...lines].join('\n'));
+  const lines = tallies.map(
+    (t) =>
+      `${t.kind.padEnd(42)}${percent(t.first)}${percent(t.valueRight)}${percent(t.wrong)}${percent(t.none)}  ${t.takenFor}`,
+  );
+  console.log([`${title}: first, first with the value, another first, none [%], taken for`, ...lines].join('\n'));
 }

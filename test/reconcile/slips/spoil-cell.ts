@@ -4,6 +4,38 @@
  */
 import type { NumberQuantity } from '../../../schemas/quantities.js';
 import type { Random } from '../../slips/random.js';
+import {
+  ANY,
+  ATM,
+  BAR,
+  CAL,
+  CELSIUS,
+  type Column,
+  DEG_F,
+  ENTROPIES,
+  FORMATION_KJ,
+  INCREMENT_KJ,
+  J,
+  KCAL,
+  KELVIN,
+  KILOPASCAL,
+  KJ,
+  PASCAL,
+  PER_GRAM,
+  PER_GRAM_ENTHALPY,
+  TORR,
+  TRANSITION_KJ,
+  TRANSITION_PAIR,
+  WHOLE_CAL,
+  WHOLE_J,
+} from './columns.js';
+
+/** What else is stated about the substance, SI: two transitions, another phase's formation enthalpy, H(Tr) - H(0). */
+export interface Surroundings {
+  readonly fromZero: number;
+  readonly otherFormation: number;
+  readonly transitions: readonly { readonly enthalpy: number; readonly entropy: number }[];
+}
 
 export interface SpoiltCell {
   readonly quantity: NumberQuantity;
@@ -20,76 +52,23 @@ export interface SpoiltCell {
   readonly above: string;
   readonly partner: string | null;
   readonly gas: boolean;
-}
-
-interface Column {
-  readonly quantity: NumberQuantity;
-  readonly unit: string;
-  readonly factor: number;
-  readonly offset: number;
-  /** Range of the numbers as printed; drawn log-uniform. */
-  readonly low: number;
-  readonly high: number;
-  readonly decimals: readonly number[];
-  readonly sign?: -1;
+  readonly around: Surroundings;
 }
 
 type Spoiler = (drawn: Drawn) => string | null;
 
 interface Drawn {
   readonly column: Column;
+  /** As printed, unrounded. */
   readonly truth: number;
   readonly decimals: number;
   readonly clean: string;
   readonly above: string;
   readonly partner: string;
   readonly molarMass: number;
+  readonly around: Surroundings;
   readonly random: Random;
 }
-
-const column = (
-  quantity: NumberQuantity,
-  unit: string,
-  factor: number,
-  low: number,
-  high: number,
-  decimals: readonly number[],
-  more: { offset?: number; sign?: -1 } = {},
-): Column => ({ quantity, unit, factor, offset: 0, low, high, decimals, ...more });
-
-const J = [
-  column('entropy', 'J/(mol.K)', 1, 15, 400, [2, 3]),
-  column('gibbs-function', 'J/(mol.K)', 1, 15, 300, [2, 3]),
-  column('heat-capacity', 'J/(mol.K)', 1, 12, 150, [2, 3]),
-];
-const KJ = [
-  column('enthalpy-increment', 'kJ/mol', 1000, 1, 150, [3]),
-  column('enthalpy-of-formation', 'kJ/mol', 1000, 40, 1600, [2, 3], { sign: -1 }),
-  column('transition-enthalpy', 'kJ/mol', 1000, 0.8, 300, [3]),
-];
-const WHOLE_J = [column('enthalpy-increment', 'J/mol', 1, 900, 150000, [0, 1])];
-const CAL = [
-  column('entropy', 'cal_th/(mol.K)', 4.184, 4, 90, [2, 3]),
-  column('enthalpy-of-formation', 'kcal_th/mol', 4184, 10, 400, [2, 3], { sign: -1 }),
-];
-const PER_GRAM = [
-  column('entropy', 'J/(g.K)', 1, 0.3, 6, [4]),
-  column('enthalpy-increment', 'kJ/kg', 1, 5, 900, [2, 3]),
-];
-const KELVIN = [
-  column('transition-temperature', 'K', 1, 60, 3000, [1, 2]),
-  column('temperature', 'K', 1, 60, 3000, [1, 2]),
-];
-const CELSIUS = [column('transition-temperature', 'Cel', 1, 30, 2700, [1, 2], { offset: 273.15 })];
-const DEG_F = [column('transition-temperature', '[degF]', 5 / 9, 90, 4000, [1], { offset: (459.67 * 5) / 9 })];
-const PASCAL = [column('pressure', 'Pa', 1, 500, 100000, [0, 1]), column('pressure', 'kPa', 1000, 1, 200, [3])];
-const TORR = [column('pressure', 'mm[Hg]', 133.322387415, 5, 760, [2])];
-const TRANSITION_PAIR = [
-  column('transition-enthalpy', 'kJ/mol', 1000, 0.8, 300, [2, 3]),
-  column('transition-entropy', 'J/(mol.K)', 1, 0.9, 140, [2, 3]),
-];
-const ENTROPIES = J.slice(0, 2);
-const ANY = [...J, ...KJ, ...WHOLE_J, ...CAL, ...KELVIN, ...CELSIUS, ...PASCAL];
 
 /** By the name of the slip: where it happens, and what is printed instead; null where this cell cannot hold it. */
 const KINDS: Readonly<Record<string, readonly [readonly Column[], Spoiler]>> = {
@@ -100,20 +79,71 @@ const KINDS: Readonly<Record<string, readonly [readonly Column[], Spoiler]>> = {
   'sign-lost': [[...KJ, ...CELSIUS], ({ clean }) => (clean.startsWith('-') ? clean.slice(1) : `-${clean}`)],
   'calorie-read-as-joule': [[...J, ...KJ, ...WHOLE_J], (d) => figures(d, d.truth / calorie(d.random))],
   'joule-read-as-calorie': [CAL, (d) => figures(d, d.truth * calorie(d.random))],
-  'kilo-dropped': [[...WHOLE_J, ...PASCAL.slice(0, 1)], (d) => (d.truth / 1000).toFixed(d.decimals + 3)],
-  'kilo-added': [[...KJ, ...PASCAL.slice(1)], (d) => (d.truth * 1000).toFixed(Math.max(0, d.decimals - 3))],
-  'per-gram-read-as-per-mole': [[...J, ...KJ], (d) => figures(d, d.truth / d.molarMass, 1)],
+  'kilocalorie-read-as-joule': [WHOLE_J, (d) => figures(d, d.truth / (1000 * calorie(d.random)), 3)],
+  'calorie-read-as-kilojoule': [KJ, (d) => figures(d, (1000 * d.truth) / calorie(d.random), -2)],
+  'kilojoule-read-as-calorie': [WHOLE_CAL, (d) => figures(d, (d.truth * calorie(d.random)) / 1000, 3)],
+  'joule-read-as-kilocalorie': [KCAL, (d) => figures(d, 1000 * d.truth * calorie(d.random), -2)],
+  'kilo-dropped': [[...WHOLE_J, ...PASCAL], (d) => (d.truth / 1000).toFixed(d.decimals + 3)],
+  'kilo-added': [[...KJ, ...KILOPASCAL], (d) => (d.truth * 1000).toFixed(Math.max(0, d.decimals - 3))],
+  'per-gram-read-as-per-mole': [[...J, ...WHOLE_J], (d) => figures(d, d.truth / d.molarMass, 1)],
   'per-mole-read-as-per-gram': [PER_GRAM, (d) => figures(d, d.truth * d.molarMass)],
+  'kilo-per-mole-read-as-per-gram': [PER_GRAM_ENTHALPY, (d) => figures(d, (d.truth * d.molarMass) / 1000, 1)],
+  'per-gram-read-as-kilo-per-mole': [[...KJ, ...KCAL], (d) => figures(d, (1000 * d.truth) / d.molarMass)],
+  'calorie-per-gram-read-as-joule-per-mole': [
+    [...J, ...KJ, ...WHOLE_J],
+    (d) => figures(d, (d.truth * d.column.factor) / d.molarMass / calorie(d.random), d.column.factor > 1 ? 0 : 2),
+  ],
+  'calorie-per-mole-read-as-joule-per-gram': [
+    PER_GRAM,
+    (d) => {
+      const calories = (d.truth * d.molarMass) / calorie(d.random);
+      return d.column.quantity !== 'entropy' && d.random.unit() < 0.5
+        ? figures(d, calories / 1000, 2)
+        : figures(d, calories);
+    },
+  ],
+  'other-formula-molar-mass': [[...PER_GRAM, ...J, ...KJ], (d) => figures(d, d.truth * otherFormula(d))],
   'celsius-read-as-kelvin': [KELVIN, (d) => figures(d, d.truth - 273.15)],
   'kelvin-read-as-celsius': [CELSIUS, (d) => figures(d, d.truth + 273.15)],
   'fahrenheit-not-converted': [KELVIN, (d) => figures(d, d.truth * 1.8 - 459.67)],
   'read-as-fahrenheit': [DEG_F, (d) => figures(d, ((d.truth + 459.67) * 5) / 9 - (d.random.unit() < 0.5 ? 273.15 : 0))],
+  'old-temperature-scale': [
+    [...KELVIN, ...CELSIUS],
+    (d) => {
+      const difference = scaleDifference(d.truth + d.column.offset);
+      return difference === null ? null : figures(d, d.truth - difference);
+    },
+  ],
   'atmosphere-for-bar': [ENTROPIES, (d) => figures(d, d.truth - 8.314462618 * Math.log(1.01325))],
   'enthalpy-and-entropy-exchanged': [TRANSITION_PAIR, ({ partner }) => partner],
+  'counted-from-zero-kelvin': [
+    [...INCREMENT_KJ, ...FORMATION_KJ],
+    (d) => {
+      const down = d.column.sign === -1 && d.random.unit() < 0.5;
+      return figures(d, d.truth + ((down ? -1 : 1) * d.around.fromZero) / d.column.factor);
+    },
+  ],
+  'different-enthalpy-scales': [FORMATION_KJ, (d) => figures(d, d.truth - d.around.otherFormation / d.column.factor)],
+  'transition-left-out': [
+    [...ENTROPIES, ...INCREMENT_KJ, ...TRANSITION_KJ],
+    (d) => {
+      const left = d.random.pick(d.around.transitions);
+      const rest = d.truth - (d.column.unit.includes('K') ? left.entropy : left.enthalpy) / d.column.factor;
+      return rest > 0 ? figures(d, rest) : null;
+    },
+  ],
   'in-units-of-r': [J, (d) => figures(d, d.truth / 8.314462618, 1)],
-  'log10-taken-for-ln': [[...ENTROPIES, ...KJ.slice(2)], (d) => figures(d, d.truth / Math.LN10)],
-  'torr-read-as-pascal': [PASCAL.slice(0, 1), (d) => figures(d, d.truth / 133.322387415, 1)],
-  'pascal-read-as-torr': [TORR, (d) => figures(d, d.truth * 133.322387415)],
+  'log10-taken-for-ln': [[...ENTROPIES, ...TRANSITION_KJ], (d) => figures(d, d.truth / Math.LN10)],
+  'torr-read-as-pascal': [
+    [...PASCAL, ...KILOPASCAL],
+    (d) => figures(d, (d.truth * d.column.factor) / 133.322387415, 1),
+  ],
+  'pascal-read-as-torr': [TORR, (d) => pascal(d)],
+  'bar-or-atmosphere-read-as-pascal': [
+    [...PASCAL, ...KILOPASCAL],
+    (d) => figures(d, (d.truth * d.column.factor) / (d.random.unit() < 0.5 ? 1e5 : 101325), 4),
+  ],
+  'pascal-read-as-bar-or-atmosphere': [[...BAR, ...ATM], (d) => pascal(d)],
 };
 
 export const SPOILT_KINDS: readonly string[] = Object.keys(KINDS);
@@ -145,7 +175,21 @@ function drawCell(column: Column, random: Random): Drawn {
   const molarMass = random.logBetween(4, 400);
   const meltingK = random.logBetween(150, 2500);
   const other = column.quantity === 'transition-entropy' ? (truth * meltingK) / 1000 : (truth * 1000) / meltingK;
-  return { column, truth, decimals, clean, above, partner: other.toFixed(random.pick([2, 3])), molarMass, random };
+  const partner = other.toFixed(random.pick([2, 3]));
+  return { column, truth, decimals, clean, above, partner, molarMass, around: surroundings(random), random };
+}
+
+/** Known to the joule, as three decimals of a kilojoule are. */
+function surroundings(random: Random): Surroundings {
+  const transition = () => {
+    const enthalpy = Math.round(random.logBetween(500, 40000));
+    return { enthalpy, entropy: Math.round((1000 * enthalpy) / random.logBetween(150, 2500)) / 1000 };
+  };
+  return {
+    fromZero: Math.round(random.logBetween(2000, 25000)),
+    otherFormation: -Math.round(random.logBetween(40000, 1600000)),
+    transitions: [transition(), transition()],
+  };
 }
 
 function finish(drawn: Drawn, printed: string, gas: boolean): SpoiltCell {
@@ -158,17 +202,46 @@ function finish(drawn: Drawn, printed: string, gas: boolean): SpoiltCell {
     lastPlace: 10 ** -drawn.decimals * scale,
     molarMassGPerMol: drawn.molarMass,
     partner: quantity.startsWith('transition-e') ? drawn.partner : null,
+    around: drawn.around,
   };
 }
 
 /** Printed with the column's decimals (and `more`); nobody prints a number of fewer than three figures so. */
 function figures({ decimals }: Drawn, value: number, more = 0): string | null {
-  const text = value.toFixed(decimals + more);
+  const text = value.toFixed(Math.max(0, decimals + more));
   return text.replace(/\D/g, '').replace(/^0+/, '').length < 3 ? null : text;
+}
+
+/** In pascal as whole numbers, or in kilopascal with three decimals. */
+function pascal({ truth, column, random }: Drawn): string {
+  const pa = truth * column.factor;
+  return random.unit() < 0.6 ? pa.toFixed(0) : (pa / 1000).toFixed(3);
 }
 
 function calorie(random: Random): number {
   return random.unit() < 0.85 ? 4.184 : 4.1868;
+}
+
+/** What the wrong molar mass multiplies by: M/(M + n H2O) or the reverse in a column per mass, else 2 or 1/2. */
+function otherFormula({ column, molarMass, random }: Drawn): number {
+  if (!/\/\(?k?g/.test(column.unit) || random.unit() < 0.3) return random.unit() < 0.5 ? 2 : 0.5;
+  const hydrate = molarMass + random.pick([0.5, 1, 1, 1, 2, 2, 3, 4, 5, 6, 6, 7, 10]) * 18.0153;
+  return random.unit() < 0.6 ? molarMass / hydrate : hydrate / molarMass;
+}
+
+/**
+ * t90 - t68 [K]: at the fixed points as the two scales print them, and above gold -0.25 (T/1337.33)^2; null where the
+ * temperature lies more than 3 K from all of them.
+ */
+function scaleDifference(temperatureK: number): number | null {
+  if (temperatureK > 1337.33) return -0.25 * (temperatureK / 1337.33) ** 2;
+  const FIXED = [
+    [505.078, 505.1181],
+    [692.677, 692.73],
+    [1234.93, 1235.08],
+  ] as const;
+  const near = FIXED.find(([now]) => Math.abs(now - temperatureK) < 3);
+  return near === undefined ? null : near[0] - near[1];
 }
 
 function placesOfDigits(text: string): number[] {
