@@ -19,6 +19,9 @@ export interface Explanation {
 
 export const SLIP_CODES: readonly string[] = USUAL_SLIPS.map((slip) => slip.code);
 
+/** Slips that only ever befall several cells at once. */
+export const MANY_CELL_CODES: readonly string[] = ['from-and-to-exchanged'];
+
 /**
  * The usual slips whose corrected value meets `proposed` within the larger of two standard uncertainties (the rounding of
  * the corrected value included) and `material`, best first; empty where none does. All in SI.

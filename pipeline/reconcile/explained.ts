@@ -1,20 +1,30 @@
 import type { CheckedCase } from '../../schemas/checked.js';
 import type { Finding, Suspect } from '../../schemas/finding.js';
+import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
-import { explain, type SuspectContext } from './explain.js';
+import { type Explanation, explain, type SuspectContext } from './explain.js';
 import { suspectContext } from './suspect-context.js';
 
 /** Suspects with the usual slip that leads to their proposed value, where one does. */
 export function explained(checked: CheckedCase, suspects: readonly Suspect[], policy: Policy): Suspect[] {
   const substance = checked.assembled.examined.harmonised;
   return suspects.map((suspect) => {
-    const found = suspectContext(substance, suspect);
-    if (found === null) return suspect;
-    const [best] = explain(found, suspect.proposed, suspect.uProposed, materialOf(found, policy));
-    return best === undefined
-      ? suspect
-      : { ...suspect, explanation: best.slip, explainedPrinted: best.correctedPrinted };
+    // A whole column has its law already.
+    if (suspect.cells > 1) return suspect;
+    const best = explanationOf(substance, suspect, policy);
+    return best === null ? suspect : { ...suspect, explanation: best.slip, explainedPrinted: best.correctedPrinted };
   });
+}
+
+/** The best explanation of one cell, with the score that `orderedByExplanation` asks for; null where none is usual. */
+export function explanationOf(
+  substance: HarmonisedCase,
+  suspect: Pick<Suspect, 'address' | 'proposed' | 'uProposed'>,
+  policy: Policy,
+): Explanation | null {
+  const found = suspectContext(substance, suspect);
+  if (found === null) return null;
+  return explain(found, suspect.proposed, suspect.uProposed, materialOf(found, policy))[0] ?? null;
 }
 
 /** Findings that name a cell take their first suspect's explanation. */
@@ -31,6 +41,7 @@ function materialOf(context: SuspectContext, policy: Policy): number {
   const { material } = policy;
   const t = context.temperatureK ?? 298.15;
   switch (context.quantity) {
+    case 'temperature':
     case 'transition-temperature':
       return material.transitionTemperatureK;
     case 'transition-enthalpy':
@@ -41,6 +52,9 @@ function materialOf(context: SuspectContext, policy: Policy): number {
     case 'transition-entropy':
     case 'gibbs-function':
       return material.entropyJPerMolK;
+    case 'pressure':
+      // By Trouton's rule, dS = 88 J/(mol K): dp/p = (dS/R) dT/T.
+      return (10.6 * material.transitionTemperatureK * Math.abs(context.observed)) / t;
     default:
       return material.enthalpyJPerMol;
   }

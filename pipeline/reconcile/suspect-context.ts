@@ -7,7 +7,7 @@ import { printedNumber } from '../core/numeric/printed-like.js';
 import { conversionTo } from '../core/units/ucum.js';
 import { knownSteps } from './known-steps.js';
 import type { PrintedCell, SuspectContext } from './slips/slip.js';
-import { statedData } from './stated-data.js';
+import { statedCells } from './stated-cells.js';
 
 type Addressed = Pick<Suspect, 'address'>;
 
@@ -78,7 +78,7 @@ function unitOf(
 }
 
 function datumContext(substance: HarmonisedCase, { address }: Addressed): SuspectContext | null {
-  const all = statedData(substance);
+  const all = statedCells(substance);
   const stated = all.find(({ datum }) => isAt(datum, address));
   if (stated === undefined) return null;
   const { quantity, datum, partner, temperatureK, phases, table, transition } = stated;

@@ -35,6 +35,7 @@ export const EXPLANATIONS: Readonly<Record<string, string>> = {
   'old-temperature-scale': 'an old temperature scale not converted, or one converted twice',
   'counted-from-zero-kelvin': 'counted from 0 K instead of 298.15 K, or the reverse',
   'different-enthalpy-scales': 'enthalpies of two phases or sources from different scales',
+  'from-and-to-exchanged': 'from and to of the transition exchanged',
   'transition-left-out': 'a transition left out, or counted in',
 };
 

@@ -3,7 +3,7 @@ import type { Datum, HarmonisedCase } from '../../schemas/harmonised.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
 import type { TableMeaning } from '../../schemas/table-meaning.js';
 
-export interface StatedDatum {
+export interface StatedCell {
   readonly quantity: NumberQuantity;
   readonly datum: Datum;
   /** The other of a transition's enthalpy and entropy. */
@@ -16,8 +16,8 @@ export interface StatedDatum {
   readonly transition: number;
 }
 
-export function statedData(substance: HarmonisedCase): readonly StatedDatum[] {
-  const found: StatedDatum[] = [];
+export function statedCells(substance: HarmonisedCase): readonly StatedCell[] {
+  const found: StatedCell[] = [];
   substance.transitions.forEach((t, transition) => {
     const around = { temperatureK: t.temperature.value, phases: [t.from, t.to], table: t.table, transition };
     found.push({ quantity: 'transition-temperature', datum: t.temperature, partner: null, ...around });
@@ -36,6 +36,11 @@ export function statedData(substance: HarmonisedCase): readonly StatedDatum[] {
       ['heat-capacity', a.heatCapacity],
     ];
     for (const [quantity, datum] of data) if (datum !== null) found.push({ quantity, datum, partner: null, ...around });
+  }
+  for (const { table, phase, temperature, pressure } of substance.vapourPressures) {
+    const around = { partner: null, temperatureK: temperature.value, phases: [phase], table, transition: -1 };
+    found.push({ quantity: 'temperature', datum: temperature, ...around });
+    found.push({ quantity: 'pressure', datum: pressure, ...around });
   }
   return found;
 }
