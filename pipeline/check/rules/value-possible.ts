@@ -1,6 +1,6 @@
-import type { Finding, Outcome } from '../../../schemas/finding.js';
-import type { Datum, HarmonisedCase, Series, SeriesQuantity } from '../../../schemas/harmonised.js';
-import { makeFinding } from '../../../schemas/make-finding.js';
+import type { EvidenceCell, Finding, Outcome } from '../../../schemas/finding.js';
+import type { Datum, HarmonisedCase, Series, SeriesQuantity, VapourPressure } from '../../../schemas/harmonised.js';
+import { makeFinding, type PartialFinding } from '../../../schemas/make-finding.js';
 import { addressOf, evidenceOf, kindOf, outcome, placeOf } from '../place.js';
 
 /** Above this a temperature in kelvin or a molar heat capacity per kelvin is no longer one (order of magnitude only). */
@@ -72,10 +72,13 @@ function impossibleCp(cp: SeriesQuantity, i: number, temperatureK: number): bool
   return v < 0 || (v === 0 && temperatureK > 20) || v > LARGEST_J_PER_MOL_K;
 }
 
-/** Stated numbers: temperatures and pressures of transitions above 0, entropies of anchors 0 or more on the absolute zero. */
+/**
+ * Stated numbers: temperatures and pressures of transitions and of vapours above 0, entropies of anchors 0 or more on the
+ * absolute zero.
+ */
 export function statedValuesPossible(harmonised: HarmonisedCase): { outcome: Outcome; findings: Finding[] } | null {
-  const { anchors, transitions } = harmonised;
-  if (anchors.length + transitions.length === 0) return null;
+  const { anchors, transitions, vapourPressures } = harmonised;
+  if (anchors.length + transitions.length + vapourPressures.length === 0) return null;
   const substance = harmonised.substance.id;
   const findings: Finding[] = [];
   const report = (datum: Datum, phases: readonly [string, string | null], quantity: string, wanted: string): void => {
@@ -119,7 +122,39 @@ export function statedValuesPossible(harmonised: HarmonisedCase): { outcome: Out
     if (entropy !== null && table.entropyZero === 'absolute' && entropy.value < -entropy.halfUnit)
       report(entropy, [phase, null], 'entropy', 'an entropy of 0 or more, counted from the absolute zero');
   }
-  const tables = [...anchors, ...transitions].map(({ table }) => table);
+  findings.push(...impossibleVapours(substance, vapourPressures));
+  const tables = [...anchors, ...transitions, ...vapourPressures].map(({ table }) => table);
   const kind = findings.length > 0 ? 'disagrees' : 'agrees';
   return { outcome: outcome(substance, 'value-possible', '', kind, kindOf(tables)), findings };
+}
+
+/** One finding a source, phase and quantity, its further cells in the evidence. */
+function impossibleVapours(substance: string, rows: readonly VapourPressure[]): Finding[] {
+  const found = new Map<string, { readonly first: PartialFinding; readonly cells: EvidenceCell[] }>();
+  const report = (phase: string, datum: Datum, quantity: string, unit: string, wanted: string): void => {
+    const key = `${datum.address.source}\n${phase}\n${quantity}`;
+    const cell = { ...datum.address, printed: datum.printed };
+    const known = found.get(key);
+    if (known !== undefined) {
+      known.cells.push(cell);
+      return;
+    }
+    const first: PartialFinding = {
+      rule: 'value-possible',
+      severity: 'fault',
+      substance,
+      fromPhase: phase,
+      observed: datum.value,
+      unit,
+      address: datum.address,
+      detail: { code: 'impossible', quantity, read: datum.printed, wanted },
+    };
+    found.set(key, { first, cells: [cell] });
+  };
+  for (const { phase, temperature, pressure } of rows) {
+    if (!(temperature.value > 0 && temperature.value <= HOTTEST_K))
+      report(phase, temperature, 'temperature', 'K', `a temperature above 0 K and below ${HOTTEST_K} K`);
+    if (!(pressure.value > 0)) report(phase, pressure, 'pressure', 'Pa', 'a pressure above 0');
+  }
+  return [...found.values()].map(({ first, cells }) => makeFinding({ ...first, evidence: cells }));
 }

@@ -1,7 +1,10 @@
 import { describe, expect, it } from 'vitest';
+import { examine } from '../../../pipeline/check/check.js';
+import { columnOf, rowOf, tableOf } from '../../harmonise/raw.js';
 import {
   against,
   CP,
+  caseOf,
   checked,
   enthalpyOf,
   entropyOf,
@@ -14,6 +17,7 @@ import {
   medium,
   rowsOf,
   S,
+  settings,
   silent,
   T,
   TR,
@@ -119,6 +123,52 @@ describe('value-possible', () => {
       observed: -75,
       address: { file: 'anchors.csv', line: 2, column: 'S298' },
     });
+  });
+
+  const vapours = (rows: readonly (readonly [string, string])[]) => {
+    const columns = [columnOf('T', 'temperature', 'K'), columnOf('p', 'pressure', 'kPa')];
+    const table = tableOf(columns, { holds: 'vapour-pressures', file: 'vapour.csv' });
+    return rows.map(([temperature, pressure], i) => rowOf(table, { phase: 'l' }, { temperature, pressure }, i + 2));
+  };
+
+  it.each([
+    ['a negative pressure', '800.0', '-30.0', 'pressure', 'p', 'Pa', -30_000],
+    ['a pressure of zero', '800.0', '0.0', 'pressure', 'p', 'Pa', 0],
+    ['a temperature of zero', '0.0', '30.0', 'temperature', 'T', 'K', 0],
+    ['a negative temperature', '-25.0', '30.0', 'temperature', 'T', 'K', -25],
+    ['a temperature that no vapour reaches', '80000.0', '30.0', 'temperature', 'T', 'K', 80_000],
+  ])('finds %s among the vapour pressures', (_, t, p, quantity, column, unit, observed) => {
+    const rows = vapours([
+      ['850.0', '60.0'],
+      [t, p],
+    ]);
+    const [found] = examine([caseOf(medium(), { vapourPressures: rows })], settings).artefact;
+    expect(verdictOf(found!, 'value-possible', '')).toEqual(against('fault', 'arithmetic'));
+    const [finding, ...more] = findingsOf(found!, 'value-possible');
+    expect(more).toEqual([]);
+    expect(finding).toMatchObject({ severity: 'fault', fromPhase: 'l', toPhase: null, observed, unit });
+    expect(finding!.address).toEqual({ source: 'desk', file: 'vapour.csv', line: 3, column });
+    expect(finding!.detail).toMatchObject({ code: 'impossible', quantity, read: column === 'p' ? p : t });
+  });
+
+  it('says several impossible pressures in one finding, and nothing of possible ones', () => {
+    const rows = vapours([
+      ['700.0', '-5.0'],
+      ['750.0', '12.0'],
+      ['800.0', '-30.0'],
+    ]);
+    const [found] = examine([caseOf(medium(), { vapourPressures: rows })], settings).artefact;
+    const findings = findingsOf(found!, 'value-possible');
+    expect(findings.map(({ evidence }) => evidence.map(({ line, printed }) => [line, printed]))).toEqual([
+      [
+        [2, '-5.0'],
+        [4, '-30.0'],
+      ],
+    ]);
+    const bare = { ...medium(), tables: {}, anchors: [], transitions: [] };
+    const [alone] = examine([caseOf(bare, { vapourPressures: vapours([['750.0', '12.0']]) })], settings).artefact;
+    expect(verdictOf(alone!, 'value-possible', '')).toEqual(silent('arithmetic'));
+    expect(verdictOf(alone!, 'row-readable', '')).toEqual(silent('arithmetic'));
   });
 
   it('says nothing of stated numbers where none are stated', () => {
