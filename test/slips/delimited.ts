@@ -15,6 +15,9 @@ export interface CellPlace {
 export interface DelimitedRow {
   /** 1-based line in the file, header included. */
   readonly line: number;
+  /** Offsets of the whole line, its end excluded. */
+  readonly from: number;
+  readonly to: number;
   readonly cells: readonly CellPlace[];
 }
 
@@ -43,7 +46,7 @@ export function readDelimited(path: string, layout: Layout): DelimitedFile {
     if (text[end - 1] === '\r') end--;
     const isComment = layout.comment !== null && text.startsWith(layout.comment, start);
     if (line > layout.skipLines && !isComment && text.slice(start, end).trim() !== '') {
-      rows.push({ line, cells: splitLine(text, start, end, layout.delimiter) });
+      rows.push({ line, from: start, to: end, cells: splitLine(text, start, end, layout.delimiter) });
     }
     start = next;
   }
@@ -51,10 +54,31 @@ export function readDelimited(path: string, layout: Layout): DelimitedFile {
   return { text, header: first === undefined ? [] : first.cells.map((cell) => cell.text.trim()), rows: rest };
 }
 
-/** Writes the file again with one cell changed. */
-export function replaceCell(path: string, file: DelimitedFile, cell: CellPlace, printed: string): void {
-  const text = file.text.slice(0, cell.from) + printed + file.text.slice(cell.to);
-  writeFileSync(path, path.endsWith('.gz') ? gzipSync(text) : text);
+export interface Edit {
+  readonly path: string;
+  readonly contents: DelimitedFile;
+  /** Offsets into the text as it was read. */
+  readonly from: number;
+  readonly to: number;
+  readonly text: string;
+}
+
+/** Writes the files again with the edits made, all other bytes left as they are. Edits may not overlap. */
+export function applyEdits(edits: readonly Edit[]): void {
+  const byPath = new Map<string, Edit[]>();
+  for (const edit of edits) byPath.set(edit.path, [...(byPath.get(edit.path) ?? []), edit]);
+  for (const [path, own] of byPath) {
+    const { text } = own[0]!.contents;
+    let written = '';
+    let at = 0;
+    for (const edit of own.sort((a, b) => a.from - b.from)) {
+      if (edit.from < at) throw new Error(`${path}: two edits overlap at ${edit.from}`);
+      written += text.slice(at, edit.from) + edit.text;
+      at = edit.to;
+    }
+    written += text.slice(at);
+    writeFileSync(path, path.endsWith('.gz') ? gzipSync(written) : written);
+  }
 }
 
 function splitLine(text: string, start: number, end: number, delimiter: string): CellPlace[] {

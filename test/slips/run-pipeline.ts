@@ -2,7 +2,7 @@
 import { openLibrary } from '../../pipeline/shell/library.js';
 import type { Log } from '../../pipeline/shell/log.js';
 import { judge } from '../../pipeline/shell/night-work.js';
-import type { Seen } from './slip-score.js';
+import type { Seen } from './seen.js';
 
 const DATE = '2024-01-01';
 const quiet: Log = { begin: () => {}, advance: () => {}, end: () => {}, tell: () => {}, fail: () => {} };

@@ -2,12 +2,18 @@ import { cpSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:f
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { EXPLANATIONS } from '../../pipeline/report/explanations.js';
+import { writeSyntheticLibrary } from '../synthetic/write-library.js';
 import { readDelimited } from './delimited.js';
+import { expectedCodes } from './expected-codes.js';
+import { onScaleOf1948, onScaleOf1968 } from './old-scales.js';
 import { seededRandom } from './random.js';
-import { materialLimit, plantSlip, SLIP_KINDS } from './slip-maker.js';
+import { readLibrary } from './slip-library.js';
+import { draftSlip, plantSlips, SLIP_KINDS, type Slip } from './slip-maker.js';
 import { listCells } from './source-cells.js';
 
 const PUBLISHED = 'test/published';
+const published = readLibrary(PUBLISHED);
 let copy = '';
 beforeEach(() => {
   copy = mkdtempSync(join(tmpdir(), 'slip-'));
@@ -15,6 +21,15 @@ beforeEach(() => {
 afterEach(() => rmSync(copy, { recursive: true }));
 
 const readAll = (dir: string, source: string, file: string) => readFileSync(join(dir, source, file), 'utf8');
+
+/** A slip of each kind, in the first substance that can hold it. */
+function slipOf(name: string, family: string, seed = 1): Slip {
+  const kind = SLIP_KINDS.find((one) => one.name === name && one.family === family)!;
+  const drafts = published.substances.map((substance) => draftSlip(kind, substance, seededRandom(seed)));
+  const slip = drafts.find((draft) => draft !== null);
+  if (slip == null) throw new Error(`no substance holds ${family} ${name}`);
+  return slip;
+}
 
 describe('the slip maker', () => {
   it('reads every numeric cell of the published sets with its printed place', () => {
@@ -30,42 +45,108 @@ describe('the slip maker', () => {
     expect(nacl).toMatchObject({ place: 'cr', quantity: 'temperature', text: '100', depth: 1 });
   });
 
-  it.each(SLIP_KINDS)('changes one cell and no other byte: %s', (kind) => {
-    for (let seed = 1; seed <= 3; seed++) {
+  it.each(SLIP_KINDS.map(({ name, family }) => [family, name]).filter(([, name]) => name !== 'scale of 1948'))(
+    'changes the cells that it says and no other line: %s, %s',
+    (family, name) => {
+      const slip = slipOf(name!, family!);
       cpSync(PUBLISHED, copy, { recursive: true });
-      const slip = plantSlip(copy, { kind, random: seededRandom(seed) })!;
-      expect(slip.timesLeast).toBeGreaterThanOrEqual(1);
-      const before = readAll(PUBLISHED, slip.source, slip.file);
-      const after = readAll(copy, slip.source, slip.file);
-      expect(after.length - before.length).toBe(slip.printed.length - slip.clean.length);
-      const lines = after.split('\n');
-      const changed = before.split('\n').flatMap((line, i) => (line === lines[i] ? [] : [i + 1]));
-      expect(changed).toEqual([slip.line]);
-      const cell = listCells(copy).find(
-        (c) => c.source === slip.source && c.file === slip.file && c.line === slip.line && c.column === slip.column,
-      )!;
-      expect(cell.text).toBe(slip.printed);
-    }
-  });
+      plantSlips(copy, [slip]);
+      for (const cell of slip.cells) expect(cell.printed).not.toBe(cell.clean);
+      const files = new Set(slip.cells.map(({ source, file }) => `${source}/${file}`));
+      for (const path of files) {
+        const before = readAll(PUBLISHED, '', path).split('\n');
+        const after = readAll(copy, '', path).split('\n');
+        const changed = before.flatMap((line, i) => (line === after[i] ? [] : [i + 1]));
+        const planted = slip.cells.filter(({ source, file }) => `${source}/${file}` === path);
+        expect(after).toHaveLength(before.length);
+        expect(changed).toEqual([...new Set(planted.map(({ line }) => line))].sort((a, b) => a - b));
+      }
+      const cells = listCells(copy);
+      for (const { source, file, line, column, printed, cell } of slip.cells.filter((one) => one.cell !== null)) {
+        const now = cells.find((c) => c.source === source && c.file === file && c.line === line && c.column === column);
+        expect(now?.text ?? cell!.text).toBe(printed);
+      }
+    },
+  );
 
   it('plants the same slip for the same seed', () => {
-    cpSync(PUBLISHED, copy, { recursive: true });
-    const once = plantSlip(copy, { kind: 'entropy', random: seededRandom(7) });
-    cpSync(PUBLISHED, copy, { recursive: true });
-    expect(plantSlip(copy, { kind: 'entropy', random: seededRandom(7) })).toEqual(once);
+    const kind = SLIP_KINDS.find(({ name }) => name === 'S off')!;
+    const lead = published.substances.find(({ id }) => id === 'lead')!;
+    const draft = () => draftSlip(kind, lead, seededRandom(7))!.cells;
+    expect(draft()).toEqual(draft());
+    expect(draft()).not.toEqual(draftSlip(kind, lead, seededRandom(8))!.cells);
   });
 
   it('says so when no cell can hold a slip that large', () => {
-    cpSync(PUBLISHED, copy, { recursive: true });
-    const wish = { kind: 'transition-in-celsius', random: seededRandom(1), least: () => 274 } as const;
-    expect(plantSlip(copy, wish)).toBeNull();
+    const kind = SLIP_KINDS.find(({ name }) => name === 'S off')!;
+    const lead = published.substances.find(({ id }) => id === 'lead')!;
+    expect(draftSlip(kind, lead, seededRandom(1), () => 500)).toBeNull();
   });
 
-  it('takes the larger of the last place and what a user would notice as the least change', () => {
-    const cell = listCells(PUBLISHED).find((c) => c.source === 'handbook-lead' && c.quantity === 'entropy')!;
-    expect(materialLimit({ ...cell, value: 200, decimals: 3 })).toBeCloseTo(0.2, 12);
-    expect(materialLimit({ ...cell, value: 20, decimals: 3 })).toBeCloseTo(0.05, 12);
-    expect(materialLimit({ ...cell, value: 20, decimals: 1 })).toBeCloseTo(0.5, 12);
+  it('makes slips of five units of the last place or more, of 1 % or more in a heat capacity', () => {
+    for (const kind of SLIP_KINDS.filter(({ family }) => family === 'table' || family === 'heat-capacity')) {
+      for (let seed = 1; seed <= 5; seed++) {
+        for (const substance of published.substances) {
+          const [planted] = draftSlip(kind, substance, seededRandom(seed))?.cells ?? [];
+          if (planted === undefined) continue;
+          const { cell, printed } = planted;
+          const change = Math.abs(Number(printed) - cell!.value);
+          expect(change / 10 ** -cell!.decimals).toBeGreaterThan(4.999);
+          if (kind.family === 'heat-capacity') expect(change / cell!.value).toBeGreaterThanOrEqual(0.01);
+        }
+      }
+    }
+  });
+
+  it('writes what people write', () => {
+    const said = (name: string, family: string, seed = 1) => {
+      const [{ clean, printed, cell }] = slipOf(name, family, seed).cells as [Slip['cells'][number]];
+      return { was: Number(clean), is: Number(printed), printed, clean, cell: cell! };
+    };
+    const calories = said('in calories', 'table');
+    expect(calories.is).toBeCloseTo(calories.was / 4.184, 3);
+    const celsius = said('Celsius and kelvin', 'datum');
+    expect(celsius.is).toBeCloseTo(celsius.was - 273.15, 3);
+    const fahrenheit = said('Fahrenheit', 'datum');
+    expect(fahrenheit.is).toBeCloseTo((celsius.was - 273.15) * 1.8 + 32, 3);
+    const units = said('in units of R', 'heat-capacity');
+    expect(units.is).toBeCloseTo(units.was / 8.31446, 3);
+    const gas = said('1 atm for 1 bar', 'datum');
+    expect(gas.was - gas.is).toBeCloseTo(0.1094, 3);
+    const point = said('decimal point moved', 'table');
+    expect(point.printed.replace('.', '').replace(/^0+/, '')).toBe(point.clean.replace('.', '').replace(/^0+/, ''));
+    const exchanged = said('two digits exchanged', 'table');
+    expect([...exchanged.printed].sort()).toEqual([...exchanged.clean].sort());
+    const digit = said('one digit wrong', 'table');
+    expect([...digit.printed].filter((letter, i) => letter !== digit.clean[i])).toHaveLength(1);
+  });
+
+  it('knows the old scales to their published differences', () => {
+    for (const [celsius, difference] of [
+      [-180, 0.008],
+      [-100, 0.013],
+      [100, -0.026],
+      [200, -0.04],
+      [1064.18, -0.25],
+    ] as const)
+      expect(celsius + 273.15 - onScaleOf1968(celsius + 273.15)).toBeCloseTo(difference, 2);
+    expect(373.15 - onScaleOf1948(373.15)).toBeCloseTo(-0.026, 3);
+    expect(onScaleOf1948(900)).toBeNaN();
+  });
+
+  it('has a published code for everything that an explanation should say', () => {
+    for (const { meant } of SLIP_KINDS) {
+      if (meant !== null) for (const code of expectedCodes(meant)) expect(Object.keys(EXPLANATIONS)).toContain(code);
+    }
+  });
+
+  it('finds a place in synthetic substances for every kind but those of a pressure', () => {
+    writeSyntheticLibrary(copy, { seed: 3, substances: 21 });
+    const { substances } = readLibrary(copy);
+    const without = SLIP_KINDS.filter((kind) =>
+      substances.every((substance) => draftSlip(kind, substance, seededRandom(1)) === null),
+    );
+    expect(without.map(({ name }) => name)).toEqual(['torr for pascal', 'log10 for ln']);
   });
 
   it('reads quoted cells, comments, title lines, CRLF and a byte-order mark', () => {

@@ -1,90 +1,117 @@
-/** Plants slips one at a time, runs the pipeline on each spoilt library in process, and gathers the scores by kind. */
-import { cpSync, mkdtempSync, rmSync } from 'node:fs';
+/** Slips on the published sets and on synthetic substances, over several rounds. */
+import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { seededRandom } from './random.js';
-import { materialLimit, plantSlip, SLIP_KINDS, type Slip, type SlipKind } from './slip-maker.js';
-import { leastFrom, type Seen, type SlipScore, scoreSlip } from './slip-score.js';
-import { listCells } from './source-cells.js';
-
-export interface Studied {
-  readonly seed: number;
-  readonly slip: Slip;
-  readonly score: SlipScore;
-}
+import type { DesignName } from '../synthetic/designs.js';
+import { writeSyntheticLibrary } from '../synthetic/write-library.js';
+import { type CleanLibrary, cleanRun, type Scored, spoilAll } from './campaign.js';
+import type { Seen } from './seen.js';
+import type { SlipKind } from './slip-kinds.js';
+import { SLIP_KINDS } from './slip-maker.js';
+import type { Cleanness } from './slip-rates.js';
 
 export interface Study {
-  readonly studied: readonly Studied[];
-  /** Seeds whose kind found no cell that can hold a slip large enough. */
-  readonly without: readonly { readonly seed: number; readonly kind: SlipKind }[];
+  readonly one: readonly Scored[];
+  readonly two: readonly Scored[];
+  readonly clean: Cleanness;
+  /** Of the substances left clean beside spoilt ones, those with a new fault or doubt. */
+  readonly bystanders: number;
+  readonly accused: readonly string[];
 }
 
 export interface StudyOptions {
+  /** Rounds of one slip in each substance, and of two. */
+  readonly rounds: number;
+  readonly pairRounds: number;
+  readonly firstSeed: number;
   readonly kinds?: readonly SlipKind[];
-  /** `printed`: slips from 1.5 times the printed smallest detectable error up; `material`: from what a user would notice up, though the clean run may say that so little would not be seen. */
-  readonly sizes?: 'printed' | 'material';
 }
 
-/**
- * The kinds take turns with the seeds.
- * @param run everything that a run says about a sources folder
- */
-export async function studySlips(
-  sourcesDir: string,
-  seeds: readonly number[],
-  run: (sourcesDir: string) => Promise<Seen>,
-  { kinds = SLIP_KINDS, sizes = 'printed' }: StudyOptions = {},
+type Run = (sourcesDir: string) => Promise<Seen>;
+
+/** @param folders sources folders, each a design of its own name */
+export async function studyPublished(
+  folders: Readonly<Record<string, string>>,
+  run: Run,
+  options: StudyOptions,
 ): Promise<Study> {
-  const clean = await run(sourcesDir);
-  const cells = listCells(sourcesDir);
-  const least = sizes === 'printed' ? leastFrom(clean) : materialLimit;
-  const studied: Studied[] = [];
-  const without: { seed: number; kind: SlipKind }[] = [];
-  for (const [turn, seed] of seeds.entries()) {
-    const kind = kinds[turn % kinds.length]!;
-    const scratch = mkdtempSync(join(tmpdir(), 'slips-'));
-    try {
-      const copy = join(scratch, 'sources');
-      cpSync(sourcesDir, copy, { recursive: true });
-      const slip = plantSlip(copy, { kind, random: seededRandom(seed), least }, cells);
-      if (slip === null) without.push({ seed, kind });
-      else studied.push({ seed, slip, score: scoreSlip(slip, clean, await run(copy)) });
-    } finally {
-      rmSync(scratch, { recursive: true });
-    }
+  const studies: Study[] = [];
+  for (const [design, folder] of Object.entries(folders)) {
+    const clean = await cleanRun(folder, run, () => design);
+    studies.push(await study([clean], options));
   }
-  return { studied, without };
+  return joined(studies);
 }
 
-/** As a table by kind, with a line for each slip that was not found, not there only, or not in the first group. */
-export function studyTable({ studied, without }: Study): string {
-  const lines = [
-    'kind | slips | found | there only | first suspect | first group | good',
-    '--- | --: | --: | --: | --: | --: | --:',
-  ];
-  const row = (name: string, list: readonly Studied[]) => {
-    const count = (keep: (score: SlipScore) => boolean) => list.filter(({ score }) => keep(score)).length;
-    const good = count((s) => s.good);
-    const share = list.length === 0 ? '' : ` (${((100 * good) / list.length).toFixed(1)} %)`;
-    const there = count((s) => s.elsewhere.length === 0);
-    const counts = [count((s) => s.found), there, count((s) => s.first), count((s) => s.firstGroup)];
-    lines.push(`${name} | ${list.length} | ${counts.join(' | ')} | ${good}${share}`);
-  };
-  for (const kind of SLIP_KINDS)
-    row(
-      kind,
-      studied.filter(({ slip }) => slip.kind === kind),
-    );
-  row('all', studied);
-  for (const { seed, slip, score } of studied) {
-    if (score.good) continue;
-    const { kind, substance, file, line, column, clean, printed, timesLeast } = slip;
-    const said = score.found ? `first: ${score.firstSuspect ?? 'no suspect'} (${score.rootRule})` : 'not found';
-    const others = score.elsewhere.length > 0 ? `; also accused: ${score.elsewhere.join(', ')}` : '';
-    lines.push(
-      `seed ${seed}, ${kind}, ${substance}: ${file}:${line} ${column} ${clean} → ${printed} (${timesLeast.toFixed(1)} × least): ${said}${others}`,
-    );
+/** Each round of single slips has substances of its own. */
+export async function studySynthetic(
+  substances: number,
+  run: Run,
+  options: StudyOptions,
+  designs?: readonly DesignName[],
+): Promise<Study> {
+  const scratch = mkdtempSync(join(tmpdir(), 'synthetic-'));
+  try {
+    const libraries: CleanLibrary[] = [];
+    for (let round = 0; round < Math.max(options.rounds, options.pairRounds); round++) {
+      const folder = join(scratch, String(round));
+      const written = writeSyntheticLibrary(folder, {
+        seed: options.firstSeed + round,
+        substances,
+        ...(designs === undefined ? {} : { designs }),
+      });
+      const designOf = new Map(written.map(({ id, design }) => [id, design]));
+      libraries.push(await cleanRun(folder, run, (id) => designOf.get(id)!));
+    }
+    return await study(libraries, options);
+  } finally {
+    rmSync(scratch, { recursive: true });
   }
-  for (const { seed, kind } of without) lines.push(`seed ${seed}, ${kind}: no cell can hold a slip large enough`);
-  return lines.join('\n');
+}
+
+/** Rounds take the libraries in turn. */
+async function study(libraries: readonly CleanLibrary[], options: StudyOptions): Promise<Study> {
+  const { rounds, pairRounds, firstSeed, kinds = SLIP_KINDS } = options;
+  const one: Scored[] = [];
+  const two: Scored[] = [];
+  const accused: string[] = [];
+  let bystanders = 0;
+  let turn = 0;
+  for (let round = 0; round < rounds + pairRounds; round++) {
+    const pair = round >= rounds;
+    const library = libraries[(pair ? round - rounds : round) % libraries.length]!;
+    const campaign = await spoilAll(library, firstSeed + round, { firstKind: turn, slipsEach: pair ? 2 : 1, kinds });
+    (pair ? two : one).push(...campaign.scored);
+    bystanders += campaign.bystanders;
+    accused.push(...campaign.accused.map((id) => `${firstSeed + round} ${id}`));
+    // A step that shares no factor with the number of kinds, so that every substance meets every kind.
+    turn += library.library.substances.length + 1;
+  }
+  return { one, two, bystanders, accused, clean: cleanness(libraries) };
+}
+
+function cleanness(libraries: readonly CleanLibrary[]): Cleanness {
+  const all = libraries.flatMap(({ library, findings }) =>
+    library.substances.map(({ id }) => ({ id, severities: findings.of(id).map(({ severity }) => severity) })),
+  );
+  const grave = all.filter(({ severities }) => severities.some((severity) => severity !== 'note'));
+  return {
+    substances: all.length,
+    accused: grave.map(({ id }) => id),
+    noted: all.filter(({ severities }) => severities.length > 0).length - grave.length,
+  };
+}
+
+function joined(studies: readonly Study[]): Study {
+  return {
+    one: studies.flatMap(({ one }) => one),
+    two: studies.flatMap(({ two }) => two),
+    bystanders: studies.reduce((sum, { bystanders }) => sum + bystanders, 0),
+    accused: studies.flatMap(({ accused }) => accused),
+    clean: {
+      substances: studies.reduce((sum, { clean }) => sum + clean.substances, 0),
+      accused: studies.flatMap(({ clean }) => clean.accused),
+      noted: studies.reduce((sum, { clean }) => sum + clean.noted, 0),
+    },
+  };
 }

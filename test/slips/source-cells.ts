@@ -1,7 +1,8 @@
-/** Lists the numeric cells of a sources folder with what they mean, by its own reading of the descriptors. */
+/** Lists the rows and numeric cells of a sources folder with what they mean, by its own reading of the descriptors. */
 import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { type CellPlace, type DelimitedFile, readDelimited } from './delimited.js';
+import { type CellPlace, type DelimitedFile, type DelimitedRow, readDelimited } from './delimited.js';
+import { readUnit } from './units.js';
 
 export interface SourceCell {
   readonly substance: string;
@@ -13,7 +14,7 @@ export interface SourceCell {
   readonly quantity: string;
   readonly unit: string;
   readonly holds: string;
-  /** As in the release: `cr`; of a transition `cr>l`. */
+  /** As in the release: `cr`; of a transition `cr>l`; of a table on an isobar `l at 101325 Pa`. */
   readonly place: string;
   /** 'first' where the row does not say. */
   readonly order: string;
@@ -27,6 +28,21 @@ export interface SourceCell {
   readonly depth: number;
   readonly contents: DelimitedFile;
   readonly cell: CellPlace;
+  readonly row: SourceRow;
+}
+
+export interface SourceRow {
+  readonly substance: string;
+  readonly source: string;
+  readonly file: string;
+  readonly line: number;
+  readonly holds: string;
+  readonly place: string;
+  readonly order: string;
+  readonly contents: DelimitedFile;
+  readonly text: DelimitedRow;
+  /** Its cells that hold words, by what they are. */
+  readonly words: Readonly<Record<string, { readonly column: string; readonly cell: CellPlace }>>;
 }
 
 type Word = string | { readonly column: string };
@@ -40,6 +56,9 @@ interface TableText {
   readonly comment?: string;
   readonly substance?: Word;
   readonly phase?: Word;
+  readonly pressure?: { readonly value: number; readonly unit: string };
+  /** Rows kept, by a word of a column. */
+  readonly where?: Readonly<Record<string, { readonly is?: string | readonly string[] }>>;
   readonly columns: Readonly<Record<string, { readonly is: string; readonly unit?: string }>>;
 }
 
@@ -87,7 +106,13 @@ function tableCells(
     const index = stated === undefined ? indexOf(quantity) : contents.header.indexOf(stated.column);
     return row.cells[index]?.text.trim() ?? '';
   };
-  const rows = contents.rows.map((row) => {
+  const isobar = table.pressure === undefined ? '' : ` at ${inPascal(table.pressure)} Pa`;
+  const kept = Object.entries(table.where ?? {}).flatMap(([header, { is }]) =>
+    is === undefined ? [] : [{ index: contents.header.indexOf(header), words: [is].flat() }],
+  );
+  const isKept = (row: DelimitedRow) =>
+    kept.every(({ index, words }) => words.includes(row.cells[index]?.text.trim() ?? ''));
+  const rows = contents.rows.filter(isKept).map((row) => {
     const named = wordOf(row, 'substance', table.substance);
     const substance = descriptor.names?.[named] ?? named;
     const phaseOf = (word: string) => {
@@ -97,10 +122,21 @@ function tableCells(
     const place =
       table.holds === 'transitions'
         ? `${phaseOf(wordOf(row, 'from-phase', undefined))}>${phaseOf(wordOf(row, 'to-phase', undefined))}`
-        : phaseOf(wordOf(row, 'phase', table.phase));
+        : `${phaseOf(wordOf(row, 'phase', table.phase))}${isobar}`;
     const order = wordOf(row, 'order', undefined) || 'first';
-    const temperatureK = Number(row.cells[indexOf('temperature')]?.text || Number.NaN);
-    return { row, substance, place, order, temperatureK };
+    const unit = meanings[indexOf('temperature')]?.unit;
+    const printed = Number(row.cells[indexOf('temperature')]?.text || Number.NaN);
+    const temperatureK = unit === 'Cel' ? printed + 273.15 : printed;
+    const words: Record<string, { column: string; cell: CellPlace }> = {};
+    for (const quantity of ['from-phase', 'to-phase']) {
+      const cell = row.cells[indexOf(quantity)];
+      if (cell !== undefined) words[quantity] = { column: contents.header[indexOf(quantity)]!, cell };
+    }
+    const { line } = row;
+    const own: SourceRow = {
+      ...{ substance, source, file, line, holds: table.holds, place, order, contents, text: row, words },
+    };
+    return { row, own, substance, place, order, temperatureK };
   });
   const depths = stretchDepths(rows);
   return meanings.flatMap((meaning, index) => {
@@ -108,7 +144,7 @@ function tableCells(
     const texts = rows.map(({ row }) => row.cells[index]?.text.trim() ?? '');
     const decimals = Math.max(0, ...texts.map((text) => text.split('.')[1]?.length ?? 0));
     const cells: SourceCell[] = [];
-    rows.forEach(({ row, substance, place, order, temperatureK }, i) => {
+    rows.forEach(({ row, own, substance, place, order, temperatureK }, i) => {
       const text = texts[i]!;
       const cell = row.cells[index];
       if (cell === undefined || !/^-?\d+\.?\d*$/.test(text)) return;
@@ -130,6 +166,7 @@ function tableCells(
         depth: table.holds === 'thermal-functions' ? depths[i]! : -1,
         contents,
         cell,
+        row: own,
       });
     });
     return cells;
@@ -147,6 +184,10 @@ function stretchDepths(rows: readonly { substance: string; place: string; temper
     start = end;
   }
   return depths;
+}
+
+function inPascal({ value, unit }: { value: number; unit: string }): number {
+  return value * (readUnit(unit, Number.NaN)?.factor ?? Number.NaN);
 }
 
 function matches(glob: string, file: string): boolean {

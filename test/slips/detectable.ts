@@ -1,0 +1,140 @@
+/** The smallest error that the run on the clean library says it would reveal, cell by cell. */
+
+import type { Seen, SeenOutcome } from './seen.js';
+import type { PlantedCell, Slip } from './slip-maker.js';
+import type { SourceCell } from './source-cells.js';
+import { R_J_PER_MOL_K, readUnit } from './units.js';
+
+/** A slip of fewer times the smallest detectable error is not asked for. */
+export const TIMES_DETECTABLE = 1.5;
+
+/** Rules that test a quantity of a table and speak in its own SI unit; of several the sharpest counts. */
+const TABLE_RULES: Readonly<Record<string, readonly string[]>> = {
+  entropy: ['entropy-follows-heat-capacity', 'functions-close'],
+  'gibbs-function': ['functions-close'],
+  enthalpy: ['enthalpy-follows-heat-capacity'],
+  'enthalpy-increment': ['enthalpy-follows-heat-capacity'],
+  'heat-capacity': ['heat-capacity-smooth'],
+};
+/** In the unit of an entropy: an error in H shows as H/T. */
+const TABLE_RULES_TIMES_T: Readonly<Record<string, readonly string[]>> = { 'enthalpy-increment': ['functions-close'] };
+
+/** How the adjustment's own outcomes name a datum: `T cr>l`, `dfH l`. */
+const DATUM_NAMES: Readonly<Record<string, string>> = {
+  'enthalpy-of-formation': 'dfH',
+  entropy: 'S',
+  'transition-temperature': 'T',
+  'transition-enthalpy': 'dH',
+  'transition-entropy': 'dS',
+  pressure: 'p',
+};
+/** Where the adjustment does not say: the rule of the datum's own transition. */
+const TRANSITION_RULES: Readonly<Record<string, string>> = {
+  'enthalpy-of-formation': 'gibbs-continuous',
+  'transition-temperature': 'crossing-agrees',
+  'transition-enthalpy': 'transition-entropy-closes',
+};
+const TROUTON_J_PER_MOL_K = 90;
+const BOILING_K = 500;
+const ADJUSTMENT = 'adjustment-closes';
+
+export class Detectable {
+  readonly #bySubstance = new Map<string, SeenOutcome[]>();
+
+  constructor(clean: Seen) {
+    for (const row of clean.coverage) {
+      const own = this.#bySubstance.get(row.substance);
+      if (own === undefined) this.#bySubstance.set(row.substance, [row]);
+      else own.push(row);
+    }
+  }
+
+  /** SI; Infinity where nothing tests the cell, 0 where a rule tests it and prints no figure. */
+  leastOf(cell: SourceCell): number {
+    const rows = this.#rows(cell.substance).filter(({ outcome }) => outcome !== 'untestable');
+    if (cell.holds === 'thermal-functions') {
+      const own = rows.filter((row) => row.place === cell.place && TABLE_RULES[cell.quantity]?.includes(row.rule));
+      const timesT = rows.filter(
+        (row) => row.place === cell.place && TABLE_RULES_TIMES_T[cell.quantity]?.includes(row.rule),
+      );
+      return sharpest([...own.map(printed), ...timesT.map((row) => printed(row) * cell.temperatureK)]);
+    }
+    const name = DATUM_NAMES[cell.quantity];
+    if (cell.quantity === 'pressure') return this.#leastPressure(cell, rows);
+    const adjusted = this.#rows(cell.substance).filter(({ rule, place }) => rule === ADJUSTMENT && place.includes(' '));
+    if (adjusted.length > 0) {
+      return sharpest(
+        adjusted.filter((row) => row.place === `${name} ${cell.place}` && row.outcome !== 'untestable').map(printed),
+      );
+    }
+    const rule = TRANSITION_RULES[cell.quantity] ?? 'gibbs-continuous';
+    const concerned = rows.filter((row) => row.rule === rule && concerns(row.place, cell));
+    if (concerned.length === 0) return Number.POSITIVE_INFINITY;
+    return TRANSITION_RULES[cell.quantity] === undefined ? 0 : sharpest(concerned.map(printed));
+  }
+
+  /** Whether the run says that it would see the slip. */
+  isTestable(slip: Slip): boolean {
+    if (slip.family === 'many') return this.#isManyTestable(slip);
+    return slip.cells.some((cell) => this.#shows(cell, slip));
+  }
+
+  /** dp = p (dS / RT) dT along the boiling line, from what shows in the temperature; usual values do for dS and T. */
+  #leastPressure(cell: SourceCell, rows: readonly SeenOutcome[]): number {
+    const crossing = rows.filter((row) => row.rule === 'crossing-agrees' && base(row.place) === cell.place);
+    const pascal = cell.value * (readUnit(cell.unit, Number.NaN)?.factor ?? Number.NaN);
+    return (pascal * TROUTON_J_PER_MOL_K * sharpest(crossing.map(printed))) / (R_J_PER_MOL_K * BOILING_K);
+  }
+
+  #shows({ cell, changeSi }: PlantedCell, slip: Slip): boolean {
+    if (cell === null || changeSi === null) return this.#isTransitionTested(slip.substance, slip.place);
+    return Math.abs(changeSi) >= TIMES_DETECTABLE * this.leastOf(cell);
+  }
+
+  /**
+   * A whole column is held against the columns beside it, against its phase's anchors, or through the transitions. A slip
+   * of a scale is small: its largest change of S has to show.
+   */
+  #isManyTestable(slip: Slip): boolean {
+    if (slip.cells.some(({ cell }) => cell === null)) return this.#isTransitionTested(slip.substance, slip.place);
+    const rows = this.#rows(slip.substance).filter(({ outcome }) => outcome !== 'untestable');
+    const tied = rows.some(({ rule, place }) => rule === 'gibbs-continuous' && sides(place).includes(slip.place));
+    const checked = (rule: string) => rows.some((row) => row.rule === rule && row.place === slip.place);
+    const tables = checked('entropy-follows-heat-capacity') || checked('enthalpy-follows-heat-capacity');
+    if (slip.meant === 'old temperature scale') return slip.cells.some((cell) => this.#scaleShows(cell, rows));
+    if (slip.meant === '1 atm for 1 bar') {
+      const anchor = rows.find(({ rule, place }) => rule === ADJUSTMENT && place === 'S g');
+      const step = Math.abs(slip.cells[0]!.changeSi!);
+      return anchor === undefined ? tied : step >= TIMES_DETECTABLE * printed(anchor);
+    }
+    return tables || tied;
+  }
+
+  #scaleShows({ cell, changeSi }: PlantedCell, rows: readonly SeenOutcome[]): boolean {
+    const { row, temperatureK } = cell!;
+    const rule = rows.find((one) => one.rule === 'entropy-follows-heat-capacity' && one.place === row.place);
+    // dS = Cp dT/T; Cp of about 30 J/(mol K) will do for saying what shows.
+    return rule !== undefined && (30 * Math.abs(changeSi!)) / temperatureK >= TIMES_DETECTABLE * printed(rule);
+  }
+
+  #isTransitionTested(substance: string, place: string): boolean {
+    return this.#rows(substance).some(
+      (row) => row.rule === 'gibbs-continuous' && row.outcome !== 'untestable' && base(row.place) === place,
+    );
+  }
+
+  #rows(substance: string): readonly SeenOutcome[] {
+    return this.#bySubstance.get(substance) ?? [];
+  }
+}
+
+const printed = (row: SeenOutcome): number => row.smallestDetectable ?? 0;
+const sharpest = (list: readonly number[]): number => Math.min(Number.POSITIVE_INFINITY, ...list);
+/** Without ` at 101325 Pa`. */
+const base = (place: string): string => place.split(' at ')[0]!;
+const sides = (place: string): readonly string[] => base(place).split('>');
+
+/** Coverage speaks of a phase or of a transition `from>to`; an anchor is tested through its phase's transitions. */
+function concerns(place: string, cell: SourceCell): boolean {
+  return base(place) === cell.place || (cell.holds === 'anchors' && sides(place).includes(cell.place));
+}
