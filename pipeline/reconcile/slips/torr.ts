@@ -23,5 +23,5 @@ export const pascalReadAsTorr: Slip = {
   },
 };
 
-/** The millimetre of mercury is 1.4e-7 larger. */
-const isTorr = (cell: SuspectCell): boolean => Math.abs(cell.factor / TORR_PA - 1) < 1e-6;
+/** The millimetre of mercury is 1.4e-7 larger; UCUM has 133.322 Pa. */
+const isTorr = (cell: SuspectCell): boolean => Math.abs(cell.factor / TORR_PA - 1) < 1e-4;
