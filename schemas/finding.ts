@@ -17,6 +17,7 @@ export const RULES = [
   'stated-transition-jumps',
   'heating-raises-entropy',
   'lowest-curve-is-the-stated-phase',
+  'adjustment-closes',
 ] as const;
 export type RuleName = (typeof RULES)[number];
 
@@ -113,6 +114,15 @@ export type FindingDetail =
       readonly uProposed: number;
       readonly explanation: string | null;
     }
+  /** A whole column, or a run of its rows: true = printed * factor + shift, in SI; neither where the law is another. */
+  | {
+      readonly code: 'column';
+      readonly quantity: string;
+      readonly cells: number;
+      readonly factor: number | null;
+      readonly shift: number | null;
+      readonly explanation: string | null;
+    }
   | { readonly code: 'anomaly'; readonly quantity: string; readonly lowK: number; readonly highK: number }
   | {
       readonly code: 'transition';
@@ -130,6 +140,15 @@ export type FindingDetail =
     }
   | { readonly code: 'entropy-order'; readonly above: string; readonly below: string }
   | { readonly code: 'unstated-jump'; readonly quantity: string }
+  /** All stated numbers taken together; `place` names one (`T cr>l`), or is '' where only the whole does not close. */
+  | {
+      readonly code: 'adjustment';
+      readonly place: string;
+      readonly w: number | null;
+      readonly critical: number;
+      readonly chiSquare: number;
+      readonly freedom: number;
+    }
   /** The program broke down on this substance; nothing about it is known. */
   | { readonly code: 'calculation-failed'; readonly message: string };
 

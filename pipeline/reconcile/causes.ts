@@ -1,7 +1,7 @@
 import type { CheckedCase } from '../../schemas/checked.js';
 import type { Finding } from '../../schemas/finding.js';
-import type { ConditionDatum } from './condition-data.js';
 import type { SuspectGroup } from './rank-data.js';
+import type { ConditionDatum } from './system/system.js';
 
 const RANK: Readonly<Record<string, number>> = {
   'row-readable': 0,
@@ -19,6 +19,7 @@ const RANK: Readonly<Record<string, number>> = {
   'heating-raises-entropy': 5,
   'stated-transition-jumps': 6,
   'lowest-curve-is-the-stated-phase': 7,
+  'adjustment-closes': 8,
 };
 
 export interface RootedGroup {
@@ -56,7 +57,7 @@ export function withCauses(
   const numbers = new Map<string, number>();
   for (const group of groups) {
     const first = group.members[0];
-    const wanted = candidates(findings.filter(open), first.of);
+    const wanted = candidates(findings.filter(open), first.of, group.phases);
     const root = wanted.find((f) => !rooted.some((r) => r.finding === f)) ?? wanted[0] ?? rooted[0]?.finding;
     if (root === undefined) continue;
     const number = (numbers.get(root.id) ?? 0) + 1;
@@ -66,7 +67,11 @@ export function withCauses(
   // What is left over follows from the first error that can bring it about, else from one that touches its phases.
   for (const f of findings) {
     if (!open(f) || rooted.some((r) => r.finding === f) || causeOf.has(f.id)) continue;
-    const near = rooted.find((r) => explains(r, f)) ?? rooted.find((r) => touches(r, f)) ?? rooted[0];
+    const near =
+      rooted.find((r) => isItsOwn(r, f)) ??
+      rooted.find((r) => explains(r, f)) ??
+      rooted.find((r) => touches(r, f)) ??
+      rooted[0];
     if (near !== undefined) causeOf.set(f.id, near.finding.id);
   }
   if (rooted.length === 0) {
@@ -80,7 +85,7 @@ export function withCauses(
   };
 }
 
-function candidates(findings: readonly Finding[], datum: ConditionDatum): Finding[] {
+function candidates(findings: readonly Finding[], datum: ConditionDatum, phases: readonly string[]): Finding[] {
   const { kind } = datum;
   const wanted =
     kind === 'enthalpy' || kind === 'entropy'
@@ -88,7 +93,7 @@ function candidates(findings: readonly Finding[], datum: ConditionDatum): Findin
       : ['gibbs-continuous', 'crossing-agrees', 'transition-entropy-closes'];
   const score = (f: Finding): number => {
     const at = wanted.indexOf(f.rule);
-    return (at < 0 ? wanted.length : at) + (isItsTransition(datum, f) ? 0 : touchesPhase(datum, f) ? 10 : 20);
+    return (at < 0 ? wanted.length : at) + (isItsTransition(datum, f) ? 0 : touchesPhase(phases, f) ? 10 : 20);
   };
   return findings.filter((f) => RANK[f.rule] >= 4).sort((a, b) => score(a) - score(b));
 }
@@ -109,11 +114,16 @@ function explains(rooted: RootedGroup, f: Finding): boolean {
   return touches(rooted, f);
 }
 
-function touches(rooted: RootedGroup, f: Finding): boolean {
-  return touchesPhase(rooted.group.members[0].of, f);
+/** What the adjustment says of the very number that the group begins with. */
+function isItsOwn({ group }: RootedGroup, f: Finding): boolean {
+  return f.detail.code === 'adjustment' && f.detail.place === group.members[0].of.place;
 }
 
-function touchesPhase({ phases }: ConditionDatum, f: Finding): boolean {
+function touches(rooted: RootedGroup, f: Finding): boolean {
+  return touchesPhase(rooted.group.phases, f);
+}
+
+function touchesPhase(phases: readonly string[], f: Finding): boolean {
   return phases.includes(f.fromPhase ?? '') || phases.includes(f.toPhase ?? '');
 }
 

@@ -1,10 +1,12 @@
-import { FreeData, whitened } from '../core/physics/adjustment.js';
-import type { ConditionDatum } from './condition-data.js';
-import type { ConditionSystem } from './conditions.js';
+import { FreeData, type Whitened, whitened } from '../core/physics/adjustment.js';
+import { type ConditionDatum, type ConditionSystem, resolvedAt, restsOn } from './system/system.js';
+import { type WholeSlip, wholeSlips } from './whole/whole-slips.js';
 
 /** One datum under suspicion, with what the conditions say of it. */
 export interface RankedDatum {
   readonly of: ConditionDatum;
+  /** Null for a single number; else the slip that touches several at once, `of` being the first of them. */
+  readonly whole: WholeSlip | null;
   readonly w: number;
   readonly redundancy: number;
   readonly smallestDetectable: number;
@@ -15,6 +17,8 @@ export interface RankedDatum {
 /** The suspects of one error: the best, and those whose chi square lies within 9 of it. */
 export interface SuspectGroup {
   readonly members: readonly RankedDatum[];
+  /** Phases that the first of them bears on, through levels that rest on it too. */
+  readonly phases: readonly string[];
   readonly before: number;
   readonly after: number;
 }
@@ -24,63 +28,122 @@ const ONE_GROUP = 9;
 
 /**
  * Sets one suspect free at a time, the rest tested again, until the conditions close at `threshold` or nothing explains
- * them.
+ * them. A slip that touches many numbers at once is one suspect beside the single ones: it has nothing left to choose.
  */
-export function suspectGroups(system: ConditionSystem, threshold: number): SuspectGroup[] {
+export function suspectGroups(
+  system: ConditionSystem,
+  threshold: number,
+  whole: Whitened = whitened(system.y, system.q, system.m),
+): SuspectGroup[] {
   const groups: SuspectGroup[] = [];
-  const whole = whitened(system.y, system.q, system.m);
-  if (whole === null) return groups;
   const free = new FreeData(whole);
   let y = system.y;
   const removed = new Set<ConditionDatum>();
+  let slips: readonly WholeSlip[] | null = null;
   while (groups.length < Math.min(MOST_ERRORS, system.m)) {
     const before = free.chiSquareOf(y);
     const ranked: RankedDatum[] = [];
     for (const d of system.data) {
-      const one = removed.has(d) ? null : rank(free, y, before, system.y, d);
+      const one = removed.has(d) ? null : rank(free, y, before, system, d);
+      if (one !== null) ranked.push(one);
+    }
+    if (!ranked.some((one) => Math.abs(one.w) > threshold)) break;
+    slips ??= wholeSlips(system);
+    for (const slip of slips) {
+      const one = slip.data.some((d) => removed.has(d)) ? null : rankWhole(free, y, before, slip);
       if (one !== null) ranked.push(one);
     }
     ranked.sort((a, b) => Math.abs(b.w) - Math.abs(a.w));
     const best = ranked[0];
-    if (best === undefined || Math.abs(best.w) <= threshold) break;
     const near = (r: RankedDatum): boolean =>
       best.w * best.w - r.w * r.w < ONE_GROUP + ROUNDING * best.w * best.w && Math.abs(r.w) > threshold / 2;
-    groups.push({ members: ranked.filter(near), before, after: before - best.w * best.w });
-    removed.add(best.of);
+    const members = withoutLesser(ranked.filter(near));
+    const [first] = members;
+    groups.push({ members, phases: bearing(system, first.of), before, after: before - best.w * best.w });
+    if (first.whole !== null) {
+      for (const d of first.whole.data) removed.add(d);
+      if (first.whole.open) free.free(first.whole.change);
+      else y = moved(y, first.whole.change);
+      continue;
+    }
+    removed.add(first.of);
     // Every condition of a transition whose temperature is wrong is taken at the crossing from here on.
-    if (best.of.resolved !== null) y = merged(y, system.y, best.of.resolved.y);
-    free.free(best.of.direction);
+    const resolved = resolvedAt(system, first.of);
+    if (resolved !== null) y = merged(y, system.y, resolved.y);
+    free.free(first.of.direction);
   }
   return groups;
 }
 
+function bearing({ curves }: ConditionSystem, { key, phases }: ConditionDatum): readonly string[] {
+  return [...new Set([...phases, ...curves.filter((c) => restsOn(c, key)).map((c) => c.phase)])];
+}
+
 /** Of a very large chi square, differences below this share are rounding. */
 const ROUNDING = 1e-10;
+/** A temperature that would move by more than this is re-solved [K]. */
+const FAR_K = 5;
 
 function rank(
   free: FreeData,
   y: Float64Array,
   before: number,
-  original: Float64Array,
+  system: ConditionSystem,
   d: ConditionDatum,
 ): RankedDatum | null {
   const test = free.test(y, d.direction, d.u);
   if (test === null) return null;
   let { w } = test;
-  let proposed = d.datum.value - test.error;
-  if (d.resolved !== null && Math.abs(d.resolved.value - d.datum.value) > 5) {
-    const left = free.chiSquareOf(merged(y, original, d.resolved.y));
+  const { value } = d.datum;
+  const logarithmic = d.kind === 'saturation-pressure';
+  let proposed = logarithmic ? value * Math.exp(-test.error) : value - test.error;
+  const resolved = Math.abs(test.error) > FAR_K || Math.abs(w) > 10 ? resolvedAt(system, d) : null;
+  if (resolved !== null && Math.abs(resolved.value - value) > FAR_K) {
+    const left = free.chiSquareOf(merged(y, system.y, resolved.y));
     w = Math.sign(test.w || 1) * Math.sqrt(Math.max(0, before - left));
-    proposed = d.resolved.value;
+    proposed = resolved.value;
   }
+  const scale = logarithmic ? proposed : 1;
   return {
     of: d,
+    whole: null,
     w,
     redundancy: test.redundancy,
-    smallestDetectable: test.smallestDetectable,
+    smallestDetectable: logarithmic ? value * Math.expm1(test.smallestDetectable) : test.smallestDetectable,
     proposed,
-    uProposed: test.uError,
+    uProposed: test.uError * scale,
   };
+}
+
+/** A slip with nothing to choose: what it would leave of chi square counts. */
+function rankWhole(free: FreeData, y: Float64Array, before: number, slip: WholeSlip): RankedDatum | null {
+  const [first] = slip.data;
+  const common = { of: first, whole: slip, redundancy: 1, uProposed: slip.uCorrected };
+  if (slip.open) {
+    const test = free.test(y, slip.change, 0);
+    if (test === null) return null;
+    const { w, error, uError, smallestDetectable } = test;
+    return { ...common, w, smallestDetectable, proposed: first.datum.value - error, uProposed: uError };
+  }
+  const left = free.chiSquareOf(moved(y, slip.change));
+  if (!(left < before)) return null;
+  const size = Math.abs(slip.corrected - first.datum.value);
+  return { ...common, w: Math.sqrt(before - left), smallestDetectable: size, proposed: slip.corrected };
+}
+
+/**
+ * The best slip of many numbers stands before the single numbers that explain no more, since it leaves nothing open, unless
+ * one of them alone comes to the same; the other slips of many numbers are left out.
+ */
+function withoutLesser(members: readonly RankedDatum[]): RankedDatum[] {
+  const best = members.find((one) => one.whole !== null);
+  if (best === undefined) return [...members];
+  const single = members.filter((one) => one.whole === null);
+  return best.whole?.alike === true && single.length > 0 ? [single[0], best, ...single.slice(1)] : [best, ...single];
+}
+
+function moved(y: Float64Array, change: Float64Array): Float64Array {
+  return y.map((v, i) => v + change[i]);
 }
 
 function merged(current: Float64Array, original: Float64Array, resolved: Float64Array): Float64Array {

@@ -1,15 +1,15 @@
 import type { Acceptance } from '../../schemas/accepted.js';
 import type { CheckedCase, ReconciledCase } from '../../schemas/checked.js';
-import type { Finding, Suspect } from '../../schemas/finding.js';
+import type { Finding, Outcome, Suspect } from '../../schemas/finding.js';
 import type { Policy } from '../../schemas/policy.js';
-import { sidakThreshold } from '../core/numeric/normal.js';
 import { acceptedOf } from './acceptances.js';
+import { type Adjusted, adjusted, adjustmentFindings, adjustmentOutcomes, testCount } from './adjustment-closes.js';
 import { withCauses } from './causes.js';
-import { conditionsOf } from './conditions.js';
 import { explained, withExplanations } from './explained.js';
 import { oneOutcomeAPlace } from './one-outcome.js';
 import { type SuspectGroup, suspectGroups } from './rank-data.js';
 import { suspectsOf } from './suspects.js';
+import { systemOf } from './system/system.js';
 
 export interface ReconcileSettings {
   readonly policy: Policy;
@@ -37,10 +37,21 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
   const { policy } = settings;
   const tableSuspects = checked.assembled.examined.suspects;
   let suspects: Suspect[] = [...tableSuspects];
-  let findings: readonly Finding[] = checked.findings;
-  if (checked.findings.length > 0) {
-    const groups = groupsOf(checked, policy);
-    const rooted = withCauses(checked, groups);
+  const solved = solvedOf(checked, policy);
+  const outcomes: Outcome[] = [...checked.outcomes];
+  const found: Finding[] = [...checked.findings];
+  const groups: SuspectGroup[] = [];
+  const wanted = checked.findings.some((f) => TRANSITION_RULES.has(f.rule) && f.severity !== 'note');
+  for (const one of solved) {
+    outcomes.push(...adjustmentOutcomes(one));
+    if (!wanted && !one.open) continue;
+    const own = suspectGroups(one.system, one.critical.doubt, one.whitened);
+    groups.push(...own);
+    found.push(...adjustmentFindings(one, own, policy));
+  }
+  let findings: readonly Finding[] = found;
+  if (found.length > 0) {
+    const rooted = withCauses({ ...checked, findings: found }, groups);
     findings = rooted.findings;
     for (const { finding, group, number } of rooted.groups) {
       suspects.push(...suspectsOf(checked, finding, group, number));
@@ -58,21 +69,16 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
     : open.some((f) => f.severity === 'doubt')
       ? 'flagged'
       : 'cleared';
-  return { checked, findings: ordered, outcomes: oneOutcomeAPlace(checked.outcomes), suspects, verdict };
+  return { checked, findings: ordered, outcomes: oneOutcomeAPlace(outcomes), suspects, verdict };
 }
 
-/** Only where a transition rule disagrees is the system solved; what the rules say of clean data stands already. */
-function groupsOf(checked: CheckedCase, policy: Policy): SuspectGroup[] {
-  const wanted = checked.findings.some((f) => TRANSITION_RULES.has(f.rule) && f.severity !== 'note');
-  if (!wanted) return [];
-  const groups: SuspectGroup[] = [];
-  const isobars = new Set(checked.assembled.curves.map((c) => c.family.isobarPa));
-  for (const isobar of isobars) {
-    const system = conditionsOf(checked, isobar);
-    if (system === null) continue;
-    groups.push(...suspectGroups(system, sidakThreshold(policy.alphaDoubt, system.data.length)));
-  }
-  return groups;
+/** The adjustment of each isobar's curves. */
+function solvedOf(checked: CheckedCase, policy: Policy): Adjusted[] {
+  const { curves, examined } = checked.assembled;
+  const { transitions, anchors } = examined.harmonised;
+  const tests = testCount(transitions.length, anchors.length);
+  const isobars = new Set<number | null>([null, ...curves.map((c) => c.family.isobarPa)]);
+  return [...isobars].map((isobar) => adjusted(systemOf(checked, isobar, policy), tests, policy));
 }
 
 const TRANSITION_RULES: ReadonlySet<string> = new Set([

@@ -8,12 +8,13 @@ export function suspectsOf(checked: CheckedCase, finding: Finding, group: Suspec
   const substance = checked.assembled.examined.harmonised.substance.id;
   return group.members.map((member, k) => {
     const { datum } = member.of;
+    const { whole } = member;
     return {
       finding: finding.id,
       substance,
       place: 100 * (number - 1) + k + 1,
       group: number,
-      cells: 1,
+      cells: whole?.cells ?? 1,
       address: datum.address,
       printed: datum.printed,
       observed: datum.value,
@@ -21,10 +22,11 @@ export function suspectsOf(checked: CheckedCase, finding: Finding, group: Suspec
       redundancy: member.redundancy,
       proposed: member.proposed,
       uProposed: member.uProposed,
-      proposedPrinted: printedLike(datum.printed, (member.proposed - datum.offset) / datum.factor),
+      proposedPrinted:
+        whole?.correctedPrinted ?? printedLike(datum.printed, (member.proposed - datum.offset) / datum.factor),
       smallestDetectable: member.smallestDetectable,
-      explanation: null,
-      explainedPrinted: null,
+      explanation: whole?.code ?? null,
+      explainedPrinted: whole?.correctedPrinted ?? null,
     };
   });
 }

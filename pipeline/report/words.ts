@@ -31,8 +31,9 @@ export function sayPlace({ source, file, line, column }: Address): string {
 
 /** Cell, what it says, and what it should probably say: `x/points.csv:412 S says 888.108, probably 889.108 (one digit wrong)`. */
 export function saySuspect(suspect: Suspect): string {
-  const { address, printed, proposedPrinted, explanation, explainedPrinted } = suspect;
-  const says = `${sayPlace(address)} says ${printed}`;
+  const { address, cells, printed, proposedPrinted, explanation, explainedPrinted } = suspect;
+  const more = cells > 1 ? ` and ${cells - 1} more, the first` : '';
+  const says = `${sayPlace(address)}${more} says ${printed}`;
   if (proposedPrinted === printed) return `${says}; a change below its last digit would close it`;
   if (explanation === null) return `${says}, probably ${proposedPrinted}`;
   return `${says}, probably ${explainedPrinted ?? proposedPrinted} (${sayExplanation(explanation)}?)`;
@@ -88,6 +89,8 @@ function told(finding: Finding): string {
       return interval(finding, detail);
     case 'cell':
       return cell(finding, detail);
+    case 'column':
+      return column(finding, detail);
     case 'anomaly':
       return (
         `${between(detail)} ${symbol(detail.quantity)}${ofPhase(finding)} stands off its neighbours${by(finding)}, and no single cell explains it: ` +
@@ -110,6 +113,8 @@ function told(finding: Finding): string {
         `${symbol(detail.quantity)} jumps${by(finding)}${at(finding)}${inside(finding)}, and no transition is stated there. ` +
         'State the transition, or compare the rows on both sides with the original.'
       );
+    case 'adjustment':
+      return adjustment(finding, detail);
     case 'calculation-failed':
       return (
         `The calculation broke down (${detail.message}), so nothing about this substance was checked. ` +
@@ -117,6 +122,40 @@ function told(finding: Finding): string {
       );
   }
 }
+
+/** All stated numbers together: the one that stands off, or the whole where no single one explains it. */
+function adjustment(finding: Finding, { place, w, critical, chiSquare, freedom }: Detail<'adjustment'>): string {
+  if (place === '' || w === null) {
+    return (
+      `Taken together, the transitions, anchors and tables do not close (chi square ${figure(chiSquare)} with ${freedom} degrees of freedom), ` +
+      'and no single number explains it. Look at the uncertainties that the sources state.'
+    );
+  }
+  return (
+    `Taken together with all else that is stated, ${statedPlace(place)} is ${amount(finding.observed, finding)}; ` +
+    `the rest puts it at ${amount(finding.expected, finding)} (normalised residual ${figure(Math.round(100 * Math.abs(w)) / 100)}, ` +
+    `at most ${figure(Math.round(100 * critical) / 100)} is usual). Compare the cell with the original.`
+  );
+}
+
+/** `T cr>l` becomes `the temperature of cr>l`. */
+function statedPlace(place: string): string {
+  const gap = place.indexOf(' ');
+  const name = PLACES[place.slice(0, gap)] ?? place.slice(0, gap);
+  return `${name}${place.slice(gap).replace(/^ over /, ' over ').replace(/^ (?!over )/, ' of ')}`;
+}
+
+const PLACES: Readonly<Record<string, string>> = {
+  T: 'the temperature',
+  dH: 'the enthalpy',
+  dS: 'the entropy',
+  dfH: 'the formation enthalpy',
+  dfG: 'the Gibbs energy of formation',
+  S: 'the entropy',
+  Cp: 'the heat capacity',
+  'H-H(0)': 'H − H(0)',
+  p: 'the vapour pressure',
+};
 
 function reading({ problem, read, wanted, remedy }: Detail<'reading'>): string {
   return join(
@@ -150,18 +189,41 @@ function cell(finding: Finding, { quantity, proposed, uProposed, explanation }: 
   const question =
     explanation === null ? 'Compare the cell with the original.' : `${capital(sayExplanation(explanation))}?`;
   const unit = finding.unit === null ? '' : ` ${unitInWords(finding.unit)}`;
-  const { observed } = finding;
-  const text = printedText(finding);
-  const found =
-    observed === null
-      ? 'unreadable'
-      : text !== undefined && Number(text) === observed
-        ? text.replace('-', '−')
-        : figure(observed, uProposed);
   return (
-    `${symbol(quantity)}${ofPhase(finding)}${at(finding)} is ${found}${unit}${printed(finding)}; ` +
+    `${symbol(quantity)}${ofPhase(finding)}${at(finding)} is ${cellText(finding, uProposed)}${unit}${printed(finding)}; ` +
     `${witness ?? 'the row’s other functions and its neighbours put it at'} ${plusMinus(proposed, uProposed)}. ${question}`
   );
+}
+
+function column(finding: Finding, { quantity, cells, factor, shift, explanation }: Detail<'column'>): string {
+  const unit = finding.unit === null ? '' : ` ${unitInWords(finding.unit)}`;
+  const { expected, tolerance } = finding;
+  const place = quantity === 'temperature' ? '' : at(finding);
+  const right = expected === null ? '' : `, this one at ${figure(expected, tolerance)}${unit}`;
+  const cause =
+    explanation === null
+      ? 'Compare the heading and the unit of the column with the original.'
+      : `${capital(sayExplanation(explanation))}?`;
+  return (
+    `${symbol(quantity)}${ofPhase(finding)}${place} is ${cellText(finding, tolerance)}${unit}${printed(finding)}: this and ` +
+    `${cells - 1} more cells of the column do not agree with the rest of the table; ${law(factor, shift, unit)} puts ` +
+    `all of them right${right}. ${cause}`
+  );
+}
+
+function law(factor: number | null, shift: number | null, unit: string): string {
+  const times = factor === null ? [] : [`× ${figure(factor)}`];
+  const plus = shift === null ? [] : [`${shift < 0 ? '−' : '+'} ${figure(Math.abs(shift))}${unit}`];
+  const parts = [...times, ...plus];
+  return parts.length === 0 ? 'a change that goes with 1/T' : parts.join(' ');
+}
+
+/** The finding's own cell as printed where that is what was read, else what was read. */
+function cellText(finding: Finding, uncertainty: number | null): string {
+  const { observed } = finding;
+  const text = printedText(finding);
+  if (observed === null) return 'unreadable';
+  return text !== undefined && Number(text) === observed ? text.replace('-', '−') : figure(observed, uncertainty);
 }
 
 function transition(finding: Finding, detail: Detail<'transition'>): string {

@@ -3,7 +3,7 @@ import type { Policy } from '../../schemas/policy.js';
 
 /** One rule as the curator reads it. */
 export interface RulePage {
-  readonly group: 'reading' | 'tables' | 'limits' | 'transitions';
+  readonly group: 'reading' | 'tables' | 'limits' | 'transitions' | 'across';
   /** One line for the list. */
   readonly holds: string;
   readonly formula: string;
@@ -183,6 +183,19 @@ export const RULE_PAGES: Readonly<Record<RuleName, RulePage>> = {
     disagrees: 'Another phase is lowest, or the curves cross where no transition is stated.',
     untestable: 'Fewer than two phases have curves on one zero.',
     wants: 'H and S of two phases on one zero.',
+  },
+  'adjustment-closes': {
+    group: 'across',
+    holds: 'all that is stated about a substance, taken together: transitions, anchors, vapour pressures and tables',
+    formula:
+      'y = 0 with covariance Q; global test yᵀQ⁻¹y against χ²; w(i) = d(i)ᵀQ⁻¹y / √(d(i)ᵀQ⁻¹d(i)) for each number (Baarda 1968)',
+    tolerance: (policy) =>
+      `${significance(policy)} Material: what would move a transition by ${policy.material.transitionTemperatureK} K, or the number itself beyond its limit.`,
+    agrees:
+      'The numbers close within their uncertainties; the smallest error that would have shown stands beside each.',
+    disagrees: 'A number, or the whole, lies farther off than the uncertainties allow.',
+    untestable: 'Nothing else that is stated bears on the number.',
+    wants: 'What the coverage names beside it: a transition, an anchor or a table that is independent of it.',
   },
 };
 

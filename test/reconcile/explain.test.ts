@@ -102,7 +102,7 @@ const CASES: readonly Case[] = [
     4774,
     10,
     '4.774',
-    { quantity: 'transition-enthalpy', ...kilo, partner: { printed: '4.774', observed: 4.774 } },
+    { quantity: 'transition-enthalpy', ...kilo, temperatureK: 600.61, partner: { printed: '4.774', observed: 4.774 } },
   ],
   ['copied-from-row-above', '68.02', 68.02, 69.947, 0.01, '69.95', { rowAbove: { printed: '68.02', observed: 68.02 } }],
   [
@@ -326,6 +326,15 @@ describe('where a slip cannot be', () => {
       'enthalpy-and-entropy-exchanged',
       context('7.95', 7950, { ...kilo, partner: { printed: '4.774', observed: 4.774 } }),
       4774,
+    ],
+    // Put back, 600.61 K times 4.774 J/(mol K) would have to be 7950 J/mol.
+    [
+      'enthalpy-and-entropy-exchanged',
+      context('4.774', 4774, {
+        ...{ quantity: 'transition-enthalpy', ...kilo, temperatureK: 600.61 },
+        partner: { printed: '7.95', observed: 7.95 },
+      }),
+      7950,
     ],
     ['in-units-of-r', context('8.413', 8413, { quantity: 'enthalpy-increment', ...kilo }), 69949],
     ['celsius-read-as-kelvin', context('327.46', 327.46), 600.61],

@@ -30,7 +30,7 @@ describe('the verdict', () => {
     const printed = medium();
     printed.tables.cr![8]![S] = moved(printed.tables.cr![8]![S]!, 0.03);
     printed.transitions[0]!.dH = '2.151';
-    expect(reconciled(printed).findings.map(({ severity }) => severity)).toEqual(['fault', 'doubt']);
+    expect(reconciled(printed).findings.map(({ severity }) => severity)).toEqual(['fault', 'fault', 'doubt']);
   });
 
   it('of one substance says nothing about another', () => {

@@ -1,4 +1,4 @@
-import { factorise, whiten } from '../numeric/cholesky.js';
+import { factoriseRanked, whiten } from '../numeric/cholesky.js';
 
 /**
  * Adjustment in condition form: y (m) are the misclosures of conditions that should vanish, Q their covariance. For a datum
@@ -9,8 +9,10 @@ export interface Whitened {
   readonly m: number;
   readonly factor: Float64Array;
   readonly y: Float64Array;
-  /** y^T Q^-1 y: the global test's statistic, m degrees of freedom. */
+  /** y^T Q^-1 y: the global test's statistic. */
   readonly chiSquare: number;
+  /** Its degrees of freedom: the conditions that do not repeat others. */
+  readonly freedom: number;
 }
 
 export interface DatumTest {
@@ -30,16 +32,15 @@ export const NON_CENTRALITY = 4.13;
 /** A condition whose own part of its variance is below this share repeats the others: rounding leaves some 1e-16. */
 const REPEATED = 1e-13;
 
-/** Conditions that repeat each other make Q singular: null comes back. */
-export function whitened(y: Float64Array, q: Float64Array, m: number): Whitened | null {
+/** Conditions that repeat others say nothing of their own and are left out. */
+export function whitened(y: Float64Array, q: Float64Array, m: number): Whitened {
   const factor = q.slice(0, m * m);
-  if (!factorise(factor, m)) return null;
-  for (let i = 0; i < m; i++) if (factor[i * m + i] ** 2 < REPEATED * q[i * m + i]) return null;
+  const freedom = factoriseRanked(factor, m, REPEATED);
   const z = y.slice(0, m);
   whiten(factor, m, z);
   let chiSquare = 0;
   for (let i = 0; i < m; i++) chiSquare += z[i] * z[i];
-  return { m, factor, y: z, chiSquare };
+  return { m, factor, y: z, chiSquare, freedom };
 }
 
 /**
@@ -48,6 +49,11 @@ export function whitened(y: Float64Array, q: Float64Array, m: number): Whitened 
  */
 export class FreeData {
   private readonly basis: Float64Array[] = [];
+
+  /** Data that were set free and took a degree of freedom each. */
+  get freed(): number {
+    return this.basis.length;
+  }
 
   constructor(private readonly system: Whitened) {}
 

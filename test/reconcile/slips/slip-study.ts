@@ -86,9 +86,10 @@ function contextOf(cell: SpoiltCell, observed: number): SuspectContext {
   const rounding = 1 / Math.sqrt(12);
   return {
     ...{ quantity: cell.quantity, printed: cell.printed, observed, factor: cell.factor, offset: cell.offset },
-    ...{ unit: cell.unit, molarMassGPerMol: cell.molarMassGPerMol, temperatureK: null, gas: cell.gas },
+    ...{ unit: cell.unit, molarMassGPerMol: cell.molarMassGPerMol, temperatureK: cell.meltingK, gas: cell.gas },
     rowAbove: { printed: cell.above, observed: si(cell.above) },
-    partner: cell.partner === null ? null : { printed: cell.partner, observed: Number.NaN },
+    partner:
+      cell.partner === null ? null : { printed: cell.partner, observed: Number(cell.partner) * cell.partnerFactor },
     enthalpiesFromZero: [{ value: fromZero, u: rounding }],
     enthalpyScaleSteps: [{ value: otherFormation, u: rounding }],
     transitionEnthalpies: transitions.map(({ enthalpy }) => ({ value: enthalpy, u: rounding })),

@@ -51,6 +51,9 @@ export interface SpoiltCell {
   readonly molarMassGPerMol: number;
   readonly above: string;
   readonly partner: string | null;
+  /** From the partner's number to SI. */
+  readonly partnerFactor: number;
+  readonly meltingK: number;
   readonly gas: boolean;
   readonly around: Surroundings;
 }
@@ -65,6 +68,7 @@ interface Drawn {
   readonly clean: string;
   readonly above: string;
   readonly partner: string;
+  readonly meltingK: number;
   readonly molarMass: number;
   readonly around: Surroundings;
   readonly random: Random;
@@ -174,9 +178,10 @@ function drawCell(column: Column, random: Random): Drawn {
   const above = (truth * (1 - 0.002 - 0.1 * random.unit())).toFixed(decimals);
   const molarMass = random.logBetween(4, 400);
   const meltingK = random.logBetween(150, 2500);
-  const other = column.quantity === 'transition-entropy' ? (truth * meltingK) / 1000 : (truth * 1000) / meltingK;
-  const partner = other.toFixed(random.pick([2, 3]));
-  return { column, truth, decimals, clean, above, partner, molarMass, around: surroundings(random), random };
+  const kilo = /^k(J|cal_th)\/mol/.test(column.unit) ? 1000 : 1;
+  const other = column.quantity === 'transition-entropy' ? (truth * meltingK) / 1000 : (truth * kilo) / meltingK;
+  const partner = other.toFixed(kilo === 1000 || /K/.test(column.unit) ? random.pick([2, 3]) : 3);
+  return { column, truth, decimals, clean, above, partner, meltingK, molarMass, around: surroundings(random), random };
 }
 
 /** Known to the joule, as three decimals of a kilojoule are. */
@@ -202,6 +207,9 @@ function finish(drawn: Drawn, printed: string, gas: boolean): SpoiltCell {
     lastPlace: 10 ** -drawn.decimals * scale,
     molarMassGPerMol: drawn.molarMass,
     partner: quantity.startsWith('transition-e') ? drawn.partner : null,
+    partnerFactor:
+      quantity === 'transition-entropy' ? 1000 * scale : scale / (scale >= 1000 && /^k/.test(unit) ? 1000 : 1),
+    meltingK: drawn.meltingK,
     around: drawn.around,
   };
 }

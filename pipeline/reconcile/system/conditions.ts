@@ -1,0 +1,213 @@
+import type { PhaseCurve } from '../../../schemas/curves.js';
+import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
+import { R_J_PER_MOL_K } from '../../core/constants.js';
+import { enthalpyAt, entropyAt, heatCapacityAt, intervalOf } from '../../core/physics/curve.js';
+import { ErrorSum } from '../../core/physics/error-sum.js';
+import { condensedTermUncertainty } from '../../core/physics/pressure-terms.js';
+import type { Joined, Pair, Saturated } from './joined.js';
+import { keyOf } from './stated-data.js';
+
+export type ConditionKind =
+  | 'gap'
+  | 'enthalpy'
+  | 'entropy'
+  | 'closure'
+  | 'anchor-enthalpy'
+  | 'anchor-entropy'
+  | 'from-zero'
+  | 'heat-capacity'
+  | 'saturation';
+
+/** One value that should vanish, with all that its error is made of. */
+export interface Condition {
+  readonly kind: ConditionKind;
+  /** Index among the joined transitions, or -1. */
+  readonly joined: number;
+  readonly value: number;
+  /** Its error: of curves' rows and of data, by key. */
+  readonly sum: ErrorSum;
+  /** Variance that is this condition's own. */
+  readonly variance: number;
+  /** Standard uncertainty, signed, that it shares with the others through the gas imperfection. */
+  readonly gas: number;
+  /** All of its numbers are one evaluated source's. */
+  readonly within: boolean;
+}
+
+/** Per transition G_to - G_from = 0, dH - stated dH = 0, dS - stated dS = 0; dH - T dS = 0 where the curves rest on them. */
+export function transitionConditions(joined: readonly Joined[]): Condition[] {
+  const conditions: Condition[] = [];
+  joined.forEach((j, k) => {
+    const { stated, index } = j.judged;
+    const { at, atK, within } = j;
+    const [keyT, keyH, keyS] = [keyOf.temperature(index), keyOf.enthalpy(index), keyOf.entropy(index)];
+    const { enthalpy, entropy } = stated;
+    const base = { joined: k, within };
+    if (j.byConstruction) {
+      if (enthalpy === null || entropy === null) return;
+      const t = stated.temperature.value;
+      const sum = new ErrorSum();
+      sum.addDatum(keyH, 1, 0).addDatum(keyS, -t, 0).addDatum(keyT, -entropy.value, 0);
+      conditions.push({
+        ...base,
+        kind: 'closure',
+        value: enthalpy.value - t * entropy.value,
+        sum,
+        variance: 0,
+        gas: 0,
+      });
+      return;
+    }
+    const offset = stated.temperature.value - atK;
+    const uGas = gasU(j);
+    const isobar = j.from.source.family.isobarPa;
+    const volume = isobar === null ? condensedTermUncertainty(stated.pressurePa) : 0;
+    conditions.push({
+      ...base,
+      kind: 'gap',
+      value: -(at.gapJPerMol + at.entropyJPerMolK * offset),
+      sum: difference(j, 1, -atK).addDatum(keyT, -at.entropyJPerMolK, 0),
+      variance: volume * volume,
+      gas: uGas,
+    });
+    if (enthalpy !== null)
+      conditions.push({
+        ...base,
+        kind: 'enthalpy',
+        value: at.enthalpyJPerMol + at.heatCapacityJPerMolK * offset - enthalpy.value,
+        sum: difference(j, 1, 0).addDatum(keyT, at.heatCapacityJPerMolK, 0).addDatum(keyH, -1, 0),
+        // The departure of H is some four times that of G for a fluid near boiling (B falls about as 1/T^3).
+        variance: 16 * uGas * uGas,
+        gas: 0,
+      });
+    if (entropy !== null)
+      conditions.push({
+        ...base,
+        kind: 'entropy',
+        value: at.entropyJPerMolK + (at.heatCapacityJPerMolK * offset) / atK - entropy.value,
+        sum: difference(j, 0, 1)
+          .addDatum(keyT, at.heatCapacityJPerMolK / atK, 0)
+          .addDatum(keyS, -1, 0),
+        variance: (9 * uGas * uGas) / (atK * atK),
+        gas: 0,
+      });
+  });
+  return conditions;
+}
+
+/** G_g(T, p) - G_condensed(T, p) = 0 of each measured vapour pressure, its error in p taken in ln p. */
+export function saturationConditions(saturated: readonly Saturated[]): Condition[] {
+  return saturated.map((pair) => ({
+    kind: 'saturation',
+    joined: -1,
+    value: -pair.at.gapJPerMol,
+    sum: difference(pair, 1, -pair.atK)
+      .addDatum(keyOf.saturationTemperature(pair.index), -pair.at.entropyJPerMolK, 0)
+      .addDatum(keyOf.saturationPressure(pair.index), (R_J_PER_MOL_K * pair.atK) / pair.to.formulaUnits, 0),
+    variance: 0,
+    gas: gasU(pair),
+    within: false,
+  }));
+}
+
+/**
+ * Anchors that no level rests on, against the curves: S and dfH at the reference temperature, H(Tr) - H(0) where a crystal's
+ * curve reaches 0 K, Cp where the table has a row there. What one source took from another is no witness of it.
+ */
+export function anchorConditions(
+  substance: HarmonisedCase,
+  curves: readonly PhaseCurve[],
+  isobarPa: number | null,
+): Condition[] {
+  const conditions: Condition[] = [];
+  substance.anchors.forEach((anchor, index) => {
+    if (anchor.table.isobarPa !== isobarPa) return;
+    const curve = curves.find((c) => c.phase === anchor.phase && c.family.isobarPa === isobarPa);
+    if (curve === undefined) return;
+    const t = anchor.referenceTemperatureK;
+    if (t < curve.measuredFromK || t > curve.measuredToK || restsOnAnother(anchor, curve, substance)) return;
+    const within = anchor.table.basis !== 'measured' && curve.sources.every((s) => s === anchor.table.source);
+    const add = (kind: ConditionKind, value: number, sum: ErrorSum, variance = 0): void => {
+      conditions.push({ kind, joined: -1, value, sum, variance, gas: 0, within });
+    };
+    const { entropy, enthalpyOfFormation, enthalpyFromZero, heatCapacity } = anchor;
+    if (
+      entropy !== null &&
+      curve.hasEntropyLevel &&
+      curve.entropyAnchor !== index &&
+      anchor.table.entropyZero === curve.family.entropyZero
+    ) {
+      const sum = new ErrorSum().add(curve, t, 0, -1).addDatum(keyOf.anchorEntropy(index), 1, 0);
+      add('anchor-entropy', entropy.value - entropyAt(curve, t), sum);
+    }
+    if (
+      enthalpyOfFormation !== null &&
+      curve.hasEnthalpyLevel &&
+      curve.enthalpyAnchor !== index &&
+      anchor.table.enthalpyZero === curve.family.enthalpyZero
+    ) {
+      const sum = new ErrorSum().add(curve, t, -1, 0).addDatum(keyOf.formationEnthalpy(index), 1, 0);
+      add('anchor-enthalpy', enthalpyOfFormation.value - enthalpyAt(curve, t), sum);
+    }
+    if (enthalpyFromZero !== null && curve.knotK[0] === 0) {
+      const sum = new ErrorSum().add(curve, t, -1, 0).add(curve, 0, 1, 0).addDatum(keyOf.fromZero(index), 1, 0);
+      add('from-zero', enthalpyFromZero.value - (enthalpyAt(curve, t) - enthalpyAt(curve, 0)), sum);
+    }
+    if (heatCapacity !== null) {
+      const i = intervalOf(curve, t);
+      if (curve.knotK[i] === t && curve.knotKind[i] === 0) {
+        const u = Math.hypot(curve.uHeatCapacityJPerMolK[i], curve.uCalibrationRelative * heatCapacity.value);
+        const sum = new ErrorSum().addDatum(keyOf.heatCapacity(index), 1, 0);
+        add('heat-capacity', heatCapacity.value - heatCapacityAt(curve, t, i), sum, u * u);
+      }
+    }
+  });
+  return conditions;
+}
+
+/** h H + s S of `to` less that of `from`, each per formula unit. */
+function difference({ from, to, atK }: Pair, h: number, s: number): ErrorSum {
+  return new ErrorSum()
+    .add(to.source, atK, h / to.formulaUnits, s / to.formulaUnits)
+    .add(from.source, atK, -h / from.formulaUnits, -s / from.formulaUnits);
+}
+
+function gasU({ from, to, atK }: Pair): number {
+  return (to.term?.u(atK) ?? 0) / to.formulaUnits - (from.term?.u(atK) ?? 0) / from.formulaUnits;
+}
+
+/** The anchor's source was computed from one of the curve's, or the other way round. */
+function restsOnAnother(anchor: Anchor, curve: PhaseCurve, substance: HarmonisedCase): boolean {
+  const { source, restsOn } = anchor.table;
+  if (curve.sources.includes(source)) return false;
+  if (curve.sources.some((s) => restsOn.includes(s))) return true;
+  return substance.series.some(({ table }) => table.restsOn.includes(source) && curve.sources.includes(table.source));
+}
+
+/** The value of a transition's condition with its temperature taken at `temperatureK`, where the curves give `there`. */
+export function atTemperature(
+  condition: Condition,
+  there: Joined['at'],
+  temperatureK: number,
+  stated: StatedSizes,
+): number {
+  const dH = stated.enthalpy?.value ?? 0;
+  const dS = stated.entropy?.value ?? 0;
+  switch (condition.kind) {
+    case 'gap':
+      return -there.gapJPerMol;
+    case 'enthalpy':
+      return there.enthalpyJPerMol - dH;
+    case 'entropy':
+      return there.entropyJPerMolK - dS;
+    case 'closure':
+      return dH - temperatureK * dS;
+    default:
+      return condition.value;
+  }
+}
+
+interface StatedSizes {
+  readonly enthalpy: Datum | null;
+  readonly entropy: Datum | null;
+}

@@ -1,0 +1,117 @@
+import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
+import type { Policy } from '../../../schemas/policy.js';
+import type { Joined, Saturated } from './joined.js';
+
+export type DatumKind =
+  | 'temperature'
+  | 'enthalpy'
+  | 'entropy'
+  | 'formation-enthalpy'
+  | 'anchor-entropy'
+  | 'formation-gibbs-energy'
+  | 'enthalpy-from-zero'
+  | 'anchor-heat-capacity'
+  | 'saturation-temperature'
+  | 'saturation-pressure'
+  /** A table's column as a whole; no number of its own. */
+  | 'column';
+
+/** A stated number that the conditions may rest on. `key` is the one that curves' levels know it by. */
+export interface StatedDatum {
+  readonly key: string;
+  readonly kind: DatumKind;
+  readonly datum: Datum;
+  /** Standard uncertainty that it enters with; of the logarithm for a pressure. */
+  readonly u: number;
+  /** Its transition among the substance's, or -1. */
+  readonly transition: number;
+  /** Phases that it is stated for. */
+  readonly phases: readonly string[];
+  /** As coverage names it: `T cr>l`, `dfH l`. */
+  readonly place: string;
+}
+
+export const keyOf = {
+  temperature: (transition: number): string => `T of transition ${transition}`,
+  enthalpy: (transition: number): string => `dH of transition ${transition}`,
+  entropy: (transition: number): string => `dS of transition ${transition}`,
+  formationEnthalpy: (anchor: number): string => `H of anchor ${anchor}`,
+  anchorEntropy: (anchor: number): string => `S of anchor ${anchor}`,
+  formationGibbsEnergy: (anchor: number): string => `G of anchor ${anchor}`,
+  fromZero: (anchor: number): string => `H0 of anchor ${anchor}`,
+  heatCapacity: (anchor: number): string => `Cp of anchor ${anchor}`,
+  saturationTemperature: (row: number): string => `T of pressure ${row}`,
+  saturationPressure: (row: number): string => `p of pressure ${row}`,
+} as const;
+
+/**
+ * Every stated number of a substance on one isobar apart from its tables' cells. Within one evaluated source only the rounding of a number
+ * stands between it and the others; what several sources state has its own uncertainty.
+ */
+export function statedData(
+  substance: HarmonisedCase,
+  isobarPa: number | null,
+  isobarOf: (transition: number) => number | null,
+  joined: readonly Joined[],
+  saturated: readonly Saturated[],
+  uOfAnchor: (key: string, anchor: Anchor, datum: Datum) => number,
+  policy: Policy,
+): StatedDatum[] {
+  const data: StatedDatum[] = [];
+  const where = isobarPa === null ? '' : ` at ${isobarPa} Pa`;
+  substance.transitions.forEach((stated, transition) => {
+    if (isobarOf(transition) !== isobarPa) return;
+    const within = joined.some((j) => j.judged.index === transition && j.within);
+    const u = (datum: Datum): number => (within ? datum.uRounding : datum.u);
+    const phases = [stated.from, stated.to];
+    const name = `${stated.from}>${stated.to}${where}`;
+    const add = (kind: DatumKind, key: string, symbol: string, datum: Datum | null): void => {
+      if (datum === null) return;
+      data.push({ key, kind, datum, u: u(datum), transition, phases, place: `${symbol} ${name}` });
+    };
+    add('temperature', keyOf.temperature(transition), 'T', stated.temperature);
+    add('enthalpy', keyOf.enthalpy(transition), 'dH', stated.enthalpy);
+    add('entropy', keyOf.entropy(transition), 'dS', stated.entropy);
+  });
+  substance.anchors.forEach((anchor, index) => {
+    if (anchor.table.isobarPa !== isobarPa) return;
+    const name = `${anchor.phase}${where}`;
+    const add = (kind: DatumKind, key: string, symbol: string, datum: Datum | null): void => {
+      if (datum === null) return;
+      const u = uOfAnchor(key, anchor, datum);
+      data.push({ key, kind, datum, u, transition: -1, phases: [anchor.phase], place: `${symbol} ${name}` });
+    };
+    add('formation-enthalpy', keyOf.formationEnthalpy(index), 'dfH', anchor.enthalpyOfFormation);
+    add('anchor-entropy', keyOf.anchorEntropy(index), 'S', anchor.entropy);
+    add('formation-gibbs-energy', keyOf.formationGibbsEnergy(index), 'dfG', anchor.gibbsEnergyOfFormation);
+    add('enthalpy-from-zero', keyOf.fromZero(index), 'H-H(0)', anchor.enthalpyFromZero);
+    add('anchor-heat-capacity', keyOf.heatCapacity(index), 'Cp', anchor.heatCapacity);
+  });
+  const compared = new Set(saturated.map((one) => one.index));
+  substance.vapourPressures.forEach(({ phase, temperature, pressure }, index) => {
+    if (!compared.has(index)) return;
+    const common = { transition: -1, phases: [phase, 'g'] };
+    data.push({
+      ...common,
+      key: keyOf.saturationTemperature(index),
+      kind: 'saturation-temperature',
+      datum: temperature,
+      u: temperature.u,
+      place: `T over ${phase}`,
+    });
+    data.push({
+      ...common,
+      key: keyOf.saturationPressure(index),
+      kind: 'saturation-pressure',
+      datum: pressure,
+      u: unsaid(pressure) ? policy.defaultUncertainty.pressureRelative : pressure.u / pressure.value,
+      place: `p over ${phase}`,
+    });
+  });
+  return data;
+}
+
+/** Nothing but its digits says how well it is known; beside another source's numbers that is not all there is to it. */
+function unsaid(datum: Datum): boolean {
+  return datum.origin === 'printed digits';
+}
