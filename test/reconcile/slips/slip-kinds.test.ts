@@ -11,6 +11,14 @@ const SEED = Number(process.env.SEED ?? 700_000);
 /** Slips that are smaller than six times a thousandfold u in every cell. */
 const NEVER_SEEN_AT_1000 = ['atmosphere-for-bar', 'old-temperature-scale'];
 
+/** Three figures of a number leave most room for another explanation in these; the others are held at 82 %. */
+const HARDEST = [
+  'one-digit-wrong',
+  'other-formula-molar-mass',
+  'calorie-per-mole-read-as-joule-per-gram',
+  'fahrenheit-not-converted',
+];
+
 /** How often each is met, of a hundred, as one expects of tables typed by hand; the rest are rare. */
 const USUAL: readonly (readonly [string, number])[] = [
   ['one-digit-wrong', 30],
@@ -31,24 +39,26 @@ describe(`${CELLS} spoilt cells of each kind`, { timeout: 120_000 }, () => {
     expect([...SPOILT_KINDS].sort()).toEqual([...SLIP_CODES].sort());
   });
 
-  it('are explained rightly first in 90 % where the proposal is as sharp as the printed digits', () => {
+  it('are explained rightly first in 96.5 % where the proposal is as sharp as the printed digits', () => {
     const tallies = SPOILT_KINDS.map((kind, i) => study(kind, 1, SEED + i, CELLS));
     print('u = printed digits', tallies);
-    for (const tally of tallies) expect(tally.first, tally.kind).toBeGreaterThanOrEqual(0.9);
+    for (const tally of tallies) expect(tally.first, tally.kind).toBeGreaterThanOrEqual(0.965);
   });
 
   it('are explained rightly first in 75 % where the proposal is a thousand times less sharp', () => {
     const seen = SPOILT_KINDS.filter((kind) => !NEVER_SEEN_AT_1000.includes(kind));
     const tallies = seen.map((kind, i) => study(kind, 1000, SEED + 1000 + i, CELLS));
     print('u = 1000 printed digits', tallies);
-    for (const tally of tallies) expect(tally.first, tally.kind).toBeGreaterThanOrEqual(0.75);
+    for (const tally of tallies) {
+      expect(tally.first, tally.kind).toBeGreaterThanOrEqual(HARDEST.includes(tally.kind) ? 0.75 : 0.82);
+    }
   });
 });
 
 describe('a mix of kinds as usual as they are met', { timeout: 120_000 }, () => {
   it.each([
-    [1, 0.9],
-    [1000, 0.75],
+    [1, 0.99],
+    [1000, 0.86],
   ])('is explained rightly first at u = %i printed digits in a share of %d', (timesDigits, least) => {
     const kinds = SPOILT_KINDS.filter((kind) => timesDigits === 1 || !NEVER_SEEN_AT_1000.includes(kind));
     const usual = new Map(USUAL);
