@@ -139,7 +139,8 @@ export type FindingDetail =
       readonly highK: number;
     }
   | { readonly code: 'entropy-order'; readonly above: string; readonly below: string }
-  | { readonly code: 'unstated-jump'; readonly quantity: string }
+  /** `closes`: dH = T dS within what both are printed to, as at a transition. */
+  | { readonly code: 'unstated-jump'; readonly quantity: string; readonly closes?: true }
   /** All stated numbers taken together; `place` names one (`T cr>l`), or is '' where only the whole does not close. */
   | {
       readonly code: 'adjustment';

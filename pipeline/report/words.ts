@@ -111,7 +111,9 @@ function told(finding: Finding): string {
     case 'unstated-jump':
       return (
         `${symbol(detail.quantity)} jumps${by(finding)}${at(finding)}${inside(finding)}, and no transition is stated there. ` +
-        'State the transition, or compare the rows on both sides with the original.'
+        (detail.closes === true
+          ? 'ΔH = T ΔS, as at a transition: one may have been left out. State it, or compare the rows on both sides with the original.'
+          : 'State the transition, or compare the rows on both sides with the original.')
       );
     case 'adjustment':
       return adjustment(finding, detail);
@@ -142,7 +144,10 @@ function adjustment(finding: Finding, { place, w, critical, chiSquare, freedom }
 function statedPlace(place: string): string {
   const gap = place.indexOf(' ');
   const name = PLACES[place.slice(0, gap)] ?? place.slice(0, gap);
-  return `${name}${place.slice(gap).replace(/^ over /, ' over ').replace(/^ (?!over )/, ' of ')}`;
+  return `${name}${place
+    .slice(gap)
+    .replace(/^ over /, ' over ')
+    .replace(/^ (?!over )/, ' of ')}`;
 }
 
 const PLACES: Readonly<Record<string, string>> = {

@@ -222,6 +222,18 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     [/^S jumps by 3\.1 J\/\(mol K\) at 420 K inside cr, and no transition is stated there\./],
   ],
   [
+    'unstated-jump with dH = T dS',
+    {
+      rule: 'slope-jumps-only-at-transitions',
+      temperatureK: 420,
+      fromPhase: 'cr',
+      detail: { code: 'unstated-jump', quantity: 'entropy', closes: true },
+      observed: 3.1,
+      unit: 'J/(mol.K)',
+    },
+    [/no transition is stated there\. ΔH = T ΔS, as at a transition: one may have been left out\. State it, or/],
+  ],
+  [
     'calculation-failed',
     { rule: 'row-readable', detail: { code: 'calculation-failed', message: 'matrix is singular' } },
     [/^The calculation broke down \(matrix is singular\)/, /a fault of the program/],

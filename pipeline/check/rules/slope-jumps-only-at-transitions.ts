@@ -1,5 +1,5 @@
 import type { Finding, Outcome } from '../../../schemas/finding.js';
-import type { Series, StatedTransition } from '../../../schemas/harmonised.js';
+import type { Series, SeriesQuantity, StatedTransition } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
 import { addressOf, evidenceOf, kindOf, outcome, placeOf } from '../place.js';
 
@@ -37,8 +37,7 @@ export function slopeJumpsOnlyAtTransitions(
       x !== null &&
       x.present[i] === 1 &&
       x.present[i - 1] === 1 &&
-      Math.abs(x.values[i] - x.values[i - 1]) >
-        2 * (x.halfUnit[i] + x.halfUnit[i - 1]) + 6 * Math.hypot(x.uOwn[i], x.uOwn[i - 1]);
+      Math.abs(x.values[i] - x.values[i - 1]) > mostByChance(x, i);
     if (!(apart(s) && (h === null || apart(h)))) continue;
     const stated = transitions.some(
       (x) =>
@@ -61,10 +60,23 @@ export function slopeJumpsOnlyAtTransitions(
         unit: q === s ? 'J/(mol.K)' : 'J/mol',
         address: addressOf(series, i, q.column),
         evidence: [evidenceOf(series, i - 1, q.column), evidenceOf(series, i, q.column)],
-        detail: { code: 'unstated-jump', quantity: q.is },
+        detail: { code: 'unstated-jump', quantity: q.is, ...(closes(s, h, i, t[i]) && { closes: true }) },
       }),
     );
   }
   const kind = findings.length > 0 ? 'disagrees' : 'agrees';
   return { outcome: outcome(substance, rule, placeOf(series), kind, kindOf([series.table])), findings };
+}
+
+/** What rounding and each point's own error may part rows i - 1 and i by. */
+function mostByChance({ halfUnit, uOwn }: SeriesQuantity, i: number): number {
+  return 2 * (halfUnit[i] + halfUnit[i - 1]) + 6 * Math.hypot(uOwn[i], uOwn[i - 1]);
+}
+
+/** Whether the jump takes up heat and dH = T dS, as at a transition. */
+function closes(s: SeriesQuantity | null, h: SeriesQuantity | null, i: number, temperatureK: number): boolean {
+  if (s === null || h === null) return false;
+  const dS = s.values[i] - s.values[i - 1];
+  const dH = h.values[i] - h.values[i - 1];
+  return dS > 0 && Math.abs(dH - temperatureK * dS) <= mostByChance(h, i) + temperatureK * mostByChance(s, i);
 }

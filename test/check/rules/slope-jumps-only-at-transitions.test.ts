@@ -56,7 +56,18 @@ describe(RULE, () => {
     const [finding] = findingsOf(found, RULE);
     expect(finding).toMatchObject({ temperatureK: 400, unit: 'J/(mol.K)', address: { file: 'cr.csv', column: 'S' } });
     expect(finding!.difference).toBeCloseTo(5, 9);
-    expect(finding!.detail).toEqual({ code: 'unstated-jump', quantity: 'entropy' });
+    // 2 kJ/mol are 400 K times 5 J/(mol K).
+    expect(finding!.detail).toEqual({ code: 'unstated-jump', quantity: 'entropy', closes: true });
+  });
+
+  it('does not call a jump a transition’s where dH is not T dS, or where it gives off heat', () => {
+    for (const heat of [2.1, -2]) {
+      const printed = jumped();
+      const rows = printed.tables.cr!;
+      for (const row of rows.slice(rows.findLastIndex((row) => row[T] === '400'))) row[H] = moved(row[H]!, heat - 2);
+      const [finding] = findingsOf(checked(printed), RULE);
+      expect(finding!.detail).toEqual({ code: 'unstated-jump', quantity: 'entropy' });
+    }
   });
 
   it('is silent on that jump where a first-order transition of the phase is stated there', () => {
