@@ -34,9 +34,11 @@ describe('the last places of pressures', () => {
     expect(placesOf(['0.0123', '0.123', '1.2345', '12.3'], 3)).toEqual([4, 3, 4, 1]);
   });
 
-  it('of a single cell, of a zero and of none are defined', () => {
+  it('of one or two cells, of a zero and of none are defined', () => {
     expect(placesOf(['760'], 2)).toEqual([0]);
     expect(placesOf(['1000'], 0)).toEqual([0]);
+    expect(placesOf(['1.2', '12.34'], 2)).toEqual([1, 2]);
+    expect(placesOf(['12.34', '1.2'], 2)).toEqual([2, 1]);
     expect(placesOf(['0.00', '1.25', '2.50'], 2)).toEqual([2, 2, 2]);
     expect(placesOf([], 0)).toEqual([]);
   });
