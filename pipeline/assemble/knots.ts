@@ -29,7 +29,7 @@ export interface Knots {
   readonly hasS: boolean;
 }
 
-/** `named` holds this series' named cells only; they are left out, a row without Cp too. */
+/** `named` holds this series' named cells only; they are left out, a row without Cp or temperature too. */
 export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | null {
   const cp = series.heatCapacity;
   if (cp === null) return null;
@@ -64,7 +64,7 @@ export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | nu
   let hasS = false;
   for (const row of order) {
     if (cp.present[row] === 0) continue;
-    if (named.length > 0 && isNamed(row, cp.is)) continue;
+    if (named.length > 0 && (isNamed(row, cp.is) || isNamed(row, 'temperature'))) continue;
     const t = series.temperatureK[row];
     const u = uncertainty(cp, row);
     if (n > 0 && t === knots.temperatureK[n - 1]) {
@@ -109,6 +109,8 @@ export function knotsOf(series: Series, named: readonly NamedCell[]): Knots | nu
     n++;
   }
   if (n < 2) return null;
+  if (!hasS && (!absoluteH || named.length > 0))
+    hasS = entropyByGibbs(knots, n, absoluteH ? Number.NaN : ownReferenceK(series));
   // A gas has no limit row: its Cp and S at 0 K are conventions of the table.
   const from = series.phase.startsWith('g') && knots.temperatureK[0] === 0 ? 1 : 0;
   if (n - from < 2) return null;
@@ -161,4 +163,39 @@ function rising(series: Series): ArrayLike<number> & Iterable<number> {
   }
   if (sorted) return order;
   return Int32Array.from(Array.from(order).sort((a, b) => t[a] - t[b] || a - b));
+}
+
+/** Where H - H(Tr) is zero by definition; NaN where the increments count from another phase. */
+function ownReferenceK({ incrementsFrom, phase, table }: Series): number {
+  return incrementsFrom === null || incrementsFrom === phase ? table.referenceTemperatureK : Number.NaN;
+}
+
+/**
+ * Where no S is printed, or its whole column is left out, S = -[G - H]/T + H/T stands in its place, and -[G - H]/T is spent
+ * on it. What the two share through H is left: it is the rounding of H over T. Without any S, -[G - H]/T says nothing.
+ */
+function entropyByGibbs(
+  {
+    temperatureK: t,
+    h,
+    hVar,
+    s,
+    sVar,
+    f,
+    fVar,
+  }: Pick<Knots, 'temperatureK' | 'h' | 'hVar' | 's' | 'sVar' | 'f' | 'fVar'>,
+  n: number,
+  zeroK: number,
+): boolean {
+  let any = false;
+  for (let i = 0; i < n; i++) {
+    const isZero = t[i] === zeroK;
+    if (fVar[i] === Number.POSITIVE_INFINITY || (hVar[i] === Number.POSITIVE_INFINITY && !isZero)) continue;
+    s[i] = isZero ? f[i] : f[i] + h[i] / t[i];
+    sVar[i] = isZero ? fVar[i] : fVar[i] + hVar[i] / (t[i] * t[i]);
+    fVar[i] = Number.POSITIVE_INFINITY;
+    any = true;
+  }
+  if (!any) fVar.fill(Number.POSITIVE_INFINITY);
+  return any;
 }

@@ -3,6 +3,7 @@ import type { Finding, Outcome, Suspect } from '../../schemas/finding.js';
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { kindOf, outcome, placeOf } from './place.js';
+import { columnFindings } from './rules/column-findings.js';
 import { enthalpyFollowsHeatCapacity } from './rules/enthalpy-follows-heat-capacity.js';
 import { entropyFollowsHeatCapacity } from './rules/entropy-follows-heat-capacity.js';
 import { functionsClose } from './rules/functions-close.js';
@@ -39,12 +40,20 @@ function examineCase(harmonised: HarmonisedCase, policy: Policy): ExaminedCase {
     const possible = valuePossible(id, series);
     findings.push(...distinct.findings, ...possible.findings);
     outcomes.push(distinct.outcome, possible.outcome);
-    const verdict = nameCells(series, policy);
+    const verdict = nameCells(series, policy, harmonised);
     const evidence = kindOf([series.table]);
+    const whole = verdict === null || verdict.columns.length === 0 ? null : verdict.columns;
+    const columns = whole === null ? null : columnFindings(id, series, index, whole, policy);
+    if (columns !== null) {
+      followColumns(findings, columns.findings, [...distinct.findings, ...possible.findings]);
+      named.push(...columns.named);
+      suspects.push(...columns.suspects);
+    }
     for (const rule of TABLE_RULES) {
       const judged = judgeTable(rule, id, series, index, verdict, policy);
+      const off = columns?.findings.some((f) => f.rule === rule.rule) === true;
       outcomes.push(
-        outcome(id, rule.rule, placeOf(series), judged.outcome, evidence, {
+        outcome(id, rule.rule, placeOf(series), off ? 'disagrees' : judged.outcome, evidence, {
           missing: judged.missing,
           smallestDetectable: judged.smallestDetectable,
         }),
@@ -55,4 +64,16 @@ function examineCase(harmonised: HarmonisedCase, policy: Policy): ExaminedCase {
     }
   });
   return { harmonised, named, outcomes, findings, suspects };
+}
+
+/** What else a table shows of a column that is wrong as a whole follows from that. */
+function followColumns(findings: Finding[], columns: readonly Finding[], shown: readonly Finding[]): void {
+  const quantities = new Map(columns.map((one) => [(one.detail as { quantity: string }).quantity, one.id]));
+  for (const one of shown) {
+    const own = 'quantity' in one.detail ? quantities.get(one.detail.quantity) : undefined;
+    // Wrong temperatures make any of the cells beside them impossible.
+    const cause = own ?? quantities.get('temperature');
+    if (cause !== undefined) findings[findings.indexOf(one)] = { ...one, cause };
+  }
+  findings.push(...columns);
 }

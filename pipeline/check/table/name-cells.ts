@@ -1,9 +1,13 @@
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import type { Policy } from '../../../schemas/policy.js';
 import type { NumberQuantity } from '../../../schemas/quantities.js';
+import { cellAsRead } from './cell-as-read.js';
+import { changed } from './column-change.js';
+import type { TableContext } from './column-hypotheses.js';
 import { type Anomaly, type Detectable, leftOver, smallest } from './left-over.js';
 import { type Residuals, residuals, standoff, standoffWithout } from './residuals.js';
 import { cellU, type TableRows, tableRows } from './table-rows.js';
+import { type WholeColumns, wholeColumns, worthTrying } from './whole-columns.js';
 import { type Hypothesis, type Pattern, testHeatCapacity, Window } from './window.js';
 
 /** A cell that the pattern of the row checks points to. */
@@ -27,6 +31,8 @@ export interface SuspectCell {
 }
 
 export interface TableVerdict {
+  /** Whole columns that one law puts right; the cells below are those that stand out beside it. */
+  readonly columns: readonly WholeColumns[];
   readonly cells: readonly SuspectCell[];
   readonly anomalies: readonly Anomaly[];
   readonly detectable: Detectable;
@@ -36,15 +42,26 @@ const MOST_NAMES = 12;
 /** Above this a residual is looked at; naming needs more. */
 const SCREEN = 3.5;
 
-/** Takes the best explained cell, leaves it out, and looks again. */
-export function nameCells(series: Series, policy: Policy): TableVerdict | null {
+/** Takes the best explained cell, leaves it out, and looks again; whole columns first, where much does not close. */
+export function nameCells(series: Series, policy: Policy, context: TableContext): TableVerdict | null {
   const cells: SuspectCell[] = [];
+  let columns: readonly WholeColumns[] = [];
   let current = series;
   let rows = tableRows(current);
   if (rows === null) return null;
   let res = residuals(rows);
-  const detectable = smallest(rows, res, policy);
+  let detectable = smallest(rows, res, policy);
   let hot = screen(rows, res, policy);
+  if (worthTrying(rows, hot.length)) {
+    columns = wholeColumns(series, context);
+    for (const { changes, run } of columns) current = changed(current, changes, run);
+    if (columns.length > 0) {
+      rows = tableRows(current) as TableRows;
+      res = residuals(rows);
+      detectable = smallest(rows, res, policy);
+      hot = screen(rows, res, policy);
+    }
+  }
   if (hot.length > 0) {
     res = residuals(rows, true);
     hot = screen(rows, res, policy);
@@ -61,7 +78,8 @@ export function nameCells(series: Series, policy: Policy): TableVerdict | null {
     hot = screen(rows, res, policy);
   }
   const anomalies = hot.length === 0 ? [] : leftOver(rows, res, policy);
-  return { cells, anomalies, detectable };
+  const asRead = columns.length === 0 ? cells : cells.map((cell) => cellAsRead(series, columns, cell));
+  return { columns, cells: asRead, anomalies, detectable };
 }
 
 /** Rows around which something does not close. */

@@ -1,0 +1,207 @@
+import type { Series } from '../../../schemas/harmonised.js';
+import { REFERENCE_TEMPERATURE_K } from '../../core/constants.js';
+import { type Closing, closing, enthalpyAtReference } from './closing.js';
+import { type ColumnChange, changed, type RowRun } from './column-change.js';
+import { type ColumnHypothesis, columnHypotheses, type TableContext } from './column-hypotheses.js';
+import { residuals } from './residuals.js';
+import { cellU, type TableRows, tableRows } from './table-rows.js';
+
+/** One cause that puts one or more whole columns of a table wrong, by one law. */
+export interface WholeColumns {
+  readonly changes: readonly ColumnChange[];
+  readonly run: RowRun;
+  readonly explanation: string | null;
+  readonly uFactor: number;
+  readonly uShift: number;
+  /** Root of what the sum of squared residuals falls by. */
+  readonly w: number;
+  /** Other columns by other laws that the table cannot tell from these, best first. */
+  readonly rivals: readonly ColumnHypothesis[];
+}
+
+/** Fewer rows tell no law. */
+const FEWEST_ROWS = 5;
+const FEWEST_FAILING = 5;
+/** Of the conditions that failed, so many may still fail: other slips, real steps. */
+const LEFT_SHARE = 0.15;
+/** A first law of several must put right at least this share of what fails. */
+const FIRST_SHARE = 0.25;
+const MOST_LAWS = 3;
+/** Laws that leave so much more failing than the best one are not weighed against it. */
+const SLACK = 0.02;
+/** Hypotheses whose chi squared lies within this of the best cannot be told apart. */
+const ALIKE = 9;
+
+interface Tried {
+  readonly hypothesis: ColumnHypothesis;
+  readonly closing: Closing;
+  readonly score: number;
+}
+
+/**
+ * Whether the rows where something does not close are many enough to look for a whole column.
+ * @param hot rows around which something does not close
+ */
+export function worthTrying(rows: TableRows, hot: number): boolean {
+  if (rows.n < FEWEST_ROWS) return false;
+  return hot >= Math.min(Math.max(FEWEST_FAILING, 0.3 * rows.n), 9) || countsFromElsewhere(rows);
+}
+
+/** H - H(Tr) is not 0 at Tr, and not just there: its neighbours agree with it. */
+export function countsFromElsewhere(rows: TableRows): boolean {
+  const zero = enthalpyAtReference(rows);
+  return zero !== null && Math.abs(zero.enthalpy) > Math.max(6 * zero.u, 1);
+}
+
+/**
+ * The laws that make a table close where many single cells would be needed: one, or up to three that each put right a
+ * good part. Empty where none does; then single cells are looked for.
+ */
+export function wholeColumns(series: Series, context: TableContext): WholeColumns[] {
+  const whole = searched(series, null, context);
+  if (whole.length > 0) return whole;
+  const rows = tableRows(series) as TableRows;
+  for (const run of runs(rows, closing(rows, residuals(rows, true)))) {
+    const found = searched(series, run, context);
+    if (found.length > 0) return found;
+  }
+  return [];
+}
+
+function searched(series: Series, run: RowRun, context: TableContext): WholeColumns[] {
+  const found: WholeColumns[] = [];
+  let current = series;
+  let rows = tableRows(current);
+  if (rows === null) return [];
+  let now = closing(rows, residuals(rows, true));
+  const first = now;
+  const allowed = Math.floor(LEFT_SHARE * first.failing);
+  while (found.length < MOST_LAWS) {
+    const tried = tryAll(current, rows, run, now, context);
+    const best = tried[0];
+    if (best === undefined) return [];
+    const closes = best.closing.failing <= allowed;
+    if (!closes && now.failing - best.closing.failing < Math.max(FEWEST_FAILING, FIRST_SHARE * now.failing)) return [];
+    found.push(described(best, closes && found.length === 0 ? tried : [], run, now));
+    if (closes) return found;
+    // Only whole columns go wrong in company.
+    if (run !== null) return [];
+    current = changed(current, best.hypothesis.changes, run);
+    const next = tableRows(current);
+    if (next === null) return [];
+    rows = next;
+    now = best.closing;
+  }
+  return [];
+}
+
+/** The hypotheses that close about as well as any, with what they leave, likeliest first. */
+function tryAll(series: Series, rows: TableRows, run: RowRun, now: Closing, context: TableContext): Tried[] {
+  const inRun = run === null ? null : new Set(run.rows);
+  const within = (i: number): boolean => inRun === null || inRun.has(rows.row[i]);
+  const res = residuals(rows, true);
+  const tried: Tried[] = [];
+  for (const hypothesis of columnHypotheses(rows, res, run, within, context)) {
+    const after = changed(series, hypothesis.changes, run);
+    const next = tableRows(after);
+    if (next === null || next.n < rows.n) continue;
+    const left = closing(next, residuals(next, true));
+    // A law that leaves less to be tested would close by that alone.
+    if (left.tested < 0.8 * now.tested || left.failing >= now.failing) continue;
+    const score = 2 * (hypothesis.prior + standing(next, context)) - left.capped;
+    tried.push({ hypothesis, closing: left, score });
+  }
+  const least = Math.min(...tried.map(({ closing: { failing } }) => failing));
+  const slack = Math.max(1, SLACK * now.failing);
+  return tried.filter(({ closing: { failing } }) => failing <= least + slack).sort((a, b) => b.score - a.score);
+}
+
+function described(best: Tried, tried: readonly Tried[], run: RowRun, before: Closing): WholeColumns {
+  const { changes, explanation, uFactor, uShift } = best.hypothesis;
+  const own = columnsOf(best.hypothesis);
+  const seen = new Set([own]);
+  const rivals: ColumnHypothesis[] = [];
+  for (const other of tried) {
+    if (best.score - other.score >= ALIKE || seen.has(columnsOf(other.hypothesis))) continue;
+    seen.add(columnsOf(other.hypothesis));
+    rivals.push(other.hypothesis);
+  }
+  return {
+    changes,
+    run,
+    explanation,
+    uFactor,
+    uShift,
+    w: Math.sqrt(Math.max(0, before.squares - best.closing.squares)),
+    rivals,
+  };
+}
+
+const columnsOf = ({ changes }: ColumnHypothesis): string => changes.map(({ column }) => column).join(' ');
+
+/**
+ * How well the table as changed fits what stands beside it, as a logarithm: the anchors of its phase, a gas's least heat
+ * capacity (5/2 R), and about 3 R an atom elsewhere. It only counts between hypotheses that this table cannot tell apart.
+ */
+function standing(rows: TableRows, { substance, anchors }: TableContext): number {
+  const { series, s, h, t, cp, n } = rows;
+  let sum = 0;
+  const held = (difference: number, u: number): void => {
+    sum -= 0.5 * Math.min(12, (difference / u) ** 2);
+  };
+  for (const anchor of anchors) {
+    if (anchor.phase !== series.phase || Math.abs(anchor.referenceTemperatureK - REFERENCE_TEMPERATURE_K) > 0.02)
+      continue;
+    for (let i = 0; i < n; i++) {
+      const r = rows.row[i];
+      if (
+        anchor.entropy !== null &&
+        s !== null &&
+        s.present[r] === 1 &&
+        Math.abs(t[i] - REFERENCE_TEMPERATURE_K) < 0.02
+      ) {
+        const size = 1e-3 * Math.abs(anchor.entropy.value);
+        held(s.values[r] - anchor.entropy.value, Math.hypot(anchor.entropy.u, cellU(s, r), 0.02 * size));
+      }
+      if (
+        anchor.enthalpyFromZero !== null &&
+        h !== null &&
+        t[i] === 0 &&
+        h.present[r] === 1 &&
+        series.incrementsFrom === null
+      ) {
+        const size = 1e-2 * Math.abs(anchor.enthalpyFromZero.value);
+        held(h.values[r] + anchor.enthalpyFromZero.value, Math.hypot(anchor.enthalpyFromZero.u, cellU(h, r), size));
+      }
+    }
+  }
+  const gas = series.phase === 'g' || series.phase.startsWith('g-');
+  const last = cp[n - 1];
+  const atoms = substance.atomsPerFormula;
+  if (gas && last < 20.7) sum -= 6;
+  if (atoms !== null && atoms > 0 && t[n - 1] > 250) {
+    const each = last / atoms;
+    if (each < (gas ? 5 : 8) || each > 60) sum -= 6;
+  }
+  return sum;
+}
+
+/** Runs of rows that fail nearly throughout, to the end of the table or to a break; a row more or less at their ends. */
+function runs(rows: TableRows, { bad }: Closing): { readonly rows: readonly number[] }[] {
+  const first = bad.indexOf(1);
+  const last = bad.lastIndexOf(1);
+  if (first < 0 || last - first + 1 < FEWEST_ROWS) return [];
+  let failing = 0;
+  for (let i = first; i <= last; i++) failing += bad[i];
+  if (failing < 0.7 * (last - first + 1)) return [];
+  const out: { readonly rows: readonly number[] }[] = [];
+  const isEnd = (i: number): boolean => i === 0 || rows.from[i] === i;
+  const isLast = (i: number): boolean => i === rows.n - 1 || rows.to[i] === i;
+  for (let a = Math.max(0, first - 1); a <= Math.min(first + 3, rows.n - 1); a++) {
+    for (let b = Math.max(0, last - 2); b <= Math.min(last + 2, rows.n - 1); b++) {
+      if (b - a + 1 < FEWEST_ROWS || (a === 0 && b === rows.n - 1) || !(isEnd(a) || isLast(b))) continue;
+      out.push({ rows: Array.from(rows.row.subarray(a, b + 1)) });
+    }
+  }
+  return out;
+}
