@@ -19,11 +19,13 @@ const TABLE_RULES: Readonly<Record<string, readonly string[]>> = {
 /** In the unit of an entropy: an error in H shows as H/T. */
 const TABLE_RULES_TIMES_T: Readonly<Record<string, readonly string[]>> = { 'enthalpy-increment': ['functions-close'] };
 
-/** How the adjustment's own outcomes name a datum: `T cr>l`, `dfH l`. */
+/** How the adjustment's own outcomes name a datum: `T cr>l`, `dfH l`, `p over l`. */
 const DATUM_NAMES: Readonly<Record<string, string>> = {
   'enthalpy-of-formation': 'dfH',
   entropy: 'S',
+  'enthalpy-from-zero': 'H-H(0)',
   'transition-temperature': 'T',
+  temperature: 'T',
   'transition-enthalpy': 'dH',
   'transition-entropy': 'dS',
   pressure: 'p',
@@ -60,14 +62,14 @@ export class Detectable {
       return sharpest([...own.map(printed), ...timesT.map((row) => printed(row) * cell.temperatureK)]);
     }
     const name = DATUM_NAMES[cell.quantity];
-    if (cell.quantity === 'pressure') return this.#leastPressure(cell, rows);
+    if (cell.holds === 'transitions' && cell.quantity === 'pressure') return this.#leastPressure(cell, rows);
     const adjusted = this.#rows(cell.substance).filter(({ rule, place }) => rule === ADJUSTMENT && place.includes(' '));
     if (adjusted.length > 0) {
-      return sharpest(
-        adjusted.filter((row) => row.place === `${name} ${cell.place}` && row.outcome !== 'untestable').map(printed),
-      );
+      const place = `${name} ${cell.holds === 'vapour-pressures' ? 'over ' : ''}${cell.place}`;
+      return sharpest(adjusted.filter((row) => row.place === place && row.outcome !== 'untestable').map(printed));
     }
     const rule = TRANSITION_RULES[cell.quantity] ?? 'gibbs-continuous';
+    if (cell.holds === 'vapour-pressures' || cell.quantity === 'enthalpy-from-zero') return Number.POSITIVE_INFINITY;
     const concerned = rows.filter((row) => row.rule === rule && concerns(row.place, cell));
     if (concerned.length === 0) return Number.POSITIVE_INFINITY;
     return TRANSITION_RULES[cell.quantity] === undefined ? 0 : sharpest(concerned.map(printed));
@@ -102,6 +104,7 @@ export class Detectable {
     const checked = (rule: string) => rows.some((row) => row.rule === rule && row.place === slip.place);
     const tables = checked('entropy-follows-heat-capacity') || checked('enthalpy-follows-heat-capacity');
     if (slip.meant === 'old temperature scale') return slip.cells.some((cell) => this.#scaleShows(cell, rows));
+    if (slip.kind.startsWith('vapour pressures')) return slip.cells.some((cell) => this.#shows(cell, slip));
     if (slip.meant === '1 atm for 1 bar') {
       const anchor = rows.find(({ rule, place }) => rule === ADJUSTMENT && place === 'S g');
       const step = Math.abs(slip.cells[0]!.changeSi!);

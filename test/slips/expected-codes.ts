@@ -16,10 +16,10 @@ const CODES: Readonly<Record<string, readonly string[]>> = {
   'old temperature scale': ['old-temperature-scale'],
   'torr for pascal': ['torr-read-as-pascal'],
   'log10 for ln': ['log10-taken-for-ln'],
-  'molar mass of a hydrate': ['other-formula-molar-mass'],
+  'molar mass of another formula': ['other-formula-molar-mass'],
   'ΔH and ΔS exchanged': ['enthalpy-and-entropy-exchanged'],
   'from and to exchanged': ['from-and-to-exchanged'],
-  'different scales': ['different-enthalpy-scales'],
+  'different scales': ['different-enthalpy-scales', 'formation-enthalpies-from-different-scales'],
   'transition left out': ['transition-left-out'],
   'increments from 0 K': ['counted-from-zero-kelvin'],
 };

@@ -83,10 +83,10 @@ const formationsFromDifferentScales: SlipKind = {
 };
 
 /** Columns of one substance's phase in one file, by quantity. */
-function columnsOf({ cells }: SlipSubstance): Map<string, SourceCell[]>[] {
+function columnsOf({ cells }: SlipSubstance, holds = 'thermal-functions'): Map<string, SourceCell[]>[] {
   const tables = new Map<string, Map<string, SourceCell[]>>();
   for (const cell of cells) {
-    if (cell.holds !== 'thermal-functions') continue;
+    if (cell.holds !== holds) continue;
     const key = `${cell.source} ${cell.file} ${cell.place}`;
     const table = tables.get(key) ?? new Map<string, SourceCell[]>();
     tables.set(key, table);
@@ -112,9 +112,10 @@ function ofColumns(
   meant: string,
   rewrite: Rewrite,
   which: (table: Map<string, SourceCell[]>, random: Random, substance: SlipSubstance) => readonly SourceCell[] | null,
+  holds = 'thermal-functions',
 ): SlipKind {
   const draft: Draft = (substance, random) => {
-    const tables = columnsOf(substance);
+    const tables = columnsOf(substance, holds);
     for (let attempt = 0; attempt < 6 && tables.length > 0; attempt++) {
       const cells = which(random.pick(tables), random, substance);
       const changes = cells === null ? null : rewriteAll(cells, rewrite, substance, random);
@@ -132,6 +133,7 @@ const oneColumn = (table: Map<string, SourceCell[]>, random: Random) =>
 const oneEnthalpy = (table: Map<string, SourceCell[]>) =>
   table.get('enthalpy-increment') ?? table.get('enthalpy') ?? null;
 const allColumns = (table: Map<string, SourceCell[]>) => energetic(table).flatMap((quantity) => table.get(quantity)!);
+const pressures = (table: Map<string, SourceCell[]>) => table.get('pressure') ?? null;
 const temperatures = (table: Map<string, SourceCell[]>) => table.get('temperature') ?? null;
 const gasEntropies = (table: Map<string, SourceCell[]>) => {
   const cells = [...(table.get('entropy') ?? []), ...(table.get('gibbs-function') ?? [])].filter(
@@ -202,14 +204,22 @@ export const MANY_CELL_KINDS: readonly SlipKind[] = [
     return energetic(table).length < 2 || columns.length === 0 ? null : table.get(random.pick(columns))!;
   }),
   ofColumns(
-    'table by the molar mass of a hydrate',
-    'molar mass of a hydrate',
-    rewrites.withMassOfHydrate(1),
+    'table by the molar mass of another formula',
+    'molar mass of another formula',
+    rewrites.withMassOfOther(2, 1),
     allColumns,
   ),
   ofColumns('table in degrees Celsius', 'Celsius and kelvin', rewrites.celsiusForKelvin, temperatures),
   ofColumns('table on the scale of 1968', 'old temperature scale', rewrites.onScale68, temperatures),
   ofColumns('gas table at 1 atm', '1 atm for 1 bar', rewrites.atOneAtmosphere, gasEntropies),
+  ofColumns('vapour pressures in torr', 'torr for pascal', rewrites.inTorr, pressures, 'vapour-pressures'),
+  ofColumns(
+    'vapour pressures at degrees Celsius',
+    'Celsius and kelvin',
+    rewrites.celsiusForKelvin,
+    temperatures,
+    'vapour-pressures',
+  ),
   allGasAtOneAtmosphere,
   incrementsFromZero,
   transitionLeftOut,

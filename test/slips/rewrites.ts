@@ -41,16 +41,18 @@ export const perOtherAmount: Rewrite = (cell, substance) => {
   return like(cell, perGram ? cell.value * substance.molarMassGPerMol : cell.value / substance.molarMassGPerMol);
 };
 
-/** Reckoned with the molar mass of a hydrate. */
-export function withMassOfHydrate(waters: number): Rewrite {
+/** Reckoned with the molar mass of two formula units, of half of one, or in a column per gram of a hydrate. */
+export function withMassOfOther(times: 2 | 0.5, waters: number): Rewrite {
   return (cell, substance) => {
-    if (unitOf(cell, substance).energy === null) return null;
-    return like(cell, cell.value * (1 + (waters * WATER_G_PER_MOL) / substance.molarMassGPerMol));
+    const { energy, perGram } = unitOf(cell, substance);
+    if (energy === null) return null;
+    const hydrate = substance.molarMassGPerMol / (substance.molarMassGPerMol + waters * WATER_G_PER_MOL);
+    return like(cell, cell.value * (perGram ? hydrate : times));
   };
 }
 
-export const withMassOfSomeHydrate: Rewrite = (cell, substance, random, least) =>
-  withMassOfHydrate(random.pick([1, 2, 5, 6]))(cell, substance, random, least);
+export const withMassOfSomeOther: Rewrite = (cell, substance, random, least) =>
+  withMassOfOther(random.pick([2, 0.5]), random.pick([1, 2, 5, 6]))(cell, substance, random, least);
 
 export const inUnitsOfR: Rewrite = (cell, substance) => {
   if (!PER_KELVIN.includes(cell.quantity)) return null;
@@ -84,7 +86,8 @@ export const digitsExchanged: Rewrite = (cell, _, random) => {
   const second = cell.text[first + 1] === '.' ? first + 2 : first + 1;
   const letters = [...cell.text];
   [letters[first], letters[second]] = [letters[second]!, letters[first]!];
-  return letters.join('');
+  // Nobody prints a zero before other digits.
+  return /^-?0\d/.test(letters.join('')) ? null : letters.join('');
 };
 
 export const oneDigitWrong: Rewrite = (cell, _, random) => {

@@ -37,8 +37,9 @@ export type Draft = (
 
 const TABLE = ['entropy', 'enthalpy-increment', 'enthalpy', 'gibbs-function'];
 const DATUM: Readonly<Record<string, readonly string[]>> = {
-  anchors: ['enthalpy-of-formation', 'entropy'],
+  anchors: ['enthalpy-of-formation', 'entropy', 'enthalpy-from-zero'],
   transitions: ['transition-temperature', 'transition-enthalpy', 'transition-entropy', 'pressure'],
+  'vapour-pressures': ['temperature', 'pressure'],
 };
 const LEAST_UNITS = 5;
 const LEAST_SHARE_OF_HEAT_CAPACITY = 0.01;
@@ -56,7 +57,7 @@ export function cellsOf(family: Family, { cells }: SlipSubstance): readonly Sour
 /** The pressure of a transition between condensed phases moves it too little to be known for wrong. */
 function isDatum(cell: SourceCell): boolean {
   if (!(DATUM[cell.holds] ?? []).includes(cell.quantity) || cell.order !== 'first') return false;
-  return cell.quantity !== 'pressure' || cell.place.endsWith('>g');
+  return cell.holds !== 'transitions' || cell.quantity !== 'pressure' || cell.place.endsWith('>g');
 }
 
 /** Below this a change is no slip that anybody would have to find. */
@@ -72,19 +73,19 @@ interface Naming {
   readonly quantities?: readonly string[];
 }
 
-const TRIES = 12;
+const TRIES = 40;
 
 function oneCell(family: Family, name: string, rewrite: Rewrite, naming: Naming = {}): SlipKind {
   const draft: Draft = (substance, random, least) => {
     const { quantities } = naming;
-    const cells = cellsOf(family, substance).filter((cell) => quantities?.includes(cell.quantity) ?? true);
-    // Quantities first, lest the many rows of one drown the few of another.
-    const kinds = new Set(cells.map((cell) => cell.quantity));
-    for (let attempt = 0; attempt < TRIES && cells.length > 0; attempt++) {
-      const quantity = random.pick([...kinds]);
-      const cell = random.pick(cells.filter((one) => one.quantity === quantity));
+    const left = cellsOf(family, substance).filter((cell) => quantities?.includes(cell.quantity) ?? true);
+    for (let attempt = 0; attempt < TRIES && left.length > 0; attempt++) {
+      // The quantity first, lest the many rows of one drown the few of another.
+      const quantity = random.pick([...new Set(left.map((one) => one.quantity))]);
+      const cell = random.pick(left.filter((one) => one.quantity === quantity));
       const printed = rewrite(cell, substance, random, least(cell));
       if (printed !== null && isWorthFinding(family, cell, printed)) return [{ cell, printed }];
+      left.splice(left.indexOf(cell), 1);
     }
     return null;
   };
@@ -125,11 +126,18 @@ const inTables = [
   oneCell('table', '1 atm for 1 bar', rewrites.atOneAtmosphere, { sharp }),
 ];
 
-const TEMPERATURE = ['transition-temperature'];
-const ENERGIES = ['enthalpy-of-formation', 'entropy', 'transition-enthalpy', 'transition-entropy'];
+const TEMPERATURE = ['transition-temperature', 'temperature'];
+const ENERGIES = [
+  'enthalpy-of-formation',
+  'enthalpy-from-zero',
+  'entropy',
+  'transition-enthalpy',
+  'transition-entropy',
+];
 const ofData = [
   oneCell('datum', 'T off', rewrites.off, { ...off, quantities: TEMPERATURE }),
   oneCell('datum', 'H or S off', rewrites.off, { ...off, quantities: ENERGIES }),
+  oneCell('datum', 'p off', rewrites.off, { ...off, quantities: ['pressure'] }),
   oneCell('datum', 'Celsius and kelvin', rewrites.celsiusForKelvin, { sharp }),
   oneCell('datum', 'Fahrenheit', rewrites.inFahrenheit, { sharp }),
   oneCell('datum', 'scale of 1968', rewrites.onScale68, { meant: 'old temperature scale', sharp }),
@@ -138,7 +146,7 @@ const ofData = [
   oneCell('datum', 'sign lost', rewrites.withoutSign, { sharp }),
   oneCell('datum', 'torr for pascal', rewrites.inTorr, { sharp }),
   oneCell('datum', 'log10 for ln', rewrites.naturalReadAsDecimal, { sharp }),
-  oneCell('datum', 'molar mass of a hydrate', rewrites.withMassOfSomeHydrate, { sharp }),
+  oneCell('datum', 'molar mass of another formula', rewrites.withMassOfSomeOther, { sharp }),
 ];
 
 export const ONE_CELL_KINDS: readonly SlipKind[] = [...everywhere, ...inTables, ...ofData];

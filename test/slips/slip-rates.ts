@@ -19,8 +19,8 @@ export interface Cleanness {
   readonly noted: number;
 }
 
-/** Designs whose uncertainties are about a thousand times what printed digits leave open. */
-const WIDE_DESIGNS = ['coarse'];
+/** Designs whose stated uncertainties are hundreds to a thousand times what printed digits leave open; in the others digits speak. */
+const WIDE_DESIGNS = ['coarse', 'measured', 'vapour-pressures', 'chain'];
 
 export function rates(one: readonly Scored[], two: readonly Scored[], clean: Cleanness): Rate[] {
   const testable = one.filter((scored) => scored.testable);

@@ -58,6 +58,7 @@ export async function studySynthetic(
       const written = writeSyntheticLibrary(folder, {
         seed: options.firstSeed + round,
         substances,
+        vapourPressures: true,
         ...(designs === undefined ? {} : { designs }),
       });
       const designOf = new Map(written.map(({ id, design }) => [id, design]));
