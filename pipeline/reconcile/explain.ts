@@ -1,6 +1,6 @@
 /** What probably happened to a suspect cell: the usual slips that lead to the value proposed for it. */
 import { printCandidate, readCell } from './slips/cell.js';
-import type { Candidate, SuspectContext } from './slips/slip.js';
+import type { SuspectContext } from './slips/slip.js';
 import { unknownDensity } from './slips/unknown-error.js';
 import { USUAL_SLIPS } from './slips/usual-slips.js';
 
@@ -26,9 +26,12 @@ export const MANY_CELL_CODES: readonly string[] = ['from-and-to-exchanged'];
  * The usual slips whose corrected value meets `proposed` within the larger of two standard uncertainties (the rounding of
  * the corrected value included) and `material`, best first; empty where none does. All in SI.
  *
- * score = ln(weight * share) - d^2 / (2 s^2) - ln(s / s0), with d = corrected - proposed, s^2 = uProposed^2 + the rounding
- * of the printed digits carried to the corrected value, s0 that of digits left as they are: a kind with many candidates
- * shares its prior among them, and a vague candidate (kilojoules of two digits) counts for less than a sharp one.
+ * score = ln(prior * density * s0 * sqrt(2 pi)): the prior is weight * share, so that a kind with many candidates shares
+ * its own among them; the density is normal with s^2 = uProposed^2 + the rounding of the printed digits carried to the
+ * corrected value, so that a vague candidate (kilojoules of two digits) counts for less than a sharp one; s0 is that of
+ * digits left as they are. Near its middle that is log prior - chi^2/2. A small share of the density lies flat over the
+ * material limit, or over `FAR_SHARE` of a large correction or value: a second error in the substance, or a condition that is not
+ * quite linear, puts the proposal off by more than its u says.
  *
  * A candidate that an error of no known kind would beat is left out: with nine values for each digit some of them lie
  * near any proposal.
@@ -49,15 +52,19 @@ export function explain(
   const usualSpread = Math.hypot(uProposed, rounding(cell.lastPlace));
   const best = new Map<string, Explanation>();
   for (const slip of USUAL_SLIPS) {
+    const loose = Math.max(material, slip.ofDigits === true ? 0 : FAR_SHARE * Math.min(needed, Math.abs(proposed)));
     for (const candidate of slip.propose(cell, proposed)) {
       const corrected = cell.toSi(candidate.value);
       const distance = Math.abs(corrected - proposed);
       const spread = Math.hypot(uProposed, rounding(candidate.step));
-      const allowed = Math.max(2 * spread, material);
+      const allowed = Math.max(2 * spread, loose);
       if (!(distance <= allowed)) continue;
-      const prior = slip.weight * candidate.share;
-      if (!beatsChance(candidate, prior, distance, spread, material, needed)) continue;
-      const score = Math.log(prior) - 0.5 * (distance / spread) ** 2 - Math.log(spread / usualSpread);
+      const least = Math.min(Math.max(2 * spread, material), 0.1 * Math.abs(cell.observed));
+      const nothingLeft = Math.abs(corrected) <= least && corrected !== 0;
+      const weight = slip.weight * candidate.share * (nothingLeft ? NOTHING_LEFT_SHARE : 1);
+      const likely = weight * density(distance, spread, loose);
+      if (candidate.told !== true && likely <= unknownDensity(needed)) continue;
+      const score = Math.log(likely * usualSpread * Math.sqrt(2 * Math.PI));
       const correctedPrinted = printCandidate(cell, candidate);
       const key = `${slip.code} ${correctedPrinted}`;
       const known = best.get(key);
@@ -68,23 +75,14 @@ export function explain(
   return [...best.values()].sort((a, b) => b.score - a.score);
 }
 
-/** Share of proposals that are wrong by more than they say, by up to the material limit. */
+/** Share of proposals that are wrong by more than they say, and how far: this share of the correction. */
 const LOOSE_SHARE = 0.05;
+const FAR_SHARE = 0.01;
+/** A value that cannot be told from 0 is met by every factor that is small enough. */
+const NOTHING_LEFT_SHARE = 0.05;
 
-/**
- * Whether the slip makes the proposal likelier than an error of no known kind does: prior * p(proposed | slip) against
- * the density of such errors.
- */
-function beatsChance(
-  candidate: Candidate,
-  prior: number,
-  distance: number,
-  spread: number,
-  material: number,
-  needed: number,
-): boolean {
-  if (candidate.told === true) return true;
+/** Of the proposal at `distance` from what the slip says was meant. */
+function density(distance: number, spread: number, loose: number): number {
   const sharp = Math.exp(-0.5 * (distance / spread) ** 2) / (spread * Math.sqrt(2 * Math.PI));
-  const loose = distance <= material ? 1 / (2 * material) : 0;
-  return prior * ((1 - LOOSE_SHARE) * sharp + LOOSE_SHARE * loose) > unknownDensity(needed);
+  return (1 - LOOSE_SHARE) * sharp + (distance <= loose ? LOOSE_SHARE / (2 * loose) : 0);
 }

@@ -24,7 +24,7 @@ export function explanationOf(
 ): Explanation | null {
   const found = suspectContext(substance, suspect);
   if (found === null) return null;
-  return explain(found, suspect.proposed, suspect.uProposed, materialOf(found, policy))[0] ?? null;
+  return explain(found, suspect.proposed, suspect.uProposed, materialOf(found, suspect.proposed, policy))[0] ?? null;
 }
 
 /** Findings that name a cell take their first suspect's explanation. */
@@ -37,7 +37,8 @@ export function withExplanations(findings: readonly Finding[], suspects: readonl
   });
 }
 
-function materialOf(context: SuspectContext, policy: Policy): number {
+/** What a user of the value would notice. */
+function materialOf(context: SuspectContext, proposed: number, policy: Policy): number {
   const { material } = policy;
   const t = context.temperatureK ?? 298.15;
   switch (context.quantity) {
@@ -45,16 +46,16 @@ function materialOf(context: SuspectContext, policy: Policy): number {
     case 'transition-temperature':
       return material.transitionTemperatureK;
     case 'transition-enthalpy':
-      return (material.transitionTemperatureK * Math.abs(context.observed)) / t;
+      return (material.transitionTemperatureK * Math.abs(proposed)) / t;
     case 'heat-capacity':
-      return 0.5 * material.heatCapacityRelative * Math.abs(context.observed);
+      return material.heatCapacityRelative * Math.abs(proposed);
     case 'entropy':
     case 'transition-entropy':
     case 'gibbs-function':
       return material.entropyJPerMolK;
     case 'pressure':
       // By Trouton's rule, dS = 88 J/(mol K): dp/p = (dS/R) dT/T.
-      return (10.6 * material.transitionTemperatureK * Math.abs(context.observed)) / t;
+      return (10.6 * material.transitionTemperatureK * Math.abs(proposed)) / t;
     default:
       return material.enthalpyJPerMol;
   }

@@ -248,6 +248,35 @@ describe('an explained cell', () => {
   });
 });
 
+describe('a proposal that is off by more than it says', () => {
+  it('is still met by a slip of units, sign or exchange within a hundredth', () => {
+    // A second error in the substance pulls the crossing 1 K aside.
+    const melting = context('327.46', 327.46, { quantity: 'transition-temperature', unit: 'K' });
+    expect(explain(melting, 599.6, 0.05, 0.5)[0]).toMatchObject({ slip: 'celsius-read-as-kelvin' });
+    const formation = context('285.83', 285830, { quantity: 'enthalpy-of-formation', ...kilo });
+    expect(explain(formation, -285100, 20, 50)[0]).toMatchObject({ slip: 'sign-lost' });
+    expect(explain(formation, -275000, 20, 50)).toEqual([]);
+  });
+
+  it('is not met by digits, of which some lie near any proposal', () => {
+    expect(explain(context('888.108', 888.108), 808.7, 0.005, 0.05)).toEqual([]);
+  });
+});
+
+describe('a value that cannot be told from nothing', () => {
+  it('is not said to be a thousandth of what stands there where a known difference leads to nothing, too', () => {
+    // The element's crystal counted from its liquid.
+    const counted = context('-1.854', -1854, {
+      ...{ quantity: 'enthalpy-of-formation', ...kilo },
+      enthalpyScaleSteps: [{ value: 1854, u: 0.3 }],
+    });
+    expect(explain(counted, -0.8, 1, 50)[0]).toMatchObject({
+      slip: 'different-enthalpy-scales',
+      correctedPrinted: '0.000',
+    });
+  });
+});
+
 describe('a cell that no usual slip explains', () => {
   it('gets an empty list', () => {
     expect(explain(context('888.108', 888.108), 893.862, 0.005, 0.05)).toEqual([]);
@@ -365,7 +394,9 @@ describe('where a slip cannot be', () => {
   });
 
   it('digits of a text that is no number, or another one than was read, are left alone', () => {
-    const slips = (printed: string) => explain(context(printed, 16.72), 69.95, 0.02, 0.05).map((each) => each.slip);
+    const slips = (printed: string) => [
+      ...new Set(explain(context(printed, 16.72), 69.95, 0.02, 0.05).map((each) => each.slip)),
+    ];
     expect(slips('(16.72)')).toEqual(['calorie-read-as-joule']);
     expect(slips('69.95')).toEqual(['calorie-read-as-joule']);
   });

@@ -7,6 +7,7 @@ const NEIGHBOURS_SHARE = 0.9;
 export const digitsExchanged: Slip = {
   code: 'digits-exchanged',
   weight: 0.12,
+  ofDigits: true,
   propose: ({ number, value, lastPlace }) => {
     if (number === null) return [];
     const { digits, text } = number;

@@ -25,26 +25,32 @@ const WATERS = [
 const LIGHTEST = 20;
 
 /**
- * In a column per mass the cell is x/M' for x/M, so that M'/M is lacking; or the sample was taken for the other formula,
- * which makes it M/M'. In one per mole, twice or half the formula unit was meant.
+ * In a column per mass the cell is x/M' for x/M, so that M'/M is lacking; in one per mole it came from a value per mass
+ * by M', so that M/M' is; or the sample was taken for the other formula, which is the reverse.
  */
 export const otherFormulaMolarMass: Slip = {
   code: 'other-formula-molar-mass',
   weight: 0.03,
   propose: (cell) => {
-    if (!isMolar(cell.quantity)) return [];
-    return isPerMass(cell) ? perMass(cell) : [times(cell, 2, 0.5), times(cell, 0.5, 0.5)];
+    const { quantity, molarMassGPerMol: mass } = cell;
+    if (!isMolar(quantity)) return [];
+    if (!(mass > 0)) return [times(cell, 2, 0.5), times(cell, 0.5, 0.5)];
+    const sense = isPerMass(cell) ? 1 : -1;
+    const candidates: Candidate[] = [times(cell, 2, 0.15), times(cell, 0.5, 0.15)];
+    for (const [n, share] of WATERS) {
+      const ratio = ((mass + n * WATER) / mass) ** sense;
+      candidates.push(byMass(cell, ratio, 0.4 * share), byMass(cell, 1 / ratio, 0.2 * share));
+      const anhydrous = mass - n * WATER;
+      if (anhydrous >= LIGHTEST) candidates.push(byMass(cell, (anhydrous / mass) ** sense, 0.1 * share));
+    }
+    return candidates;
   },
 };
 
-function perMass(cell: SuspectCell): Candidate[] {
-  const { molarMassGPerMol: mass } = cell;
-  const candidates = [times(cell, 2, 0.15), times(cell, 0.5, 0.15)];
-  for (const [n, share] of WATERS) {
-    const ratio = (mass + n * WATER) / mass;
-    candidates.push(times(cell, ratio, 0.35 * share), times(cell, 1 / ratio, 0.25 * share));
-    const anhydrous = mass - n * WATER;
-    if (anhydrous >= LIGHTEST) candidates.push(times(cell, anhydrous / mass, 0.1 * share));
-  }
-  return candidates;
+/** Two tables of atomic weights differ by this share in a formula's mass. */
+const MASS_DOUBT = 3e-5;
+
+function byMass(cell: SuspectCell, ratio: number, share: number): Candidate {
+  const candidate = times(cell, ratio, share);
+  return { ...candidate, step: Math.hypot(candidate.step, Math.sqrt(12) * MASS_DOUBT * candidate.value) };
 }

@@ -5,6 +5,7 @@ import type { Candidate, Slip } from './slip.js';
 export const oneDigitWrong: Slip = {
   code: 'one-digit-wrong',
   weight: 0.3,
+  ofDigits: true,
   propose: ({ number, value, lastPlace }) => {
     if (number === null) return [];
     const { digits, text } = number;

@@ -71,6 +71,8 @@ export interface Slip {
   readonly code: string;
   /** How usual it is among slips of single cells; judgement, only ratios matter. */
   readonly weight: number;
+  /** It leads to so many values that one of them lies near any proposal. */
+  readonly ofDigits?: true;
   /** @param proposed what would close the system [SI]; used by slips that leave the value open */
   propose(cell: SuspectCell, proposed: number): readonly Candidate[];
 }

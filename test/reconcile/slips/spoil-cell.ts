@@ -230,11 +230,11 @@ function calorie(random: Random): number {
   return random.unit() < 0.85 ? 4.184 : 4.1868;
 }
 
-/** What the wrong molar mass multiplies by: M/(M + n H2O) or the reverse in a column per mass, else 2 or 1/2. */
+/** What the wrong molar mass multiplies by: in a column per mass M/(M + n H2O), in one per mole the reverse; or 2 or 1/2. */
 function otherFormula({ column, molarMass, random }: Drawn): number {
-  if (!/\/\(?k?g/.test(column.unit) || random.unit() < 0.3) return random.unit() < 0.5 ? 2 : 0.5;
+  if (random.unit() < 0.3) return random.unit() < 0.5 ? 2 : 0.5;
   const hydrate = molarMass + random.pick([0.5, 1, 1, 1, 2, 2, 3, 4, 5, 6, 6, 7, 10]) * 18.0153;
-  return random.unit() < 0.6 ? molarMass / hydrate : hydrate / molarMass;
+  return /\/\(?k?g/.test(column.unit) === random.unit() < 0.7 ? molarMass / hydrate : hydrate / molarMass;
 }
 
 /**
