@@ -1,6 +1,7 @@
 import type { CurveFamily, LevelOrigin, PhaseCurve } from '../../schemas/curves.js';
 import type { Anchor, Datum, HarmonisedCase, StatedTransition } from '../../schemas/harmonised.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
+import { datumKey } from '../core/physics/datum-keys.js';
 import { departure } from '../core/physics/equilibrium.js';
 import { boilingTemperature, isGas } from '../core/physics/placed-phase.js';
 import { gasTerm } from '../core/physics/pressure-terms.js';
@@ -71,17 +72,16 @@ function carry(
   const b = atPressure(shapes[open], stated, family);
   const scale = b.units / a.units;
   const origin = { source: known, atK: temperatureK, scale };
-  const key = (what: string): string => `${what} of transition ${index}`;
   const by = sign * b.units;
   if (wantsH) {
     const dH = stated.enthalpy?.value ?? (stated.entropy as Datum).value * temperatureK;
     target.h = scale * (a.h + (source.h ?? 0)) + by * dH - b.h;
     const errors =
       stated.enthalpy !== null
-        ? [{ key: key('dH'), by, u: stated.enthalpy.u }]
+        ? [{ key: datumKey.enthalpy(index), by, u: stated.enthalpy.u }]
         : [
-            { key: key('dS'), by: by * temperatureK, u: (stated.entropy as Datum).u },
-            { key: key('T'), by: by * (stated.entropy as Datum).value, u: uT },
+            { key: datumKey.entropy(index), by: by * temperatureK, u: (stated.entropy as Datum).u },
+            { key: datumKey.temperature(index), by: by * (stated.entropy as Datum).value, u: uT },
           ];
     target.hOrigin = { ...origin, errors };
     target.uH = Math.hypot(scale * source.uH, ...errors.map((e) => e.by * e.u));
@@ -92,10 +92,10 @@ function carry(
     target.s = scale * (a.s + (source.s ?? 0)) + by * dS - b.s;
     const errors =
       stated.entropy !== null
-        ? [{ key: key('dS'), by, u: stated.entropy.u }]
+        ? [{ key: datumKey.entropy(index), by, u: stated.entropy.u }]
         : [
-            { key: key('dH'), by: by / temperatureK, u: (stated.enthalpy as Datum).u },
-            { key: key('T'), by: (-by * dS) / temperatureK, u: uT },
+            { key: datumKey.enthalpy(index), by: by / temperatureK, u: (stated.enthalpy as Datum).u },
+            { key: datumKey.temperature(index), by: (-by * dS) / temperatureK, u: uT },
           ];
     target.sOrigin = { ...origin, errors };
     target.uS = Math.hypot(scale * source.uS, ...errors.map((e) => e.by * e.u));

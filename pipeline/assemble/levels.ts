@@ -3,6 +3,7 @@ import type { Anchor, Datum, HarmonisedCase } from '../../schemas/harmonised.js'
 import type { Policy } from '../../schemas/policy.js';
 import { numbers } from '../core/numeric/room.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
+import { datumKey } from '../core/physics/datum-keys.js';
 import { carryAll, type Level, type Origin, relative } from './carry-levels.js';
 import type { PhaseShape } from './phase-shape.js';
 
@@ -137,9 +138,9 @@ function datumOf(
   shape: PhaseShape,
   uReach: number,
 ): Origin {
-  const errors = [
-    { key: `${what} of anchor ${anchor === undefined ? -1 : substance.anchors.indexOf(anchor)}`, by: 1, u },
-  ];
+  const index = anchor === undefined ? -1 : substance.anchors.indexOf(anchor);
+  const key = what === 'H' ? datumKey.formationEnthalpy(index) : datumKey.anchorEntropy(index);
+  const errors = [{ key, by: 1, u }];
   if (uReach > 0) errors.push({ key: `${what} reached by ${shape.phase}`, by: 1, u: uReach });
   const common = Math.sqrt(Math.max(0, datum.u * datum.u - u * u));
   if (common > 1e-9 * datum.u) {

@@ -2,6 +2,7 @@ import type { CheckedCase, JudgedTransition } from '../../schemas/checked.js';
 import type { AssembledCase } from '../../schemas/curves.js';
 import type { Finding, Outcome } from '../../schemas/finding.js';
 import type { Policy } from '../../schemas/policy.js';
+import { testCount } from '../core/physics/adjustment.js';
 import { isFirstOrder, type Judgement, type TransitionContext } from './curve/judgement.js';
 import { thresholds } from './curve/significance.js';
 import { type TransitionView, transitionViews } from './curve/transition-view.js';
@@ -45,7 +46,7 @@ function checkCase(assembled: AssembledCase, policy: Policy): CheckedCase {
     findings.push(...rises.findings, ...jumps.findings);
   });
   const views = transitionViews(assembled);
-  const limits = thresholds(policy, 3 * views.length + 1);
+  const limits = thresholds(policy, testCount(views.length, harmonised.anchors.length));
   const judged: JudgedTransition[] = [];
   for (const view of views) {
     const results = TRANSITION_RULES.map((rule) => rule({ substance, view, policy, limits }));

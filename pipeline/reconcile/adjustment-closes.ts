@@ -33,20 +33,15 @@ export function adjusted(system: ConditionSystem, tests: number, policy: Policy)
   return { system, whitened: white, tests: results, critical, open };
 }
 
-/** Tests that one substance has its alpha shared over: three a transition and one for their order, five a transition's and an anchor's numbers, and the global one. */
-export function testCount(transitions: number, anchors: number): number {
-  return 3 * transitions + 1 + 3 * transitions + 2 * anchors + 1;
-}
-
 /** One outcome a stated number, with its smallest detectable error; those that nothing else speaks of, with what would. */
 export function adjustmentOutcomes({ system, tests, whitened: white, critical }: Adjusted): Outcome[] {
   const substance = system.substance.substance.id;
   const rule = 'adjustment-closes' as const;
   const outcomes: Outcome[] = [];
-  const base = { substance, rule };
   if (white.freedom > 0) {
     outcomes.push({
-      ...base,
+      substance,
+      rule,
       place: '',
       outcome: failsGlobally(white, critical.doubt) ? 'disagrees' : 'agrees',
       evidence: system.conditions.every((c) => c.within) ? 'arithmetic' : 'independent',
@@ -58,7 +53,8 @@ export function adjustmentOutcomes({ system, tests, whitened: white, critical }:
     const test = tests[i];
     if (test === null) return;
     outcomes.push({
-      ...base,
+      substance,
+      rule,
       place: d.place,
       outcome: Math.abs(test.w) > critical.doubt ? 'disagrees' : 'agrees',
       evidence: d.within ? 'arithmetic' : 'independent',
@@ -71,7 +67,8 @@ export function adjustmentOutcomes({ system, tests, whitened: white, critical }:
   });
   for (const d of system.unseen) {
     outcomes.push({
-      ...base,
+      substance,
+      rule,
       place: d.place,
       outcome: 'untestable',
       evidence: null,

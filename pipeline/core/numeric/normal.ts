@@ -14,6 +14,19 @@ export function normalQuantile(p: number): number {
 
 /** The two-sided critical value when `alpha` is shared over `tests` (Z. Sidak, J. Am. Stat. Assoc. 62 (1967) 626). */
 export function sidakThreshold(alpha: number, tests: number): number {
+  if (alpha !== known.alpha[0] && alpha !== known.alpha[1]) {
+    known.alpha = [alpha, known.alpha[0]];
+    known.values = [[], known.values[0]];
+  }
+  const values = known.values[known.alpha[0] === alpha ? 0 : 1];
+  values[tests] ??= thresholdOf(alpha, tests);
+  return values[tests];
+}
+
+/** Every substance asks for the same few: the last two alphas are kept, by the number of tests. */
+const known: { alpha: [number, number]; values: [number[], number[]] } = { alpha: [-1, -1], values: [[], []] };
+
+function thresholdOf(alpha: number, tests: number): number {
   const each = -Math.expm1(Math.log1p(-alpha) / Math.max(1, tests));
   return normalQuantile(each / 2);
 }

@@ -29,6 +29,14 @@ export interface DatumTest {
 /** delta0 of Baarda at alpha = 0.1 % and power 80 %. */
 export const NON_CENTRALITY = 4.13;
 
+/**
+ * Tests that one substance shares its alpha over: of each transition the three rules and the three stated numbers, of each
+ * anchor its two, the order of the phases, and the whole.
+ */
+export function testCount(transitions: number, anchors: number): number {
+  return 6 * transitions + 2 * anchors + 2;
+}
+
 /** A condition whose own part of its variance is below this share repeats the others: rounding leaves some 1e-16. */
 const REPEATED = 1e-13;
 

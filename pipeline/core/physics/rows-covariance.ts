@@ -25,8 +25,8 @@ export interface StateCovariance {
 
 /**
  * The covariance of (H, S) at T: the neighbouring knots' joint covariance (smoothed, with the gain between them), carried
- * to T by linear weights, plus the common calibration and, beyond the data, the growth of the continuation. Levels apart.
- * Linear propagation, JCGM 100:2008, 5.2.2.
+ * to T by linear weights, with what the way between the two adds, plus the common calibration and, beyond the data, the
+ * growth of the continuation. Levels apart. Linear propagation, JCGM 100:2008, 5.2.2.
  */
 export function rowsCovariance(curve: RowsUncertainty, temperatureK: number): StateCovariance {
   const i = intervalOf(curve, temperatureK);
@@ -43,6 +43,12 @@ export function rowsCovariance(curve: RowsUncertainty, temperatureK: number): St
   let hh = a * a * varH[i] + t * t * varH[j] + 2 * a * t * c00;
   let hs = a * a * covHS[i] + t * t * covHS[j] + a * t * (c01 + c10);
   let ss = a * a * varS[i] + t * t * varS[j] + 2 * a * t * c11;
+  if (a * t > 0) {
+    const between = betweenKnots(curve, i);
+    hh += a * t * between.hh;
+    hs += a * t * between.hs;
+    ss += a * t * between.ss;
+  }
   if (curve.uCalibrationRelative > 0) {
     const u2 = curve.uCalibrationRelative * curve.uCalibrationRelative;
     const dh = enthalpyAt(curve, temperatureK, i) - enthalpyAt(curve, curve.referenceK);
@@ -68,61 +74,132 @@ export function crossCovariance(
   first: number,
   second: number,
 ): [number, number, number, number] {
+  addCrossCovariance(curve, first, second, four, 0);
+  return [four[0], four[1], four[2], four[3]];
+}
+
+const four = new Float64Array(4);
+
+/** The same into `out` from `at` on. Plain scalars: every substance asks for a dozen of them. */
+export function addCrossCovariance(
+  curve: RowsUncertainty,
+  first: number,
+  second: number,
+  out: Float64Array,
+  at: number,
+): void {
   if (first > second) {
-    const [hh, hs, sh, ss] = crossCovariance(curve, second, first);
-    return [hh, sh, hs, ss];
+    addCrossCovariance(curve, second, first, out, at);
+    const hs = out[at + 1];
+    out[at + 1] = out[at + 2];
+    out[at + 2] = hs;
+    return;
   }
   const { varH, covHS, varS, gain } = curve;
   const i = intervalOf(curve, first);
   const j = intervalOf(curve, second);
   const t1 = shareOf(curve, i, first);
   const t2 = shareOf(curve, j, second);
-  const through = (k: number, m: Four): Four => {
-    const [g0, g1, g2, g3] = [gain[4 * k], gain[4 * k + 1], gain[4 * k + 2], gain[4 * k + 3]];
-    return [g0 * m[0] + g1 * m[2], g0 * m[1] + g1 * m[3], g2 * m[0] + g3 * m[2], g2 * m[1] + g3 * m[3]];
-  };
-  const at = (k: number): Four => [varH[k], covHS[k], covHS[k], varS[k]];
-  // Cov(x_j, x(T2)), and Cov(x_j+1, x(T2)) for two temperatures in one interval.
-  const low = mixed(1 - t2, at(j), t2, through(j, at(j + 1)));
-  let sum: Four;
+  // Cov(x_j, x_j+1) = gain_j P_j+1; with it Cov(x_j, x(T2)), and Cov(x_j+1, x(T2)) for two temperatures in one interval.
+  const g = 4 * j;
+  const k = j + 1;
+  const s0 = gain[g] * varH[k] + gain[g + 1] * covHS[k];
+  const s1 = gain[g] * covHS[k] + gain[g + 1] * varS[k];
+  const s2 = gain[g + 2] * varH[k] + gain[g + 3] * covHS[k];
+  const s3 = gain[g + 2] * covHS[k] + gain[g + 3] * varS[k];
+  const b2 = 1 - t2;
+  let n0 = b2 * varH[j] + t2 * s0;
+  let n1 = b2 * covHS[j] + t2 * s1;
+  let n2 = b2 * covHS[j] + t2 * s2;
+  let n3 = b2 * varS[j] + t2 * s3;
+  const b1 = 1 - t1;
+  let hh: number;
+  let hs: number;
+  let sh: number;
+  let ss: number;
   if (i === j) {
-    const step = through(j, at(j + 1));
-    const high = mixed(1 - t2, [step[0], step[2], step[1], step[3]], t2, at(j + 1));
-    sum = mixed(1 - t1, low, t1, high);
+    hh = b1 * n0 + t1 * (b2 * s0 + t2 * varH[k]);
+    hs = b1 * n1 + t1 * (b2 * s2 + t2 * covHS[k]);
+    sh = b1 * n2 + t1 * (b2 * s1 + t2 * covHS[k]);
+    ss = b1 * n3 + t1 * (b2 * s3 + t2 * varS[k]);
+    if (t1 * b2 > 0) {
+      const between = betweenKnots(curve, i);
+      hh += t1 * b2 * between.hh;
+      hs += t1 * b2 * between.hs;
+      sh += t1 * b2 * between.hs;
+      ss += t1 * b2 * between.ss;
+    }
   } else {
-    let next = low;
-    for (let k = j - 1; k > i; k--) next = through(k, next);
-    sum = mixed(1 - t1, through(i, next), t1, next);
+    let m0 = n0;
+    let m1 = n1;
+    let m2 = n2;
+    let m3 = n3;
+    for (let at = j - 1; at >= i; at--) {
+      m0 = n0;
+      m1 = n1;
+      m2 = n2;
+      m3 = n3;
+      const q = 4 * at;
+      const g0 = gain[q];
+      const g1 = gain[q + 1];
+      const g2 = gain[q + 2];
+      const g3 = gain[q + 3];
+      n0 = g0 * m0 + g1 * m2;
+      n1 = g0 * m1 + g1 * m3;
+      n2 = g2 * m0 + g3 * m2;
+      n3 = g2 * m1 + g3 * m3;
+    }
+    hh = b1 * n0 + t1 * m0;
+    hs = b1 * n1 + t1 * m1;
+    sh = b1 * n2 + t1 * m2;
+    ss = b1 * n3 + t1 * m3;
   }
-  let [hh, hs, sh, ss] = sum;
   if (curve.uCalibrationRelative > 0) {
     const u2 = curve.uCalibrationRelative * curve.uCalibrationRelative;
     const h0 = enthalpyAt(curve, curve.referenceK);
-    const s0 = entropyAt(curve, curve.entropyReferenceK);
+    const z0 = entropyAt(curve, curve.entropyReferenceK);
     const h1 = enthalpyAt(curve, first) - h0;
-    const s1 = entropyAt(curve, first) - s0;
+    const z1 = entropyAt(curve, first) - z0;
     const h2 = enthalpyAt(curve, second) - h0;
-    const s2 = entropyAt(curve, second) - s0;
+    const z2 = entropyAt(curve, second) - z0;
     hh += u2 * h1 * h2;
-    hs += u2 * h1 * s2;
-    sh += u2 * s1 * h2;
-    ss += u2 * s1 * s2;
+    hs += u2 * h1 * z2;
+    sh += u2 * z1 * h2;
+    ss += u2 * z1 * z2;
   }
-  const [h1, s1] = continuationError(curve, first);
-  const [h2, s2] = continuationError(curve, second);
-  if (h1 * h2 > 0) {
+  const { measuredFromK: from, measuredToK: to } = curve;
+  if ((first > to && second > to) || (first < from && second < from)) {
+    const [h1, z1] = continuationError(curve, first);
+    const [h2, z2] = continuationError(curve, second);
     hh += h1 * h2;
-    hs += h1 * s2;
-    sh += s1 * h2;
-    ss += s1 * s2;
+    hs += h1 * z2;
+    sh += z1 * h2;
+    ss += z1 * z2;
   }
-  return [hh, hs, sh, ss];
+  out[at] = hh;
+  out[at + 1] = hs;
+  out[at + 2] = sh;
+  out[at + 3] = ss;
 }
 
-type Four = [number, number, number, number];
-
-function mixed(a: number, x: Four, b: number, y: Four): Four {
-  return [a * x[0] + b * y[0], a * x[1] + b * y[1], a * x[2] + b * y[2], a * x[3] + b * y[3]];
+/**
+ * What the way between two knots adds over the straight line from one to the other: the variance of the lower knot's state
+ * where the upper one's is known, P_i - G_i P_i+1 G_i', which is that of the step itself where neither is known much better.
+ */
+function betweenKnots(curve: RowsUncertainty, i: number): StateCovariance {
+  const { varH, covHS, varS, gain } = curve;
+  const g = 4 * i;
+  const j = i + 1;
+  const [g0, g1, g2, g3] = [gain[g], gain[g + 1], gain[g + 2], gain[g + 3]];
+  const c00 = g0 * varH[j] + g1 * covHS[j];
+  const c01 = g0 * covHS[j] + g1 * varS[j];
+  const c10 = g2 * varH[j] + g3 * covHS[j];
+  const c11 = g2 * covHS[j] + g3 * varS[j];
+  return {
+    hh: Math.max(0, varH[i] - (c00 * g0 + c01 * g1)),
+    hs: covHS[i] - (c00 * g2 + c01 * g3),
+    ss: Math.max(0, varS[i] - (c10 * g2 + c11 * g3)),
+  };
 }
 
 function shareOf(curve: RowsUncertainty, i: number, temperatureK: number): number {

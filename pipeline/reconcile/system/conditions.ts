@@ -2,10 +2,10 @@ import type { PhaseCurve } from '../../../schemas/curves.js';
 import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
 import { R_J_PER_MOL_K } from '../../core/constants.js';
 import { enthalpyAt, entropyAt, heatCapacityAt, intervalOf } from '../../core/physics/curve.js';
+import { datumKey } from '../../core/physics/datum-keys.js';
 import { ErrorSum } from '../../core/physics/error-sum.js';
 import { condensedTermUncertainty } from '../../core/physics/pressure-terms.js';
 import type { Joined, Pair, Saturated } from './joined.js';
-import { keyOf } from './stated-data.js';
 
 export type ConditionKind =
   | 'gap'
@@ -40,7 +40,7 @@ export function transitionConditions(joined: readonly Joined[]): Condition[] {
   joined.forEach((j, k) => {
     const { stated, index } = j.judged;
     const { at, atK, within } = j;
-    const [keyT, keyH, keyS] = [keyOf.temperature(index), keyOf.enthalpy(index), keyOf.entropy(index)];
+    const [keyT, keyH, keyS] = [datumKey.temperature(index), datumKey.enthalpy(index), datumKey.entropy(index)];
     const { enthalpy, entropy } = stated;
     const base = { joined: k, within };
     if (j.byConstruction) {
@@ -102,8 +102,8 @@ export function saturationConditions(saturated: readonly Saturated[]): Condition
     joined: -1,
     value: -pair.at.gapJPerMol,
     sum: difference(pair, 1, -pair.atK)
-      .addDatum(keyOf.saturationTemperature(pair.index), -pair.at.entropyJPerMolK, 0)
-      .addDatum(keyOf.saturationPressure(pair.index), (R_J_PER_MOL_K * pair.atK) / pair.to.formulaUnits, 0),
+      .addDatum(datumKey.saturationTemperature(pair.index), -pair.at.entropyJPerMolK, 0)
+      .addDatum(datumKey.saturationPressure(pair.index), (R_J_PER_MOL_K * pair.atK) / pair.to.formulaUnits, 0),
     variance: 0,
     gas: gasU(pair),
     within: false,
@@ -137,7 +137,7 @@ export function anchorConditions(
       curve.entropyAnchor !== index &&
       anchor.table.entropyZero === curve.family.entropyZero
     ) {
-      const sum = new ErrorSum().add(curve, t, 0, -1).addDatum(keyOf.anchorEntropy(index), 1, 0);
+      const sum = new ErrorSum().add(curve, t, 0, -1).addDatum(datumKey.anchorEntropy(index), 1, 0);
       add('anchor-entropy', entropy.value - entropyAt(curve, t), sum);
     }
     if (
@@ -146,18 +146,18 @@ export function anchorConditions(
       curve.enthalpyAnchor !== index &&
       anchor.table.enthalpyZero === curve.family.enthalpyZero
     ) {
-      const sum = new ErrorSum().add(curve, t, -1, 0).addDatum(keyOf.formationEnthalpy(index), 1, 0);
+      const sum = new ErrorSum().add(curve, t, -1, 0).addDatum(datumKey.formationEnthalpy(index), 1, 0);
       add('anchor-enthalpy', enthalpyOfFormation.value - enthalpyAt(curve, t), sum);
     }
     if (enthalpyFromZero !== null && curve.knotK[0] === 0) {
-      const sum = new ErrorSum().add(curve, t, -1, 0).add(curve, 0, 1, 0).addDatum(keyOf.fromZero(index), 1, 0);
+      const sum = new ErrorSum().add(curve, t, -1, 0).add(curve, 0, 1, 0).addDatum(datumKey.fromZero(index), 1, 0);
       add('from-zero', enthalpyFromZero.value - (enthalpyAt(curve, t) - enthalpyAt(curve, 0)), sum);
     }
     if (heatCapacity !== null) {
       const i = intervalOf(curve, t);
       if (curve.knotK[i] === t && curve.knotKind[i] === 0) {
         const u = Math.hypot(curve.uHeatCapacityJPerMolK[i], curve.uCalibrationRelative * heatCapacity.value);
-        const sum = new ErrorSum().addDatum(keyOf.heatCapacity(index), 1, 0);
+        const sum = new ErrorSum().addDatum(datumKey.heatCapacity(index), 1, 0);
         add('heat-capacity', heatCapacity.value - heatCapacityAt(curve, t, i), sum, u * u);
       }
     }

@@ -1,5 +1,6 @@
 import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
 import type { Policy } from '../../../schemas/policy.js';
+import { datumKey } from '../../core/physics/datum-keys.js';
 import type { Joined, Saturated } from './joined.js';
 
 export type DatumKind =
@@ -31,19 +32,6 @@ export interface StatedDatum {
   readonly place: string;
 }
 
-export const keyOf = {
-  temperature: (transition: number): string => `T of transition ${transition}`,
-  enthalpy: (transition: number): string => `dH of transition ${transition}`,
-  entropy: (transition: number): string => `dS of transition ${transition}`,
-  formationEnthalpy: (anchor: number): string => `H of anchor ${anchor}`,
-  anchorEntropy: (anchor: number): string => `S of anchor ${anchor}`,
-  formationGibbsEnergy: (anchor: number): string => `G of anchor ${anchor}`,
-  fromZero: (anchor: number): string => `H0 of anchor ${anchor}`,
-  heatCapacity: (anchor: number): string => `Cp of anchor ${anchor}`,
-  saturationTemperature: (row: number): string => `T of pressure ${row}`,
-  saturationPressure: (row: number): string => `p of pressure ${row}`,
-} as const;
-
 /**
  * Every stated number of a substance on one isobar apart from its tables' cells. Within one evaluated source only the rounding of a number
  * stands between it and the others; what several sources state has its own uncertainty.
@@ -69,9 +57,9 @@ export function statedData(
       if (datum === null) return;
       data.push({ key, kind, datum, u: u(datum), transition, phases, place: `${symbol} ${name}` });
     };
-    add('temperature', keyOf.temperature(transition), 'T', stated.temperature);
-    add('enthalpy', keyOf.enthalpy(transition), 'dH', stated.enthalpy);
-    add('entropy', keyOf.entropy(transition), 'dS', stated.entropy);
+    add('temperature', datumKey.temperature(transition), 'T', stated.temperature);
+    add('enthalpy', datumKey.enthalpy(transition), 'dH', stated.enthalpy);
+    add('entropy', datumKey.entropy(transition), 'dS', stated.entropy);
   });
   substance.anchors.forEach((anchor, index) => {
     if (anchor.table.isobarPa !== isobarPa) return;
@@ -81,11 +69,11 @@ export function statedData(
       const u = uOfAnchor(key, anchor, datum);
       data.push({ key, kind, datum, u, transition: -1, phases: [anchor.phase], place: `${symbol} ${name}` });
     };
-    add('formation-enthalpy', keyOf.formationEnthalpy(index), 'dfH', anchor.enthalpyOfFormation);
-    add('anchor-entropy', keyOf.anchorEntropy(index), 'S', anchor.entropy);
-    add('formation-gibbs-energy', keyOf.formationGibbsEnergy(index), 'dfG', anchor.gibbsEnergyOfFormation);
-    add('enthalpy-from-zero', keyOf.fromZero(index), 'H-H(0)', anchor.enthalpyFromZero);
-    add('anchor-heat-capacity', keyOf.heatCapacity(index), 'Cp', anchor.heatCapacity);
+    add('formation-enthalpy', datumKey.formationEnthalpy(index), 'dfH', anchor.enthalpyOfFormation);
+    add('anchor-entropy', datumKey.anchorEntropy(index), 'S', anchor.entropy);
+    add('formation-gibbs-energy', datumKey.formationGibbsEnergy(index), 'dfG', anchor.gibbsEnergyOfFormation);
+    add('enthalpy-from-zero', datumKey.fromZero(index), 'H-H(0)', anchor.enthalpyFromZero);
+    add('anchor-heat-capacity', datumKey.heatCapacity(index), 'Cp', anchor.heatCapacity);
   });
   const compared = new Set(saturated.map((one) => one.index));
   substance.vapourPressures.forEach(({ phase, temperature, pressure }, index) => {
@@ -93,7 +81,7 @@ export function statedData(
     const common = { transition: -1, phases: [phase, 'g'] };
     data.push({
       ...common,
-      key: keyOf.saturationTemperature(index),
+      key: datumKey.saturationTemperature(index),
       kind: 'saturation-temperature',
       datum: temperature,
       u: temperature.u,
@@ -101,7 +89,7 @@ export function statedData(
     });
     data.push({
       ...common,
-      key: keyOf.saturationPressure(index),
+      key: datumKey.saturationPressure(index),
       kind: 'saturation-pressure',
       datum: pressure,
       u: unsaid(pressure) ? policy.defaultUncertainty.pressureRelative : pressure.u / pressure.value,

@@ -2,9 +2,10 @@ import type { CheckedCase } from '../../../schemas/checked.js';
 import type { PhaseCurve } from '../../../schemas/curves.js';
 import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
 import type { Policy } from '../../../schemas/policy.js';
-import { crossCovariance } from '../../core/physics/curve-uncertainty.js';
+import { numbers } from '../../core/numeric/room.js';
 import { equilibrium } from '../../core/physics/equilibrium.js';
 import type { LevelOrigin, UncertainCurve } from '../../core/physics/error-sum.js';
+import { addCrossCovariance } from '../../core/physics/rows-covariance.js';
 import {
   anchorConditions,
   atTemperature,
@@ -119,37 +120,43 @@ function addRows(q: Float64Array, conditions: readonly Condition[]): void {
   const m = conditions.length;
   const curves: UncertainCurve[] = [];
   const atK: number[] = [];
-  const states = conditions.map((c) =>
-    c.sum.rows.map((row) => {
-      for (let s = 0; s < curves.length; s++) if (curves[s] === row.curve && atK[s] === row.atK) return s;
-      curves.push(row.curve);
-      atK.push(row.atK);
-      return curves.length - 1;
-    }),
-  );
-  const n = curves.length;
-  const known: ([number, number, number, number] | undefined)[] = new Array(n * n);
-  const between = (a: number, b: number): [number, number, number, number] => {
-    const at = a * n + b;
-    let found = known[at];
-    if (found === undefined) {
-      found = crossCovariance(curves[a], atK[a], atK[b]);
-      known[at] = found;
-    }
-    return found;
+  const stateOf = (curve: UncertainCurve, t: number): number => {
+    for (let s = 0; s < curves.length; s++) if (curves[s] === curve && atK[s] === t) return s;
+    curves.push(curve);
+    atK.push(t);
+    return curves.length - 1;
   };
+  const states = conditions.map((c) => c.sum.rows.map((row) => stateOf(row.curve, row.atK)));
+  const n = curves.length;
+  const known = numbers(4 * n * n);
+  for (let a = 0; a < n; a++) {
+    for (let b = 0; b <= a; b++) {
+      if (curves[a] !== curves[b]) continue;
+      const at = 4 * (a * n + b);
+      addCrossCovariance(curves[a], atK[a], atK[b], known, at);
+      const mirror = 4 * (b * n + a);
+      known[mirror] = known[at];
+      known[mirror + 3] = known[at + 3];
+      const hs = known[at + 1];
+      const sh = known[at + 2];
+      known[mirror + 1] = sh;
+      known[mirror + 2] = hs;
+    }
+  }
   for (let i = 0; i < m; i++) {
     const one = conditions[i];
+    const oneRows = one.sum.rows;
     for (let k = 0; k <= i; k++) {
       const other = conditions[k];
+      const otherRows = other.sum.rows;
       let v = one.gas * other.gas + (i === k ? one.variance : 0);
-      for (let a = 0; a < states[i].length; a++) {
-        const x = one.sum.rows[a];
-        for (let b = 0; b < states[k].length; b++) {
-          const z = other.sum.rows[b];
+      for (let a = 0; a < oneRows.length; a++) {
+        const x = oneRows[a];
+        for (let b = 0; b < otherRows.length; b++) {
+          const z = otherRows[b];
           if (x.curve !== z.curve) continue;
-          const [hh, hs, sh, ss] = between(states[i][a], states[k][b]);
-          v += x.h * z.h * hh + x.h * z.s * hs + x.s * z.h * sh + x.s * z.s * ss;
+          const at = 4 * (states[i][a] * n + states[k][b]);
+          v += x.h * (z.h * known[at] + z.s * known[at + 1]) + x.s * (z.h * known[at + 2] + z.s * known[at + 3]);
         }
       }
       q[i * m + k] += v;
@@ -165,38 +172,50 @@ function addData(
   stated: readonly StatedDatum[],
 ): { data: ConditionDatum[]; unseen: StatedDatum[] } {
   const m = conditions.length;
-  const directions = new Map<string | Float64Array, { u: number; direction: Float64Array }>();
-  conditions.forEach(({ sum }, i) => {
-    for (const { key, by, u } of sum.data) {
-      let found = directions.get(key);
-      if (found === undefined) {
-        found = { u, direction: new Float64Array(m) };
-        directions.set(key, found);
+  const keys: (string | Float64Array)[] = [];
+  const us: number[] = [];
+  const directions: Float64Array[] = [];
+  for (let i = 0; i < m; i++) {
+    for (const { key, by, u } of conditions[i].sum.data) {
+      let k = keys.indexOf(key);
+      if (k < 0) {
+        k = keys.length;
+        keys.push(key);
+        us.push(u);
+        directions.push(numbers(m));
       }
-      found.direction[i] += by;
+      directions[k][i] += by;
     }
-  });
+  }
   const data: ConditionDatum[] = [];
   const unseen: StatedDatum[] = [];
   for (const one of stated) {
-    const found = directions.get(one.key);
-    if (found === undefined || isNegligible(found.direction, conditions)) {
+    const k = keys.indexOf(one.key);
+    if (k < 0 || isNegligible(directions[k], conditions)) {
       unseen.push(one);
       continue;
     }
-    found.u = one.u;
-    const within = conditions.every((c, i) => c.within || found.direction[i] === 0);
-    data.push({ ...one, direction: found.direction, within });
+    us[k] = one.u;
+    data.push(seen(one, directions[k], conditions));
   }
-  for (const { u, direction } of directions.values()) {
-    if (u === 0) continue;
-    const u2 = u * u;
+  for (let k = 0; k < keys.length; k++) {
+    const u2 = us[k] * us[k];
+    const direction = directions[k];
+    if (u2 === 0) continue;
     for (let i = 0; i < m; i++) {
-      if (direction[i] === 0) continue;
-      for (let k = 0; k < m; k++) q[i * m + k] += direction[i] * u2 * direction[k];
+      const by = direction[i] * u2;
+      if (by === 0) continue;
+      for (let j = 0; j < m; j++) q[i * m + j] += by * direction[j];
     }
   }
   return { data, unseen };
+}
+
+function seen(one: StatedDatum, direction: Float64Array, conditions: readonly Condition[]): ConditionDatum {
+  const { key, kind, datum, u, transition, phases, place } = one;
+  let within = true;
+  for (let i = 0; i < conditions.length; i++) if (direction[i] !== 0 && !conditions[i].within) within = false;
+  return { key, kind, datum, u, transition, phases, place, direction, within };
 }
 
 /** What phases share cancels, but for the rounding of the sum. */
