@@ -1,4 +1,5 @@
 import { FreeData, type Whitened, whitened } from '../core/physics/adjustment.js';
+import { orderedByExplanation } from './order-in-group.js';
 import { type ConditionDatum, type ConditionSystem, resolvedAt, restsOn } from './system/system.js';
 import { type WholeSlip, wholeSlips } from './whole/whole-slips.js';
 
@@ -29,11 +30,13 @@ const ONE_GROUP = 9;
 /**
  * Sets one suspect free at a time, the rest tested again, until the conditions close at `threshold` or nothing explains
  * them. A slip that touches many numbers at once is one suspect beside the single ones: it has nothing left to choose.
+ * `scoreOf` is the log prior of the usual slip that leads to a suspect's proposed value, null where there is none.
  */
 export function suspectGroups(
   system: ConditionSystem,
   threshold: number,
   whole: Whitened = whitened(system.y, system.q, system.m),
+  scoreOf: (one: RankedDatum) => number | null = () => null,
 ): SuspectGroup[] {
   const groups: SuspectGroup[] = [];
   const free = new FreeData(whole);
@@ -57,7 +60,7 @@ export function suspectGroups(
     const best = ranked[0];
     const near = (r: RankedDatum): boolean =>
       best.w * best.w - r.w * r.w < ONE_GROUP + ROUNDING * best.w * best.w && Math.abs(r.w) > threshold / 2;
-    const members = withoutLesser(ranked.filter(near));
+    const members = ordered(ranked.filter(near), scoreOf);
     const [first] = members;
     groups.push({ members, phases: bearing(system, first.of), before, after: before - best.w * best.w });
     if (first.whole !== null) {
@@ -132,14 +135,18 @@ function rankWhole(free: FreeData, y: Float64Array, before: number, slip: WholeS
 }
 
 /**
- * The best slip of many numbers stands before the single numbers that explain no more, since it leaves nothing open, unless
- * one of them alone comes to the same; the other slips of many numbers are left out.
+ * The most probable first: a usual slip that leads to what is needed counts, for one number as for many. Of the slips of many
+ * numbers the best alone is kept.
  */
-function withoutLesser(members: readonly RankedDatum[]): RankedDatum[] {
+function ordered(members: readonly RankedDatum[], scoreOf: (one: RankedDatum) => number | null): RankedDatum[] {
   const best = members.find((one) => one.whole !== null);
-  if (best === undefined) return [...members];
-  const single = members.filter((one) => one.whole === null);
-  return best.whole?.alike === true && single.length > 0 ? [single[0], best, ...single.slice(1)] : [best, ...single];
+  const kept = members.filter((one) => one.whole === null || one === best);
+  if (kept.length < 2) return kept;
+  const weighed = kept.map((one) => ({
+    wSquared: one.w * one.w,
+    score: one.whole === null ? scoreOf(one) : one.whole.open ? null : Math.log(one.whole.weight),
+  }));
+  return orderedByExplanation(weighed).map((place) => kept[place]);
 }
 
 function moved(y: Float64Array, change: Float64Array): Float64Array {

@@ -6,9 +6,9 @@ import { testCount } from '../core/physics/adjustment.js';
 import { acceptedOf } from './acceptances.js';
 import { type Adjusted, adjusted, adjustmentFindings, adjustmentOutcomes } from './adjustment-closes.js';
 import { withCauses } from './causes.js';
-import { explained, withExplanations } from './explained.js';
+import { explained, explanationOf, withExplanations } from './explained.js';
 import { oneOutcomeAPlace } from './one-outcome.js';
-import { type SuspectGroup, suspectGroups } from './rank-data.js';
+import { type RankedDatum, type SuspectGroup, suspectGroups } from './rank-data.js';
 import { suspectsOf } from './suspects.js';
 import { systemOf } from './system/system.js';
 
@@ -43,10 +43,13 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
   const found: Finding[] = [...checked.findings];
   const groups: SuspectGroup[] = [];
   const wanted = checked.findings.some((f) => TRANSITION_RULES.has(f.rule) && f.severity !== 'note');
+  const scoreOf = ({ of, proposed, uProposed }: RankedDatum): number | null =>
+    explanationOf(checked.assembled.examined.harmonised, { address: of.datum.address, proposed, uProposed }, policy)
+      ?.score ?? null;
   for (const one of solved) {
     outcomes.push(...adjustmentOutcomes(one));
     if (!wanted && !one.open) continue;
-    const own = suspectGroups(one.system, one.critical.doubt, one.whitened);
+    const own = suspectGroups(one.system, one.critical.doubt, one.whitened, scoreOf);
     groups.push(...own);
     found.push(...adjustmentFindings(one, own, policy));
   }

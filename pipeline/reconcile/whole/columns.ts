@@ -13,7 +13,7 @@ export function columnsOfOtherUnits(system: ConditionSystem): WholeSlip[] {
   for (const data of byColumn(system.data.filter((d) => SCALED.has(d.kind)))) {
     const [first] = data;
     const perKelvin = PER_KELVIN.has(first.kind);
-    for (const { code, ratio } of unitRatios(system.substance.substance.molarMassGPerMol, perKelvin)) {
+    for (const { code, ratio, weight } of unitRatios(system.substance.substance.molarMassGPerMol, perKelvin)) {
       const change = new Float64Array(system.m);
       for (const d of data) addTo(change, d.direction, (ratio - 1) * d.datum.value);
       slips.push({
@@ -28,7 +28,7 @@ export function columnsOfOtherUnits(system: ConditionSystem): WholeSlip[] {
         ),
         change,
         open: false,
-        alike: false,
+        weight,
       });
     }
   }

@@ -25,7 +25,7 @@ export function exchangedPairs(system: ConditionSystem): WholeSlip[] {
       correctedPrinted: stated.to,
       change: reversed,
       open: false,
-      alike: sizes.length === 1,
+      weight: 0.04,
     });
     if (dH === undefined || dS === undefined) continue;
     const meantH = numberOf(dS) * dH.datum.factor;
@@ -42,7 +42,7 @@ export function exchangedPairs(system: ConditionSystem): WholeSlip[] {
       correctedPrinted: printedLike(dS.datum.printed, numberOf(dS)),
       change: swapped,
       open: false,
-      alike: false,
+      weight: 0.04,
     });
   }
   return slips;

@@ -29,7 +29,7 @@ export function formationScales(system: ConditionSystem): WholeSlip[] {
       correctedPrinted: printedLike(first.datum.printed, (first.datum.value - first.datum.offset) / first.datum.factor),
       change: direction,
       open: true,
-      alike: false,
+      weight: 0.02,
     });
   }
   return slips;

@@ -94,7 +94,7 @@ function slipOf(
     correctedPrinted: Number.isFinite(number) && value !== 0 ? printedLike(printed, (corrected * number) / value) : '',
     change,
     open: false,
-    alike: false,
+    weight: 0.04,
   };
 }
 

@@ -4,20 +4,24 @@ import { INTERNATIONAL_TABLE_CALORIE, R_J_PER_MOL_K, THERMOCHEMICAL_CALORIE } fr
 export interface UnitRatio {
   readonly code: string;
   readonly ratio: number;
+  /** How usual it is; judgement. */
+  readonly weight: number;
 }
 
 /** @param perKelvin whether the column may be in units of R */
 export function unitRatios(molarMassGPerMol: number, perKelvin: boolean): UnitRatio[] {
   const ratios: UnitRatio[] = [];
-  for (const { value } of [THERMOCHEMICAL_CALORIE, INTERNATIONAL_TABLE_CALORIE]) {
-    ratios.push({ code: 'calorie-read-as-joule', ratio: value });
-    ratios.push({ code: 'joule-read-as-calorie', ratio: 1 / value });
-  }
-  ratios.push({ code: 'kilo-dropped', ratio: 1000 }, { code: 'kilo-added', ratio: 1e-3 });
+  const add = (code: string, ratio: number, weight: number): number => ratios.push({ code, ratio, weight });
+  add('calorie-read-as-joule', THERMOCHEMICAL_CALORIE.value, 0.05);
+  add('joule-read-as-calorie', 1 / THERMOCHEMICAL_CALORIE.value, 0.03);
+  add('calorie-read-as-joule', INTERNATIONAL_TABLE_CALORIE.value, 0.008);
+  add('joule-read-as-calorie', 1 / INTERNATIONAL_TABLE_CALORIE.value, 0.005);
+  add('kilo-dropped', 1000, 0.04);
+  add('kilo-added', 1e-3, 0.04);
   if (molarMassGPerMol > 0) {
-    ratios.push({ code: 'per-gram-read-as-per-mole', ratio: molarMassGPerMol });
-    ratios.push({ code: 'per-mole-read-as-per-gram', ratio: 1 / molarMassGPerMol });
+    add('per-gram-read-as-per-mole', molarMassGPerMol, 0.02);
+    add('per-mole-read-as-per-gram', 1 / molarMassGPerMol, 0.02);
   }
-  if (perKelvin) ratios.push({ code: 'in-units-of-r', ratio: R_J_PER_MOL_K });
+  if (perKelvin) add('in-units-of-r', R_J_PER_MOL_K, 0.02);
   return ratios;
 }

@@ -20,8 +20,8 @@ export interface WholeSlip {
   /** What undoing the slip adds to the misclosures; or, where its size is open, the direction that it moves them in. */
   readonly change: Float64Array;
   readonly open: boolean;
-  /** The same is reached by one number alone: that one is looked at first. */
-  readonly alike: boolean;
+  /** How usual it is, on the scale of the slips of single cells; judgement. */
+  readonly weight: number;
 }
 
 export function wholeSlips(system: ConditionSystem): readonly WholeSlip[] {
