@@ -183,23 +183,29 @@ export function addCrossCovariance(
 }
 
 /**
- * What the way between two knots adds over the straight line from one to the other: the variance of the lower knot's state
- * where the upper one's is known, P_i - G_i P_i+1 G_i', which is that of the step itself where neither is known much better.
+ * What the way between two knots adds over the straight line from one to the other, t (1 - t) of it at the share t of the
+ * way: with it u runs straight from the one to the other, of H, of S and of H - TS, where errors grow on the way; nothing
+ * where both knots are as uncertain, since what two rows' own rounding leaves open is no error of the way between them.
  */
-function betweenKnots(curve: RowsUncertainty, i: number): StateCovariance {
-  const { varH, covHS, varS, gain } = curve;
-  const g = 4 * i;
+function betweenKnots({ knotK, varH, covHS, varS, gain }: RowsUncertainty, i: number): StateCovariance {
   const j = i + 1;
-  const [g0, g1, g2, g3] = [gain[g], gain[g + 1], gain[g + 2], gain[g + 3]];
-  const c00 = g0 * varH[j] + g1 * covHS[j];
-  const c01 = g0 * covHS[j] + g1 * varS[j];
-  const c10 = g2 * varH[j] + g3 * covHS[j];
-  const c11 = g2 * covHS[j] + g3 * varS[j];
-  return {
-    hh: Math.max(0, varH[i] - (c00 * g0 + c01 * g1)),
-    hs: covHS[i] - (c00 * g2 + c01 * g3),
-    ss: Math.max(0, varS[i] - (c10 * g2 + c11 * g3)),
-  };
+  const g = 4 * i;
+  const t = (knotK[i] + knotK[j]) / 2;
+  const c00 = gain[g] * varH[j] + gain[g + 1] * covHS[j];
+  const c01and10 = gain[g] * covHS[j] + gain[g + 1] * varS[j] + gain[g + 2] * varH[j] + gain[g + 3] * covHS[j];
+  const c11 = gain[g + 2] * covHS[j] + gain[g + 3] * varS[j];
+  const gibbsI = Math.max(0, varH[i] - 2 * t * covHS[i] + t * t * varS[i]);
+  const gibbsJ = Math.max(0, varH[j] - 2 * t * covHS[j] + t * t * varS[j]);
+  const hh = lacking(varH[i], varH[j], c00);
+  const ss = lacking(varS[i], varS[j], c11);
+  const gg = lacking(gibbsI, gibbsJ, c00 - t * c01and10 + t * t * c11);
+  const most = Math.sqrt(hh * ss);
+  return { hh, hs: Math.min(most, Math.max(-most, (hh + t * t * ss - gg) / (2 * t))), ss };
+}
+
+/** Of two variances and their covariance: 2 sqrt(a b) in place of twice the covariance, and no more than they differ by. */
+function lacking(a: number, b: number, covariance: number): number {
+  return Math.max(0, Math.min(Math.abs(b - a), 2 * (Math.sqrt(a * b) - covariance)));
 }
 
 function shareOf(curve: RowsUncertainty, i: number, temperatureK: number): number {
