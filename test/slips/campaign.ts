@@ -12,6 +12,8 @@ import { Findings, type SlipScore, scoreSlip } from './slip-score.js';
 
 export interface Scored {
   readonly seed: number;
+  /** Name of the clean library. */
+  readonly library: string;
   readonly design: string;
   readonly slip: Slip;
   readonly testable: boolean;
@@ -27,6 +29,7 @@ export interface Campaign {
 
 /** A library with what the run on it says. */
 export interface CleanLibrary {
+  readonly name: string;
   readonly library: SlipLibrary;
   readonly findings: Findings;
   readonly detectable: Detectable;
@@ -35,13 +38,14 @@ export interface CleanLibrary {
 }
 
 export async function cleanRun(
+  name: string,
   sourcesDir: string,
   run: (sourcesDir: string) => Promise<Seen>,
   designOf: (substance: string) => string,
 ): Promise<CleanLibrary> {
   const seen = await run(sourcesDir);
   const library = readLibrary(sourcesDir);
-  return { library, findings: new Findings(seen), detectable: new Detectable(seen), designOf, run };
+  return { name, library, findings: new Findings(seen), detectable: new Detectable(seen, library), designOf, run };
 }
 
 /** Every so many substances one is left clean: it must stay so. */
@@ -74,7 +78,13 @@ export async function spoilAll(
   const spoilt = new Findings(seen);
   const scored = planted.flatMap((slips) =>
     slips.map((slip) => ({
-      ...{ seed, slip, design: clean.designOf(slip.substance), testable: clean.detectable.isTestable(slip) },
+      ...{
+        seed,
+        library: clean.name,
+        slip,
+        design: clean.designOf(slip.substance),
+        testable: clean.detectable.isTestable(slip),
+      },
       score: scoreSlip(slip, clean.findings, spoilt, slips.length === 1),
     })),
   );

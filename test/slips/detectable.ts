@@ -1,6 +1,7 @@
 /** The smallest error that the run on the clean library says it would reveal, cell by cell. */
 
 import type { Seen, SeenOutcome } from './seen.js';
+import type { SlipLibrary } from './slip-library.js';
 import type { PlantedCell, Slip } from './slip-maker.js';
 import type { SourceCell } from './source-cells.js';
 import { R_J_PER_MOL_K, readUnit } from './units.js';
@@ -42,8 +43,13 @@ const ADJUSTMENT = 'adjustment-closes';
 
 export class Detectable {
   readonly #bySubstance = new Map<string, SeenOutcome[]>();
+  readonly #boilingK = new Map<string, number>();
 
-  constructor(clean: Seen) {
+  constructor(clean: Seen, library: Pick<SlipLibrary, 'substances'> = { substances: [] }) {
+    for (const { id, cells } of library.substances) {
+      const boiling = cells.find((cell) => cell.quantity === 'transition-temperature' && cell.place.endsWith('>g'));
+      if (boiling !== undefined) this.#boilingK.set(id, boiling.value);
+    }
     for (const row of clean.coverage) {
       const own = this.#bySubstance.get(row.substance);
       if (own === undefined) this.#bySubstance.set(row.substance, [row]);
@@ -106,9 +112,14 @@ export class Detectable {
     if (slip.meant === 'old temperature scale') return slip.cells.some((cell) => this.#scaleShows(cell, rows));
     if (slip.kind.startsWith('vapour pressures')) return slip.cells.some((cell) => this.#shows(cell, slip));
     if (slip.meant === '1 atm for 1 bar') {
-      const anchor = rows.find(({ rule, place }) => rule === ADJUSTMENT && place === 'S g');
       const step = Math.abs(slip.cells[0]!.changeSi!);
-      return anchor === undefined ? tied : step >= TIMES_DETECTABLE * printed(anchor);
+      const anchor = rows.find(({ rule, place }) => rule === ADJUSTMENT && place === 'S g');
+      const table = anchor !== undefined && step >= TIMES_DETECTABLE * printed(anchor);
+      // Where the anchor is at 1 atm too, the gap at the boiling point alone tells.
+      const gap = rows.find(({ rule, place }) => rule === 'gibbs-continuous' && base(place).endsWith('>g'));
+      const boilingK = this.#boilingK.get(slip.substance) ?? 0;
+      const boiling = gap !== undefined && step * boilingK >= TIMES_DETECTABLE * printed(gap);
+      return slip.kind.includes('anchor') ? boiling : table || boiling;
     }
     return tables || tied;
   }

@@ -34,22 +34,32 @@ export function rates(one: readonly Scored[], two: readonly Scored[], clean: Cle
   const both = pairs(two);
   return [
     share('S, H, -[G-H]/T cells of five units or more: caught', table!, (s) => s.caught, 0.99),
-    share('… first', table!, (s) => s.first, 0.98),
+    share('S, H, -[G-H]/T cells: first', table!, (s) => s.first, 0.98),
     share('interior Cp cells of 1 % or more: caught', heat!, (s) => s.caught, 0.97),
-    share('… first', heat!, (s) => s.first, 0.95),
+    share('interior Cp cells: first', heat!, (s) => s.first, 0.95),
     share('anchors and transitions: caught', data!, (s) => s.caught, 0.97),
-    share('… in the first group', data!, (s) => s.firstGroup, 0.98),
-    share('… first, where alone in its group, or of unit, sign or exchange', single, (s) => s.first, 0.97),
+    share('anchors and transitions: in the first group', data!, (s) => s.firstGroup, 0.98),
+    share(
+      'anchors and transitions: first, where alone in its group, or of unit, sign or exchange',
+      single,
+      (s) => s.first,
+      0.97,
+    ),
     {
-      ...{ what: '… median group size', reached: median(groups), asked: 2, of: groups.length },
+      ...{ what: 'anchors and transitions: median group size', reached: median(groups), asked: 2, of: groups.length },
       holds: median(groups) <= 2,
     },
     share('right explanation first, at printed-digit u', digits, (s) => s.explained === true, 0.9),
     share('right explanation first, at u a thousand times larger', wide, (s) => s.explained === true, 0.75),
     share('many cells at once: caught', many!, (s) => s.caught, 0.97),
-    share('… first', many!, (s) => s.first, 0.97),
+    share('many cells at once: first', many!, (s) => s.first, 0.97),
     share('two slips in one substance: each caught', two, (s) => s.caught, 0.97),
-    ratio('… both named first', both.filter(([a, b]) => a!.score.first && b!.score.first).length, both.length, 0.95),
+    ratio(
+      'two slips in one substance: both named first',
+      both.filter(([a, b]) => a!.score.first && b!.score.first).length,
+      both.length,
+      0.95,
+    ),
     {
       ...ratio('clean substances with a fault or a doubt', clean.accused.length, clean.substances, 0.02),
       holds: clean.accused.length <= 0.02 * clean.substances,
@@ -110,14 +120,14 @@ function counts(list: readonly Scored[]): string {
 
 /** A line for each testable slip that was not caught, not named first, or not explained. */
 export function misses(list: readonly Scored[]): string[] {
-  return list.flatMap(({ seed, design, slip, testable, score }) => {
+  return list.flatMap(({ seed, library, slip, testable, score }) => {
     if (!testable || (score.caught && score.first && score.explained !== false)) return [];
     const why = !score.caught ? 'MISSED' : !score.firstGroup ? 'OTHER' : !score.first ? 'GROUP' : 'UNEXPLAINED';
     const [cell] = slip.cells;
     const where = `${cell!.file}:${cell!.line} ${cell!.column} ${cell!.clean} → ${cell!.printed}`;
     const size = slip.cells.length > 1 ? ` and ${slip.cells.length - 1} more` : '';
     return [
-      `${why} ${slip.family}/${slip.kind} [seed ${seed}, ${design}, ${slip.substance} ${slip.place}] ${where}${size}; said by ${score.rootRule}: ${score.said}, ${score.roots} roots, group ${score.groupSize}`,
+      `${why} ${slip.family}/${slip.kind} [seed ${seed} in ${library}, ${slip.substance} ${slip.place}] ${where}${size}; said by ${score.rootRule}: ${score.said}, ${score.roots} roots, group ${score.groupSize}`,
     ];
   });
 }
@@ -126,7 +136,7 @@ export function misses(list: readonly Scored[]): string[] {
 function pairs(two: readonly Scored[]): Scored[][] {
   const gathered = new Map<string, Scored[]>();
   for (const scored of two) {
-    const key = `${scored.seed} ${scored.design} ${scored.slip.substance}`;
+    const key = `${scored.seed} ${scored.library} ${scored.slip.substance}`;
     gathered.set(key, [...(gathered.get(key) ?? []), scored]);
   }
   return [...gathered.values()].filter((own) => own.length === 2);

@@ -85,11 +85,14 @@ describe('the score of a slip', () => {
     expect(score).toMatchObject({ first: true, rootRule: 'entropy-follows-heat-capacity', roots: 2 });
   });
 
-  it('holds one of two slips against every root finding', () => {
+  it('holds one of two slips against every root finding, and every group of it', () => {
     const findings = [finding('a'), finding('b')];
     const two = seen(findings, [suspect('a', 1, 1, other), suspect('b', 1, 1)]);
     expect(scoreSlip(slip, nothing, two, true).first).toBe(false);
     expect(scoreSlip(slip, nothing, two, false).first).toBe(true);
+    const table = seen([finding('a')], [suspect('a', 1, 1, other), suspect('a', 2, 2)]);
+    expect(scoreSlip(slip, nothing, table, true).first).toBe(false);
+    expect(scoreSlip(slip, nothing, table, false).first).toBe(true);
   });
 
   it('takes any cell of a column, and the row of a word', () => {

@@ -51,7 +51,7 @@ export class Findings {
 
 /**
  * The roots are the new findings that follow from no other, faults before doubts. A slip planted alone is held against the
- * first root that has suspects; of several slips in one substance, each against all roots.
+ * first root that has suspects; of several slips in one substance, each against every group of all roots.
  */
 export function scoreSlip(slip: Slip, clean: Findings, spoilt: Findings, alone = true): SlipScore {
   const fresh = spoilt.newSince(clean, slip.substance);
@@ -59,7 +59,18 @@ export function scoreSlip(slip: Slip, clean: Findings, spoilt: Findings, alone =
   const roots = ['fault', 'doubt'].flatMap((severity) => causes.filter((finding) => finding.severity === severity));
   const suspected = roots.filter((root) => spoilt.suspectsOf(root).length > 0);
   const asked = alone ? suspected.slice(0, 1) : suspected;
-  const heard = asked.map((root) => hear(slip, spoilt.suspectsOf(root), root));
+  const heard = asked.flatMap((root) => {
+    const suspects = spoilt.suspectsOf(root);
+    // Each group is an error of its own: the first one is what a slip alone has to be.
+    const groups = [...new Set(suspects.map(({ group }) => group))].slice(0, alone ? 1 : undefined);
+    return groups.map((group) =>
+      hear(
+        slip,
+        suspects.filter((suspect) => suspect.group === group),
+        root,
+      ),
+    );
+  });
   const best = heard.find(({ first }) => first) ?? heard.find(({ firstGroup }) => firstGroup) ?? heard[0];
   const silent: Heard = {
     ...{ first: false, firstGroup: false, groupSize: 0, cells: 0 },
@@ -76,9 +87,8 @@ export function scoreSlip(slip: Slip, clean: Findings, spoilt: Findings, alone =
 
 type Heard = Omit<SlipScore, 'caught' | 'roots'>;
 
-function hear(slip: Slip, suspects: readonly SeenSuspect[], root: SeenFinding): Heard {
-  const [leading] = suspects as [SeenSuspect];
-  const group = suspects.filter((suspect) => suspect.group === leading.group);
+function hear(slip: Slip, group: readonly SeenSuspect[], root: SeenFinding): Heard {
+  const [leading] = group as [SeenSuspect];
   const first = isPlanted(leading, slip);
   const codes = slip.meant === null ? null : expectedCodes(slip.meant);
   return {

@@ -37,7 +37,7 @@ export async function studyPublished(
 ): Promise<Study> {
   const studies: Study[] = [];
   for (const [design, folder] of Object.entries(folders)) {
-    const clean = await cleanRun(folder, run, () => design);
+    const clean = await cleanRun(folder, folder, run, () => design);
     studies.push(await study([clean], options));
   }
   return joined(studies);
@@ -55,14 +55,15 @@ export async function studySynthetic(
     const libraries: CleanLibrary[] = [];
     for (let round = 0; round < Math.max(options.rounds, options.pairRounds); round++) {
       const folder = join(scratch, String(round));
+      const seed = options.firstSeed + round;
       const written = writeSyntheticLibrary(folder, {
-        seed: options.firstSeed + round,
+        seed,
         substances,
         vapourPressures: true,
         ...(designs === undefined ? {} : { designs }),
       });
       const designOf = new Map(written.map(({ id, design }) => [id, design]));
-      libraries.push(await cleanRun(folder, run, (id) => designOf.get(id)!));
+      libraries.push(await cleanRun(`synthetic ${seed}`, folder, run, (id) => designOf.get(id)!));
     }
     return await study(libraries, options);
   } finally {
