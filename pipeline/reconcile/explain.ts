@@ -58,7 +58,7 @@ export function explain(
       const distance = Math.abs(corrected - proposed);
       const spread = Math.hypot(uProposed, rounding(candidate.step));
       const allowed = Math.max(2 * spread, loose);
-      if (!(distance <= allowed)) continue;
+      if (!(distance <= allowed) || outside(context, corrected, spread)) continue;
       const least = Math.min(Math.max(2 * spread, material), 0.1 * Math.abs(cell.observed));
       const nothingLeft = Math.abs(corrected) <= least && corrected !== 0;
       const weight = slip.weight * candidate.share * (nothingLeft ? NOTHING_LEFT_SHARE : 1);
@@ -73,6 +73,11 @@ export function explain(
     }
   }
   return [...best.values()].sort((a, b) => b.score - a.score);
+}
+
+/** Whether a value lies where none can, by more than three of its standard uncertainties. */
+export function outside({ possible }: SuspectContext, value: number, u: number): boolean {
+  return possible !== undefined && (value + 3 * u < possible[0] || value - 3 * u > possible[1]);
 }
 
 /** Share of proposals that are wrong by more than they say, and how far: this share of the correction. */

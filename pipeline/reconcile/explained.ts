@@ -2,7 +2,7 @@ import type { CheckedCase } from '../../schemas/checked.js';
 import type { Finding, Suspect } from '../../schemas/finding.js';
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
-import { type Explanation, explain, type SuspectContext } from './explain.js';
+import { type Explanation, explain, outside, type SuspectContext } from './explain.js';
 import { suspectContext } from './suspect-context.js';
 
 /** Suspects with the usual slip that leads to their proposed value, where one does. */
@@ -36,6 +36,22 @@ export function withExplanations(findings: readonly Finding[], suspects: readonl
     return { ...finding, detail: { ...finding.detail, explanation: first.explanation } };
   });
 }
+
+/**
+ * What `orderedByExplanation` weighs a suspect by: its best explanation's score, null where it has none, and far below
+ * both where the proposed value cannot be (a melting point above the boiling point, a negative entropy).
+ */
+export function scoreInGroup(
+  substance: HarmonisedCase,
+  suspect: Pick<Suspect, 'address' | 'proposed' | 'uProposed'>,
+  policy: Policy,
+): number | null {
+  const found = suspectContext(substance, suspect);
+  if (found !== null && outside(found, suspect.proposed, suspect.uProposed)) return IMPOSSIBLE_SCORE;
+  return explanationOf(substance, suspect, policy)?.score ?? null;
+}
+
+const IMPOSSIBLE_SCORE = -1e6;
 
 /** What a user of the value would notice. */
 function materialOf(context: SuspectContext, proposed: number, policy: Policy): number {

@@ -6,6 +6,7 @@ import type { TableMeaning } from '../../schemas/table-meaning.js';
 import { printedNumber } from '../core/numeric/printed-like.js';
 import { conversionTo } from '../core/units/ucum.js';
 import { knownSteps } from './known-steps.js';
+import { possibleRange } from './possible-range.js';
 import type { PrintedCell, SuspectContext } from './slips/slip.js';
 import { statedCells } from './stated-cells.js';
 
@@ -36,6 +37,7 @@ function tableContext(substance: HarmonisedCase, { address }: Addressed): Suspec
       partner: null,
       gas: series.phase.startsWith('g'),
       temperatureScale: series.table.temperatureScale,
+      possible: possibleRange(q.is, series.table, -1, substance),
       ...knownSteps(substance, { phase: series.phase, source: series.table.source }),
     };
   }
@@ -98,6 +100,7 @@ function datumContext(substance: HarmonisedCase, { address }: Addressed): Suspec
     partner: partner === null ? null : cellOf(partner),
     gas: phases[phases.length - 1].startsWith('g'),
     temperatureScale: table.temperatureScale,
+    possible: possibleRange(quantity, table, transition, substance),
     ...knownSteps(substance, { phase: phases[phases.length - 1], source: table.source, transition }),
   };
 }

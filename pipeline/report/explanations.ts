@@ -6,7 +6,7 @@ export const EXPLANATIONS: Readonly<Record<string, string>> = {
   'copied-from-row-above': 'copied from the row above',
   'sign-lost': 'sign lost',
   'calorie-read-as-joule': 'calories where joules are declared',
-  'joule-read-as-calorie': 'joules where calories are declared',
+  'joule-read-as-calorie': 'joules where calories are declared, or converted to joules twice',
   'kilo-dropped': 'a thousand times too small: kilo dropped',
   'kilo-added': 'a thousand times too large: kilo added',
   'per-gram-read-as-per-mole': 'per gram where per mole is declared',

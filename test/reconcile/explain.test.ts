@@ -314,6 +314,14 @@ describe('slips that explain equally much', () => {
     expect(found[0]!.slip).toBe('calorie-read-as-joule');
   });
 
+  it('count the declared unit: joules in a column of calories before joules converted twice', () => {
+    const observed = (4.184 * 69.95).toFixed(2);
+    const declared = explain(context('69.95', Number(observed), cal), 69.95, 0.02, 0.05)[0]!;
+    const twice = explain(context(observed, Number(observed)), 69.95, 0.02, 0.05)[0]!;
+    expect([declared.slip, twice.slip]).toEqual(['joule-read-as-calorie', 'joule-read-as-calorie']);
+    expect(declared.score).toBeGreaterThan(twice.score + 1.5);
+  });
+
   it('give way to a sharper meeting: one wrong digit before a calorie where the proposal says so', () => {
     // A calorie would give 69.956; 66.72 is met a hundred times more closely.
     expect(explain(context('16.72', 16.72), 66.721, 0.01, 4)[0]).toMatchObject({

@@ -1,8 +1,9 @@
 /** Calorie and joule exchanged, the thermochemical calorie or that of the International Table. */
 import { INTERNATIONAL_TABLE_CALORIE, THERMOCHEMICAL_CALORIE } from '../../core/constants.js';
+import { isInCalories } from './column-unit.js';
 import { isEnergetic } from './quantity-kinds.js';
 import { times } from './ratio.js';
-import type { Slip } from './slip.js';
+import type { Candidate, Slip, SuspectCell } from './slip.js';
 
 /** [J per calorie, share]: tables of pure substances are mostly in thermochemical calories. */
 const CALORIES = [
@@ -10,17 +11,24 @@ const CALORIES = [
   [INTERNATIONAL_TABLE_CALORIE.value, 0.15],
 ] as const;
 
+/** Where the column is not declared so, the number was converted twice; that is as much more seldom. */
+const TWICE = 0.15;
+
 /** The cell holds calories where joules are declared. */
 export const calorieReadAsJoule: Slip = {
   code: 'calorie-read-as-joule',
   weight: 0.05,
-  propose: (cell) => (isEnergetic(cell.quantity) ? CALORIES.map(([joules, share]) => times(cell, joules, share)) : []),
+  propose: (cell) => proposed(cell, isInCalories(cell) ? TWICE : 1, (joules) => joules),
 };
 
-/** The cell holds joules where calories are declared, or was converted twice. */
+/** The cell holds joules where calories are declared, or calories became joules twice. */
 export const jouleReadAsCalorie: Slip = {
   code: 'joule-read-as-calorie',
-  weight: 0.03,
-  propose: (cell) =>
-    isEnergetic(cell.quantity) ? CALORIES.map(([joules, share]) => times(cell, 1 / joules, share)) : [],
+  weight: 0.05,
+  propose: (cell) => proposed(cell, isInCalories(cell) ? 1 : TWICE, (joules) => 1 / joules),
 };
+
+function proposed(cell: SuspectCell, part: number, ratio: (joules: number) => number): Candidate[] {
+  if (!isEnergetic(cell.quantity)) return [];
+  return CALORIES.map(([joules, share]) => times(cell, ratio(joules), part * share));
+}

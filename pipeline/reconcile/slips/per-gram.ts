@@ -1,4 +1,5 @@
 /** Per gram and per mole exchanged. */
+import { isPerMass } from './column-unit.js';
 import { isMolar } from './quantity-kinds.js';
 import { times } from './ratio.js';
 import type { Candidate, Slip, SuspectCell } from './slip.js';
@@ -7,14 +8,14 @@ import type { Candidate, Slip, SuspectCell } from './slip.js';
 export const perGramReadAsPerMole: Slip = {
   code: 'per-gram-read-as-per-mole',
   weight: 0.02,
-  propose: (cell) => scaled(cell, cell.molarMassGPerMol),
+  propose: (cell) => (isPerMass(cell) ? [] : scaled(cell, cell.molarMassGPerMol)),
 };
 
 /** The cell holds a value per mole where one per gram is declared. */
 export const perMoleReadAsPerGram: Slip = {
   code: 'per-mole-read-as-per-gram',
   weight: 0.02,
-  propose: (cell) => scaled(cell, 1 / cell.molarMassGPerMol),
+  propose: (cell) => (isPerMass(cell) ? scaled(cell, 1 / cell.molarMassGPerMol) : []),
 };
 
 function scaled(cell: SuspectCell, ratio: number): readonly Candidate[] {
