@@ -57,7 +57,8 @@ export function explain(
       const corrected = cell.toSi(candidate.value);
       const distance = Math.abs(corrected - proposed);
       const spread = Math.hypot(uProposed, rounding(candidate.step));
-      const allowed = Math.max(2 * spread, loose);
+      // It has to explain more of the correction than it leaves.
+      const allowed = Math.min(Math.max(2 * spread, loose), needed / 2);
       if (!(distance <= allowed) || outside(context, corrected, spread)) continue;
       const least = Math.min(Math.max(2 * spread, material), 0.1 * Math.abs(cell.observed));
       const nothingLeft = Math.abs(corrected) <= least && corrected !== 0;

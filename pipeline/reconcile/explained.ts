@@ -2,7 +2,9 @@ import type { CheckedCase } from '../../schemas/checked.js';
 import type { Finding, Suspect } from '../../schemas/finding.js';
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
+import type { NumberQuantity } from '../../schemas/quantities.js';
 import { type Explanation, explain, outside, type SuspectContext } from './explain.js';
+import { unknownScore } from './slips/unknown-error.js';
 import { suspectContext } from './suspect-context.js';
 
 /** Suspects with the usual slip that leads to their proposed value, where one does. */
@@ -48,10 +50,19 @@ export function scoreInGroup(
 ): number | null {
   const found = suspectContext(substance, suspect);
   if (found !== null && outside(found, suspect.proposed, suspect.uProposed)) return IMPOSSIBLE_SCORE;
-  return explanationOf(substance, suspect, policy)?.score ?? null;
+  const score = explanationOf(substance, suspect, policy)?.score ?? null;
+  if (found === null || found.observed !== 0 || !isFormation(found.quantity)) return score;
+  // Zero is the definition of a reference state, and no number that somebody got wrong.
+  const w = suspect.proposed / suspect.uProposed;
+  return (score ?? unknownScore(Number.isFinite(w) ? w : 1)) + Math.log(WRONG_ZERO_SHARE);
 }
 
 const IMPOSSIBLE_SCORE = -1e6;
+/** Of formation quantities that are printed as 0, those that should not be. */
+const WRONG_ZERO_SHARE = 0.02;
+
+const isFormation = (quantity: NumberQuantity): boolean =>
+  quantity === 'enthalpy-of-formation' || quantity === 'gibbs-energy-of-formation';
 
 /** What a user of the value would notice. */
 function materialOf(context: SuspectContext, proposed: number, policy: Policy): number {

@@ -53,7 +53,7 @@ export function suspectGroups(
     if (!ranked.some((one) => Math.abs(one.w) > threshold)) break;
     slips ??= wholeSlips(system);
     for (const slip of slips) {
-      const one = slip.data.some((d) => removed.has(d)) ? null : rankWhole(free, y, before, slip);
+      const one = slip.data.some((d) => removed.has(d)) ? null : rankWhole(free, y, before, system, slip);
       if (one !== null) ranked.push(one);
     }
     ranked.sort((a, b) => Math.abs(b.w) - Math.abs(a.w));
@@ -71,9 +71,9 @@ export function suspectGroups(
     }
     removed.add(first.of);
     // Every condition of a transition whose temperature is wrong is taken at the crossing from here on.
-    const resolved = resolvedAt(system, first.of);
+    const resolved = isFar(first) ? resolvedAt(system, first.of) : null;
     if (resolved !== null) y = merged(y, system.y, resolved.y);
-    free.free(first.of.direction);
+    free.free(resolved?.direction ?? first.of.direction);
   }
   return groups;
 }
@@ -84,6 +84,9 @@ function bearing({ curves }: ConditionSystem, { key, phases }: ConditionDatum): 
 
 /** Of a very large chi square, differences below this share are rounding. */
 const ROUNDING = 1e-10;
+/** What a slip of many numbers may leave: this share of chi square, or so much a condition. */
+const WELL_LEFT = 0.02;
+const WELL_FIT = 4;
 /** A temperature that would move by more than this is re-solved [K]. */
 const FAR_K = 5;
 
@@ -100,11 +103,17 @@ function rank(
   const { value } = d.datum;
   const logarithmic = d.kind === 'saturation-pressure';
   let proposed = logarithmic ? value * Math.exp(-test.error) : value - test.error;
+  let { uError } = test;
   const resolved = Math.abs(test.error) > FAR_K || Math.abs(w) > 10 ? resolvedAt(system, d) : null;
   if (resolved !== null && Math.abs(resolved.value - value) > FAR_K) {
-    const left = free.chiSquareOf(merged(y, system.y, resolved.y));
+    // One step of Gauss and Newton from the crossing: what the transition's enthalpy and entropy add to it.
+    const there = merged(y, system.y, resolved.y);
+    const step = free.test(there, resolved.direction, d.u);
+    if (step === null) return null;
+    const left = free.chiSquareOf(there) - step.w * step.w;
     w = Math.sign(test.w || 1) * Math.sqrt(Math.max(0, before - left));
-    proposed = resolved.value;
+    proposed = resolved.value - step.error;
+    uError = step.uError;
   }
   const scale = logarithmic ? proposed : 1;
   return {
@@ -114,12 +123,22 @@ function rank(
     redundancy: test.redundancy,
     smallestDetectable: logarithmic ? value * Math.expm1(test.smallestDetectable) : test.smallestDetectable,
     proposed,
-    uProposed: test.uError * scale,
+    uProposed: uError * scale,
   };
 }
 
+function isFar({ of, proposed }: RankedDatum): boolean {
+  return of.kind === 'temperature' && Math.abs(proposed - of.datum.value) > FAR_K;
+}
+
 /** A slip with nothing to choose: what it would leave of chi square counts. */
-function rankWhole(free: FreeData, y: Float64Array, before: number, slip: WholeSlip): RankedDatum | null {
+function rankWhole(
+  free: FreeData,
+  y: Float64Array,
+  before: number,
+  system: ConditionSystem,
+  slip: WholeSlip,
+): RankedDatum | null {
   const [first] = slip.data;
   const common = { of: first, whole: slip, redundancy: 1, uProposed: slip.uCorrected };
   if (slip.open) {
@@ -129,7 +148,8 @@ function rankWhole(free: FreeData, y: Float64Array, before: number, slip: WholeS
     return { ...common, w, smallestDetectable, proposed: first.datum.value - error, uProposed: uError };
   }
   const left = free.chiSquareOf(moved(y, slip.change));
-  if (!(left < before)) return null;
+  // Near is not enough where nothing is left to choose: another law would leave less.
+  if (!(left < WELL_LEFT * before || left < WELL_FIT * system.m)) return null;
   const size = Math.abs(slip.corrected - first.datum.value);
   return { ...common, w: Math.sqrt(before - left), smallestDetectable: size, proposed: slip.corrected };
 }

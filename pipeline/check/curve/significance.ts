@@ -21,12 +21,17 @@ export function thresholds(policy: Policy, tests: number): Thresholds {
 }
 
 /**
- * How grave a difference is: significant and material a fault, significant only a doubt, material only a note, else nothing.
+ * How grave a difference is: significant and material a fault, significant only a doubt, else nothing. A difference that
+ * matters and that the data are too uncertain to decide is no finding: the coverage says how small an error would have shown.
  * `u` is the standard uncertainty of the difference.
  */
-export function gravity(difference: number, u: number, material: number, limits: Thresholds): Severity | null {
+export function gravity(
+  difference: number,
+  u: number,
+  material: number,
+  limits: Thresholds,
+): Exclude<Severity, 'note'> | null {
   const size = Math.abs(difference);
   if (size > limits.fault * u) return size > material ? 'fault' : 'doubt';
-  if (size > limits.doubt * u) return 'doubt';
-  return size > material ? 'note' : null;
+  return size > limits.doubt * u ? 'doubt' : null;
 }

@@ -49,7 +49,7 @@ export function crossingAgrees({ substance, view, policy, limits }: TransitionCo
     // Without a crossing the distance is known from the gap's slope alone, and is at least that of the tables' ends.
     const distance = pair.at.gapJPerMol / dS;
     const severity = gravity(distance, uK, policy.material.transitionTemperatureK, limits);
-    if (severity === null || severity === 'note') {
+    if (severity === null) {
       return {
         outcome: outcome(substance, rule, view.place, 'agrees', view.evidence, { smallestDetectable }),
         findings: [],
@@ -83,9 +83,8 @@ export function crossingAgrees({ substance, view, policy, limits }: TransitionCo
     tolerance: limits.fault * u,
     detail: { code: 'transition', what: 'crossing', statedK, computedK: crossing.temperatureK, smallestDetectable },
   });
-  const kind = severity === 'note' ? 'agrees' : 'disagrees';
   return {
-    outcome: outcome(substance, rule, view.place, kind, view.evidence, { smallestDetectable }),
+    outcome: outcome(substance, rule, view.place, 'disagrees', view.evidence, { smallestDetectable }),
     findings: [finding],
   };
 }

@@ -62,9 +62,8 @@ export function gibbsContinuous({ substance, view, policy, limits }: TransitionC
       smallestDetectable,
     },
   });
-  const kind = severity === 'note' ? 'agrees' : 'disagrees';
   return {
-    outcome: outcome(substance, rule, view.place, kind, view.evidence, { smallestDetectable }),
+    outcome: outcome(substance, rule, view.place, 'disagrees', view.evidence, { smallestDetectable }),
     findings: [finding],
   };
 }

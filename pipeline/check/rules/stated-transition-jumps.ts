@@ -76,7 +76,7 @@ export function statedTransitionJumps({ substance, view, policy, limits }: Trans
     };
   }
   const severity = gravity(jump, u, materialS, limits);
-  if (severity === null || severity === 'note') return agrees;
+  if (severity === null) return agrees;
   return {
     outcome: outcome(substance, rule, view.place, 'disagrees', view.evidence, { smallestDetectable }),
     findings: [

@@ -104,9 +104,8 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
       smallestDetectable,
     },
   });
-  const kind = severity === 'note' ? 'agrees' : 'disagrees';
   return {
-    outcome: outcome(substance, rule, view.place, kind, view.evidence, { smallestDetectable }),
+    outcome: outcome(substance, rule, view.place, 'disagrees', view.evidence, { smallestDetectable }),
     findings: [finding],
   };
 }

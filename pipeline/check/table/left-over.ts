@@ -1,6 +1,6 @@
 import type { Policy } from '../../../schemas/policy.js';
 import { digitU, type Residuals } from './residuals.js';
-import type { TableRows } from './table-rows.js';
+import { cellU, type TableRows } from './table-rows.js';
 
 /** A place that does not close and that no single cell explains. */
 export interface Anomaly {
@@ -99,7 +99,7 @@ export function smallest(rows: TableRows, res: Residuals, policy: Policy): Detec
   // Power 80 % at the naming threshold: threshold + 0.84 standard deviations of the interval's check.
   const times = policy.cell.threshold + 0.84;
   const out: Detectable = { entropy: null, enthalpy: null, closure: null, heatCapacity: null };
-  const { h, s } = rows;
+  const { h, s, f } = rows;
   for (let i = 0; i < rows.n - 1; i++) {
     const r = rows.row[i];
     const next = rows.row[i + 1];
@@ -110,7 +110,10 @@ export function smallest(rows: TableRows, res: Residuals, policy: Policy): Detec
       out.enthalpy = Math.max(out.enthalpy ?? 0, times * Math.hypot(digits.h, e), 10 * h.halfUnit[r]);
     if (s !== null && s.present[r] === 1 && s.present[next] === 1)
       out.entropy = Math.max(out.entropy ?? 0, times * Math.hypot(digits.s, e * res.open[i]), 10 * s.halfUnit[r]);
-    if (res.hasClosure[i] === 1 && s !== null) out.closure = Math.max(out.closure ?? 0, 10 * s.halfUnit[r]);
+    if (res.hasClosure[i] === 1 && s !== null && h !== null && f !== null) {
+      const u = Math.hypot(cellU(s, r), cellU(f, r), cellU(h, r) / rows.t[i]);
+      out.closure = Math.max(out.closure ?? 0, times * u, 10 * s.halfUnit[r]);
+    }
     if (i > rows.from[i] && res.usable[i - 1] === 1 && rows.to[i] - rows.from[i] >= 4) {
       // An even table's stand-off is as unsure as the thinned integral beside it, per kelvin.
       const left = res.e[i - 1] / (rows.t[i] - rows.t[i - 1]);

@@ -1,5 +1,5 @@
 import type { PhaseCurve } from '../../../schemas/curves.js';
-import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
+import type { Anchor, Datum, HarmonisedCase, StatedTransition } from '../../../schemas/harmonised.js';
 import { R_J_PER_MOL_K } from '../../core/constants.js';
 import { enthalpyAt, entropyAt, heatCapacityAt, intervalOf } from '../../core/physics/curve.js';
 import { datumKey } from '../../core/physics/datum-keys.js';
@@ -21,8 +21,9 @@ export type ConditionKind =
 /** One value that should vanish, with all that its error is made of. */
 export interface Condition {
   readonly kind: ConditionKind;
-  /** Index among the joined transitions, or -1. */
+  /** Index among the joined transitions, and among the substance's; or -1. */
   readonly joined: number;
+  readonly transition: number;
   readonly value: number;
   /** Its error: of curves' rows and of data, by key. */
   readonly sum: ErrorSum;
@@ -42,7 +43,7 @@ export function transitionConditions(joined: readonly Joined[]): Condition[] {
     const { at, atK, within } = j;
     const [keyT, keyH, keyS] = [datumKey.temperature(index), datumKey.enthalpy(index), datumKey.entropy(index)];
     const { enthalpy, entropy } = stated;
-    const base = { joined: k, within };
+    const base = { joined: k, transition: index, within };
     if (j.byConstruction) {
       if (enthalpy === null || entropy === null) return;
       const t = stated.temperature.value;
@@ -95,11 +96,43 @@ export function transitionConditions(joined: readonly Joined[]): Condition[] {
   return conditions;
 }
 
+/** dH - T dS = 0 of the stated numbers, where no curve of its own stands on both sides of the transition. */
+export function closureConditions(
+  transitions: readonly StatedTransition[],
+  onIsobar: (transition: number) => boolean,
+  joined: readonly Joined[],
+): Condition[] {
+  const conditions: Condition[] = [];
+  transitions.forEach(({ enthalpy, entropy, temperature, order }, index) => {
+    const k = joined.findIndex((j) => j.judged.index === index);
+    if (order !== 'first' || enthalpy === null || entropy === null || !onIsobar(index)) return;
+    if (k >= 0 && !joined[k].byConstruction) return;
+    const t = temperature.value;
+    const sum = new ErrorSum()
+      .addDatum(datumKey.enthalpy(index), 1, 0)
+      .addDatum(datumKey.entropy(index), -t, 0)
+      .addDatum(datumKey.temperature(index), -entropy.value, 0);
+    const within = joined[k]?.within ?? false;
+    conditions.push({
+      kind: 'closure',
+      joined: k,
+      transition: index,
+      value: enthalpy.value - t * entropy.value,
+      sum,
+      variance: 0,
+      gas: 0,
+      within,
+    });
+  });
+  return conditions;
+}
+
 /** G_g(T, p) - G_condensed(T, p) = 0 of each measured vapour pressure, its error in p taken in ln p. */
 export function saturationConditions(saturated: readonly Saturated[]): Condition[] {
   return saturated.map((pair) => ({
     kind: 'saturation',
     joined: -1,
+    transition: -1,
     value: -pair.at.gapJPerMol,
     sum: difference(pair, 1, -pair.atK)
       .addDatum(datumKey.saturationTemperature(pair.index), -pair.at.entropyJPerMolK, 0)
@@ -128,7 +161,7 @@ export function anchorConditions(
     if (t < curve.measuredFromK || t > curve.measuredToK || restsOnAnother(anchor, curve, substance)) return;
     const within = anchor.table.basis !== 'measured' && curve.sources.every((s) => s === anchor.table.source);
     const add = (kind: ConditionKind, value: number, sum: ErrorSum, variance = 0): void => {
-      conditions.push({ kind, joined: -1, value, sum, variance, gas: 0, within });
+      conditions.push({ kind, joined: -1, transition: -1, value, sum, variance, gas: 0, within });
     };
     const { entropy, enthalpyOfFormation, enthalpyFromZero, heatCapacity } = anchor;
     if (
@@ -204,6 +237,27 @@ export function atTemperature(
       return dH - temperatureK * dS;
     default:
       return condition.value;
+  }
+}
+
+/** How the same moves with that temperature, there. */
+export function slopeAtTemperature(
+  condition: Condition,
+  there: Joined['at'],
+  temperatureK: number,
+  dS: number,
+): number {
+  switch (condition.kind) {
+    case 'gap':
+      return -there.entropyJPerMolK;
+    case 'enthalpy':
+      return there.heatCapacityJPerMolK;
+    case 'entropy':
+      return there.heatCapacityJPerMolK / temperatureK;
+    case 'closure':
+      return -dS;
+    default:
+      return 0;
   }
 }
 

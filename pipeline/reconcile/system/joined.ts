@@ -55,6 +55,9 @@ export interface Saturated extends Pair {
   readonly index: number;
 }
 
+/** The virial equation cut after B is good to about this. */
+const HIGHEST_REAL_PA = 1e7;
+
 /** Vapour pressures bear on the standard state, on both curves' data. */
 export function saturatedPairs(checked: CheckedCase): Saturated[] {
   const { curves } = checked.assembled;
@@ -69,7 +72,8 @@ export function saturatedPairs(checked: CheckedCase): Saturated[] {
     const pressurePa = stated.pressure.value;
     const atK = stated.temperature.value;
     if (condensed === undefined || !(pressurePa > 0) || !(atK > 0)) return;
-    const setting = { pressurePa, gas: 'real' as const };
+    // Beyond what a second virial coefficient can do, its uncertainty would hide any slip.
+    const setting = { pressurePa, gas: pressurePa > HIGHEST_REAL_PA ? ('ideal' as const) : ('real' as const) };
     const from = placePhase(condensed, substance, setting, boiling);
     const to = placePhase(gas, substance, setting, boiling);
     if (atK < Math.max(from.lowK, to.lowK) || atK > Math.min(from.highK, to.highK)) return;

@@ -10,7 +10,9 @@ import {
   anchorConditions,
   atTemperature,
   type Condition,
+  closureConditions,
   saturationConditions,
+  slopeAtTemperature,
   transitionConditions,
 } from './conditions.js';
 import { type Joined, joinedTransitions, type Saturated, saturatedPairs } from './joined.js';
@@ -47,17 +49,18 @@ export function systemOf(checked: CheckedCase, isobarPa: number | null, policy: 
   const { curves } = assembled;
   const joined = joinedTransitions(checked, isobarPa);
   const saturated = isobarPa === null ? saturatedPairs(checked) : [];
+  const isobarOf = (transition: number): number | null => {
+    const judged = checked.judged.find((j) => j.index === transition);
+    return curves[judged?.fromCurve ?? -1]?.family.isobarPa ?? null;
+  };
   const conditions = [
     ...transitionConditions(joined),
+    ...closureConditions(substance.transitions, (transition) => isobarOf(transition) === isobarPa, joined),
     ...anchorConditions(substance, curves, isobarPa),
     ...saturationConditions(saturated),
   ];
   const uOfAnchor = (key: string, anchor: Anchor, datum: Datum): number =>
     levelU(curves, key) ?? apartU(curves, anchor, datum, key, policy);
-  const isobarOf = (transition: number): number | null => {
-    const judged = checked.judged.find((j) => j.index === transition);
-    return curves[judged?.fromCurve ?? -1]?.family.isobarPa ?? null;
-  };
   const stated = statedData(substance, isobarPa, isobarOf, joined, saturated, uOfAnchor, policy);
   const m = conditions.length;
   const y = Float64Array.from(conditions, (c) => c.value);
@@ -75,21 +78,31 @@ export function restsOn(curve: UncertainCurve, key: string): boolean {
   return rests(curve.enthalpyLevel, 'enthalpyLevel') || rests(curve.entropyLevel, 'entropyLevel');
 }
 
+/** The misclosures with a transition taken at another temperature, and how they move with it there. */
+export interface Resolved {
+  readonly value: number;
+  readonly y: Float64Array;
+  readonly direction: Float64Array;
+}
+
 /** The conditions of a transition taken at its computed crossing: a large shift is re-solved, not linearised. */
-export function resolvedAt(
-  system: ConditionSystem,
-  datum: StatedDatum,
-): { readonly value: number; readonly y: Float64Array } | null {
+export function resolvedAt(system: ConditionSystem, datum: ConditionDatum): Resolved | null {
   if (datum.kind !== 'temperature') return null;
   const k = system.joined.findIndex((j) => j.judged.index === datum.transition);
   const crossingK = system.joined[k]?.judged.computedK ?? null;
   if (crossingK === null) return null;
   const j = system.joined[k];
+  const { stated } = j.judged;
   const there = equilibrium(j.from, j.to, crossingK);
-  const y = Float64Array.from(system.conditions, (c) =>
-    c.joined === k ? atTemperature(c, there, crossingK, j.judged.stated) : c.value,
-  );
-  return { value: crossingK, y };
+  const dS = stated.entropy?.value ?? 0;
+  const own = (c: Condition): boolean => c.joined === k;
+  return {
+    value: crossingK,
+    y: Float64Array.from(system.conditions, (c) => (own(c) ? atTemperature(c, there, crossingK, stated) : c.value)),
+    direction: Float64Array.from(system.conditions, (c, i) =>
+      own(c) ? slopeAtTemperature(c, there, crossingK, dS) : datum.direction[i],
+    ),
+  };
 }
 
 /** The error that the curve's level takes the anchor with: the rounding alone within one compiled source. */

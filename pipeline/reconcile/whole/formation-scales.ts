@@ -21,7 +21,7 @@ export function formationScales(system: ConditionSystem): WholeSlip[] {
     const direction = new Float64Array(system.m);
     for (const d of data) addTo(direction, d.direction, 1);
     slips.push({
-      code: 'formation-enthalpies-from-different-scales',
+      code: 'different-enthalpy-scales',
       cells: data.length,
       data,
       corrected: first.datum.value,

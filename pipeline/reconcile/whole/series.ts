@@ -6,6 +6,7 @@ import { printedLike, printedNumber } from '../../core/numeric/printed-like.js';
 import { enthalpyAt, entropyAt } from '../../core/physics/curve.js';
 import { isGas } from '../../core/physics/placed-phase.js';
 import type { ConditionDatum, ConditionSystem } from '../system/system.js';
+import { addTo } from './exchanged.js';
 import { unitRatios } from './unit-ratios.js';
 import type { WholeSlip } from './whole-slips.js';
 
@@ -23,20 +24,28 @@ export function seriesSlips(system: ConditionSystem): WholeSlip[] {
     );
     if (series === undefined) continue;
     if (isGas(curve.phase) && curve.entropyLevelFrom === 'table' && series.entropy !== null) {
+      // The table alone, or with the anchors of its own source.
+      const anchors = system.data.filter(
+        (d) =>
+          d.kind === 'anchor-entropy' && d.phases[0] === curve.phase && d.datum.address.source === series.table.source,
+      );
       for (const by of [ONE_ATMOSPHERE, -ONE_ATMOSPHERE]) {
         const cells = filled(series.entropy) + filled(series.gibbsFunction);
-        slips.push(
-          slipOf(
-            'atmosphere-for-bar',
-            system,
-            curve,
-            series,
-            series.entropy,
-            cells,
-            (v) => v + by,
-            (row) => row.s * by,
-          ),
+        const table = slipOf(
+          'atmosphere-for-bar',
+          system,
+          curve,
+          series,
+          series.entropy,
+          cells,
+          (v) => v + by,
+          (row) => row.s * by,
         );
+        slips.push(table);
+        if (anchors.length === 0) continue;
+        const change = table.change.slice();
+        for (const d of anchors) addTo(change, d.direction, by);
+        slips.push({ ...table, change, cells: cells + anchors.length, data: [...table.data, ...anchors] });
       }
     }
     if (series.heatCapacity === null) continue;

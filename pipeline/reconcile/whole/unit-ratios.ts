@@ -1,6 +1,9 @@
 /** Ratios by which a whole column is off when its unit is another one: meant value over printed value. */
 import { INTERNATIONAL_TABLE_CALORIE, R_J_PER_MOL_K, THERMOCHEMICAL_CALORIE } from '../../core/constants.js';
 
+/** IUPAC abridged atomic weights (2021): 2 x 1.008 + 15.999. */
+const WATER_G_PER_MOL = 18.015;
+
 export interface UnitRatio {
   readonly code: string;
   readonly ratio: number;
@@ -21,6 +24,16 @@ export function unitRatios(molarMassGPerMol: number, perKelvin: boolean): UnitRa
   if (molarMassGPerMol > 0) {
     add('per-gram-read-as-per-mole', molarMassGPerMol, 0.02);
     add('per-mole-read-as-per-gram', 1 / molarMassGPerMol, 0.02);
+  }
+  // Another formula: double or half of it, or its hydrates.
+  add('other-formula-molar-mass', 2, 0.008);
+  add('other-formula-molar-mass', 0.5, 0.008);
+  if (molarMassGPerMol > 0) {
+    for (let waters = 1; waters <= 10; waters++) {
+      const heavier = (molarMassGPerMol + waters * WATER_G_PER_MOL) / molarMassGPerMol;
+      add('other-formula-molar-mass', heavier, 0.001);
+      add('other-formula-molar-mass', 1 / heavier, 0.001);
+    }
   }
   if (perKelvin) add('in-units-of-r', R_J_PER_MOL_K, 0.02);
   return ratios;

@@ -5,6 +5,7 @@ import { exchangedPairs } from './exchanged.js';
 import { formationScales } from './formation-scales.js';
 import { seriesSlips } from './series.js';
 import { temperatureColumns } from './temperatures.js';
+import { vapourPressureColumns } from './vapour-pressures.js';
 
 export interface WholeSlip {
   /** Code of the usual slip. */
@@ -31,5 +32,6 @@ export function wholeSlips(system: ConditionSystem): readonly WholeSlip[] {
     ...temperatureColumns(system),
     ...seriesSlips(system),
     ...formationScales(system),
+    ...vapourPressureColumns(system),
   ].filter(({ change }) => change.some((v) => v !== 0));
 }
