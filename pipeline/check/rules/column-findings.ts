@@ -32,7 +32,7 @@ export function columnFindings(
   for (const one of whole) {
     let cause: string | null = null;
     for (const change of one.changes) {
-      const cells = columnCells(series, change, one.run, one.uFactor, one.uShift);
+      const cells = columnCells(series, change, one.run, one.uToo, one.uFactor, one.uShift);
       if (cells === null) continue;
       const finding = findingOf(substance, series, change, cells, one.explanation, cause, policy);
       if (out.findings.some(({ id }) => id === finding.id)) continue;
@@ -112,9 +112,9 @@ function isMaterial(change: ColumnChange, observed: number, proposed: number, { 
 }
 
 /** Of several columns the first stands for all. */
-function rivalsOf(finding: Finding, series: Series, { rivals, run, w }: WholeColumns): Suspect[] {
+function rivalsOf(finding: Finding, series: Series, { rivals, run, uToo, w }: WholeColumns): Suspect[] {
   return rivals.flatMap((rival: ColumnHypothesis, i) => {
-    const cells = rival.changes.map((change) => columnCells(series, change, run, rival.uFactor, rival.uShift));
+    const cells = rival.changes.map((change) => columnCells(series, change, run, uToo, rival.uFactor, rival.uShift));
     const [first] = cells;
     if (first === undefined || first === null) return [];
     const count = cells.reduce((sum, one) => sum + (one?.rows.length ?? 0), 0);

@@ -2,6 +2,7 @@ import type { Series } from '../../../schemas/harmonised.js';
 import { printedNumber } from '../../core/numeric/printed-like.js';
 import {
   type ColumnChange,
+  changed,
   changedValue,
   quantityIn,
   quantityName,
@@ -30,6 +31,7 @@ export function columnCells(
   series: Series,
   change: ColumnChange,
   run: RowRun,
+  uToo: boolean,
   uFactor: number,
   uShift: number,
 ): ColumnCells | null {
@@ -41,7 +43,8 @@ export function columnCells(
   if (firstRow === undefined) return null;
   const observed = valueAt(firstRow);
   const proposed = changedValue(series, is, firstRow, change);
-  const rounding = q === null ? series.temperatureHalfUnitK / Math.sqrt(3) : cellU(q, firstRow);
+  const after = quantityIn(changed(series, [change], { rows: [firstRow] }, uToo), change.column);
+  const own = after === null ? (series.temperatureHalfUnitK * change.factor) / Math.sqrt(3) : cellU(after, firstRow);
   const column = q?.column ?? series.temperatureColumn;
   return {
     rows,
@@ -49,7 +52,7 @@ export function columnCells(
     firstRow,
     observed,
     proposed,
-    uProposed: Math.hypot(rounding * change.factor, proposed * uFactor, uShift),
+    uProposed: Math.hypot(own, proposed * uFactor, uShift),
     proposedPrinted: printedAs(series, firstRow, column, change, proposed - observed),
   };
 }

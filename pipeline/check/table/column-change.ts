@@ -44,8 +44,11 @@ export function quantityName(series: Series, column: TableColumn): NumberQuantit
   return column === 'temperature' ? 'temperature' : (quantityIn(series, column)?.is ?? 'enthalpy-increment');
 }
 
-/** The series as it would be with the changes made, in `run` or everywhere. */
-export function changed(series: Series, changes: readonly ColumnChange[], run: RowRun): Series {
+/**
+ * The series as it would be with the changes made, in `run` or everywhere.
+ * @param uToo whether uncertainties that are stated apart from the column were written in its unit too
+ */
+export function changed(series: Series, changes: readonly ColumnChange[], run: RowRun, uToo: boolean): Series {
   let out = series;
   for (const change of changes) {
     if (change.column === 'temperature') {
@@ -55,7 +58,7 @@ export function changed(series: Series, changes: readonly ColumnChange[], run: R
     }
     const q = quantityIn(out, change.column);
     if (q === null) continue;
-    const next = changedQuantity(out, q, change, run);
+    const next = changedQuantity(out, q, change, run, uToo);
     if (change.column === 'heatCapacity') out = { ...out, heatCapacity: next };
     else if (change.column === 'entropy') out = { ...out, entropy: next };
     else if (change.column === 'gibbsFunction') out = { ...out, gibbsFunction: next };
@@ -65,7 +68,14 @@ export function changed(series: Series, changes: readonly ColumnChange[], run: R
   return out;
 }
 
-function changedQuantity(series: Series, q: SeriesQuantity, change: ColumnChange, run: RowRun): SeriesQuantity {
+function changedQuantity(
+  series: Series,
+  q: SeriesQuantity,
+  change: ColumnChange,
+  run: RowRun,
+  uToo: boolean,
+): SeriesQuantity {
+  const uFactor = uToo || !statesUApart(series, q) ? Math.abs(change.factor) : 1;
   const values = q.values.slice();
   const halfUnit = q.halfUnit.slice();
   const uOwn = q.uOwn.slice();
@@ -73,11 +83,20 @@ function changedQuantity(series: Series, q: SeriesQuantity, change: ColumnChange
     if (q.present[row] === 0) return;
     values[row] = changedValue(series, q.is, row, change);
     halfUnit[row] *= Math.abs(change.factor);
-    uOwn[row] *= Math.abs(change.factor);
+    uOwn[row] *= uFactor;
   };
   if (run === null) for (let row = 0; row < series.rows; row++) one(row);
   else for (const row of run.rows) one(row);
   return { ...q, values, halfUnit, uOwn };
+}
+
+/** Uncertainties in a column of their own, or as a number in the descriptor: the cells' unit does not act on them. */
+export function statesUApart(series: Series, q: SeriesQuantity): boolean {
+  const { columns } = series.table;
+  return (
+    columns.some(({ is, of }) => is === 'uncertainty' && of === q.is) ||
+    columns[q.column]?.uncertainty.some(({ absolute }) => absolute !== null) === true
+  );
 }
 
 /** A row at 0 K is a limit row: it must be met exactly. */

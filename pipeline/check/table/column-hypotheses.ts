@@ -1,6 +1,11 @@
-import type { Anchor, Series } from '../../../schemas/harmonised.js';
+import type { Anchor } from '../../../schemas/harmonised.js';
 import type { Substance } from '../../../schemas/substances.js';
-import { R_J_PER_MOL_K, STANDARD_ATMOSPHERE_PA, STANDARD_PRESSURE_PA } from '../../core/constants.js';
+import {
+  R_J_PER_MOL_K,
+  REFERENCE_TEMPERATURE_K,
+  STANDARD_ATMOSPHERE_PA,
+  STANDARD_PRESSURE_PA,
+} from '../../core/constants.js';
 import { enthalpyAtReference } from './closing.js';
 import { type ColumnChange, type RowRun, scaledBy, shiftedBy, type TableColumn } from './column-change.js';
 import { type RatioLaw, ratioLaws, temperatureLaws, UNEXPLAINED_WEIGHT } from './column-laws.js';
@@ -23,6 +28,8 @@ export interface ColumnHypothesis {
   /** Standard uncertainty of its factor, relative, and of its shift; 0 where the law fixes them. */
   readonly uFactor: number;
   readonly uShift: number;
+  /** Relative: an unexplained factor this near a usual slip's is no other one. Few digits of Cp are wrong alike along a table. */
+  readonly loose: number;
   /** What this table alone cannot tell from it: the other columns by the inverse factor, another column by the inverse shift. */
   readonly equal: readonly ColumnHypothesis[];
 }
@@ -55,23 +62,31 @@ export function columnHypotheses(
       const ratio = robustRatio(pairs);
       if (ratio === null) continue;
       const inverse = { value: 1 / ratio.value, u: ratio.u / ratio.value ** 2 };
-      for (const law of lawsNear(rows.series, set, ratio, context.substance)) factors.add(law.factor);
-      for (const law of lawsNear(rows.series, others, inverse, context.substance)) factors.add(1 / law.factor);
+      for (const law of lawsNear(rows, set, ratio, context.substance)) factors.add(law.factor);
+      for (const law of lawsNear(rows, others, inverse, context.substance)) factors.add(1 / law.factor);
       if (Math.abs(ratio.value - 1) <= NEAR * ratio.u) continue;
       factors.add(ratio.value);
       uOf.set(ratio.value, Math.abs(ratio.u / ratio.value));
     }
     for (const factor of factors) {
       const uFactor = uOf.get(factor) ?? 0;
-      const one = scaled(rows.series, set, factor, uFactor, context.substance);
-      const other = scaled(rows.series, others, 1 / factor, uFactor, context.substance);
+      const one = scaled(rows, set, factor, uFactor, context.substance);
+      const other = scaled(rows, others, 1 / factor, uFactor, context.substance);
       out.push({ ...one, equal: [other] }, { ...other, equal: [one] });
     }
   }
   out.push(...shifts(rows, res, within, context.anchors));
   if (run === null) {
     for (const { code, change, weight } of temperatureLaws(rows.series)) {
-      out.push({ changes: [change], explanation: code, prior: Math.log(weight), uFactor: 0, uShift: 0, equal: [] });
+      out.push({
+        changes: [change],
+        explanation: code,
+        prior: Math.log(weight),
+        uFactor: 0,
+        uShift: 0,
+        loose: 0,
+        equal: [],
+      });
     }
   }
   return out;
@@ -79,13 +94,15 @@ export function columnHypotheses(
 
 /** The set multiplied by `factor`, with the usual slip that has this factor, if there is one. */
 function scaled(
-  series: Series,
+  rows: TableRows,
   set: readonly TableColumn[],
   factor: number,
   uFactor: number,
   substance: Substance,
 ): ColumnHypothesis {
-  const laws = ratioLaws(series, set[0], substance).filter((law) => Math.abs(law.factor / factor - 1) < SAME_FACTOR);
+  const laws = ratioLaws(rows.series, set[0], substance).filter(
+    (law) => Math.abs(law.factor / factor - 1) < SAME_FACTOR,
+  );
   const law = laws.sort((a, b) => b.weight - a.weight)[0] ?? { code: null, weight: UNEXPLAINED_WEIGHT };
   return {
     changes: set.map((column) => scaledBy(column, factor)),
@@ -93,14 +110,21 @@ function scaled(
     prior: Math.log(law.weight * TOGETHER[set.length - 1]),
     uFactor: law.code === null ? uFactor : 0,
     uShift: 0,
+    loose: NEAR * uFactor + roundingOf(rows),
     equal: [],
   };
 }
 
+/** Half a unit of the last place of Cp over Cp, in the middle of the table. */
+function roundingOf({ series, cp, row, n }: TableRows): number {
+  const middle = n >> 1;
+  return series.heatCapacity === null ? 0 : series.heatCapacity.halfUnit[row[middle]] / Math.abs(cp[middle]);
+}
+
 /** The usual slips of a set whose factor lies near the one seen. */
-function lawsNear(series: Series, set: readonly TableColumn[], { value, u }: Ratio, substance: Substance): RatioLaw[] {
-  const near = Math.max(NEAR * u, NEAR_SHARE * Math.abs(value));
-  return ratioLaws(series, set[0], substance).filter(({ factor }) => Math.abs(factor - value) <= near);
+function lawsNear(rows: TableRows, set: readonly TableColumn[], { value, u }: Ratio, substance: Substance): RatioLaw[] {
+  const near = Math.max(NEAR * u, Math.max(NEAR_SHARE, roundingOf(rows)) * Math.abs(value));
+  return ratioLaws(rows.series, set[0], substance).filter(({ factor }) => Math.abs(factor - value) <= near);
 }
 
 /** The columns that a common factor can be seen in; -[G - H]/T only where a row's three functions are held together. */
@@ -217,6 +241,7 @@ function shifts(
     prior: Math.log(weight),
     uFactor: 0,
     uShift: u,
+    loose: 0,
     equal: [],
   });
   const zero = enthalpyAtReference(rows);
@@ -261,17 +286,26 @@ function shifts(
   return out;
 }
 
+/** H(Tr) - H(0) is some such share of Cp(Tr) Tr, from stiff crystals to gases. */
+const ZERO_SHARE = [0.15, 1.1] as const;
+
 /**
- * Whether H - H(Tr) is off by H(Tr) - H(0) [J/mol]: as an anchor or the row at 0 K has it, else where the lowest row's H
- * could be counted from 0 K, which makes it positive and no more than Cp T.
+ * Whether H - H(Tr) is off by H(Tr) - H(0) [J/mol]: as an anchor or the row at 0 K has it, else where it could be.
  */
 function zeroCode(rows: TableRows, off: number, anchors: readonly Anchor[]): string | null {
   const code = 'counted-from-zero-kelvin';
-  const stated = anchors.find(({ phase }) => phase === rows.series.phase)?.enthalpyFromZero ?? null;
+  const own = anchors.filter(({ phase, enthalpyFromZero }) => phase === rows.series.phase && enthalpyFromZero !== null);
+  const anchor = own.find(({ table }) => table.source === rows.series.table.source) ?? own[0];
+  const stated = anchor?.enthalpyFromZero ?? null;
   if (stated !== null)
     return Math.abs(Math.abs(off) - stated.value) <= 0.005 * stated.value + 6 * stated.u ? code : null;
   if (rows.h === null || off <= 0) return null;
-  const lowest = rows.h.values[rows.row[0]];
-  if (rows.t[0] === 0) return Math.abs(lowest) <= 4 * cellU(rows.h, rows.row[0]) ? code : null;
-  return lowest > 0 && lowest <= 1.1 * rows.cp[0] * rows.t[0] ? code : null;
+  if (rows.t[0] === 0) return Math.abs(rows.h.values[rows.row[0]]) <= 4 * cellU(rows.h, rows.row[0]) ? code : null;
+  let nearest = 0;
+  for (let i = 1; i < rows.n; i++) {
+    const way = (k: number): number => Math.abs(rows.t[k] - REFERENCE_TEMPERATURE_K);
+    if (way(i) < way(nearest)) nearest = i;
+  }
+  const share = off / (rows.cp[nearest] * REFERENCE_TEMPERATURE_K);
+  return share > ZERO_SHARE[0] && share < ZERO_SHARE[1] ? code : null;
 }

@@ -5,6 +5,7 @@ import { cellAsRead } from './cell-as-read.js';
 import { changed } from './column-change.js';
 import type { TableContext } from './column-hypotheses.js';
 import { type Anomaly, type Detectable, leftOver, smallest } from './left-over.js';
+import { withOwnDigits } from './own-digits.js';
 import { type Residuals, residuals, standoff, standoffWithout } from './residuals.js';
 import { cellU, type TableRows, tableRows } from './table-rows.js';
 import { type WholeColumns, wholeColumns, worthTrying } from './whole-columns.js';
@@ -54,8 +55,9 @@ export function nameCells(series: Series, policy: Policy, context: TableContext)
   let hot = screen(rows, res, policy);
   if (worthTrying(rows, hot.length)) {
     columns = wholeColumns(series, context);
-    for (const { changes, run } of columns) current = changed(current, changes, run);
     if (columns.length > 0) {
+      current = withOwnDigits(series);
+      for (const { changes, run, uToo } of columns) current = changed(current, changes, run, uToo);
       rows = tableRows(current) as TableRows;
       res = residuals(rows);
       detectable = smallest(rows, res, policy);

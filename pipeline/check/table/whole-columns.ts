@@ -1,8 +1,9 @@
 import type { Series } from '../../../schemas/harmonised.js';
 import { REFERENCE_TEMPERATURE_K } from '../../core/constants.js';
 import { type Closing, closing, enthalpyAtReference } from './closing.js';
-import { type ColumnChange, changed, type RowRun } from './column-change.js';
+import { type ColumnChange, changed, quantityIn, type RowRun, statesUApart } from './column-change.js';
 import { type ColumnHypothesis, columnHypotheses, type TableContext } from './column-hypotheses.js';
+import { withOwnDigits } from './own-digits.js';
 import { residuals } from './residuals.js';
 import { cellU, type TableRows, tableRows } from './table-rows.js';
 
@@ -10,6 +11,8 @@ import { cellU, type TableRows, tableRows } from './table-rows.js';
 export interface WholeColumns {
   readonly changes: readonly ColumnChange[];
   readonly run: RowRun;
+  /** Uncertainties stated apart from the column were in its unit too. */
+  readonly uToo: boolean;
   readonly explanation: string | null;
   readonly uFactor: number;
   readonly uShift: number;
@@ -19,6 +22,7 @@ export interface WholeColumns {
   readonly rivals: readonly ColumnHypothesis[];
 }
 
+const COLUMNS = ['heatCapacity', 'entropy', 'enthalpy', 'gibbsFunction'] as const;
 /** Fewer rows tell no law. */
 const FEWEST_ROWS = 5;
 const FEWEST_FAILING = 5;
@@ -57,18 +61,25 @@ export function countsFromElsewhere(rows: TableRows): boolean {
  * The laws that make a table close where many single cells would be needed: one, or up to three that each put right a
  * good part. Empty where none does; then single cells are looked for.
  */
-export function wholeColumns(series: Series, context: TableContext): WholeColumns[] {
-  const whole = searched(series, null, context);
-  if (whole.length > 0) return whole;
+export function wholeColumns(printed: Series, context: TableContext): WholeColumns[] {
+  const series = withOwnDigits(printed);
+  const apart = COLUMNS.some((column) => {
+    const q = quantityIn(series, column);
+    return q !== null && statesUApart(series, q);
+  });
+  for (const uToo of apart ? [true, false] : [true]) {
+    const whole = searched(series, null, context, uToo);
+    if (whole.length > 0) return whole;
+  }
   const rows = tableRows(series) as TableRows;
   for (const run of runs(rows, closing(rows, residuals(rows, true)))) {
-    const found = searched(series, run, context);
+    const found = searched(series, run, context, true);
     if (found.length > 0) return found;
   }
   return [];
 }
 
-function searched(series: Series, run: RowRun, context: TableContext): WholeColumns[] {
+function searched(series: Series, run: RowRun, context: TableContext, uToo: boolean): WholeColumns[] {
   const found: WholeColumns[] = [];
   let current = series;
   let rows = tableRows(current);
@@ -77,16 +88,18 @@ function searched(series: Series, run: RowRun, context: TableContext): WholeColu
   const first = now;
   const allowed = Math.floor(LEFT_SHARE * first.failing);
   while (found.length < MOST_LAWS) {
-    const tried = tryAll(current, rows, run, now, context);
+    const tried = tryAll(current, rows, run, now, context, uToo);
     const best = tried[0];
     if (best === undefined) return [];
     const closes = best.closing.failing <= allowed;
+    // Laws that only help one another are believed where each is a usual slip.
+    if ((!closes || found.length > 0) && best.hypothesis.explanation === null) return [];
     if (!closes && now.failing - best.closing.failing < Math.max(FEWEST_FAILING, FIRST_SHARE * now.failing)) return [];
-    found.push(described(best, closes && found.length === 0 ? tried : [], run, now));
+    found.push(described(best, closes && found.length === 0 ? tried : [], run, now, uToo));
     if (closes) return found;
     // Only whole columns go wrong in company.
     if (run !== null) return [];
-    current = changed(current, best.hypothesis.changes, run);
+    current = changed(current, best.hypothesis.changes, run, uToo);
     const next = tableRows(current);
     if (next === null) return [];
     rows = next;
@@ -96,13 +109,20 @@ function searched(series: Series, run: RowRun, context: TableContext): WholeColu
 }
 
 /** The hypotheses that close about as well as any, with what they leave, likeliest first. */
-function tryAll(series: Series, rows: TableRows, run: RowRun, now: Closing, context: TableContext): Tried[] {
+function tryAll(
+  series: Series,
+  rows: TableRows,
+  run: RowRun,
+  now: Closing,
+  context: TableContext,
+  uToo: boolean,
+): Tried[] {
   const inRun = run === null ? null : new Set(run.rows);
   const within = (i: number): boolean => inRun === null || inRun.has(rows.row[i]);
   const res = residuals(rows, true);
   const tried: Tried[] = [];
   for (const hypothesis of columnHypotheses(rows, res, run, within, context)) {
-    const after = changed(series, hypothesis.changes, run);
+    const after = changed(series, hypothesis.changes, run, uToo);
     const next = tableRows(after);
     if (next === null || next.n < rows.n) continue;
     const left = closing(next, residuals(next, true));
@@ -111,12 +131,35 @@ function tryAll(series: Series, rows: TableRows, run: RowRun, now: Closing, cont
     const score = 2 * (hypothesis.prior + standing(next, context)) - left.capped;
     tried.push({ hypothesis, closing: left, score });
   }
-  const least = Math.min(...tried.map(({ closing: { failing } }) => failing));
-  const slack = Math.max(1, SLACK * now.failing);
-  return tried.filter(({ closing: { failing } }) => failing <= least + slack).sort((a, b) => b.score - a.score);
+  return withoutNeedless(tried, now);
 }
 
-function described(best: Tried, tried: readonly Tried[], run: RowRun, before: Closing): WholeColumns {
+/** Those that close about as well as any, an unexplained factor only where no usual slip lies near it. */
+function withoutNeedless(tried: readonly Tried[], now: Closing): Tried[] {
+  const least = Math.min(...tried.map(({ closing: { failing } }) => failing));
+  const slack = Math.max(1, SLACK * now.failing);
+  const close = tried.filter(({ closing: { failing } }) => failing <= least + slack);
+  const usual = close.filter(({ hypothesis: { explanation } }) => explanation !== null);
+  return close
+    .filter(
+      ({ hypothesis }) => hypothesis.explanation !== null || !usual.some((one) => isNear(hypothesis, one.hypothesis)),
+    )
+    .sort((a, b) => b.score - a.score);
+}
+
+/** The same columns by nearly the same factors. */
+function isNear(one: ColumnHypothesis, other: ColumnHypothesis): boolean {
+  return (
+    columnsOf(one) === columnsOf(other) &&
+    one.changes.every(({ factor, shift, shiftOverT }, i) => {
+      const beside = other.changes[i];
+      const plain = shift === 0 && shiftOverT === 0 && beside.shift === 0 && beside.shiftOverT === 0;
+      return plain && Math.abs(factor / beside.factor - 1) <= one.loose;
+    })
+  );
+}
+
+function described(best: Tried, tried: readonly Tried[], run: RowRun, before: Closing, uToo: boolean): WholeColumns {
   const { changes, explanation, uFactor, uShift } = best.hypothesis;
   const own = columnsOf(best.hypothesis);
   const seen = new Set([own]);
@@ -129,6 +172,7 @@ function described(best: Tried, tried: readonly Tried[], run: RowRun, before: Cl
   return {
     changes,
     run,
+    uToo,
     explanation,
     uFactor,
     uShift,
