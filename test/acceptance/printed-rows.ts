@@ -24,8 +24,9 @@ export function tableOf({ source, file }: SourceCell): Descriptor['tables'][numb
   return descriptors.get(source)!.tables.find((table) => table.file === file);
 }
 
+/** A place on an isobar reads `l at 101325 Pa`; the curve goes by the phase and the pressure. */
 export function nameOf(cell: SourceCell, phase = cell.place): string {
-  return curveName(cell.substance, phase, tableOf(cell)?.pressure?.value ?? null);
+  return curveName(cell.substance, phase.replace(/ at \S+ Pa$/, ''), tableOf(cell)?.pressure?.value ?? null);
 }
 
 /** The last printed place of the column; the steam tables print eight significant digits, and their largest figure counts. */
