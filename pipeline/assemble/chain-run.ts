@@ -54,8 +54,8 @@ export function runChain(stretch: Stretch, zero: Zero): ChainRun {
     const a = stretch.errorJPerMol[i] + 0.001 * w;
     const b = a / 2;
     stepVarH[i] = a * a + stretch.ownVarH[i];
-    stepCovHS[i] = a * a * alpha + stretch.ownVarH[i] * alpha;
-    stepVarS[i] = a * a * alpha * alpha + b * b * beta * beta + stretch.ownVarH[i] * alpha * alpha;
+    stepCovHS[i] = a * a * alpha + stretch.ownCovHS[i];
+    stepVarS[i] = a * a * alpha * alpha + b * b * beta * beta + stretch.ownVarS[i];
   }
   const copy = (a: Float64Array): Float64Array => {
     const out = numbers(n);

@@ -74,6 +74,8 @@ function bridge(below: Stretch, above: Stretch): Stretch {
     one(0),
     one((Math.abs(end - start) * w) / 10 + (GAP_GROWTH_PER_K * Math.max(start, end) * w * w) / 4),
     one(0),
+    one(0),
+    one(0),
     two(0, 0),
     two(none, none),
     two(0, 0),

@@ -66,7 +66,7 @@ export function phaseShape(
     const knots = knotsOf(one, named);
     if (knots === null) continue;
     const scatter = one.table.basis === 'measured' && hasOwn(one);
-    const next = stretchOf(knots, baseCurve(knots, scatter), one, scatter);
+    const next = stretchOf(knots, baseCurve(knots, scatter ? one.table.referenceTemperatureK : null), one);
     if (stretch === null) {
       stretch = next;
       origins.push(originOf(one, next.temperatureK[0], next.temperatureK[next.n - 1], null));

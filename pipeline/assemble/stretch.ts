@@ -16,8 +16,10 @@ export class Stretch {
     readonly c2: Float64Array,
     readonly c3: Float64Array,
     readonly errorJPerMol: Float64Array,
-    /** Variance of the interval's integral from the points' own scatter [J2/mol2]. */
+    /** What the points' own scatter adds to var H, cov(H, S) and var S over the interval: see `Scatter`. */
     readonly ownVarH: Float64Array,
+    readonly ownCovHS: Float64Array,
+    readonly ownVarS: Float64Array,
     readonly h: Float64Array,
     readonly hVar: Float64Array,
     readonly s: Float64Array,
@@ -62,6 +64,8 @@ export class Stretch {
       intervals(this.c3),
       intervals(this.errorJPerMol),
       intervals(this.ownVarH),
+      intervals(this.ownCovHS),
+      intervals(this.ownVarS),
       knots(this.h),
       knots(this.hVar),
       knots(this.s),
@@ -125,6 +129,8 @@ export class Stretch {
       intervals(this.c3, next.c3),
       intervals(this.errorJPerMol, next.errorJPerMol),
       intervals(this.ownVarH, next.ownVarH),
+      intervals(this.ownCovHS, next.ownCovHS),
+      intervals(this.ownVarS, next.ownVarS),
       observed(this.h, next.h, 0),
       observed(this.hVar, next.hVar, Number.POSITIVE_INFINITY),
       observed(this.s, next.s, 0),
@@ -141,26 +147,22 @@ export class Stretch {
   }
 }
 
-export function stretchOf(knots: Knots, base: BaseCurve, series: Series, scatter: boolean): Stretch {
+export function stretchOf(knots: Knots, base: BaseCurve, series: Series): Stretch {
   const n = knots.n;
-  const own = numbers(n - 1);
-  if (scatter) {
-    for (let i = 0; i < n - 1; i++) {
-      const w = knots.temperatureK[i + 1] - knots.temperatureK[i];
-      own[i] = (w * w * (knots.uHeatCapacity[i] ** 2 + knots.uHeatCapacity[i + 1] ** 2)) / 2;
-    }
-  }
+  const { scatter } = base;
   return new Stretch(
     n,
     knots.temperatureK,
     knots.heatCapacity,
-    knots.uHeatCapacity,
+    scatter?.uHeatCapacity ?? knots.uHeatCapacity,
     base.c0,
     base.c1,
     base.c2,
     base.c3,
     base.errorJPerMol,
-    own,
+    scatter?.varH ?? numbers(n - 1),
+    scatter?.covHS ?? numbers(n - 1),
+    scatter?.varS ?? numbers(n - 1),
     knots.h,
     knots.hVar,
     knots.s,
@@ -205,8 +207,12 @@ export function splitAt(stretch: Stretch, temperatureK: number): Stretch {
   };
   const error = put(stretch.errorJPerMol, i + 1, stretch.errorJPerMol[i] * (1 - share));
   error[i] *= share;
-  const own = put(stretch.ownVarH, i + 1, stretch.ownVarH[i] * (1 - share) ** 2);
-  own[i] *= share * share;
+  // Within an interval the points' errors are as good as common to both parts.
+  const shared = (a: Float64Array): Float64Array => {
+    const out = put(a, i + 1, a[i] * (1 - share) ** 2);
+    out[i] *= share * share;
+    return out;
+  };
   const u = stretch.uHeatCapacity[i] * (1 - share) + stretch.uHeatCapacity[i + 1] * share;
   return new Stretch(
     stretch.n + 1,
@@ -218,7 +224,9 @@ export function splitAt(stretch: Stretch, temperatureK: number): Stretch {
     put(c2, i + 1, d2),
     put(c3, i + 1, c3[i]),
     error,
-    own,
+    shared(stretch.ownVarH),
+    shared(stretch.ownCovHS),
+    shared(stretch.ownVarS),
     put(stretch.h, i + 1, 0),
     put(stretch.hVar, i + 1, Number.POSITIVE_INFINITY),
     put(stretch.s, i + 1, 0),

@@ -36,7 +36,7 @@ describe('interpolation error of a table', () => {
       t.map((x) => 20 + 0.05 * x + 6 * Math.sin(x / 90)),
     );
     const cp = Array.from(rows.heatCapacity);
-    const base = baseCurve(rows, false);
+    const base = baseCurve(rows, null);
     const whole = integralOfSpline(t, cp);
     for (let i = 0; i + 1 < t.length; i++) {
       const changes = [0, 1].map((parity) => {
@@ -58,11 +58,11 @@ describe('interpolation error of a table', () => {
         t,
         t.map((x) => 20 + 0.05 * x - 1e-5 * x * x),
       ),
-      false,
+      null,
     );
     // The printed digits are left: 0.5e-6 J/(mol K) over some 60 K.
     for (const e of cubic.errorJPerMol) expect(e).toBeLessThan(1e-3);
-    expect(baseCurve(knots([300, 350], [40, 42]), false).errorJPerMol[0]).toBeCloseTo(10, 9);
+    expect(baseCurve(knots([300, 350], [40, 42]), null).errorJPerMol[0]).toBeCloseTo(10, 9);
   });
 
   it('is worked out on each side of a row that is printed twice, for itself', () => {
@@ -70,9 +70,9 @@ describe('interpolation error of a table', () => {
     const high = [400, 450, 500, 550, 600];
     const f = (x: number): number => 20 + 8 * Math.sin(x / 60);
     const g = (x: number): number => 60 + 8 * Math.cos(x / 50);
-    const both = baseCurve(knots([...low, ...high], [...low.map(f), ...high.map(g)]), false);
-    const one = baseCurve(knots(low, low.map(f)), false);
-    const two = baseCurve(knots(high, high.map(g)), false);
+    const both = baseCurve(knots([...low, ...high], [...low.map(f), ...high.map(g)]), null);
+    const one = baseCurve(knots(low, low.map(f)), null);
+    const two = baseCurve(knots(high, high.map(g)), null);
     expect(Array.from(both.errorJPerMol)).toEqual([...one.errorJPerMol, 0, ...two.errorJPerMol]);
   });
 });
