@@ -44,9 +44,11 @@ const ADJUSTMENT = 'adjustment-closes';
 export class Detectable {
   readonly #bySubstance = new Map<string, SeenOutcome[]>();
   readonly #boilingK = new Map<string, number>();
+  readonly #cells = new Map<string, readonly SourceCell[]>();
 
   constructor(clean: Seen, library: Pick<SlipLibrary, 'substances'> = { substances: [] }) {
     for (const { id, cells } of library.substances) {
+      this.#cells.set(id, cells);
       const boiling = cells.find((cell) => cell.quantity === 'transition-temperature' && cell.place.endsWith('>g'));
       if (boiling !== undefined) this.#boilingK.set(id, boiling.value);
     }
@@ -109,6 +111,7 @@ export class Detectable {
     const tied = rows.some(({ rule, place }) => rule === 'gibbs-continuous' && sides(place).includes(slip.place));
     const checked = (rule: string) => rows.some((row) => row.rule === rule && row.place === slip.place);
     const tables = checked('entropy-follows-heat-capacity') || checked('enthalpy-follows-heat-capacity');
+    if (slip.kind === 'table in degrees Celsius' && !tables) return this.#celsiusShows(slip, rows);
     if (slip.meant === 'old temperature scale') return slip.cells.some((cell) => this.#scaleShows(cell, rows));
     if (slip.kind.startsWith('vapour pressures')) return slip.cells.some((cell) => this.#shows(cell, slip));
     if (slip.meant === '1 atm for 1 bar') {
@@ -122,6 +125,28 @@ export class Detectable {
       return slip.kind.includes('anchor') ? boiling : table || boiling;
     }
     return tables || tied;
+  }
+
+  /**
+   * Heat capacities alone show it where a temperature falls below 0 K, or through the transitions: the Gibbs energy is off by
+   * about half of T dS, dS the integral of [Cp(T + 273.15 K) - Cp(T)]/T from 298.15 K on.
+   */
+  #celsiusShows(slip: Slip, rows: readonly SeenOutcome[]): boolean {
+    if (slip.cells.some(({ printed: now }) => Number(now) < 0)) return true;
+    const gaps = rows.filter(({ rule, place }) => rule === 'gibbs-continuous' && sides(place).includes(slip.place));
+    const cp = (this.#cells.get(slip.substance) ?? [])
+      .filter((cell) => cell.quantity === 'heat-capacity' && cell.place === slip.place && cell.temperatureK > 0)
+      .sort((a, b) => a.temperatureK - b.temperatureK);
+    const at = (kelvin: number) => cp.findLast((cell) => cell.temperatureK <= kelvin)?.value ?? cp[0]?.value ?? 0;
+    let change = 0;
+    let highK = 0;
+    for (let i = 1; i < cp.length; i++) {
+      const [low, high] = [cp[i - 1]!.temperatureK, cp[i]!.temperatureK];
+      if (low < 298 || high + 273.15 > cp.at(-1)!.temperatureK) continue;
+      change += ((at(low + 273.15) - at(low)) * (high - low)) / low;
+      highK = high;
+    }
+    return Math.abs(change) * 0.5 * highK >= TIMES_DETECTABLE * sharpest(gaps.map(printed));
   }
 
   #scaleShows({ cell, changeSi }: PlantedCell, rows: readonly SeenOutcome[]): boolean {

@@ -86,14 +86,13 @@ export const digitsExchanged: Rewrite = (cell, _, random) => {
   const second = cell.text[first + 1] === '.' ? first + 2 : first + 1;
   const letters = [...cell.text];
   [letters[first], letters[second]] = [letters[second]!, letters[first]!];
-  // Nobody prints a zero before other digits.
-  return /^-?0\d/.test(letters.join('')) ? null : letters.join('');
+  return unlessPadded(letters.join(''));
 };
 
 export const oneDigitWrong: Rewrite = (cell, _, random) => {
   const place = random.pick(digitPlaces(cell.text));
   const digit = random.pick([...'0123456789'].filter((other) => other !== cell.text[place]));
-  return cell.text.slice(0, place) + digit + cell.text.slice(place + 1);
+  return unlessPadded(cell.text.slice(0, place) + digit + cell.text.slice(place + 1));
 };
 
 export const asInRowAbove: Rewrite = (cell, { cells }) => {
@@ -163,6 +162,11 @@ export const off: Rewrite = (cell, substance, random, least) => {
 /** In the column's usual number of decimals. */
 export function like(cell: SourceCell, value: number): string {
   return value.toFixed(cell.decimals);
+}
+
+/** Nobody prints a zero before other digits. */
+function unlessPadded(text: string): string | null {
+  return /^-?0\d/.test(text) ? null : text;
 }
 
 function digitPlaces(text: string): number[] {
