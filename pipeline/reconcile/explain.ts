@@ -83,7 +83,7 @@ export function outside({ possible }: SuspectContext, value: number, u: number):
 
 /** Share of proposals that are wrong by more than they say, and how far: this share of the correction. */
 const LOOSE_SHARE = 0.05;
-const FAR_SHARE = 0.01;
+const FAR_SHARE = 0.02;
 /** A value that cannot be told from 0 is met by every factor that is small enough. */
 const NOTHING_LEFT_SHARE = 0.05;
 

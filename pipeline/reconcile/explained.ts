@@ -6,6 +6,7 @@ import type { NumberQuantity } from '../../schemas/quantities.js';
 import { type Explanation, explain, outside, type SuspectContext } from './explain.js';
 import { unknownScore } from './slips/unknown-error.js';
 import { suspectContext } from './suspect-context.js';
+import { usualSize } from './usual-size.js';
 
 /** Suspects with the usual slip that leads to their proposed value, where one does. */
 export function explained(checked: CheckedCase, suspects: readonly Suspect[], policy: Policy): Suspect[] {
@@ -40,8 +41,9 @@ export function withExplanations(findings: readonly Finding[], suspects: readonl
 }
 
 /**
- * What `orderedByExplanation` weighs a suspect by: its best explanation's score, null where it has none, and far below
- * both where the proposed value cannot be (a melting point above the boiling point, a negative entropy).
+ * What `orderedByExplanation` weighs a suspect by: its best explanation's score, or an unknown error's, and how usual the
+ * size of the proposed value is; far below all that where the value cannot be (a negative entropy). Null where the suspect
+ * is no single printed number.
  */
 export function scoreInGroup(
   substance: HarmonisedCase,
@@ -49,12 +51,16 @@ export function scoreInGroup(
   policy: Policy,
 ): number | null {
   const found = suspectContext(substance, suspect);
-  if (found !== null && outside(found, suspect.proposed, suspect.uProposed)) return IMPOSSIBLE_SCORE;
-  const score = explanationOf(substance, suspect, policy)?.score ?? null;
-  if (found === null || found.observed !== 0 || !isFormation(found.quantity)) return score;
+  if (found === null) return null;
+  const { proposed, uProposed } = suspect;
+  if (outside(found, proposed, uProposed)) return IMPOSSIBLE_SCORE;
+  const w = (proposed - found.observed) / uProposed;
+  const score = explanationOf(substance, suspect, policy)?.score ?? unknownScore(Number.isFinite(w) && w !== 0 ? w : 1);
+  const { quantity, temperatureK, gas, transition = -1 } = found;
+  const size = usualSize(quantity, proposed, uProposed, { temperatureK, gas, transition }, substance);
   // Zero is the definition of a reference state, and no number that somebody got wrong.
-  const w = suspect.proposed / suspect.uProposed;
-  return (score ?? unknownScore(Number.isFinite(w) ? w : 1)) + Math.log(WRONG_ZERO_SHARE);
+  const defined = found.observed === 0 && isFormation(quantity) ? Math.log(WRONG_ZERO_SHARE) : 0;
+  return score + size + defined;
 }
 
 const IMPOSSIBLE_SCORE = -1e6;

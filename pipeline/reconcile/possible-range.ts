@@ -1,5 +1,5 @@
 /** Between what a stated number has to lie, whatever stands there now. */
-import type { HarmonisedCase, StatedTransition } from '../../schemas/harmonised.js';
+import type { StatedTransition } from '../../schemas/harmonised.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
 import type { TableMeaning } from '../../schemas/table-meaning.js';
 
@@ -11,22 +11,12 @@ const HIGHEST_K = 20_000;
 const ANY: PossibleRange = [Number.NEGATIVE_INFINITY, Number.POSITIVE_INFINITY];
 const POSITIVE: PossibleRange = [0, Number.POSITIVE_INFINITY];
 
-/**
- * A transition lies between those that lead to its lower phase and those that lead on from its upper one, and takes up
- * heat; temperatures, pressures, heat capacities and entropies from the third law's zero are positive.
- * @param transition index among the substance's, -1 for a number of none
- */
-export function possibleRange(
-  quantity: NumberQuantity,
-  table: TableMeaning,
-  transition: number,
-  { transitions }: HarmonisedCase,
-): PossibleRange {
+/** A transition takes up heat; temperatures, pressures, heat capacities and entropies from the third law's zero are positive. */
+export function possibleRange(quantity: NumberQuantity, table: TableMeaning): PossibleRange {
   switch (quantity) {
     case 'temperature':
-      return [0, HIGHEST_K];
     case 'transition-temperature':
-      return betweenNeighbours(transitions, transition);
+      return [0, HIGHEST_K];
     case 'entropy':
       return table.entropyZero === 'absolute' && table.isobarPa === null ? POSITIVE : ANY;
     case 'transition-enthalpy':
@@ -40,8 +30,12 @@ export function possibleRange(
   }
 }
 
-/** A phase that returns (iron's bcc) has the reverse transition, which bounds nothing. */
-function betweenNeighbours(transitions: readonly StatedTransition[], index: number): PossibleRange {
+/**
+ * A transition lies between those that lead to its lower phase and those that lead on from its upper one [K], where they
+ * are right themselves. A phase that returns (iron's bcc) has the reverse transition, which bounds nothing.
+ * @param index among the transitions, -1 for none
+ */
+export function neighbouringTemperatures(transitions: readonly StatedTransition[], index: number): PossibleRange {
   const own = transitions[index];
   if (own === undefined) return [0, HIGHEST_K];
   const others = transitions.filter((t) => t !== own && !(t.from === own.to && t.to === own.from));

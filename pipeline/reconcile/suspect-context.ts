@@ -37,7 +37,7 @@ function tableContext(substance: HarmonisedCase, { address }: Addressed): Suspec
       partner: null,
       gas: series.phase.startsWith('g'),
       temperatureScale: series.table.temperatureScale,
-      possible: possibleRange(q.is, series.table, -1, substance),
+      possible: possibleRange(q.is, series.table),
       ...knownSteps(substance, { phase: series.phase, source: series.table.source }),
     };
   }
@@ -99,8 +99,9 @@ function datumContext(substance: HarmonisedCase, { address }: Addressed): Suspec
     rowAbove: above === undefined ? null : cellOf(above.datum),
     partner: partner === null ? null : cellOf(partner),
     gas: phases[phases.length - 1].startsWith('g'),
+    transition,
     temperatureScale: table.temperatureScale,
-    possible: possibleRange(quantity, table, transition, substance),
+    possible: possibleRange(quantity, table),
     ...knownSteps(substance, { phase: phases[phases.length - 1], source: table.source, transition }),
   };
 }

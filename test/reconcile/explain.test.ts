@@ -249,7 +249,7 @@ describe('an explained cell', () => {
 });
 
 describe('a proposal that is off by more than it says', () => {
-  it('is still met by a slip of units, sign or exchange within a hundredth', () => {
+  it('is still met by a slip of units, sign or exchange within two hundredths', () => {
     // A second error in the substance pulls the crossing 1 K aside.
     const melting = context('327.46', 327.46, { quantity: 'transition-temperature', unit: 'K' });
     expect(explain(melting, 599.6, 0.05, 0.5)[0]).toMatchObject({ slip: 'celsius-read-as-kelvin' });

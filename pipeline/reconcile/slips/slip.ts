@@ -26,6 +26,8 @@ export interface SuspectContext extends PrintedCell {
   readonly gas: boolean;
   /** What the source says its temperatures are on; absent where nothing is known. */
   readonly temperatureScale?: TemperatureScale;
+  /** The transition that the number belongs to, among the substance's; absent where there is none. */
+  readonly transition?: number;
   /** Between what the value has to lie [SI]. */
   readonly possible?: readonly [low: number, high: number];
   /** H(Tr) - H(0) of the phase [J/mol], each way that it is stated. */
