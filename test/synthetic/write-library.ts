@@ -18,7 +18,7 @@ export interface SyntheticOptions {
    * `none`: every printed number is the true one, rounded. Default `stated`.
    */
   readonly errors?: 'stated' | 'none';
-  /** Whether the design of that name has its table of vapour pressures. */
+  /** Whether the design of that name has its table of vapour pressures; default true. */
   readonly vapourPressures?: boolean;
 }
 
@@ -30,7 +30,7 @@ export interface SyntheticSubstance {
 
 /** The same options give the same bytes. */
 export function writeSyntheticLibrary(dir: string, options: SyntheticOptions): SyntheticSubstance[] {
-  const { seed, substances, designs = DESIGN_NAMES, errors = 'stated', vapourPressures = false } = options;
+  const { seed, substances, designs = DESIGN_NAMES, errors = 'stated', vapourPressures = true } = options;
   const known = designs.map((name) => designNamed(name, vapourPressures));
   const entries = Array.from({ length: substances }, (_, i): LibraryEntry => {
     const random = chance(mixedSeed(seed, i));
