@@ -148,10 +148,11 @@ describe('the curve of a measured series', () => {
         mean[i] += ratio / 300;
       });
     }
-    // One standard deviation of an rms of 300 draws is 4 %. Below 1 because smoothing is not credited; next to the reference
-    // temperature, where the increments vanish, the interpolation error prevails. Measured: 0.88, 0.81, 0.33, 0.69.
+    // One standard deviation of an rms of 300 draws is 4 %. Next to the reference temperature, where the increments vanish,
+    // the interpolation error prevails. Measured: 0.93, 0.96, 0.81, 1.04.
     for (const sum of sums) expect(Math.sqrt(sum)).toBeLessThan(1.1);
-    for (const i of [0, 1, 3]) expect(Math.sqrt(sums[i])).toBeGreaterThan(0.6);
+    for (const i of [0, 1, 3]) expect(Math.sqrt(sums[i])).toBeGreaterThan(0.85);
+    expect(Math.sqrt(sums[2])).toBeGreaterThan(0.7);
     for (const m of mean) expect(Math.abs(m)).toBeLessThan(0.25);
   });
 
