@@ -35,30 +35,16 @@ export interface Condition {
   readonly within: boolean;
 }
 
-/** Per transition G_to - G_from = 0, dH - stated dH = 0, dS - stated dS = 0; dH - T dS = 0 where the curves rest on them. */
+/** Per transition that two curves meet at: G_to - G_from = 0, dH - stated dH = 0, dS - stated dS = 0. */
 export function transitionConditions(joined: readonly Joined[]): Condition[] {
   const conditions: Condition[] = [];
   joined.forEach((j, k) => {
+    if (j.byConstruction) return;
     const { stated, index } = j.judged;
     const { at, atK, within } = j;
     const [keyT, keyH, keyS] = [datumKey.temperature(index), datumKey.enthalpy(index), datumKey.entropy(index)];
     const { enthalpy, entropy } = stated;
     const base = { joined: k, transition: index, within };
-    if (j.byConstruction) {
-      if (enthalpy === null || entropy === null) return;
-      const t = stated.temperature.value;
-      const sum = new ErrorSum();
-      sum.addDatum(keyH, 1, 0).addDatum(keyS, -t, 0).addDatum(keyT, -entropy.value, 0);
-      conditions.push({
-        ...base,
-        kind: 'closure',
-        value: enthalpy.value - t * entropy.value,
-        sum,
-        variance: 0,
-        gas: 0,
-      });
-      return;
-    }
     const offset = stated.temperature.value - atK;
     const uGas = gasU(j);
     const isobar = j.from.source.family.isobarPa;
