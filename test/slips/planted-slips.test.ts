@@ -13,26 +13,24 @@ const REPORTING_SEED = 700_001;
 /**
  * What falls short of what is asked, with what is held instead. Causes: the pressure of a boiling point is not among the data
  * that are suspected; a transition that is left out is not missed; a slip of scale in a whole table, or at 1 atm in a whole
- * gas, is not seen as one; the second row from either end of a measured series is not tested; coarse tables are said to be
- * tested more sharply than they are; a temperature far off leaves a chain of phases without suspects.
+ * gas, is not seen as one; the second row from either end of a measured series is not tested; vapour pressures far off are
+ * passed over; of two slips, what is proposed for one is pulled aside by the other.
  */
 const SHORT: Readonly<Record<'published' | 'synthetic', Readonly<Record<string, number>>>> = {
   published: {
     'anchors and transitions: in the first group': 0.94,
     'anchors and transitions: first, where alone in its group, or of unit, sign or exchange': 0.93,
-    'many cells at once: caught': 0.93,
-    'many cells at once: first': 0.82,
-    'two slips in one substance: both named first': 0.92,
+    'many cells at once: caught': 0.92,
+    'many cells at once: first': 0.84,
+    'two slips in one substance: both named first': 0.9,
   },
   synthetic: {
-    'S, H, -[G-H]/T cells of five units or more: caught': 0.93,
-    'S, H, -[G-H]/T cells: first': 0.93,
-    'interior Cp cells of 1 % or more: caught': 0.95,
-    'anchors and transitions: in the first group': 0.95,
-    'anchors and transitions: first, where alone in its group, or of unit, sign or exchange': 0.92,
+    'interior Cp cells of 1 % or more: caught': 0.94,
+    'interior Cp cells: first': 0.94,
+    'anchors and transitions: first, where alone in its group, or of unit, sign or exchange': 0.95,
     'many cells at once: caught': 0.9,
-    'many cells at once: first': 0.77,
-    'two slips in one substance: both named first': 0.77,
+    'many cells at once: first': 0.86,
+    'two slips in one substance: both named first': 0.83,
   },
 };
 
@@ -54,11 +52,11 @@ function isHeld({ holds, reached, of }: Rate, floor: number | undefined): boolea
 
 it('finds, names and explains slips in the published sets as often as is held', async () => {
   const folders = { published: 'test/published', 'held-out': 'test/held-out' };
-  const options = { rounds: 20, pairRounds: 6, firstSeed: REPORTING_SEED };
+  const options = { rounds: 14, pairRounds: 4, firstSeed: REPORTING_SEED };
   expectHeld(await studyPublished(folders, runPipeline, options), SHORT.published);
 }, 120_000);
 
 it('finds, names and explains slips in synthetic substances as often as is held', async () => {
-  const options = { rounds: 3, pairRounds: 1, firstSeed: REPORTING_SEED };
+  const options = { rounds: 2, pairRounds: 1, firstSeed: REPORTING_SEED };
   expectHeld(await studySynthetic(300, runPipeline, options), SHORT.synthetic);
 }, 120_000);
