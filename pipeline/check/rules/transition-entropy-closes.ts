@@ -1,6 +1,7 @@
 import type { Datum } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
 import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
+import { differenceUncertainty } from '../curve/difference-uncertainty.js';
 import {
   isFirstOrder,
   type Judgement,
@@ -33,15 +34,14 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
   }
   if (isFirstOrder(view) && pair !== null && pair.atK === t && !view.byConstruction) {
     const { at } = pair;
-    // u(dH) of the curves: that of their levels and rows; u(dG) and T u(dS) bound it.
-    const uGap = pair.uGapJPerMol;
+    const uCurves = differenceUncertainty(pair);
     if (enthalpy !== null) {
       comparisons.push({
         observed: enthalpy.value,
         expected: at.enthalpyJPerMol,
         u: Math.hypot(
           view.evidence === 'arithmetic' ? enthalpy.uRounding : enthalpy.u,
-          uGap,
+          uCurves.enthalpyJPerMol,
           Math.abs(at.heatCapacityJPerMolK) * view.uStatedK,
         ),
         about: enthalpy,
@@ -53,7 +53,7 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
         expected: t * at.entropyJPerMolK,
         u: Math.hypot(
           t * (view.evidence === 'arithmetic' ? entropy.uRounding : entropy.u),
-          uGap,
+          uCurves.entropyTimesTJPerMol,
           Math.abs(at.heatCapacityJPerMolK) * view.uStatedK,
         ),
         about: entropy,

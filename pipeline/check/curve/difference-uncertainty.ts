@@ -1,0 +1,19 @@
+import { ErrorSum } from '../../core/physics/error-sum.js';
+import type { TransitionView } from './transition-view.js';
+
+/**
+ * Standard uncertainties [J/mol] of dH and of T dS that two curves give at a temperature, what the two owe to one datum
+ * cancelling. Errors of Cp, and of a level carried by dH and dS, move H and TS together: neither is bounded by u(dG). What
+ * u(dG) holds besides the curves, the gas's imperfection and the pressure, is added to both.
+ */
+export function differenceUncertainty({ from, to, atK, uGapJPerMol }: NonNullable<TransitionView['pair']>): {
+  readonly enthalpyJPerMol: number;
+  readonly entropyTimesTJPerMol: number;
+} {
+  const h = new ErrorSum().add(to.source, atK, 1 / to.formulaUnits, 0).add(from.source, atK, -1 / from.formulaUnits, 0);
+  const s = new ErrorSum().add(to.source, atK, 0, 1 / to.formulaUnits).add(from.source, atK, 0, -1 / from.formulaUnits);
+  const hh = Math.max(0, h.covariance(h));
+  const ss = Math.max(0, atK * atK * s.covariance(s));
+  const besides = Math.max(0, uGapJPerMol * uGapJPerMol - (hh - 2 * atK * h.covariance(s) + ss));
+  return { enthalpyJPerMol: Math.sqrt(hh + besides), entropyTimesTJPerMol: Math.sqrt(ss + besides) };
+}
