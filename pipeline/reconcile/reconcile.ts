@@ -6,7 +6,7 @@ import { testCount } from '../core/physics/adjustment.js';
 import { acceptedOf } from './acceptances.js';
 import { type Adjusted, adjusted, adjustmentFindings, adjustmentOutcomes } from './adjustment-closes.js';
 import { withCauses } from './causes.js';
-import { explained, explanationOf, withExplanations } from './explained.js';
+import { explained, scoreInGroup, withExplanations } from './explained.js';
 import { oneOutcomeAPlace } from './one-outcome.js';
 import { type RankedDatum, type SuspectGroup, suspectGroups } from './rank-data.js';
 import { suspectsOf } from './suspects.js';
@@ -44,8 +44,7 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
   const groups: SuspectGroup[] = [];
   const wanted = checked.findings.some((f) => TRANSITION_RULES.has(f.rule) && f.severity !== 'note');
   const scoreOf = ({ of, proposed, uProposed }: RankedDatum): number | null =>
-    explanationOf(checked.assembled.examined.harmonised, { address: of.datum.address, proposed, uProposed }, policy)
-      ?.score ?? null;
+    scoreInGroup(checked.assembled.examined.harmonised, { address: of.datum.address, proposed, uProposed }, policy);
   for (const one of solved) {
     outcomes.push(...adjustmentOutcomes(one));
     if (!wanted && !one.open) continue;
