@@ -5,6 +5,7 @@ import { sayFinding, saySuspect } from '../report/report.js';
 import type { Request } from './arguments.js';
 import { type Ask, askOnTerminal } from './ask.js';
 import { beforeAfterLines, newFindings } from './before-after.js';
+import { refuseWholeColumn } from './column-remedy.js';
 import {
   chosenSuspect,
   type PlannedCorrection,
@@ -30,6 +31,7 @@ export async function correct(request: Request, log: Log, ask: Ask = askOnTermin
   const { finding, before } = found;
   const suspects = suspectsToCorrect(found);
   const suspect = chosenSuspect(suspects, request);
+  refuseWholeColumn(found, suspect, request.sources);
   const { planned, after, first } = bestOf(request, found, suspect);
   refuseUnreadable(after, suspect.address, planned);
   const event = {

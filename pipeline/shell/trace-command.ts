@@ -102,6 +102,9 @@ interface LeftOut extends Address {
   readonly finding: string;
 }
 
+/** More of one column are told by the first of them. */
+const MOST_LEFT_OUT = 3;
+
 /** Cells of the phase that the checks name: the curve is made without them. */
 function leftOut(judged: ReconciledCase, phase: string): LeftOut[] {
   const { named, harmonised } = judged.checked.assembled.examined;
@@ -119,7 +122,17 @@ function leftOut(judged: ReconciledCase, phase: string): LeftOut[] {
 function leftOutLines(judged: ReconciledCase, phase: string): string[] {
   const cells = leftOut(judged, phase);
   if (cells.length === 0) return [];
-  const said = cells.map((cell) => `${sayPlace(cell)} = ${cell.printed} (finding ${cell.finding})`);
+  const columns = new Map<string, LeftOut[]>();
+  for (const cell of cells) {
+    const key = `${cell.finding} ${cell.file} ${cell.column}`;
+    columns.set(key, [...(columns.get(key) ?? []), cell]);
+  }
+  const said = [...columns.values()].flatMap((column) => {
+    const [first] = column as [LeftOut];
+    if (column.length > MOST_LEFT_OUT)
+      return [`${sayPlace(first)} and ${column.length - 1} more (finding ${first.finding})`];
+    return column.map((cell) => `${sayPlace(cell)} = ${cell.printed} (finding ${cell.finding})`);
+  });
   return ['', ...wrap(`Left out of the curve, since the checks name it: ${said.join('; ')}.`, 80)];
 }
 

@@ -80,7 +80,8 @@ function findingOf(
     observed,
     expected: proposed,
     difference: observed - proposed,
-    tolerance: policy.cell.threshold * uProposed,
+    // Temperatures of an evaluated table have no last place.
+    tolerance: uProposed > 0 ? policy.cell.threshold * uProposed : null,
     unit: QUANTITY_UNITS[quantity],
     address: addressOf(series, firstRow, column),
     evidence: rows.map((row) => evidenceOf(series, row, column)),

@@ -9,6 +9,8 @@ export interface Closing {
   /** Sum of squared normalised residuals, and the same with each held below `CAP`. */
   readonly squares: number;
   readonly capped: number;
+  /** Sum of the squared interpolation errors of Cp [J2/mol2]: a run of wrong ones makes it rough at its ends. */
+  readonly roughness: number;
   /** By row: 1 where a condition that begins there fails. */
   readonly bad: Uint8Array;
 }
@@ -26,6 +28,7 @@ export function closing(rows: TableRows, res: Residuals): Closing {
   let failing = 0;
   let squares = 0;
   let capped = 0;
+  let roughness = 0;
   const count = (y: number, variance: number, row: number): void => {
     if (!(variance > 0)) return;
     const square = (y * y) / variance;
@@ -45,6 +48,7 @@ export function closing(rows: TableRows, res: Residuals): Closing {
     if (i === n - 1 || res.usable[i] === 0) continue;
     const next = rows.row[i + 1];
     const e2 = res.e[i] * res.e[i] + res.own[i];
+    roughness += res.e[i] * res.e[i];
     if (h !== null && h.present[r] === 1 && h.present[next] === 1) {
       count(h.values[next] - h.values[r] - res.q[i], cellU(h, r) ** 2 + cellU(h, next) ** 2 + e2, i);
     }
@@ -56,7 +60,7 @@ export function closing(rows: TableRows, res: Residuals): Closing {
   }
   const zero = enthalpyAtReference(rows);
   if (zero !== null) count(zero.enthalpy, zero.u * zero.u, zero.at);
-  return { tested, failing, squares, capped, bad };
+  return { tested, failing, squares, capped, roughness, bad };
 }
 
 /** H - H(Tr) at the row of Tr, which is zero where the increments count from there; null where the table has no such row. */

@@ -68,18 +68,13 @@ export function wholeColumns(printed: Series, context: TableContext): WholeColum
     return q !== null && statesUApart(series, q);
   });
   for (const uToo of apart ? [true, false] : [true]) {
-    const whole = searched(series, null, context, uToo);
+    const whole = searched(series, context, uToo);
     if (whole.length > 0) return whole;
   }
-  const rows = tableRows(series) as TableRows;
-  for (const run of runs(rows, closing(rows, residuals(rows, true)))) {
-    const found = searched(series, run, context, true);
-    if (found.length > 0) return found;
-  }
-  return [];
+  return runOfRows(series, context);
 }
 
-function searched(series: Series, run: RowRun, context: TableContext, uToo: boolean): WholeColumns[] {
+function searched(series: Series, context: TableContext, uToo: boolean): WholeColumns[] {
   const found: WholeColumns[] = [];
   let current = series;
   let rows = tableRows(current);
@@ -88,18 +83,16 @@ function searched(series: Series, run: RowRun, context: TableContext, uToo: bool
   const first = now;
   const allowed = Math.floor(LEFT_SHARE * first.failing);
   while (found.length < MOST_LAWS) {
-    const tried = tryAll(current, rows, run, now, context, uToo);
+    const tried = withoutNeedless(tryAll(current, rows, null, now, context, uToo), now);
     const best = tried[0];
     if (best === undefined) return [];
     const closes = best.closing.failing <= allowed;
     // Laws that only help one another are believed where each is a usual slip.
     if ((!closes || found.length > 0) && best.hypothesis.explanation === null) return [];
     if (!closes && now.failing - best.closing.failing < Math.max(FEWEST_FAILING, FIRST_SHARE * now.failing)) return [];
-    found.push(described(best, closes && found.length === 0 ? tried : [], run, now, uToo));
+    found.push(described(best, closes && found.length === 0 ? tried : [], null, now, uToo));
     if (closes) return found;
-    // Only whole columns go wrong in company.
-    if (run !== null) return [];
-    current = changed(current, best.hypothesis.changes, run, uToo);
+    current = changed(current, best.hypothesis.changes, null, uToo);
     const next = tableRows(current);
     if (next === null) return [];
     rows = next;
@@ -108,7 +101,7 @@ function searched(series: Series, run: RowRun, context: TableContext, uToo: bool
   return [];
 }
 
-/** The hypotheses that close about as well as any, with what they leave, likeliest first. */
+/** Each hypothesis that makes fewer conditions fail, with what it leaves. */
 function tryAll(
   series: Series,
   rows: TableRows,
@@ -119,19 +112,26 @@ function tryAll(
 ): Tried[] {
   const inRun = run === null ? null : new Set(run.rows);
   const within = (i: number): boolean => inRun === null || inRun.has(rows.row[i]);
-  const res = residuals(rows, true);
-  const tried: Tried[] = [];
-  for (const hypothesis of columnHypotheses(rows, res, run, within, context)) {
-    const after = changed(series, hypothesis.changes, run, uToo);
-    const next = tableRows(after);
-    if (next === null || next.n < rows.n) continue;
-    const left = closing(next, residuals(next, true));
-    // A law that leaves less to be tested would close by that alone.
-    if (left.tested < 0.8 * now.tested || left.failing >= now.failing) continue;
-    const score = 2 * (hypothesis.prior + standing(next, context)) - left.capped;
-    tried.push({ hypothesis, closing: left, score });
-  }
-  return withoutNeedless(tried, now);
+  return columnHypotheses(rows, residuals(rows, true), run, within, context).flatMap(
+    (hypothesis) => tryOne(series, rows, hypothesis, run, now, context, uToo) ?? [],
+  );
+}
+
+function tryOne(
+  series: Series,
+  rows: TableRows,
+  hypothesis: ColumnHypothesis,
+  run: RowRun,
+  now: Closing,
+  context: TableContext,
+  uToo: boolean,
+): Tried | null {
+  const next = tableRows(changed(series, hypothesis.changes, run, uToo));
+  if (next === null || next.n < rows.n) return null;
+  const left = closing(next, residuals(next, true));
+  // A law that leaves less to be tested would close by that alone.
+  if (left.tested < 0.8 * now.tested || left.failing >= now.failing) return null;
+  return { hypothesis, closing: left, score: 2 * (hypothesis.prior + standing(next, context)) - left.capped };
 }
 
 /** Those that close about as well as any, an unexplained factor only where no usual slip lies near it. */
@@ -230,22 +230,55 @@ function standing(rows: TableRows, { substance, anchors }: TableContext): number
   return sum;
 }
 
-/** Runs of rows that fail nearly throughout, to the end of the table or to a break; a row more or less at their ends. */
-function runs(rows: TableRows, { bad }: Closing): { readonly rows: readonly number[] }[] {
-  const first = bad.indexOf(1);
-  const last = bad.lastIndexOf(1);
-  if (first < 0 || last - first + 1 < FEWEST_ROWS) return [];
-  let failing = 0;
-  for (let i = first; i <= last; i++) failing += bad[i];
-  if (failing < 0.7 * (last - first + 1)) return [];
-  const out: { readonly rows: readonly number[] }[] = [];
-  const isEnd = (i: number): boolean => i === 0 || rows.from[i] === i;
-  const isLast = (i: number): boolean => i === rows.n - 1 || rows.to[i] === i;
-  for (let a = Math.max(0, first - 1); a <= Math.min(first + 3, rows.n - 1); a++) {
-    for (let b = Math.max(0, last - 2); b <= Math.min(last + 2, rows.n - 1); b++) {
-      if (b - a + 1 < FEWEST_ROWS || (a === 0 && b === rows.n - 1) || !(isEnd(a) || isLast(b))) continue;
-      out.push({ rows: Array.from(rows.row.subarray(a, b + 1)) });
+interface TriedRun {
+  readonly tried: Tried;
+  readonly run: RowRun;
+}
+
+/** Laws whose ends are looked for. */
+const MOST_RUNS = 4;
+const RUN_LEFT_SHARE = 0.05;
+
+/** One law for a run of rows, from an end of the table or from a break on: its ends are where it closes best. */
+function runOfRows(series: Series, context: TableContext): WholeColumns[] {
+  const rows = tableRows(series) as TableRows;
+  const now = closing(rows, residuals(rows, true));
+  const last = rows.n - 1;
+  const low = now.bad.indexOf(1);
+  const high = now.bad.lastIndexOf(1);
+  if (low < 0 || high - low < FEWEST_ROWS || now.failing < FEWEST_FAILING) return [];
+  const runFrom = (a: number, b: number) => ({ rows: Array.from(rows.row.subarray(a, b + 1)) });
+  // A run's first condition is that between it and the row before.
+  const from = low === 0 ? 0 : low + 1;
+  const to = high >= last - 1 ? last : high;
+  const guesses = tryAll(series, rows, runFrom(from, to), now, context, true)
+    .sort((a, b) => a.closing.failing - b.closing.failing || b.score - a.score)
+    .slice(0, MOST_RUNS);
+  let best: TriedRun | null = null;
+  for (const { hypothesis } of guesses) {
+    let own: TriedRun | null = null;
+    for (let a = Math.max(0, from - 2); a <= Math.min(from + 2, last); a++) {
+      for (let b = Math.max(0, to - 2); b <= Math.min(to + 2, last); b++) {
+        const reaches = a === rows.from[a] || b === rows.to[b];
+        if (b - a + 1 < FEWEST_ROWS || (a === 0 && b === last) || !reaches) continue;
+        const run = runFrom(a, b);
+        const tried = tryOne(series, rows, hypothesis, run, now, context, true);
+        if (tried !== null && (own === null || endsBetter(tried, own.tried))) own = { tried, run };
+      }
     }
+    if (own !== null && (best === null || isBetter(own.tried, best.tried))) best = own;
   }
-  return out;
+  if (best === null || best.tried.closing.failing > RUN_LEFT_SHARE * now.failing) return [];
+  return [described(best.tried, [], best.run, now, true)];
+}
+
+function isBetter(one: Tried, other: Tried): boolean {
+  const fewer = other.closing.failing - one.closing.failing;
+  return fewer > 0 || (fewer === 0 && one.score > other.score);
+}
+
+/** A wrong Cp at an end of the run hides in the interpolation error that it makes. */
+function endsBetter(one: Tried, other: Tried): boolean {
+  const hasCp = one.hypothesis.changes.some(({ column }) => column === 'heatCapacity');
+  return hasCp ? one.closing.roughness < other.closing.roughness : isBetter(one, other);
 }

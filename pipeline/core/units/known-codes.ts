@@ -69,6 +69,11 @@ const MEANT: Readonly<Record<string, string>> = {
   degk: 'K',
 };
 
+/** Every known code for the SI code `target`, the usual ones first. */
+export function knownCodes(target: string): readonly string[] {
+  return KNOWN[target] ?? [target];
+}
+
 /** Up to three known codes for the SI code `target`, nearest in spelling first (one that continues the code before others); signs and case count for little. */
 export function nearestCodes(target: string, code: string): readonly string[] {
   const known = KNOWN[target] ?? [target];
