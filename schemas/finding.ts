@@ -188,4 +188,6 @@ export interface Suspect {
   /** Code of the usual slip that would explain it, and the cell as that slip would have it. */
   readonly explanation: string | null;
   readonly explainedPrinted: string | null;
+  /** The measurement that would tell a group's first two suspects apart; null where it has one. */
+  readonly toldApartBy: string | null;
 }

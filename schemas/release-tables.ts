@@ -226,6 +226,7 @@ const suspects = {
     number('smallest_detectable', null, 'The smallest error in this cell that the data would reveal'),
     text('explanation', 'The usual slip that would explain it', optional),
     text('explained_printed', 'The cell as that slip would have it', optional),
+    text('told_apart_by', 'The measurement that would tell it from the next suspect of its group', optional),
   ],
 } as const satisfies PublishedTable;
 

@@ -107,4 +107,5 @@ function addSuspect(to: Builders<typeof RELEASE_TABLES.suspects>, suspect: Suspe
   to.smallest_detectable.push(suspect.smallestDetectable);
   to.explanation.push(suspect.explanation);
   to.explained_printed.push(suspect.explainedPrinted);
+  to.told_apart_by.push(suspect.toldApartBy);
 }

@@ -1,6 +1,8 @@
+import type { Policy } from '../../schemas/policy.js';
 import { FreeData, type Whitened, whitened } from '../core/physics/adjustment.js';
 import { orderedByExplanation } from './order-in-group.js';
 import { type ConditionDatum, type ConditionSystem, resolvedAt, restsOn } from './system/system.js';
+import { toldApartBy } from './told-apart.js';
 import { type WholeSlip, wholeSlips } from './whole/whole-slips.js';
 
 /** One datum under suspicion, with what the conditions say of it. */
@@ -22,6 +24,8 @@ export interface SuspectGroup {
   readonly phases: readonly string[];
   readonly before: number;
   readonly after: number;
+  /** The measurement that would tell the first two apart. */
+  readonly toldApartBy: string | null;
 }
 
 const MOST_ERRORS = 4;
@@ -37,32 +41,38 @@ export function suspectGroups(
   threshold: number,
   whole: Whitened = whitened(system.y, system.q, system.m),
   scoreOf: (one: RankedDatum) => number | null = () => null,
+  policy: Policy | null = null,
 ): SuspectGroup[] {
-  const groups: SuspectGroup[] = [];
-  const free = new FreeData(whole);
-  let y = system.y;
-  const removed = new Set<ConditionDatum>();
-  let slips: readonly WholeSlip[] | null = null;
+  const groups: Omit<SuspectGroup, 'toldApartBy'>[] = [];
+  const slips = { made: null as readonly WholeSlip[] | null };
   while (groups.length < Math.min(MOST_ERRORS, system.m)) {
-    const before = free.chiSquareOf(y);
-    const ranked: RankedDatum[] = [];
-    for (const d of system.data) {
-      const one = removed.has(d) ? null : rank(free, y, before, system, d);
-      if (one !== null) ranked.push(one);
-    }
-    if (!ranked.some((one) => Math.abs(one.w) > threshold)) break;
-    slips ??= wholeSlips(system);
-    for (const slip of slips) {
-      const one = slip.data.some((d) => removed.has(d)) ? null : rankWhole(free, y, before, system, slip);
-      if (one !== null) ranked.push(one);
-    }
-    ranked.sort((a, b) => Math.abs(b.w) - Math.abs(a.w));
-    const best = ranked[0];
-    const near = (r: RankedDatum): boolean =>
-      best.w * best.w - r.w * r.w < ONE_GROUP + ROUNDING * best.w * best.w && Math.abs(r.w) > threshold / 2;
-    const members = ordered(ranked.filter(near), scoreOf);
+    const found = nextGroup(system, threshold, whole, groups, scoreOf, slips);
+    if (found === null) break;
+    groups.push(found);
+  }
+  // What was said of one error before the others were known is said again with all of them set free.
+  return groups.map((group, k) => {
+    const others = groups.filter((_, other) => other !== k);
+    const again = others.length === 0 ? null : nextGroup(system, threshold, whole, others, scoreOf, slips);
+    const said = again ?? group;
+    return { ...said, toldApartBy: policy === null ? null : toldApartBy(said.members, system, policy) };
+  });
+}
+
+/** The best suspects with the first ones of `known` set free or undone; null where nothing is beyond the threshold. */
+function nextGroup(
+  system: ConditionSystem,
+  threshold: number,
+  whole: Whitened,
+  known: readonly Pick<SuspectGroup, 'members'>[],
+  scoreOf: (one: RankedDatum) => number | null,
+  slips: { made: readonly WholeSlip[] | null },
+): Omit<SuspectGroup, 'toldApartBy'> | null {
+  const free = new FreeData(whole);
+  const removed = new Set<ConditionDatum>();
+  let y = system.y;
+  for (const { members } of known) {
     const [first] = members;
-    groups.push({ members, phases: bearing(system, first.of), before, after: before - best.w * best.w });
     if (first.whole !== null) {
       for (const d of first.whole.data) removed.add(d);
       if (first.whole.open) free.free(first.whole.change);
@@ -75,7 +85,24 @@ export function suspectGroups(
     if (resolved !== null) y = merged(y, system.y, resolved.y);
     free.free(resolved?.direction ?? first.of.direction);
   }
-  return groups;
+  const before = free.chiSquareOf(y);
+  const ranked: RankedDatum[] = [];
+  for (const d of system.data) {
+    const one = removed.has(d) ? null : rank(free, y, before, system, d);
+    if (one !== null) ranked.push(one);
+  }
+  if (!ranked.some((one) => Math.abs(one.w) > threshold)) return null;
+  slips.made ??= wholeSlips(system);
+  for (const slip of slips.made) {
+    const one = slip.data.some((d) => removed.has(d)) ? null : rankWhole(free, y, before, system, slip);
+    if (one !== null) ranked.push(one);
+  }
+  ranked.sort((a, b) => Math.abs(b.w) - Math.abs(a.w));
+  const best = ranked[0];
+  const near = (r: RankedDatum): boolean =>
+    best.w * best.w - r.w * r.w < ONE_GROUP + ROUNDING * best.w * best.w && Math.abs(r.w) > threshold / 2;
+  const members = ordered(ranked.filter(near), scoreOf);
+  return { members, phases: bearing(system, members[0].of), before, after: before - best.w * best.w };
 }
 
 function bearing({ curves }: ConditionSystem, { key, phases }: ConditionDatum): readonly string[] {

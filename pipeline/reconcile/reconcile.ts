@@ -48,7 +48,7 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
   for (const one of solved) {
     outcomes.push(...adjustmentOutcomes(one));
     if (!wanted && !one.open) continue;
-    const own = suspectGroups(one.system, one.critical.doubt, one.whitened, scoreOf);
+    const own = suspectGroups(one.system, one.critical.doubt, one.whitened, scoreOf, policy);
     groups.push(...own);
     found.push(...adjustmentFindings(one, own, policy));
   }

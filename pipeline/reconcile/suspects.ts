@@ -27,6 +27,7 @@ export function suspectsOf(checked: CheckedCase, finding: Finding, group: Suspec
       smallestDetectable: member.smallestDetectable,
       explanation: whole?.code ?? null,
       explainedPrinted: whole?.correctedPrinted ?? null,
+      toldApartBy: group.toldApartBy,
     };
   });
 }

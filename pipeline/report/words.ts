@@ -39,14 +39,18 @@ export function saySuspect(suspect: Suspect): string {
   return `${says}, probably ${explainedPrinted ?? proposedPrinted} (${sayExplanation(explanation)}?)`;
 }
 
-/** The suspects of one finding, a line each: the cells of one group cannot be told apart, a further group is a further error. */
+/**
+ * The suspects of one finding, a line each: the cells of one group cannot be told apart, a further group is a further error.
+ * After a group of several stands what would tell them apart.
+ */
 export function saySuspects(suspects: readonly Suspect[]): string[] {
-  return [...suspects]
-    .sort((a, b) => a.place - b.place)
-    .map((suspect, i, all) => {
-      const role = i === 0 ? 'suspect' : all[i - 1]!.group === suspect.group ? 'or' : 'and';
-      return `${role}: ${saySuspect(suspect)}`;
-    });
+  const ordered = [...suspects].sort((a, b) => a.place - b.place);
+  return ordered.flatMap((suspect, i) => {
+    const role = i === 0 ? 'suspect' : ordered[i - 1]!.group === suspect.group ? 'or' : 'and';
+    const line = `${role}: ${saySuspect(suspect)}`;
+    const ends = ordered[i + 1]?.group !== suspect.group;
+    return ends && suspect.toldApartBy !== null ? [line, `told apart by: ${suspect.toldApartBy}`] : [line];
+  });
 }
 
 /**

@@ -304,6 +304,7 @@ export function suspect(of: string, substance: string): Suspect {
     smallestDetectable: 0.05,
     explanation: 'digits-exchanged',
     explainedPrinted: '12.34',
+    toldApartBy: null,
   };
 }
 

@@ -20,6 +20,23 @@ describe('suspects', () => {
     }
   });
 
+  it('of one group come with the measurement that would tell them apart; a lone one needs none', () => {
+    const printed = withoutGas(medium());
+    printed.anchors[0]!.H = moved(printed.anchors[0]!.H, 3);
+    const apart = reconciled(printed).suspects.map(({ toldApartBy }) => toldApartBy);
+    expect(apart.length).toBeGreaterThan(1);
+    // Nothing that the two phases share, and no third phase, can tell whose formation enthalpy it is.
+    expect(new Set(apart)).toEqual(new Set(['a second, independent value of one of them']));
+    const bare = medium();
+    bare.anchors[2]!.H = moved(bare.anchors[2]!.H, 1.5);
+    Object.assign(bare.transitions[1]!, { dH: '', dS: '' });
+    const [first] = reconciled(bare).suspects;
+    expect(first!.toldApartBy).toBe('vapour pressures over l');
+    const alone = medium();
+    alone.transitions[0]!.dH = '2.151';
+    expect(reconciled(alone).suspects.map(({ toldApartBy }) => toldApartBy)).toEqual([null]);
+  });
+
   it.each([
     [0, 'anchors.csv:2 DfH'],
     [1, 'anchors.csv:3 DfH'],

@@ -356,6 +356,7 @@ describe('places and suspects', () => {
       smallestDetectable: 0.1,
       explanation: 'one-digit-wrong',
       explainedPrinted: null,
+      toldApartBy: null,
     };
     expect(saySuspect(suspect)).toBe('mill-lab/points.csv:412 S says 212.263, probably 212.503 (one digit wrong?)');
     expect(saySuspect({ ...suspect, explanation: null })).toMatch(/probably 212\.503$/);
@@ -395,6 +396,7 @@ describe('the reason why a substance is withheld', () => {
     smallestDetectable: 0.3,
     explanation: null,
     explainedPrinted: null,
+    toldApartBy: null,
   });
 
   it('is the first suspect of the finding that the others follow from, with those of its group', () => {
@@ -420,6 +422,16 @@ describe('the reason why a substance is withheld', () => {
       'or: mill-lab/points.csv:412 T',
       'and: mill-lab/points.csv:412 ',
     ]);
+  });
+
+  it('says after a group what would tell its members apart', () => {
+    const apart = (place: number, group: number, column: string) => ({
+      ...cell(root.id, place, group, column),
+      toldApartBy: group === 1 ? 'a measured enthalpy of l>g' : null,
+    });
+    expect(saySuspects([apart(1, 1, 'S'), apart(2, 1, 'T'), apart(101, 2, 'Y')])[2]).toBe(
+      'told apart by: a measured enthalpy of l>g',
+    );
   });
 });
 

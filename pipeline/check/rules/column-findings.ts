@@ -151,5 +151,6 @@ function suspectOf(
     smallestDetectable: NON_CENTRALITY * uProposed,
     explanation,
     explainedPrinted: explanation === null ? null : proposedPrinted,
+    toldApartBy: null,
   };
 }

@@ -209,6 +209,7 @@ function suspectOf(
     smallestDetectable: NON_CENTRALITY * cell.uProposed,
     explanation: null,
     explainedPrinted: null,
+    toldApartBy: null,
   };
 }
 

@@ -1,10 +1,11 @@
 /** A whole table that its own rows cannot tell of: every entropy of a gas at 1 atm, heat capacities in another unit. */
 import type { PhaseCurve } from '../../../schemas/curves.js';
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
-import { R_J_PER_MOL_K, STANDARD_ATMOSPHERE_PA, STANDARD_PRESSURE_PA } from '../../core/constants.js';
+import { ICE_POINT_K, R_J_PER_MOL_K, STANDARD_ATMOSPHERE_PA, STANDARD_PRESSURE_PA } from '../../core/constants.js';
 import { printedLike, printedNumber } from '../../core/numeric/printed-like.js';
-import { enthalpyAt, entropyAt } from '../../core/physics/curve.js';
+import { enthalpyAt, entropyAt, heatCapacityAt } from '../../core/physics/curve.js';
 import { isGas } from '../../core/physics/placed-phase.js';
+import { t90MinusT48, t90MinusT68 } from '../../core/units/temperature-scale.js';
 import type { ConditionDatum, ConditionSystem } from '../system/system.js';
 import { addTo } from './exchanged.js';
 import { unitRatios } from './unit-ratios.js';
@@ -12,6 +13,8 @@ import type { WholeSlip } from './whole-slips.js';
 
 /** 0.1094 J/(mol K). */
 const ONE_ATMOSPHERE = R_J_PER_MOL_K * Math.log(STANDARD_ATMOSPHERE_PA / STANDARD_PRESSURE_PA);
+
+type Column = Pick<SeriesQuantity, 'values' | 'present' | 'column' | 'halfUnit' | 'uOwn' | 'origin'>;
 
 export function seriesSlips(system: ConditionSystem): WholeSlip[] {
   const slips: WholeSlip[] = [];
@@ -48,6 +51,7 @@ export function seriesSlips(system: ConditionSystem): WholeSlip[] {
         slips.push({ ...table, change, cells: cells + anchors.length, data: [...table.data, ...anchors] });
       }
     }
+    slips.push(...oldScales(system, curve, series));
     if (series.heatCapacity === null) continue;
     const columns = [series.heatCapacity, series.entropy, series.enthalpyIncrement, series.gibbsFunction];
     const cells = columns.reduce((sum, q) => sum + filled(q), 0);
@@ -73,12 +77,46 @@ export function seriesSlips(system: ConditionSystem): WholeSlip[] {
   return slips;
 }
 
+/**
+ * A table whose temperatures stand on an old scale though they are said to be on the new one: its H and S at T are those of
+ * T - (t90 - told), which counts from the reference temperature where their level does.
+ */
+function oldScales(system: ConditionSystem, curve: PhaseCurve, series: Series): WholeSlip[] {
+  const { table, temperatureK: temperatures } = series;
+  if (table.temperatureScale !== 'ITS-90') return [];
+  const at = curve.referenceK;
+  const slips: WholeSlip[] = [];
+  for (const difference of [t90MinusT68, t90MinusT48]) {
+    const shift = (t: number): number => difference(t - ICE_POINT_K) ?? 0;
+    const first = temperatures.findIndex((t) => shift(t) !== 0);
+    if (first < 0) continue;
+    const homeH = curve.enthalpyLevelFrom === 'table' ? 0 : heatCapacityAt(curve, at) * shift(at);
+    const homeS = curve.entropyLevelFrom === 'table' ? 0 : (heatCapacityAt(curve, at) / at) * shift(at);
+    const quantity = {
+      values: temperatures,
+      present: new Uint8Array(series.rows).fill(1),
+      column: series.temperatureColumn,
+      halfUnit: new Float64Array(series.rows).fill(series.temperatureHalfUnitK),
+      uOwn: new Float64Array(series.rows),
+      origin: 'printed digits' as const,
+    };
+    const moves = (row: { readonly atK: number; readonly h: number; readonly s: number }): number => {
+      const cp = heatCapacityAt(curve, row.atK) * shift(row.atK);
+      return row.h * (homeH - cp) + row.s * (homeS - cp / row.atK);
+    };
+    slips.push(
+      slipOf('old-temperature-scale', system, curve, series, quantity, series.rows, (t) => t + shift(t), moves),
+    );
+  }
+  return slips;
+}
+
 function slipOf(
   code: string,
   system: ConditionSystem,
   curve: PhaseCurve,
   series: Series,
-  quantity: SeriesQuantity,
+  quantity: Column,
   cells: number,
   meant: (value: number) => number,
   moves: (row: { readonly atK: number; readonly h: number; readonly s: number }) => number,
@@ -103,12 +141,12 @@ function slipOf(
     correctedPrinted: Number.isFinite(number) && value !== 0 ? printedLike(printed, (corrected * number) / value) : '',
     change,
     open: false,
-    weight: 0.04,
+    weight: 0.02,
   };
 }
 
 /** The column's first cell as a suspect. */
-function standIn(series: Series, quantity: SeriesQuantity, row: number, printed: string, m: number): ConditionDatum {
+function standIn(series: Series, quantity: Column, row: number, printed: string, m: number): ConditionDatum {
   const { source, file, columns } = series.table;
   const rounding = quantity.halfUnit[row] / Math.sqrt(3);
   return {
@@ -143,7 +181,7 @@ function filled(quantity: SeriesQuantity | null): number {
 }
 
 /** The first cell that is not zero. */
-function firstFilled(quantity: SeriesQuantity): number {
+function firstFilled(quantity: Column): number {
   for (let i = 0; i < quantity.present.length; i++) {
     if (quantity.present[i] === 1 && quantity.values[i] !== 0) return i;
   }

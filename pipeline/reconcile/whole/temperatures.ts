@@ -46,7 +46,7 @@ export function temperatureColumns(system: ConditionSystem): WholeSlip[] {
         correctedPrinted: printedLike(first.datum.printed, (corrected - first.datum.offset) / first.datum.factor),
         change,
         open: false,
-        weight: 0.04,
+        weight: code === 'old-temperature-scale' ? 0.005 : 0.02,
       });
     }
   }
