@@ -18,6 +18,8 @@ const interval = { code: 'interval', quantity: 'entropy', lowK: 1800, highK: 190
 const transition = { code: 'transition', statedK: 600.6, computedK: 622.31, smallestDetectable: null } as const;
 const melting = { fromPhase: 'cr', toPhase: 'l', rule: 'gibbs-continuous', unit: 'J/mol' } as const;
 
+const column = { code: 'column', quantity: 'entropy', cells: 22, factor: 4.184, shift: null } as const;
+
 /** One finding of each kind, and words that its sentence must hold: found, expected, where, what next. */
 const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly RegExp[]])[] = [
   [
@@ -104,6 +106,75 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     [
       /^S of cr at 1900 K is 888\.108 J\/\(mol K\) \(printed 212\.263\); the heat capacity and the neighbouring rows put it at 889\.110 ± 0\.010\. One digit wrong\?/,
     ],
+  ],
+  [
+    'column',
+    {
+      fromPhase: 'cr',
+      temperatureK: 100,
+      observed: 8.802,
+      expected: 36.8276,
+      difference: -28.0256,
+      tolerance: 0.007,
+      unit: 'J/(mol.K)',
+      evidence: [{ ...address, printed: '8.802' }],
+      detail: { ...column, explanation: 'calorie-read-as-joule' },
+    },
+    [
+      /^S of cr at 100 K is 8\.802 J\/\(mol K\): this and 21 more cells of the column do not agree with the rest of the table; × 4\.184 puts all of them right, this one at 36\.8276 J\/\(mol K\)\./,
+      /Calories where joules are declared\?/,
+    ],
+  ],
+  [
+    'column of temperatures',
+    {
+      fromPhase: 'l',
+      temperatureK: 77,
+      observed: 77,
+      expected: 298.15,
+      difference: -221.15,
+      unit: 'K',
+      evidence: [{ ...address, printed: '77' }],
+      detail: {
+        ...column,
+        quantity: 'temperature',
+        factor: 5 / 9,
+        shift: 255.372222,
+        explanation: 'fahrenheit-not-converted',
+      },
+    },
+    [/^T of l is 77 K: this and 21 more/, /× 0\.555556 \+ 255\.372 K puts all of them right, this one at 298\.15 K\./],
+  ],
+  [
+    'column of increments',
+    {
+      rule: 'enthalpy-follows-heat-capacity',
+      temperatureK: 0,
+      observed: 0,
+      expected: -6878,
+      difference: 6878,
+      tolerance: 6,
+      unit: 'J/mol',
+      evidence: [{ ...address, printed: '0.000' }],
+      detail: { ...column, quantity: 'enthalpy-increment', factor: null, shift: -6878, explanation: null },
+    },
+    [
+      /; − 6878 J\/mol puts all of them right, this one at −6878\.0 J\/mol\. Compare the heading and the unit of the column/,
+    ],
+  ],
+  [
+    'column that goes with 1/T',
+    {
+      rule: 'functions-close',
+      temperatureK: 100,
+      observed: 20,
+      expected: 88,
+      difference: -68,
+      tolerance: 0.01,
+      unit: 'J/(mol.K)',
+      detail: { ...column, quantity: 'gibbs-function', factor: null, explanation: 'counted-from-zero-kelvin' },
+    },
+    [/; a change that goes with 1\/T puts all of them right/, /Counted from 0 K instead of 298\.15 K/],
   ],
   [
     'anomaly',
@@ -259,6 +330,7 @@ describe('the words of a finding', () => {
       impossible: true,
       interval: true,
       cell: true,
+      column: true,
       anomaly: true,
       transition: true,
       'phase-order': true,
@@ -360,6 +432,9 @@ describe('places and suspects', () => {
     };
     expect(saySuspect(suspect)).toBe('mill-lab/points.csv:412 S says 212.263, probably 212.503 (one digit wrong?)');
     expect(saySuspect({ ...suspect, explanation: null })).toMatch(/probably 212\.503$/);
+    expect(saySuspect({ ...suspect, cells: 22, explanation: 'calorie-read-as-joule' })).toBe(
+      'mill-lab/points.csv:412 S and 21 more, the first says 212.263, probably 212.503 (calories where joules are declared?)',
+    );
     expect(saySuspect({ ...suspect, proposedPrinted: '212.263' })).toMatch(
       /a change below its last digit would close it$/,
     );

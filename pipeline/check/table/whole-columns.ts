@@ -238,6 +238,8 @@ interface TriedRun {
 /** Laws whose ends are looked for. */
 const MOST_RUNS = 4;
 const RUN_LEFT_SHARE = 0.05;
+/** A run may end so many rows from where its conditions begin to fail. */
+const AROUND = 3;
 
 /** One law for a run of rows, from an end of the table or from a break on: its ends are where it closes best. */
 function runOfRows(series: Series, context: TableContext): WholeColumns[] {
@@ -246,7 +248,7 @@ function runOfRows(series: Series, context: TableContext): WholeColumns[] {
   const last = rows.n - 1;
   const low = now.bad.indexOf(1);
   const high = now.bad.lastIndexOf(1);
-  if (low < 0 || high - low < FEWEST_ROWS || now.failing < FEWEST_FAILING) return [];
+  if (low < 0 || high - low < FEWEST_ROWS - AROUND || now.failing < FEWEST_FAILING) return [];
   const runFrom = (a: number, b: number) => ({ rows: Array.from(rows.row.subarray(a, b + 1)) });
   // A run's first condition is that between it and the row before.
   const from = low === 0 ? 0 : low + 1;
@@ -257,8 +259,8 @@ function runOfRows(series: Series, context: TableContext): WholeColumns[] {
   let best: TriedRun | null = null;
   for (const { hypothesis } of guesses) {
     let own: TriedRun | null = null;
-    for (let a = Math.max(0, from - 2); a <= Math.min(from + 2, last); a++) {
-      for (let b = Math.max(0, to - 2); b <= Math.min(to + 2, last); b++) {
+    for (let a = Math.max(0, from - AROUND); a <= Math.min(from + AROUND, last); a++) {
+      for (let b = Math.max(0, to - AROUND); b <= Math.min(to + AROUND, last); b++) {
         const reaches = a === rows.from[a] || b === rows.to[b];
         if (b - a + 1 < FEWEST_ROWS || (a === 0 && b === last) || !reaches) continue;
         const run = runFrom(a, b);
