@@ -180,6 +180,8 @@ export interface Suspect {
   readonly observed: number;
   readonly normalisedResidual: number;
   readonly redundancy: number;
+  /** UCUM code of what is in SI here. */
+  readonly unit: string;
   /** SI, and as it would be printed in the column's own unit. */
   readonly proposed: number;
   readonly uProposed: number;

@@ -99,6 +99,7 @@ function addSuspect(to: Builders<typeof RELEASE_TABLES.suspects>, suspect: Suspe
   to.column.push(suspect.address.column);
   to.printed.push(suspect.printed);
   to.observed.push(suspect.observed);
+  to.unit.push(suspect.unit);
   to.normalised_residual.push(suspect.normalisedResidual);
   to.redundancy.push(suspect.redundancy);
   to.proposed.push(suspect.proposed);

@@ -5,6 +5,7 @@ import { chiSquareTail } from '../core/numeric/chi-square.js';
 import { sidakThreshold, upperTail } from '../core/numeric/normal.js';
 import { type DatumTest, FreeData, type Whitened, whitened } from '../core/physics/adjustment.js';
 import type { RankedDatum, SuspectGroup } from './rank-data.js';
+import { isPressure } from './system/stated-data.js';
 import type { ConditionDatum, ConditionSystem } from './system/system.js';
 import { wouldHelp } from './would-help.js';
 
@@ -59,10 +60,7 @@ export function adjustmentOutcomes({ system, tests, whitened: white, critical }:
       outcome: Math.abs(test.w) > critical.doubt ? 'disagrees' : 'agrees',
       evidence: d.within ? 'arithmetic' : 'independent',
       missing: null,
-      smallestDetectable:
-        d.kind === 'saturation-pressure'
-          ? d.datum.value * Math.expm1(test.smallestDetectable)
-          : test.smallestDetectable,
+      smallestDetectable: isPressure(d) ? d.datum.value * Math.expm1(test.smallestDetectable) : test.smallestDetectable,
     });
   });
   for (const d of system.unseen) {
@@ -180,6 +178,7 @@ export function materialOf(d: ConditionDatum, system: ConditionSystem, policy: P
     case 'anchor-heat-capacity':
       return material.heatCapacityRelative * own;
     case 'saturation-pressure':
+    case 'transition-pressure':
       return material.heatCapacityRelative * own;
     default:
       return material.enthalpyJPerMol;
@@ -191,7 +190,8 @@ function placeOf(d: ConditionDatum): { fromPhase: string; toPhase: string | null
   return { fromPhase: from, toPhase: to, transition: d.key };
 }
 
-function unitOf({ kind }: ConditionDatum): string {
+/** UCUM code of a stated number in SI. */
+export function unitOf({ kind }: ConditionDatum): string {
   switch (kind) {
     case 'temperature':
     case 'saturation-temperature':
@@ -202,6 +202,7 @@ function unitOf({ kind }: ConditionDatum): string {
     case 'column':
       return 'J/(mol.K)';
     case 'saturation-pressure':
+    case 'transition-pressure':
       return 'Pa';
     default:
       return 'J/mol';

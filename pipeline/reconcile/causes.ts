@@ -110,7 +110,8 @@ function explains(rooted: RootedGroup, f: Finding): boolean {
   const { kind } = datum;
   const same = isItsTransition(datum, f);
   if (kind === 'enthalpy' || kind === 'entropy') return same && OF_STATED_SIZE.has(f.rule);
-  if (kind === 'temperature') return same || (f.rule === 'lowest-curve-is-the-stated-phase' && touches(rooted, f));
+  if (kind === 'temperature' || kind === 'transition-pressure')
+    return same || (f.rule === 'lowest-curve-is-the-stated-phase' && touches(rooted, f));
   return touches(rooted, f);
 }
 

@@ -1,8 +1,8 @@
 /** What probably happened to a suspect cell: the usual slips that lead to the value proposed for it. */
 import { printCandidate, readCell } from './slips/cell.js';
-import type { SuspectContext } from './slips/slip.js';
+import type { Candidate, SuspectContext } from './slips/slip.js';
 import { unknownDensity } from './slips/unknown-error.js';
-import { USUAL_SLIPS } from './slips/usual-slips.js';
+import { NOMINAL_PRESSURE_SLIPS, USUAL_SLIPS } from './slips/usual-slips.js';
 
 export type { PrintedCell, SuspectContext } from './slips/slip.js';
 
@@ -34,7 +34,7 @@ export const MANY_CELL_CODES: readonly string[] = ['from-and-to-exchanged'];
  * quite linear, puts the proposal off by more than its u says.
  *
  * A candidate that an error of no known kind would beat is left out: with nine values for each digit some of them lie
- * near any proposal.
+ * near any proposal. Of a transition's pressure, which is nominal, the digits bound nothing and few slips are tried.
  * @param uProposed standard uncertainty of `proposed`
  * @param material what a user of the value would notice
  */
@@ -51,10 +51,13 @@ export function explain(
   const rounding = (step: number): number => (step * Math.abs(cell.factor)) / Math.sqrt(12);
   const usualSpread = Math.hypot(uProposed, rounding(cell.lastPlace));
   const best = new Map<string, Explanation>();
-  for (const slip of USUAL_SLIPS) {
+  const nominal = isNominal(context);
+  for (const slip of nominal ? NOMINAL_PRESSURE_SLIPS : USUAL_SLIPS) {
     const loose = Math.max(material, slip.ofDigits === true ? 0 : FAR_SHARE * Math.min(needed, Math.abs(proposed)));
-    for (const candidate of slip.propose(cell, proposed)) {
+    for (const proposal of slip.propose(cell, proposed)) {
+      const candidate = nominal ? exact(proposal) : proposal;
       const corrected = cell.toSi(candidate.value);
+      if (nominal && Math.abs(Math.log(corrected / cell.observed)) < LEAST_NOMINAL_STEP) continue;
       const distance = Math.abs(corrected - proposed);
       const spread = Math.hypot(uProposed, rounding(candidate.step));
       // It has to explain more of the correction than it leaves.
@@ -74,6 +77,19 @@ export function explain(
     }
   }
   return [...best.values()].sort((a, b) => b.score - a.score);
+}
+
+/** A pressure that a transition is stated at, not a measured one. */
+export function isNominal({ quantity, transition = -1 }: SuspectContext): boolean {
+  return quantity === 'pressure' && transition >= 0;
+}
+
+/** Of ln p: an atmosphere for a bar, 0.013, is within what else may be wrong. */
+const LEAST_NOMINAL_STEP = 0.1;
+
+/** 1 bar is 100 000 Pa to the last digit. */
+function exact(candidate: Candidate): Candidate {
+  return { ...candidate, step: 1e-6 * Math.abs(candidate.value) };
 }
 
 /** Whether a value lies where none can, by more than three of its standard uncertainties. */

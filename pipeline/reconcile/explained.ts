@@ -3,7 +3,7 @@ import type { Finding, Suspect } from '../../schemas/finding.js';
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
-import { type Explanation, explain, outside, type SuspectContext } from './explain.js';
+import { type Explanation, explain, isNominal, outside, type SuspectContext } from './explain.js';
 import { unknownScore } from './slips/unknown-error.js';
 import { suspectContext } from './suspect-context.js';
 import { usualSize } from './usual-size.js';
@@ -43,7 +43,7 @@ export function withExplanations(findings: readonly Finding[], suspects: readonl
 /**
  * What `orderedByExplanation` weighs a suspect by: its best explanation's score, or an unknown error's, and how usual the
  * size of the proposed value is; far below all that where the value cannot be (a negative entropy). Null where the suspect
- * is no single printed number.
+ * is no single printed number, and for a transition's nominal pressure that no usual slip explains.
  */
 export function scoreInGroup(
   substance: HarmonisedCase,
@@ -53,9 +53,11 @@ export function scoreInGroup(
   const found = suspectContext(substance, suspect);
   if (found === null) return null;
   const { proposed, uProposed } = suspect;
+  const explanation = explanationOf(substance, suspect, policy);
+  if (explanation === null && isNominal(found)) return null;
   if (outside(found, proposed, uProposed)) return IMPOSSIBLE_SCORE;
   const w = (proposed - found.observed) / uProposed;
-  const score = explanationOf(substance, suspect, policy)?.score ?? unknownScore(Number.isFinite(w) && w !== 0 ? w : 1);
+  const score = explanation?.score ?? unknownScore(Number.isFinite(w) && w !== 0 ? w : 1);
   const { quantity, temperatureK, gas, transition = -1 } = found;
   const size = usualSize(quantity, proposed, uProposed, { temperatureK, gas, transition }, substance);
   // Zero is the definition of a reference state, and no number that somebody got wrong.

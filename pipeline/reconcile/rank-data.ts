@@ -1,6 +1,7 @@
 import type { Policy } from '../../schemas/policy.js';
 import { FreeData, type Whitened, whitened } from '../core/physics/adjustment.js';
 import { orderedByExplanation } from './order-in-group.js';
+import { isPressure } from './system/stated-data.js';
 import { type ConditionDatum, type ConditionSystem, resolvedAt, restsOn } from './system/system.js';
 import { toldApartBy } from './told-apart.js';
 import { type WholeSlip, wholeSlips } from './whole/whole-slips.js';
@@ -34,7 +35,8 @@ const ONE_GROUP = 9;
 /**
  * Sets one suspect free at a time, the rest tested again, until the conditions close at `threshold` or nothing explains
  * them. A slip that touches many numbers at once is one suspect beside the single ones: it has nothing left to choose.
- * `scoreOf` is the log prior of the usual slip that leads to a suspect's proposed value, null where there is none.
+ * `scoreOf` is the log prior of the usual slip that leads to a suspect's proposed value, null where there is none. Nobody
+ * gets the pressure wrong that a transition is stated at but by a usual slip: without one it is no suspect.
  */
 export function suspectGroups(
   system: ConditionSystem,
@@ -89,7 +91,8 @@ function nextGroup(
   const ranked: RankedDatum[] = [];
   for (const d of system.data) {
     const one = removed.has(d) ? null : rank(free, y, before, system, d);
-    if (one !== null) ranked.push(one);
+    if (one === null || (d.kind === 'transition-pressure' && scoreOf(one) === null)) continue;
+    ranked.push(one);
   }
   if (!ranked.some((one) => Math.abs(one.w) > threshold)) return null;
   slips.made ??= wholeSlips(system);
@@ -128,7 +131,7 @@ function rank(
   if (test === null) return null;
   let { w } = test;
   const { value } = d.datum;
-  const logarithmic = d.kind === 'saturation-pressure';
+  const logarithmic = isPressure(d);
   let proposed = logarithmic ? value * Math.exp(-test.error) : value - test.error;
   let { uError } = test;
   const resolved = Math.abs(test.error) > FAR_K || Math.abs(w) > 10 ? resolvedAt(system, d) : null;

@@ -25,6 +25,7 @@ export function statedCells(substance: HarmonisedCase): readonly StatedCell[] {
       found.push({ quantity: 'transition-enthalpy', datum: t.enthalpy, partner: t.entropy, ...around });
     if (t.entropy !== null)
       found.push({ quantity: 'transition-entropy', datum: t.entropy, partner: t.enthalpy, ...around });
+    if (t.pressure !== null) found.push({ quantity: 'pressure', datum: t.pressure, partner: null, ...around });
   });
   for (const a of substance.anchors) {
     const around = { temperatureK: a.referenceTemperatureK, phases: [a.phase], table: a.table, transition: -1 };

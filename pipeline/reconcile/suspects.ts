@@ -1,6 +1,7 @@
 import type { CheckedCase } from '../../schemas/checked.js';
 import type { Finding, Suspect } from '../../schemas/finding.js';
 import { printedLike } from '../core/numeric/printed-like.js';
+import { unitOf } from './adjustment-closes.js';
 import type { SuspectGroup } from './rank-data.js';
 
 /** The suspects table's rows of one group, best first. */
@@ -18,6 +19,7 @@ export function suspectsOf(checked: CheckedCase, finding: Finding, group: Suspec
       address: datum.address,
       printed: datum.printed,
       observed: datum.value,
+      unit: unitOf(member.of),
       normalisedResidual: member.w,
       redundancy: member.redundancy,
       proposed: member.proposed,

@@ -47,10 +47,15 @@ export function saySuspects(suspects: readonly Suspect[]): string[] {
   const ordered = [...suspects].sort((a, b) => a.place - b.place);
   return ordered.flatMap((suspect, i) => {
     const role = i === 0 ? 'suspect' : ordered[i - 1]!.group === suspect.group ? 'or' : 'and';
-    const line = `${role}: ${saySuspect(suspect)}`;
+    const line = `${role}: ${saySuspect(suspect)}; ${closesAt(suspect)}`;
     const ends = ordered[i + 1]?.group !== suspect.group;
     return ends && suspect.toldApartBy !== null ? [line, `told apart by: ${suspect.toldApartBy}`] : [line];
   });
+}
+
+/** What the rest of the data put there, in SI. */
+function closesAt({ proposed, uProposed, unit }: Suspect): string {
+  return `the rest puts it at ${plusMinus(proposed, uProposed)} ${unitInWords(unit)}`;
 }
 
 /**

@@ -420,6 +420,7 @@ describe('places and suspects', () => {
       address,
       printed: '212.263',
       observed: 888.108,
+      unit: 'J/(mol.K)',
       normalisedResidual: 40,
       redundancy: 0.8,
       proposed: 889.11,
@@ -463,6 +464,7 @@ describe('the reason why a substance is withheld', () => {
     address: { ...address, column },
     printed: '1.0',
     observed: 1,
+    unit: 'J/(mol.K)',
     normalisedResidual: 9,
     redundancy: 0.5,
     proposed: 2,
@@ -504,9 +506,10 @@ describe('the reason why a substance is withheld', () => {
       ...cell(root.id, place, group, column),
       toldApartBy: group === 1 ? 'a measured enthalpy of l>g' : null,
     });
-    expect(saySuspects([apart(1, 1, 'S'), apart(2, 1, 'T'), apart(101, 2, 'Y')])[2]).toBe(
-      'told apart by: a measured enthalpy of l>g',
-    );
+    const said = saySuspects([apart(1, 1, 'S'), apart(2, 1, 'T'), apart(101, 2, 'Y')]);
+    expect(said[2]).toBe('told apart by: a measured enthalpy of l>g');
+    // What the rest of the data put there, with its uncertainty.
+    expect(said[0]).toMatch(/; the rest puts it at \S+ ± \S+ J\/\(mol K\)$/);
   });
 });
 

@@ -7,7 +7,7 @@ import { QUANTITY_UNITS } from '../../../schemas/quantities.js';
 import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import { addressOf, evidenceOf } from '../place.js';
 import { type ColumnCells, columnCells } from '../table/column-cells.js';
-import { type ColumnChange, quantityName, type TableColumn } from '../table/column-change.js';
+import { type ColumnChange, changedValue, quantityIn, quantityName, type TableColumn } from '../table/column-change.js';
 import type { ColumnHypothesis } from '../table/column-hypotheses.js';
 import type { WholeColumns } from '../table/whole-columns.js';
 
@@ -39,8 +39,10 @@ export function columnFindings(
       out.findings.push(finding);
       const quantity = quantityName(series, change.column);
       for (const row of cells.rows) out.named.push({ series: index, row, quantity, finding: finding.id });
-      out.suspects.push(suspectOf(finding, series, cells, cells.rows.length, one.explanation, one.w, 1));
-      if (cause === null) out.suspects.push(...rivalsOf(finding, series, one));
+      const group = [suspectOf(finding, series, cells, cells.rows.length, one.explanation, one.w, 1)];
+      if (cause === null) group.push(...rivalsOf(finding, series, one));
+      const toldApartBy = group.length > 1 ? `an entropy of ${series.phase} at 298.15 K from elsewhere` : null;
+      out.suspects.push(...group.map((suspect) => ({ ...suspect, toldApartBy })));
       cause ??= finding.id;
     }
   }
@@ -73,7 +75,7 @@ function findingOf(
   const { rows, column, firstRow, observed, proposed, uProposed } = cells;
   return makeFinding({
     rule: ruleOf(series, change.column),
-    severity: isMaterial(change, observed, proposed, policy) ? 'fault' : 'doubt',
+    severity: rows.some((row) => isMaterial(series, change, row, policy)) ? 'fault' : 'doubt',
     substance,
     fromPhase: series.phase,
     temperatureK: series.temperatureK[firstRow],
@@ -98,8 +100,9 @@ function findingOf(
   });
 }
 
-function isMaterial(change: ColumnChange, observed: number, proposed: number, { material }: Policy): boolean {
-  const size = Math.abs(observed - proposed);
+function isMaterial(series: Series, change: ColumnChange, row: number, { material }: Policy): boolean {
+  const proposed = changedValue(series, quantityName(series, change.column), row, change);
+  const size = Math.abs((quantityIn(series, change.column)?.values[row] ?? series.temperatureK[row]) - proposed);
   switch (change.column) {
     case 'temperature':
       return size >= material.transitionTemperatureK;
@@ -142,6 +145,7 @@ function suspectOf(
     address: addressOf(series, firstRow, column),
     printed: series.text(firstRow, column),
     observed,
+    unit: finding.unit ?? '',
     normalisedResidual: w,
     // Every other column of the table checks it.
     redundancy: 1,

@@ -3,7 +3,7 @@ import type { EvidenceCell, Finding, RuleName, Suspect } from '../../../schemas/
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
 import type { Policy } from '../../../schemas/policy.js';
-import type { NumberQuantity } from '../../../schemas/quantities.js';
+import { type NumberQuantity, QUANTITY_UNITS } from '../../../schemas/quantities.js';
 import { printedLike, printedNumber } from '../../core/numeric/printed-like.js';
 import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import { addressOf, evidenceOf } from '../place.js';
@@ -201,6 +201,7 @@ function suspectOf(
     address: addressOf(series, cell.row, q.column),
     printed: series.text(cell.row, q.column),
     observed: cell.observed,
+    unit: QUANTITY_UNITS[q.is],
     normalisedResidual: cell.w,
     redundancy,
     proposed: cell.proposed,

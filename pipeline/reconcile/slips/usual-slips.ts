@@ -72,3 +72,18 @@ export const USUAL_SLIPS: readonly Slip[] = [
   differentEnthalpyScales,
   transitionLeftOut,
 ];
+
+/**
+ * What befalls the pressure that a transition is stated at, a nominal one: its unit or its decimal point. A wrong digit of it,
+ * or an atmosphere for a bar, is within what the temperature and the enthalpies explain just as well.
+ */
+export const NOMINAL_PRESSURE_SLIPS: readonly Slip[] = [
+  decimalPointMoved,
+  kiloDropped,
+  kiloAdded,
+  log10TakenForLn,
+  torrReadAsPascal,
+  pascalReadAsTorr,
+  barReadAsPascal,
+  pascalReadAsBar,
+];

@@ -48,12 +48,18 @@ export function transitionConditions(joined: readonly Joined[]): Condition[] {
     const offset = stated.temperature.value - atK;
     const uGas = gasU(j);
     const isobar = j.from.source.family.isobarPa;
+    const gases = isobar !== null || stated.pressure === null ? 0 : gasUnits(j);
+    const keyP = datumKey.transitionPressure(index);
     const volume = isobar === null ? condensedTermUncertainty(stated.pressurePa) : 0;
     conditions.push({
       ...base,
       kind: 'gap',
       value: -(at.gapJPerMol + at.entropyJPerMolK * offset),
-      sum: difference(j, 1, -atK).addDatum(keyT, -at.entropyJPerMolK, 0),
+      sum: addPressure(
+        difference(j, 1, -atK).addDatum(keyT, -at.entropyJPerMolK, 0),
+        keyP,
+        R_J_PER_MOL_K * atK * gases,
+      ),
       variance: volume * volume,
       gas: uGas,
     });
@@ -72,9 +78,13 @@ export function transitionConditions(joined: readonly Joined[]): Condition[] {
         ...base,
         kind: 'entropy',
         value: at.entropyJPerMolK + (at.heatCapacityJPerMolK * offset) / atK - entropy.value,
-        sum: difference(j, 0, 1)
-          .addDatum(keyT, at.heatCapacityJPerMolK / atK, 0)
-          .addDatum(keyS, -1, 0),
+        sum: addPressure(
+          difference(j, 0, 1)
+            .addDatum(keyT, at.heatCapacityJPerMolK / atK, 0)
+            .addDatum(keyS, -1, 0),
+          keyP,
+          -R_J_PER_MOL_K * gases,
+        ),
         variance: (9 * uGas * uGas) / (atK * atK),
         gas: 0,
       });
@@ -189,6 +199,16 @@ function difference({ from, to, atK }: Pair, h: number, s: number): ErrorSum {
   return new ErrorSum()
     .add(to.source, atK, h / to.formulaUnits, s / to.formulaUnits)
     .add(from.source, atK, -h / from.formulaUnits, -s / from.formulaUnits);
+}
+
+/** Moles of gas that a formula unit becomes: what R ln p counts with, negative where the gas is `from`. */
+function gasUnits({ from, to }: Pair): number {
+  return (to.gas ? 1 / to.formulaUnits : 0) - (from.gas ? 1 / from.formulaUnits : 0);
+}
+
+/** The error of a transition's pressure, by ln p; none where it is no cell, or no gas takes part. */
+function addPressure(sum: ErrorSum, key: string, by: number): ErrorSum {
+  return by === 0 ? sum : sum.addDatum(key, by, 0);
 }
 
 function gasU({ from, to, atK }: Pair): number {

@@ -1,12 +1,14 @@
 import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
 import type { Policy } from '../../../schemas/policy.js';
 import { datumKey } from '../../core/physics/datum-keys.js';
+import { isGas } from '../../core/physics/placed-phase.js';
 import type { Joined, Saturated } from './joined.js';
 
 export type DatumKind =
   | 'temperature'
   | 'enthalpy'
   | 'entropy'
+  | 'transition-pressure'
   | 'formation-enthalpy'
   | 'anchor-entropy'
   | 'formation-gibbs-energy'
@@ -30,6 +32,11 @@ export interface StatedDatum {
   readonly phases: readonly string[];
   /** As coverage names it: `T cr>l`, `dfH l`. */
   readonly place: string;
+}
+
+/** Its error is one of ln p. */
+export function isPressure({ kind }: Pick<StatedDatum, 'kind'>): boolean {
+  return kind === 'saturation-pressure' || kind === 'transition-pressure';
 }
 
 /**
@@ -60,6 +67,18 @@ export function statedData(
     add('temperature', datumKey.temperature(transition), 'T', stated.temperature);
     add('enthalpy', datumKey.enthalpy(transition), 'dH', stated.enthalpy);
     add('entropy', datumKey.entropy(transition), 'dS', stated.entropy);
+    const { pressure } = stated;
+    // On an isobar it only says which one.
+    if (pressure === null || isobarPa !== null || !(pressure.value > 0) || !phases.some(isGas)) return;
+    data.push({
+      key: datumKey.transitionPressure(transition),
+      kind: 'transition-pressure',
+      datum: pressure,
+      u: pressure.u / pressure.value,
+      transition,
+      phases,
+      place: `p ${name}`,
+    });
   });
   substance.anchors.forEach((anchor, index) => {
     if (anchor.table.isobarPa !== isobarPa) return;
