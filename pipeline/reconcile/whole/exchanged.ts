@@ -16,13 +16,14 @@ export function exchangedPairs(system: ConditionSystem): WholeSlip[] {
     const reversed = new Float64Array(system.m);
     for (const d of sizes) addTo(reversed, d.direction, -2 * d.datum.value);
     const [size] = sizes;
+    const cell = phaseCell(size, system);
     slips.push({
       code: 'from-and-to-exchanged',
       cells: 2,
-      data: [phaseCell(size, system), ...sizes],
-      corrected: size.datum.value,
+      data: [cell, ...sizes],
+      corrected: cell === size ? -size.datum.value : size.datum.value,
       uCorrected: size.u,
-      correctedPrinted: stated.to,
+      correctedPrinted: cell === size ? printedLike(size.datum.printed, -numberOf(size)) : stated.to,
       change: reversed,
       open: false,
       weight: 0.04,
@@ -52,7 +53,7 @@ function numberOf({ datum }: ConditionDatum): number {
   return (datum.value - datum.offset) / datum.factor;
 }
 
-/** The transition's first phase as a cell of its own: what would be exchanged. */
+/** The transition's first phase as a cell of its own: what would be exchanged; the size itself where no column names it. */
 function phaseCell(size: ConditionDatum, system: ConditionSystem): ConditionDatum {
   const { stated } = system.joined.find((j) => j.judged.index === size.transition)!.judged;
   const column = stated.table.columns.find((c) => c.is === 'from-phase');

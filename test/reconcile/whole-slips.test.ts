@@ -1,0 +1,105 @@
+/** Slips that touch many printed numbers at once, in the invented medium: each is one suspect, in place of many. */
+import { describe, expect, it } from 'vitest';
+import { CP, F, H, medium, type Printed, S } from '../check/medium.js';
+import { groupOf, reconciled, rootsOf, suspectsOf } from './reconciled.js';
+
+const scaled = (text: string, ratio: number): string => (Number(text) * ratio).toFixed(text.split('.')[1]!.length);
+
+/** The one root's first suspect. */
+function firstOf(printed: Printed) {
+  const found = reconciled(printed);
+  const roots = rootsOf(found);
+  const [first] = suspectsOf(found.suspects, roots[0]!);
+  return { roots, first: first!, group: groupOf(found, roots[0]!) };
+}
+
+describe('many numbers at once', () => {
+  it('from and to of a transition exchanged are one suspect, where a sign alone would need two', () => {
+    const printed = medium();
+    Object.assign(printed.transitions[0]!, { from: 'l', to: 'cr' });
+    const { first, roots } = firstOf(printed);
+    expect(roots).toHaveLength(1);
+    // The phases are constants of this table: the sizes are shown as they would stand with the phases as stated.
+    expect([first.explanation, first.cells, first.printed, first.proposedPrinted]).toEqual([
+      'from-and-to-exchanged',
+      2,
+      '9.000',
+      '-9.000',
+    ]);
+  });
+
+  it('dH and dS of a transition exchanged are one suspect', () => {
+    const printed = medium();
+    const { dH, dS } = printed.transitions[0]!;
+    Object.assign(printed.transitions[0]!, { dH: dS, dS: dH });
+    const { first, roots } = firstOf(printed);
+    expect(roots).toHaveLength(1);
+    expect([first.explanation, first.cells]).toEqual(['enthalpy-and-entropy-exchanged', 2]);
+    expect(Number(first.proposedPrinted)).toBeCloseTo(Number(dH), 3);
+  });
+
+  it.each([
+    ['dH', 1 / 4.184, 'calorie-read-as-joule'],
+    ['dS', 1 / 4.184, 'calorie-read-as-joule'],
+    ['dH', 1000, 'kilo-added'],
+  ] as const)('the whole column %s of the transitions times %f is one suspect', (key, ratio, code) => {
+    const printed = medium();
+    const clean = printed.transitions[0]![key];
+    for (const one of printed.transitions) one[key] = scaled(one[key], ratio);
+    const { first, roots } = firstOf(printed);
+    expect(roots).toHaveLength(1);
+    expect([first.explanation, first.cells]).toEqual([code, 2]);
+    expect(Number(first.proposedPrinted) / Number(clean)).toBeCloseTo(1, 3);
+  });
+
+  it('every formation enthalpy in kilocalories is one suspect', () => {
+    const printed = medium();
+    for (const one of printed.anchors) one.H = scaled(one.H, 1 / 4.184);
+    const { first, roots } = firstOf(printed);
+    expect(roots).toHaveLength(1);
+    expect([first.explanation, first.cells]).toEqual(['calorie-read-as-joule', 3]);
+  });
+
+  it('both transition temperatures in degrees Celsius are one suspect', () => {
+    const printed = medium();
+    for (const one of printed.transitions) one.T = (Number(one.T) - 273.15).toFixed(3);
+    const { first } = firstOf(printed);
+    expect([first.explanation, first.cells, first.proposedPrinted]).toEqual([
+      'celsius-read-as-kelvin',
+      2,
+      expect.stringMatching(/^500\.000$/),
+    ]);
+  });
+
+  it('every entropy of the gas at 1 atm, its anchor with it, is one suspect', () => {
+    const printed = medium();
+    const step = 8.31446261815324 * Math.log(1.01325);
+    for (const row of printed.tables.g!) {
+      row[S] = (Number(row[S]) - step).toFixed(3);
+      row[F] = (Number(row[F]) - step).toFixed(3);
+    }
+    printed.anchors[2]!.S = (Number(printed.anchors[2]!.S) - step).toFixed(3);
+    const { first, roots } = firstOf(printed);
+    expect(roots).toHaveLength(1);
+    expect(first.explanation).toBe('atmosphere-for-bar');
+    expect(first.cells).toBeGreaterThan(2 * printed.tables.g!.length);
+  });
+
+  it('a table of heat capacities alone in calories is one suspect', () => {
+    const printed = medium();
+    printed.without = [S, F, H];
+    for (const row of printed.tables.l!) row[CP] = scaled(row[CP]!, 1 / 4.184);
+    const { first } = firstOf(printed);
+    expect([first.explanation, first.cells]).toEqual(['calorie-read-as-joule', printed.tables.l!.length]);
+  });
+
+  it('leave single slips alone: one number in calories is one number', () => {
+    for (const key of ['dH', 'dS'] as const) {
+      const printed = medium();
+      printed.transitions[0]![key] = scaled(printed.transitions[0]![key], 1 / 4.184);
+      const { first, roots } = firstOf(printed);
+      expect(roots).toHaveLength(1);
+      expect([first.cells, first.explanation]).toEqual([1, 'calorie-read-as-joule']);
+    }
+  });
+});
