@@ -92,6 +92,11 @@ export interface StatedTransition {
   /** `real`: a measured boiling or sublimation point; `ideal`: fugacity equals the pressure; null where no gas is involved. */
   readonly gas: 'real' | 'ideal' | null;
   readonly pressurePa: number;
+  /**
+   * The cell that `pressurePa` is from; null where the descriptor, the table or the source gives it. Its `u` is what is
+   * stated: a nominal pressure is exact as printed.
+   */
+  readonly pressure: Datum | null;
   readonly temperature: Datum;
   readonly enthalpy: Datum | null;
   readonly entropy: Datum | null;

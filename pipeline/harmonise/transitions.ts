@@ -68,10 +68,18 @@ export function harmoniseTransition(
     order: order ?? 'first',
     gas: withGas ? (gas ?? 'real') : null,
     pressurePa: pressure?.value ?? table.isobarPa ?? table.standardPressurePa,
+    pressure: pressure === null || pressure.address.line === 0 ? null : nominal(pressure),
     temperature: onIts90(row, printed, say),
     enthalpy: datumOf(row, 'transition-enthalpy', book, policy),
     entropy: datumOf(row, 'transition-entropy', book, policy),
   };
+}
+
+/** 1 or 101325: the digits of a nominal pressure bound nothing, and no policy knows better. What is stated of it stays. */
+function nominal(pressure: Datum): Datum {
+  const stated = pressure.origin === 'stated' || pressure.origin === 'source default';
+  const u = stated ? Math.sqrt(Math.max(0, pressure.u ** 2 - pressure.uRounding ** 2)) : 0;
+  return { ...pressure, u, uRounding: 0, halfUnit: 0, origin: stated ? pressure.origin : 'printed digits' };
 }
 
 function onIts90(

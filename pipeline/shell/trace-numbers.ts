@@ -58,11 +58,12 @@ export function movable(
   };
   for (const [index, series] of harmonised.series.entries()) addSeries(index, series, add);
   for (const [index, anchor] of harmonised.anchors.entries()) addAnchor(index, anchor, curves, add);
-  for (const [index, { from, to, temperature, enthalpy, entropy }] of harmonised.transitions.entries()) {
+  for (const [index, { from, to, temperature, enthalpy, entropy, pressure }] of harmonised.transitions.entries()) {
     const place = `${from}>${to}`;
     addDatum(temperature, 'transition-temperature', place, null, (h) => h.transitions[index]!.temperature, add);
     addDatum(enthalpy, 'transition-enthalpy', place, null, (h) => h.transitions[index]!.enthalpy, add);
     addDatum(entropy, 'transition-entropy', place, null, (h) => h.transitions[index]!.entropy, add);
+    addDatum(pressure, 'pressure', place, null, (h) => h.transitions[index]!.pressure, add);
   }
   for (const [index, { phase, temperature, pressure }] of harmonised.vapourPressures.entries()) {
     addDatum(temperature, 'temperature', phase, null, (h) => h.vapourPressures[index]!.temperature, add);

@@ -181,6 +181,7 @@ export function transitionOf(
     order: values.order ?? 'first',
     gas: values.gas ?? null,
     pressurePa: values.pressurePa ?? 100000,
+    pressure: null,
     temperature,
     enthalpy: values.h ?? null,
     entropy: values.s ?? null,

@@ -97,9 +97,10 @@ export function statedValuesPossible(harmonised: HarmonisedCase): { outcome: Out
       }),
     );
   };
-  for (const { from, to, temperature, pressurePa, table } of transitions) {
+  for (const { from, to, temperature, pressure, pressurePa, table } of transitions) {
     if (!(pressurePa > 0)) {
       const header = table.columns.find(({ is }) => is === 'pressure')?.header ?? 'pressure';
+      const address = pressure?.address ?? { ...temperature.address, column: header };
       findings.push(
         makeFinding({
           rule: 'value-possible',
@@ -109,8 +110,8 @@ export function statedValuesPossible(harmonised: HarmonisedCase): { outcome: Out
           toPhase: to,
           observed: pressurePa,
           unit: 'Pa',
-          address: { ...temperature.address, column: header },
-          evidence: [{ ...temperature.address, printed: temperature.printed }],
+          address,
+          evidence: [{ ...address, printed: pressure?.printed ?? `${pressurePa} Pa` }],
           detail: { code: 'impossible', quantity: 'pressure', read: `${pressurePa} Pa`, wanted: 'a pressure above 0' },
         }),
       );

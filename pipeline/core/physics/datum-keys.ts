@@ -6,6 +6,7 @@ export const datumKey = {
   temperature: named((i) => `T of transition ${i}`),
   enthalpy: named((i) => `dH of transition ${i}`),
   entropy: named((i) => `dS of transition ${i}`),
+  transitionPressure: named((i) => `p of transition ${i}`),
   formationEnthalpy: named((i) => `H of anchor ${i}`),
   anchorEntropy: named((i) => `S of anchor ${i}`),
   formationGibbsEnergy: named((i) => `G of anchor ${i}`),
