@@ -27,7 +27,7 @@ export function scaledTemperatures(
   let printedK = values;
   if (factor !== 1 || offset !== 0) {
     printedK = new Float64Array(raw.rows);
-    for (let i = 0; i < raw.rows; i++) printedK[i] = values[i] * factor + offset;
+    for (let i = 0; i < raw.rows; i++) printedK[i] = withoutDust(values[i] * factor + offset);
   }
   if (scale !== 'IPTS-68' && scale !== 'IPTS-48') {
     let low = Number.POSITIVE_INFINITY;
@@ -54,6 +54,11 @@ export function scaledTemperatures(
   }
   if (firstLeft >= 0) findings.push(unconverted(raw, substance, raw.line[firstLeft], printedK[firstLeft], scaleDoubtK));
   return { temperatureK, printedK, slope, scaleDoubtK };
+}
+
+/** A row at 0 K is a limit row: -459.67 degrees Fahrenheit must not become 3e-14 K below it. */
+function withoutDust(temperatureK: number): number {
+  return Math.round(temperatureK * 1e9) / 1e9 + 0;
 }
 
 function unconverted(raw: RawSeries, substance: string, line: number, atK: number, doubtK: number): Finding {

@@ -58,6 +58,19 @@ describe('the temperatures of a series', () => {
     expect(wordsOf(findings[0])).toContain('0.15 K');
   });
 
+  it.each([
+    ['[degF]', '-459.67', '80.33'],
+    ['Cel', '-273.15', '26.85'],
+  ])('in %s meet 0 K exactly, which is a limit row', (unit, zero, later) => {
+    const table = tableOf([columnOf('T', 'temperature', unit), columnOf('Cp', 'heat-capacity', 'J/(mol.K)')]);
+    const rows = [
+      [zero, '0.00'],
+      [later, '25.00'],
+    ];
+    const [made] = harmonised({ series: [seriesOf(table, 'cr', rows)] }).series;
+    expect(Array.from(made.temperatureK)).toEqual([0, 300]);
+  });
+
   it('keep a limit row at 0 K in peace', () => {
     const { series: made, made: findings } = series('IPTS-68', [
       ['0', '0', '0', '-5000', ''],

@@ -29,6 +29,9 @@ describe('columns that a table cannot tell apart', () => {
       [1, 1],
       [2, 1],
     ]);
+    expect(found.suspects.map(({ toldApartBy }) => toldApartBy)).toEqual(
+      Array(2).fill('an entropy of cr at 298.15 K from elsewhere'),
+    );
     const ratios = new Map(found.suspects.map((one) => [one.address.column, one.proposed / one.observed]));
     expect(ratios.get('S')).toBeCloseTo(1.3, 3);
     expect(ratios.get('Cp')).toBeCloseTo(1 / 1.3, 3);

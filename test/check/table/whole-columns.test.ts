@@ -131,6 +131,13 @@ describe.each(PLANTED)('%s', (_, { column, rewrite, rule, explanation, factor })
   );
 });
 
+it('a column is a fault where any of its cells matters, though the first may be near zero', () => {
+  const [one] = LIQUIDS as [SpoiltTable];
+  const { finding } = only(spoilt(PUBLISHED, one, { [one.columns.H]: times(1 / 4.184) }));
+  expect(Math.abs(finding.difference!)).toBeLessThan(50);
+  expect(finding.severity).toBe('fault');
+});
+
 describe('several columns by one factor', () => {
   const cause = { S: 'calorie-read-as-joule', F: 'calorie-read-as-joule', Cp: 'calorie-read-as-joule' };
   it.each([...CRYSTALS, ...GASES].map((one) => [named(one), one] as const))(
