@@ -3,9 +3,9 @@ import type { ConditionDatum, ConditionSystem } from '../system/system.js';
 import { columnsOfOtherUnits } from './columns.js';
 import { exchangedPairs } from './exchanged.js';
 import { formationScales } from './formation-scales.js';
+import { pressureColumns } from './pressures.js';
 import { seriesSlips } from './series.js';
 import { temperatureColumns } from './temperatures.js';
-import { vapourPressureColumns } from './vapour-pressures.js';
 
 export interface WholeSlip {
   /** Code of the usual slip. */
@@ -32,6 +32,6 @@ export function wholeSlips(system: ConditionSystem): readonly WholeSlip[] {
     ...temperatureColumns(system),
     ...seriesSlips(system),
     ...formationScales(system),
-    ...vapourPressureColumns(system),
+    ...pressureColumns(system),
   ].filter(({ change }) => change.some((v) => v !== 0));
 }

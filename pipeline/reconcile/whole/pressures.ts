@@ -1,46 +1,35 @@
-/** All vapour pressures of one table in another unit, or their temperatures in degrees. */
-import { ICE_POINT_K, STANDARD_ATMOSPHERE_PA } from '../../core/constants.js';
+/** All pressures of one column in another unit: of vapours, or of transitions; or the vapours' temperatures in degrees. */
+import { ICE_POINT_K } from '../../core/constants.js';
 import { printedLike } from '../../core/numeric/printed-like.js';
 import { equilibrium } from '../../core/physics/equilibrium.js';
+import { isPressure } from '../system/stated-data.js';
 import type { ConditionDatum, ConditionSystem } from '../system/system.js';
 import { byColumn } from './columns.js';
 import { addTo } from './exchanged.js';
+import { pressureRatios } from './pressure-ratios.js';
 import type { WholeSlip } from './whole-slips.js';
-
-/** 1 mmHg, conventional: NIST SP 811 (2008), B.8. */
-const TORR_PA = STANDARD_ATMOSPHERE_PA / 760;
-
-/** By code: meant pressure over printed one. */
-const RATIOS = [
-  ['torr-read-as-pascal', TORR_PA, 0.03],
-  ['pascal-read-as-torr', 1 / TORR_PA, 0.02],
-  ['kilo-dropped', 1000, 0.03],
-  ['kilo-added', 1e-3, 0.02],
-  ['bar-or-atmosphere-read-as-pascal', 1e5, 0.02],
-  ['bar-or-atmosphere-read-as-pascal', STANDARD_ATMOSPHERE_PA, 0.02],
-] as const;
 
 const SHIFTS = [
   ['celsius-read-as-kelvin', ICE_POINT_K, 0.04],
   ['kelvin-read-as-celsius', -ICE_POINT_K, 0.03],
 ] as const;
 
-export function vapourPressureColumns(system: ConditionSystem): WholeSlip[] {
+export function pressureColumns(system: ConditionSystem): WholeSlip[] {
   const slips: WholeSlip[] = [];
-  for (const data of byColumn(system.data.filter((d) => d.kind === 'saturation-pressure'))) {
-    for (const [code, ratio, weight] of RATIOS) {
+  for (const data of byColumn(system.data.filter(isPressure))) {
+    const [{ datum, u }] = data;
+    for (const { code, ratio, weight } of pressureRatios(datum.factor)) {
       const change = new Float64Array(system.m);
       for (const d of data) addTo(change, d.direction, Math.log(ratio));
-      slips.push(
-        slipOf(code, data, data[0].datum.value * ratio, data[0].u * data[0].datum.value * ratio, change, weight),
-      );
+      slips.push(slipOf(code, data, datum.value * ratio, u * datum.value * ratio, change, weight));
     }
-    // lg p printed where ln p was meant, or the reverse: p to the power of ln 10, or of lg e.
+    // lg p printed where ln p was meant, or the reverse: the number to the power of ln 10, or of lg e.
     for (const power of [Math.LN10, Math.LOG10E]) {
       const change = new Float64Array(system.m);
-      for (const d of data) addTo(change, d.direction, (power - 1) * Math.log(d.datum.value));
-      const corrected = data[0].datum.value ** power;
-      slips.push(slipOf('log10-taken-for-ln', data, corrected, data[0].u * corrected, change, 0.01));
+      const step = (d: ConditionDatum): number => (power - 1) * Math.log(d.datum.value / d.datum.factor);
+      for (const d of data) addTo(change, d.direction, step(d));
+      const corrected = datum.value * Math.exp(step(data[0]));
+      slips.push(slipOf('log10-taken-for-ln', data, corrected, u * corrected, change, 0.01));
     }
   }
   for (const data of byColumn(system.data.filter((d) => d.kind === 'saturation-temperature'))) {
