@@ -93,7 +93,7 @@ function told(finding: Finding): string {
         'Look for a wrong digit, or for a row in the wrong place.'
       );
     case 'impossible':
-      return `${capital(symbol(detail.quantity))}${ofPhase(finding)} is ${detail.read}${at(finding)}, which cannot be; expected was ${detail.wanted}. Compare the cell with the original.`;
+      return `${subject(detail.quantity)}${ofPhase(finding)} is ${detail.read}${at(finding)}, which cannot be; expected was ${detail.wanted}. Compare the cell with the original.`;
     case 'interval':
       return interval(finding, detail);
     case 'cell':
@@ -152,7 +152,8 @@ function adjustment(finding: Finding, { place, w, critical, chiSquare, freedom }
 /** `T cr>l` becomes `the temperature of cr>l`. */
 function statedPlace(place: string): string {
   const gap = place.indexOf(' ');
-  const name = PLACES[place.slice(0, gap)] ?? place.slice(0, gap);
+  const over = place.startsWith('over ', gap + 1);
+  const name = PLACES[place.slice(0, over ? gap + 5 : gap)] ?? PLACES[place.slice(0, gap)] ?? place.slice(0, gap);
   return `${name}${place
     .slice(gap)
     .replace(/^ over /, ' over ')
@@ -168,7 +169,8 @@ const PLACES: Readonly<Record<string, string>> = {
   S: 'the entropy',
   Cp: 'the heat capacity',
   'H-H(0)': 'H − H(0)',
-  p: 'the vapour pressure',
+  p: 'the pressure',
+  'p over': 'the vapour pressure',
 };
 
 function reading({ problem, read, wanted, remedy }: Detail<'reading'>): string {
@@ -410,6 +412,12 @@ function kelvin(temperatureK: number | null): string {
 function quote(text: string): string {
   if (text.startsWith('"')) return text;
   return /^[A-Za-z][\w.+-]*$/.test(text) ? text : `“${text}”`;
+}
+
+/** At the head of a sentence: words take a capital, the letter of a quantity stays what it is. */
+function subject(quantity: string): string {
+  const text = symbol(quantity);
+  return text.length === 1 ? text : capital(text);
 }
 
 function capital(text: string): string {
