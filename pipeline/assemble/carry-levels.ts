@@ -1,5 +1,6 @@
 import type { CurveFamily, LevelOrigin, PhaseCurve } from '../../schemas/curves.js';
 import type { Anchor, Datum, HarmonisedCase, StatedTransition } from '../../schemas/harmonised.js';
+import { R_J_PER_MOL_K } from '../core/constants.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
 import { datumKey } from '../core/physics/datum-keys.js';
 import { departure } from '../core/physics/equilibrium.js';
@@ -97,6 +98,11 @@ function carry(
             { key: datumKey.enthalpy(index), by: by / temperatureK, u: (stated.enthalpy as Datum).u },
             { key: datumKey.temperature(index), by: (-by * dS) / temperatureK, u: uT },
           ];
+    const byPressure = b.byPressure - scale * a.byPressure;
+    if (byPressure !== 0 && stated.pressure !== null && stated.pressurePa > 0) {
+      const { u, value } = stated.pressure;
+      errors.push({ key: datumKey.transitionPressure(index), by: -byPressure, u: u / value });
+    }
     target.sOrigin = { ...origin, errors };
     target.uS = Math.hypot(scale * source.uS, ...errors.map((e) => e.by * e.u));
     target.sFrom = 'transition';
@@ -105,12 +111,16 @@ function carry(
   return true;
 }
 
+interface Placed {
+  readonly h: number;
+  readonly s: number;
+  readonly units: number;
+  /** dS/d ln p. */
+  readonly byPressure: number;
+}
+
 /** H and S of the shape at the transition, its level apart, with what the pressure adds to a gas; its formula units. */
-function atPressure(
-  shape: PhaseShape,
-  stated: StatedTransition,
-  { zeros, substance }: Carried,
-): { readonly h: number; readonly s: number; readonly units: number } {
+function atPressure(shape: PhaseShape, stated: StatedTransition, { zeros, substance }: Carried): Placed {
   const temperatureK = stated.temperature.value;
   const gas = isGas(shape.phase);
   const term =
@@ -123,6 +133,7 @@ function atPressure(
     h: enthalpyAt(arrays, temperatureK) + enthalpy,
     s: entropyAt(arrays, temperatureK) + entropy,
     units: gas ? (substance.substance.vapourSpecies?.formulaUnits ?? 1) : 1,
+    byPressure: term === null ? 0 : -R_J_PER_MOL_K,
   };
 }
 

@@ -19,6 +19,8 @@ export interface Explanation {
 
 export const SLIP_CODES: readonly string[] = USUAL_SLIPS.map((slip) => slip.code);
 
+export const DIGIT_CODES: readonly string[] = USUAL_SLIPS.filter((slip) => slip.ofDigits).map((slip) => slip.code);
+
 /** Slips that only ever befall several cells at once. */
 export const MANY_CELL_CODES: readonly string[] = ['from-and-to-exchanged'];
 

@@ -3,7 +3,7 @@ import type { Finding, Suspect } from '../../schemas/finding.js';
 import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
-import { type Explanation, explain, isNominal, outside, type SuspectContext } from './explain.js';
+import { DIGIT_CODES, type Explanation, explain, isNominal, outside, type SuspectContext } from './explain.js';
 import { unknownScore } from './slips/unknown-error.js';
 import { suspectContext } from './suspect-context.js';
 import { usualSize } from './usual-size.js';
@@ -26,8 +26,15 @@ export function explanationOf(
   policy: Policy,
 ): Explanation | null {
   const found = suspectContext(substance, suspect);
-  if (found === null) return null;
-  return explain(found, suspect.proposed, suspect.uProposed, materialOf(found, suspect.proposed, policy))[0] ?? null;
+  return found === null ? null : (explanationsIn(found, suspect, policy)[0] ?? null);
+}
+
+function explanationsIn(
+  found: SuspectContext,
+  { proposed, uProposed }: Pick<Suspect, 'proposed' | 'uProposed'>,
+  policy: Policy,
+): readonly Explanation[] {
+  return explain(found, proposed, uProposed, materialOf(found, proposed, policy));
 }
 
 /** Findings that name a cell take their first suspect's explanation. */
@@ -43,18 +50,21 @@ export function withExplanations(findings: readonly Finding[], suspects: readonl
 /**
  * What `orderedByExplanation` weighs a suspect by: its best explanation's score, or an unknown error's, and how usual the
  * size of the proposed value is; far below all that where the value cannot be (a negative entropy). Null where the suspect
- * is no single printed number, and for a transition's nominal pressure that no usual slip explains.
+ * is no single printed number, and for a transition's nominal pressure that no usual slip explains: of its few digits one
+ * meets whatever a temperature or an enthalpy does, so that a wrong one counts only where it stands `alone`.
  */
 export function scoreInGroup(
   substance: HarmonisedCase,
   suspect: Pick<Suspect, 'address' | 'proposed' | 'uProposed'>,
   policy: Policy,
+  alone = false,
 ): number | null {
   const found = suspectContext(substance, suspect);
   if (found === null) return null;
   const { proposed, uProposed } = suspect;
-  const explanation = explanationOf(substance, suspect, policy);
-  if (explanation === null && isNominal(found)) return null;
+  const counts = ({ slip }: Explanation): boolean => alone || !isNominal(found) || !DIGIT_CODES.includes(slip);
+  const explanation = explanationsIn(found, suspect, policy).find(counts);
+  if (explanation === undefined && isNominal(found)) return null;
   if (outside(found, proposed, uProposed)) return IMPOSSIBLE_SCORE;
   const w = (proposed - found.observed) / uProposed;
   const score = explanation?.score ?? unknownScore(Number.isFinite(w) && w !== 0 ? w : 1);

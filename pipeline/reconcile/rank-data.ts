@@ -29,6 +29,9 @@ export interface SuspectGroup {
   readonly toldApartBy: string | null;
 }
 
+/** @param alone it explains more than any other, by more than a group's width */
+type ScoreOf = (one: RankedDatum, alone?: boolean) => number | null;
+
 const MOST_ERRORS = 4;
 const ONE_GROUP = 9;
 
@@ -42,7 +45,7 @@ export function suspectGroups(
   system: ConditionSystem,
   threshold: number,
   whole: Whitened = whitened(system.y, system.q, system.m),
-  scoreOf: (one: RankedDatum) => number | null = () => null,
+  scoreOf: ScoreOf = () => null,
   policy: Policy | null = null,
 ): SuspectGroup[] {
   const groups: Omit<SuspectGroup, 'toldApartBy'>[] = [];
@@ -67,7 +70,7 @@ function nextGroup(
   threshold: number,
   whole: Whitened,
   known: readonly Pick<SuspectGroup, 'members'>[],
-  scoreOf: (one: RankedDatum) => number | null,
+  scoreOf: ScoreOf,
   slips: { made: readonly WholeSlip[] | null },
 ): Omit<SuspectGroup, 'toldApartBy'> | null {
   const free = new FreeData(whole);
@@ -91,21 +94,30 @@ function nextGroup(
   const ranked: RankedDatum[] = [];
   for (const d of system.data) {
     const one = removed.has(d) ? null : rank(free, y, before, system, d);
-    if (one === null || (d.kind === 'transition-pressure' && scoreOf(one) === null)) continue;
-    ranked.push(one);
+    if (one !== null) ranked.push(one);
   }
-  if (!ranked.some((one) => Math.abs(one.w) > threshold)) return null;
+  if (!ranked.some((one) => Math.abs(one.w) > threshold && !isNominal(one))) return null;
   slips.made ??= wholeSlips(system);
   for (const slip of slips.made) {
     const one = slip.data.some((d) => removed.has(d)) ? null : rankWhole(free, y, before, system, slip);
     if (one !== null) ranked.push(one);
   }
   ranked.sort((a, b) => Math.abs(b.w) - Math.abs(a.w));
-  const best = ranked[0];
-  const near = (r: RankedDatum): boolean =>
-    best.w * best.w - r.w * r.w < ONE_GROUP + ROUNDING * best.w * best.w && Math.abs(r.w) > threshold / 2;
-  const members = ordered(ranked.filter(near), scoreOf);
+  const alone = ranked.length === 1 || !isNear(ranked[1], ranked[0]);
+  const suspected = ranked.filter((one, k) => !isNominal(one) || scoreOf(one, alone && k === 0) !== null);
+  const [best] = suspected;
+  const near = (r: RankedDatum): boolean => isNear(r, best) && Math.abs(r.w) > threshold / 2;
+  const members = ordered(suspected.filter(near), scoreOf);
   return { members, phases: bearing(system, members[0].of), before, after: before - best.w * best.w };
+}
+
+function isNear({ w }: RankedDatum, best: RankedDatum): boolean {
+  return best.w * best.w - w * w < ONE_GROUP + ROUNDING * best.w * best.w;
+}
+
+/** The pressure that a transition is stated at: a number that nobody measured. */
+function isNominal({ of, whole }: RankedDatum): boolean {
+  return whole === null && of.kind === 'transition-pressure';
 }
 
 function bearing({ curves }: ConditionSystem, { key, phases }: ConditionDatum): readonly string[] {
@@ -188,7 +200,7 @@ function rankWhole(
  * The most probable first: a usual slip that leads to what is needed counts, for one number as for many. Of the slips of many
  * numbers the best alone is kept.
  */
-function ordered(members: readonly RankedDatum[], scoreOf: (one: RankedDatum) => number | null): RankedDatum[] {
+function ordered(members: readonly RankedDatum[], scoreOf: ScoreOf): RankedDatum[] {
   const best = members.find((one) => one.whole !== null);
   const kept = members.filter((one) => one.whole === null || one === best);
   if (kept.length < 2) return kept;

@@ -43,8 +43,9 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
   const found: Finding[] = [...checked.findings];
   const groups: SuspectGroup[] = [];
   const wanted = checked.findings.some((f) => TRANSITION_RULES.has(f.rule) && f.severity !== 'note');
-  const scoreOf = ({ of, proposed, uProposed }: RankedDatum): number | null =>
-    scoreInGroup(checked.assembled.examined.harmonised, { address: of.datum.address, proposed, uProposed }, policy);
+  const { harmonised } = checked.assembled.examined;
+  const scoreOf = ({ of, proposed, uProposed }: RankedDatum, alone = false): number | null =>
+    scoreInGroup(harmonised, { address: of.datum.address, proposed, uProposed }, policy, alone);
   for (const one of solved) {
     outcomes.push(...adjustmentOutcomes(one));
     if (!wanted && !one.open) continue;

@@ -74,8 +74,8 @@ export const USUAL_SLIPS: readonly Slip[] = [
 ];
 
 /**
- * What befalls the pressure that a transition is stated at, a nominal one: its unit or its decimal point. A wrong digit of it,
- * or an atmosphere for a bar, is within what the temperature and the enthalpies explain just as well.
+ * What befalls the pressure that a transition is stated at, a nominal one: its unit, its decimal point, a digit. An atmosphere
+ * for a bar is within what the temperature and the enthalpies explain just as well.
  */
 export const NOMINAL_PRESSURE_SLIPS: readonly Slip[] = [
   decimalPointMoved,
@@ -86,4 +86,5 @@ export const NOMINAL_PRESSURE_SLIPS: readonly Slip[] = [
   pascalReadAsTorr,
   barReadAsPascal,
   pascalReadAsBar,
+  oneDigitWrong,
 ];
