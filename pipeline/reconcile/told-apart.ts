@@ -34,7 +34,8 @@ const LEAST = 4;
 
 /** By how much a reading would change with the suspect's correction. */
 function effect({ of, proposed }: RankedDatum, { data }: ErrorSum): number {
-  const by = data.find(({ key }) => key === of.key)?.by ?? 0;
+  let by = 0;
+  for (const term of data) if (term.key === of.key) by += term.by;
   return by === 0 ? 0 : by * (proposed - of.datum.value);
 }
 

@@ -63,6 +63,8 @@ export class FreeData {
     return this.basis.length;
   }
 
+  private known: { readonly of: Float64Array; readonly z: Float64Array } | null = null;
+
   constructor(private readonly system: Whitened) {}
 
   /** Whitened, with what the free data can explain taken out. */
@@ -78,23 +80,25 @@ export class FreeData {
     const z = this.reduced(direction);
     const norm = Math.sqrt(dot(z, z));
     if (norm > 0) this.basis.push(z.map((v) => v / norm));
+    this.known = null;
   }
 
   /** The statistic that is left of the misclosures y. */
   chiSquareOf(y: Float64Array): number {
-    const z = this.reduced(y);
+    const z = this.reducedOnce(y);
     return dot(z, z);
   }
 
   /** Null where the datum does not show in any condition, or not beside the free ones. */
   test(y: Float64Array, direction: Float64Array, u: number): DatumTest | null {
-    const z = this.reduced(direction);
-    const zz = dot(z, z);
     const { m, factor } = this.system;
-    const whole = direction.slice(0, m);
-    whiten(factor, m, whole);
-    if (!(zz > 1e-10 * dot(whole, whole))) return null;
-    const zy = dot(z, this.reduced(y));
+    const z = direction.slice(0, m);
+    whiten(factor, m, z);
+    const whole = dot(z, z);
+    for (const e of this.basis) subtract(z, e);
+    const zz = this.basis.length === 0 ? whole : dot(z, z);
+    if (!(zz > 1e-10 * whole)) return null;
+    const zy = dot(z, this.reducedOnce(y));
     const root = Math.sqrt(zz);
     return {
       w: zy / root,
@@ -103,6 +107,12 @@ export class FreeData {
       redundancy: Math.min(1, u * u * zz),
       smallestDetectable: NON_CENTRALITY / root,
     };
+  }
+
+  /** Many data are tested against the same misclosures. */
+  private reducedOnce(y: Float64Array): Float64Array {
+    if (this.known === null || this.known.of !== y) this.known = { of: y, z: this.reduced(y) };
+    return this.known.z;
   }
 }
 

@@ -42,7 +42,7 @@ export interface DatumTerm {
   /** A level without an origin goes by its curve's own array. */
   readonly key: string | Float64Array;
   readonly u: number;
-  by: number;
+  readonly by: number;
 }
 
 /** A linear combination of independent errors: of curves' rows at temperatures, and of data that fix levels. */
@@ -58,13 +58,8 @@ export class ErrorSum {
     return this;
   }
 
+  /** What one datum adds; a datum may stand in the sum more than once. */
   addDatum(key: string | Float64Array, by: number, u: number): this {
-    for (const term of this.data) {
-      if (term.key === key) {
-        term.by += by;
-        return this;
-      }
-    }
     this.data.push({ key, by, u });
     return this;
   }

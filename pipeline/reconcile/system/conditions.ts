@@ -38,57 +38,38 @@ export interface Condition {
 /** Per transition that two curves meet at: G_to - G_from = 0, dH - stated dH = 0, dS - stated dS = 0. */
 export function transitionConditions(joined: readonly Joined[]): Condition[] {
   const conditions: Condition[] = [];
-  joined.forEach((j, k) => {
-    if (j.byConstruction) return;
-    const { stated, index } = j.judged;
-    const { at, atK, within } = j;
-    const [keyT, keyH, keyS] = [datumKey.temperature(index), datumKey.enthalpy(index), datumKey.entropy(index)];
+  for (let k = 0; k < joined.length; k++) {
+    const j = joined[k];
+    if (j.byConstruction) continue;
+    const { judged, at, atK, within } = j;
+    const { stated, index } = judged;
     const { enthalpy, entropy } = stated;
-    const base = { joined: k, transition: index, within };
+    const { entropyJPerMolK: dS, heatCapacityJPerMolK: dCp } = at;
+    const keyT = datumKey.temperature(index);
+    const keyP = datumKey.transitionPressure(index);
     const offset = stated.temperature.value - atK;
     const uGas = gasU(j);
     const isobar = j.from.source.family.isobarPa;
-    const gases = isobar !== null || stated.pressure === null ? 0 : gasUnits(j);
-    const keyP = datumKey.transitionPressure(index);
+    const byPressure = isobar !== null || stated.pressure === null ? 0 : R_J_PER_MOL_K * gasUnits(j);
     const volume = isobar === null ? condensedTermUncertainty(stated.pressurePa) : 0;
-    conditions.push({
-      ...base,
-      kind: 'gap',
-      value: -(at.gapJPerMol + at.entropyJPerMolK * offset),
-      sum: addPressure(
-        difference(j, 1, -atK).addDatum(keyT, -at.entropyJPerMolK, 0),
-        keyP,
-        R_J_PER_MOL_K * atK * gases,
-      ),
-      variance: volume * volume,
-      gas: uGas,
-    });
-    if (enthalpy !== null)
-      conditions.push({
-        ...base,
-        kind: 'enthalpy',
-        value: at.enthalpyJPerMol + at.heatCapacityJPerMolK * offset - enthalpy.value,
-        sum: difference(j, 1, 0).addDatum(keyT, at.heatCapacityJPerMolK, 0).addDatum(keyH, -1, 0),
-        // The departure of H is some four times that of G for a fluid near boiling (B falls about as 1/T^3).
-        variance: 16 * uGas * uGas,
-        gas: 0,
-      });
-    if (entropy !== null)
-      conditions.push({
-        ...base,
-        kind: 'entropy',
-        value: at.entropyJPerMolK + (at.heatCapacityJPerMolK * offset) / atK - entropy.value,
-        sum: addPressure(
-          difference(j, 0, 1)
-            .addDatum(keyT, at.heatCapacityJPerMolK / atK, 0)
-            .addDatum(keyS, -1, 0),
-          keyP,
-          -R_J_PER_MOL_K * gases,
-        ),
-        variance: (9 * uGas * uGas) / (atK * atK),
-        gas: 0,
-      });
-  });
+    const add = (kind: ConditionKind, value: number, sum: ErrorSum, variance: number, gas: number): void => {
+      conditions.push({ kind, joined: k, transition: index, value, sum, variance, gas, within });
+    };
+    const gap = difference(j, 1, -atK).addDatum(keyT, -dS, 0);
+    add('gap', -(at.gapJPerMol + dS * offset), addPressure(gap, keyP, atK * byPressure), volume * volume, uGas);
+    if (enthalpy !== null) {
+      const sum = difference(j, 1, 0).addDatum(keyT, dCp, 0).addDatum(datumKey.enthalpy(index), -1, 0);
+      // The departure of H is some four times that of G for a fluid near boiling (B falls about as 1/T^3).
+      add('enthalpy', at.enthalpyJPerMol + dCp * offset - enthalpy.value, sum, 16 * uGas * uGas, 0);
+    }
+    if (entropy !== null) {
+      const sum = difference(j, 0, 1)
+        .addDatum(keyT, dCp / atK, 0)
+        .addDatum(datumKey.entropy(index), -1, 0);
+      const variance = (9 * uGas * uGas) / (atK * atK);
+      add('entropy', dS + (dCp * offset) / atK - entropy.value, addPressure(sum, keyP, -byPressure), variance, 0);
+    }
+  }
   return conditions;
 }
 

@@ -185,15 +185,17 @@ function addData(
   stated: readonly StatedDatum[],
 ): { data: ConditionDatum[]; unseen: StatedDatum[] } {
   const m = conditions.length;
-  const keys: (string | Float64Array)[] = [];
+  const places = new Map<string | Float64Array, number>();
   const us: number[] = [];
   const directions: Float64Array[] = [];
   for (let i = 0; i < m; i++) {
-    for (const { key, by, u } of conditions[i].sum.data) {
-      let k = keys.indexOf(key);
-      if (k < 0) {
-        k = keys.length;
-        keys.push(key);
+    const terms = conditions[i].sum.data;
+    for (let t = 0; t < terms.length; t++) {
+      const { key, by, u } = terms[t];
+      let k = places.get(key);
+      if (k === undefined) {
+        k = us.length;
+        places.set(key, k);
         us.push(u);
         directions.push(numbers(m));
       }
@@ -203,15 +205,15 @@ function addData(
   const data: ConditionDatum[] = [];
   const unseen: StatedDatum[] = [];
   for (const one of stated) {
-    const k = keys.indexOf(one.key);
-    if (k < 0 || isNegligible(directions[k], conditions)) {
+    const k = places.get(one.key);
+    if (k === undefined || isNegligible(directions[k], conditions)) {
       unseen.push(one);
       continue;
     }
     us[k] = one.u;
     data.push(seen(one, directions[k], conditions));
   }
-  for (let k = 0; k < keys.length; k++) {
+  for (let k = 0; k < us.length; k++) {
     const u2 = us[k] * us[k];
     const direction = directions[k];
     if (u2 === 0) continue;
