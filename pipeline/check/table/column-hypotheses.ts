@@ -1,4 +1,4 @@
-import type { Anchor } from '../../../schemas/harmonised.js';
+import type { Anchor, SeriesQuantity } from '../../../schemas/harmonised.js';
 import type { Substance } from '../../../schemas/substances.js';
 import {
   R_J_PER_MOL_K,
@@ -7,7 +7,14 @@ import {
   STANDARD_PRESSURE_PA,
 } from '../../core/constants.js';
 import { enthalpyAtReference } from './closing.js';
-import { type ColumnChange, type RowRun, scaledBy, shiftedBy, type TableColumn } from './column-change.js';
+import {
+  type ColumnChange,
+  type RowRun,
+  scaledBy,
+  shiftedBy,
+  statesUApart,
+  type TableColumn,
+} from './column-change.js';
 import { type RatioLaw, ratioLaws, temperatureLaws, UNEXPLAINED_WEIGHT } from './column-laws.js';
 import type { Residuals } from './residuals.js';
 import { type Ratio, type RatioPairs, robustRatio } from './robust-ratio.js';
@@ -44,14 +51,20 @@ const SAME_FACTOR = 1e-7;
 /** S(1 bar) - S(1 atm) [J/(mol K)]. */
 const ATMOSPHERE_STEP = R_J_PER_MOL_K * Math.log(STANDARD_ATMOSPHERE_PA / STANDARD_PRESSURE_PA);
 
-/** All that is worth trying on the rows of `run`, or on all. */
+/**
+ * All that is worth trying on the rows of `run`, or on all.
+ * @param uToo false where uncertainties stated apart are in the right unit, though their column is not: they then say nothing
+ *   of its scatter
+ */
 export function columnHypotheses(
-  rows: TableRows,
+  given: TableRows,
   res: Residuals,
   run: RowRun,
   within: (i: number) => boolean,
   context: TableContext,
+  uToo: boolean,
 ): ColumnHypothesis[] {
+  const rows = uToo ? given : { ...given, s: bare(given, given.s), h: bare(given, given.h), f: bare(given, given.f) };
   const out: ColumnHypothesis[] = [];
   const columns = scalable(rows, res);
   for (const set of splits(columns)) {
@@ -90,6 +103,11 @@ export function columnHypotheses(
     }
   }
   return out;
+}
+
+/** With its rounding alone where its uncertainties are stated apart. */
+function bare({ series }: TableRows, q: SeriesQuantity | null): SeriesQuantity | null {
+  return q !== null && statesUApart(series, q) ? { ...q, uOwn: q.uOwn.map(() => 0) } : q;
 }
 
 /** The set multiplied by `factor`, with the usual slip that has this factor, if there is one. */

@@ -17,7 +17,7 @@ const ROUNDS = 3;
 
 /**
  * The factor f of y = f x: the weighted median of y/x, then least squares over the pairs that lie near it, so that up to
- * half of the weight may be wrong. Null where fewer than three pairs say anything.
+ * half of the weight may be wrong. Its u is that of least squares, or of the scatter about the median where that is larger. Null where fewer than three pairs say anything.
  */
 export function robustRatio({ x, y, ux, uy }: RatioPairs): Ratio | null {
   const ratios: { readonly ratio: number; readonly weight: number }[] = [];
@@ -29,6 +29,10 @@ export function robustRatio({ x, y, ux, uy }: RatioPairs): Ratio | null {
   }
   if (ratios.length < 3) return null;
   let value = weightedMedian(ratios);
+  const median = value;
+  const apart = ratios.map(({ ratio, weight }) => ({ ratio: Math.abs(ratio - median), weight }));
+  // The pairs may scatter by more than their uncertainties say.
+  const scatter = (1.4826 * weightedMedian(apart)) / Math.sqrt(ratios.length);
   let u = Number.POSITIVE_INFINITY;
   for (let round = 0; round < ROUNDS; round++) {
     let xx = 0;
@@ -44,7 +48,7 @@ export function robustRatio({ x, y, ux, uy }: RatioPairs): Ratio | null {
     value = xy / xx;
     u = 1 / Math.sqrt(xx);
   }
-  return Number.isFinite(value) && value !== 0 ? { value, u } : null;
+  return Number.isFinite(value) && value !== 0 ? { value, u: Math.max(u, scatter) } : null;
 }
 
 /** Half of the weight lies on either side of it. */

@@ -1,4 +1,4 @@
-import type { Series } from '../../../schemas/harmonised.js';
+import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import { REFERENCE_TEMPERATURE_K } from '../../core/constants.js';
 import { type Closing, closing, enthalpyAtReference } from './closing.js';
 import { type ColumnChange, changed, quantityIn, type RowRun, statesUApart } from './column-change.js';
@@ -33,6 +33,8 @@ const FIRST_SHARE = 0.25;
 const MOST_LAWS = 3;
 /** Laws that leave so much more failing than the best one are not weighed against it. */
 const SLACK = 0.02;
+/** In standard uncertainties. */
+const DROWNED = 5;
 /** Hypotheses whose chi squared lies within this of the best cannot be told apart. */
 const ALIKE = 9;
 
@@ -112,7 +114,7 @@ function tryAll(
 ): Tried[] {
   const inRun = run === null ? null : new Set(run.rows);
   const within = (i: number): boolean => inRun === null || inRun.has(rows.row[i]);
-  return columnHypotheses(rows, residuals(rows, true), run, within, context).flatMap(
+  return columnHypotheses(rows, residuals(rows, true), run, within, context, uToo).flatMap(
     (hypothesis) => tryOne(series, rows, hypothesis, run, now, context, uToo) ?? [],
   );
 }
@@ -126,12 +128,27 @@ function tryOne(
   context: TableContext,
   uToo: boolean,
 ): Tried | null {
-  const next = tableRows(changed(series, hypothesis.changes, run, uToo));
+  const after = changed(series, hypothesis.changes, run, uToo);
+  const next = tableRows(after);
   if (next === null || next.n < rows.n) return null;
+  if (!uToo && hypothesis.changes.some(({ column }) => saysNothing(quantityIn(after, column)))) return null;
   const left = closing(next, residuals(next, true));
   // A law that leaves less to be tested would close by that alone.
   if (left.tested < 0.8 * now.tested || left.failing >= now.failing) return null;
   return { hypothesis, closing: left, score: 2 * (hypothesis.prior + standing(next, context)) - left.capped };
+}
+
+/** Half of the figures or more drown in their uncertainty: they would close with anything. */
+function saysNothing(q: SeriesQuantity | null): boolean {
+  if (q === null) return false;
+  let cells = 0;
+  let drowned = 0;
+  for (let row = 0; row < q.values.length; row++) {
+    if (q.present[row] === 0 || q.values[row] === 0) continue;
+    cells++;
+    if (Math.abs(q.values[row]) < DROWNED * q.uOwn[row]) drowned++;
+  }
+  return 2 * drowned >= cells;
 }
 
 /** Those that close about as well as any, an unexplained factor only where no usual slip lies near it. */
