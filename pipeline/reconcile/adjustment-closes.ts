@@ -29,13 +29,15 @@ export function adjusted(system: ConditionSystem, tests: number, policy: Policy)
     fault: sidakThreshold(policy.alphaFault, tests),
     doubt: sidakThreshold(policy.alphaDoubt, tests),
   };
-  const open =
-    failsGlobally(white, critical.doubt) || results.some((t) => t !== null && Math.abs(t.w) > critical.doubt);
+  // A nominal pressure is no suspect before another number is one.
+  const stands = (t: DatumTest | null, i: number): boolean =>
+    t !== null && Math.abs(t.w) > critical.doubt && system.data[i].kind !== 'transition-pressure';
+  const open = failsGlobally(white, critical.doubt) || results.some(stands);
   return { system, whitened: white, tests: results, critical, open };
 }
 
 /** One outcome a stated number, with its smallest detectable error; those that nothing else speaks of, with what would. */
-export function adjustmentOutcomes({ system, tests, whitened: white, critical }: Adjusted): Outcome[] {
+export function adjustmentOutcomes({ system, tests, whitened: white, critical, open }: Adjusted): Outcome[] {
   const substance = system.substance.substance.id;
   const rule = 'adjustment-closes' as const;
   const outcomes: Outcome[] = [];
@@ -57,7 +59,7 @@ export function adjustmentOutcomes({ system, tests, whitened: white, critical }:
       substance,
       rule,
       place: d.place,
-      outcome: Math.abs(test.w) > critical.doubt ? 'disagrees' : 'agrees',
+      outcome: open && Math.abs(test.w) > critical.doubt ? 'disagrees' : 'agrees',
       evidence: d.within ? 'arithmetic' : 'independent',
       missing: null,
       smallestDetectable: isPressure(d) ? d.datum.value * Math.expm1(test.smallestDetectable) : test.smallestDetectable,
