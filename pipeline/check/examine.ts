@@ -1,6 +1,6 @@
 import type { ExaminedCase, NamedCell } from '../../schemas/checked.js';
 import type { Finding, Outcome, Suspect } from '../../schemas/finding.js';
-import type { HarmonisedCase } from '../../schemas/harmonised.js';
+import type { HarmonisedCase, Series } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { kindOf, outcome, placeOf } from './place.js';
 import { columnFindings } from './rules/column-findings.js';
@@ -12,7 +12,9 @@ import { rowReadable } from './rules/row-readable.js';
 import { rowsDistinct } from './rules/rows-distinct.js';
 import { judgeTable } from './rules/table-rules.js';
 import { statedValuesPossible, valuePossible } from './rules/value-possible.js';
-import { nameCells } from './table/name-cells.js';
+import { belowZero } from './table/below-zero.js';
+import { nameCells, type TableVerdict } from './table/name-cells.js';
+import type { WholeColumns } from './table/whole-columns.js';
 
 const TABLE_RULES = [entropyFollowsHeatCapacity, enthalpyFollowsHeatCapacity, functionsClose, heatCapacitySmooth];
 
@@ -42,7 +44,7 @@ function examineCase(harmonised: HarmonisedCase, policy: Policy): ExaminedCase {
     outcomes.push(distinct.outcome, possible.outcome);
     const verdict = nameCells(series, policy, harmonised);
     const evidence = kindOf([series.table]);
-    const whole = verdict === null || verdict.columns.length === 0 ? null : verdict.columns;
+    const whole = wholeOf(series, verdict, possible.findings.length > 0);
     const columns = whole === null ? null : columnFindings(id, series, index, whole, policy);
     if (columns !== null) {
       followColumns(findings, columns.findings, [...distinct.findings, ...possible.findings]);
@@ -64,6 +66,13 @@ function examineCase(harmonised: HarmonisedCase, policy: Policy): ExaminedCase {
     }
   });
   return { harmonised, named, outcomes, findings, suspects };
+}
+
+/** The columns that the row checks find wrong as a whole; temperatures below 0 K where nothing else shows what they are. */
+function wholeOf(series: Series, verdict: TableVerdict | null, impossible: boolean): readonly WholeColumns[] | null {
+  if (verdict !== null && verdict.columns.length > 0) return verdict.columns;
+  const cold = impossible ? belowZero(series) : null;
+  return cold === null ? null : [cold];
 }
 
 /** What else a table shows of a column that is wrong as a whole follows from that. */

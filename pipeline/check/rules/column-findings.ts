@@ -59,7 +59,9 @@ const RULE_OF: Readonly<Record<TableColumn, RuleName>> = {
 };
 
 function ruleOf(series: Series, column: TableColumn): RuleName {
-  return column === 'temperature' && series.entropy === null ? RULE_OF.enthalpy : RULE_OF[column];
+  if (column !== 'temperature' || (series.entropy !== null && series.heatCapacity !== null)) return RULE_OF[column];
+  const hasH = series.enthalpyIncrement !== null || series.enthalpy !== null;
+  return hasH && series.heatCapacity !== null ? RULE_OF.enthalpy : 'value-possible';
 }
 
 function findingOf(

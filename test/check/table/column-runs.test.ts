@@ -1,7 +1,7 @@
 /** Laws in an invented medium: columns that cannot be told apart, runs of rows, and what is no law at all. */
 import { describe, expect, it } from 'vitest';
 import type { ExaminedCase } from '../../../schemas/checked.js';
-import { CP, examined, F, H, medium, moved, type Printed, S, T } from '../medium.js';
+import { CP, examined, F, H, medium, moved, outcomeOf, type Printed, S, T } from '../medium.js';
 
 const crystal = (without: number[] = []): Printed => {
   const printed = medium();
@@ -133,6 +133,41 @@ describe('figures', () => {
       row[F] = Number(row[F]).toFixed(2);
     });
     expect(columnsOf(examined(printed))).toMatchObject([{ quantity: 'enthalpy-increment', explanation: 'kilo-added' }]);
+  });
+});
+
+describe('temperatures below 0 K where only Cp stands beside them', () => {
+  const inCelsius = (lowerBy: number) => {
+    const printed = crystal([S, F, H]);
+    for (const row of printed.tables.cr!) row[T] = (Number(row[T]) - 273.15 - lowerBy).toFixed(2);
+    return printed;
+  };
+
+  it('are degrees Celsius, one finding with what cannot be as its consequence', () => {
+    const found = examined(inCelsius(100));
+    expect(columnsOf(found)).toMatchObject([
+      { quantity: 'temperature', explanation: 'celsius-read-as-kelvin', cause: null },
+    ]);
+    const others = found.findings.filter(({ detail }) => detail.code !== 'column');
+    expect(others.map(({ rule }) => rule)).toEqual(['value-possible']);
+    expect(others[0]!.cause).not.toBeNull();
+    expect(outcomeOf(found, 'value-possible', 'cr').outcome).toBe('disagrees');
+    expect(new Set(found.named.map(({ quantity }) => quantity))).toEqual(new Set(['temperature']));
+  });
+
+  it('are degrees Fahrenheit where Celsius would leave some below 0 K', () => {
+    const printed = crystal([S, F, H]);
+    for (const row of printed.tables.cr!) row[T] = (1.8 * (Number(row[T]) - 290) - 459.67).toFixed(2);
+    expect(columnsOf(examined(printed))).toMatchObject([{ explanation: 'fahrenheit-not-converted' }]);
+  });
+
+  it('are a cell where there is one alone', () => {
+    const printed = crystal([S, F, H]);
+    const row = printed.tables.cr![0]!;
+    row[T] = `-${row[T]}`;
+    const found = examined(printed);
+    expect(columnsOf(found)).toEqual([]);
+    expect(found.findings.some(({ rule }) => rule === 'value-possible')).toBe(true);
   });
 });
 
