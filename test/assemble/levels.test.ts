@@ -342,6 +342,27 @@ describe('levels of a gas', () => {
     expect(s(atAtmosphere) - s(atBar)).toBeCloseTo(0.1094, 4);
   });
 
+  it.each([
+    ['evaluated', 0],
+    ['measured', 200],
+  ] as const)('carried to the gas (%s) rest on the pressure of the boiling point: S by R d(ln p)', (basis, uPa) => {
+    const boiling = {
+      ...transitionOf('l', 'g', datum(353.2), { h: datum(30700), gas: 'ideal' }, { basis }),
+      pressure: { ...datum(100000), u: uPa },
+    };
+    const made = assembled({
+      series: [bare('l', 290, 370, 135), bare('g', 290, 600, 90)],
+      anchors: [anchorOf('l', { h: datum(49000), s: datum(173) })],
+      transitions: [boiling],
+      substance: identity,
+    });
+    const [error, ...more] = curveOfPhase(made, 'g').entropyLevel!.errors.filter(({ key }) => key.startsWith('p of'));
+    expect(more).toEqual([]);
+    expect(error).toMatchObject({ key: 'p of transition 0', by: 8.31446261815324, u: uPa / 100000 });
+    const heights = [100000, 110000].map((pressurePa) => entropyAt(curveOfPhase(boil('ideal', pressurePa), 'g'), TR));
+    expect(heights[1]! - heights[0]!).toBeCloseTo(error!.by * Math.log(1.1), 6);
+  });
+
   it('count one mole of the vapour species', () => {
     const result = boil('ideal', 100000, { vapourSpecies: { formula: 'X2', formulaUnits: 2 } });
     const [l, g] = ['l', 'g'].map((phase) => curveOfPhase(result, phase));

@@ -40,6 +40,56 @@ describe('a stated transition', () => {
     expect(transition({}, undefined, { standardPressurePa: 101325 }).stated.pressurePa).toBe(101325);
   });
 
+  it('keeps the cell of its pressure, exact as printed: a nominal pressure has no rounding and no default', () => {
+    for (const basis of ['evaluated', 'measured'] as const) {
+      const { stated } = transition({}, { 'transition-temperature': '600.60', pressure: '1' }, { basis });
+      expect(stated.pressure).toMatchObject({
+        value: 101325,
+        u: 0,
+        uRounding: 0,
+        halfUnit: 0,
+        printed: '1',
+        factor: 101325,
+      });
+      expect(stated.pressure?.address).toEqual({ source: 'desk', file: 'table.csv', line: 2, column: 'p' });
+      expect(stated.pressure?.origin).toBe('printed digits');
+    }
+  });
+
+  it('has the uncertainty of its pressure that is stated, in a column of its own or by the descriptor', () => {
+    const printed = { 'transition-temperature': '600.60', pressure: '2±0.02' };
+    const columns = [...COLUMNS, columnOf('u(p)', 'uncertainty', 'atm', { of: 'pressure', coverage: 2 })];
+    expect(transition({}, printed, { columns }).stated.pressure?.u).toBeCloseTo(0.01 * 101325, 9);
+    const declared = columnOf('p', 'pressure', 'atm', {
+      uncertainty: [{ relative: 0.01, absolute: null, coverage: 1, shared: false }],
+    });
+    const { stated } = transition(
+      {},
+      { 'transition-temperature': '600.60', pressure: '2' },
+      { columns: COLUMNS.with(1, declared) },
+    );
+    expect(stated.pressure?.u).toBeCloseTo(0.01 * 202650, 8);
+    expect(stated.pressure?.origin).toBe('source default');
+    expect(stated.pressure?.uRounding).toBe(0);
+  });
+
+  it('has no cell of a pressure where the descriptor or nobody gives it', () => {
+    expect(transition({}).stated.pressure).toBeNull();
+    const table = tableOf(COLUMNS, { holds: 'transitions' });
+    const row = rowOf(table, { 'from-phase': 'cr', 'to-phase': 'l' }, { 'transition-temperature': '600.60' });
+    const constant = {
+      column: -1,
+      value: 50000,
+      decimals: 20,
+      usualDecimals: 20,
+      printed: '0.5 bar',
+      corrected: false,
+    };
+    const cells = { ...row.cells, pressure: { ...constant, uncertainty: null } };
+    const [stated] = harmonised({ transitions: [{ ...row, cells }] }).transitions;
+    expect(stated).toMatchObject({ pressurePa: 50000, pressure: null });
+  });
+
   it('of a measured source takes the policy’s uncertainties', () => {
     const { stated } = transition(
       {},

@@ -35,6 +35,7 @@ function medium(): HarmonisedCase {
       columnOf('T', 'transition-temperature', 'K'),
       columnOf('dH', 'transition-enthalpy', 'J/g'),
       columnOf('dS', 'transition-entropy', 'J/(mol.K)'),
+      columnOf('p', 'pressure', 'bar'),
     ],
     { holds: 'transitions', file: 'transitions.csv', temperatureScale: 'not-stated' },
   );
@@ -83,7 +84,7 @@ function medium(): HarmonisedCase {
       rowOf(
         transitions,
         { 'from-phase': 'l', 'to-phase': 'g', gas: 'ideal' },
-        { 'transition-temperature': '900.00', 'transition-entropy': '88.00' },
+        { 'transition-temperature': '900.00', 'transition-entropy': '88.00', pressure: '750.062' },
         3,
       ),
     ],
@@ -172,6 +173,20 @@ describe('the explanation of one cell of a substance', () => {
     ['other-formula-molar-mass', 'transitions.csv', 2, 'dH', (9000 * 68.015) / 50, 4],
   ])('is %s', (slip, file, line, column, proposed, u) => {
     expect(explanation(file, line, column, proposed, u)?.slip).toBe(slip);
+  });
+
+  it('of a transition’s pressure is a unit, a decimal point or a digit, exact as printed', () => {
+    expect(at('transitions.csv', 3, 'p')).toMatchObject({
+      quantity: 'pressure',
+      transition: 1,
+      factor: 1e5,
+      gas: true,
+    });
+    const torr = explanation('transitions.csv', 3, 'p', 100100, 300);
+    expect([torr?.slip, torr?.correctedPrinted]).toEqual(['torr-read-as-pascal', '1.000000']);
+    expect(explanation('transitions.csv', 3, 'p', 0.4 * 750.062e5, 1e5)).toBeNull();
+    // An atmosphere for a bar.
+    expect(explanation('transitions.csv', 3, 'p', 1.01325 * 750.062e5, 1e4)).toBeNull();
   });
 
   it('is none where nothing usual leads there', () => {

@@ -1,8 +1,9 @@
 /** Slips that touch many printed numbers at once, in the invented medium: each is one suspect, in place of many. */
 import { describe, expect, it } from 'vitest';
-import { CP, F, H, medium, type Printed, S } from '../check/medium.js';
+import { CP, enthalpyOf, entropyOf, F, H, laws, medium, type Printed, S } from '../check/medium.js';
 import { groupOf, reconciled, rootsOf, suspectsOf } from './reconciled.js';
 
+const R = 8.31446261815324;
 const scaled = (text: string, ratio: number): string => (Number(text) * ratio).toFixed(text.split('.')[1]!.length);
 
 /** The one root's first suspect. */
@@ -11,6 +12,25 @@ function firstOf(printed: Printed) {
   const roots = rootsOf(found);
   const [first] = suspectsOf(found.suspects, roots[0]!);
   return { roots, first: first!, group: groupOf(found, roots[0]!) };
+}
+
+/** The medium with the temperatures that it boils at below 1 bar, as G of its laws has them. */
+function boilingPoints(basis: 'evaluated' | 'measured'): Printed {
+  const printed = medium(basis);
+  const { l, g } = laws();
+  const gap = (t: number, bar: number): number =>
+    enthalpyOf(g, t) - enthalpyOf(l, t) - t * (entropyOf(g, t) - entropyOf(l, t) - R * Math.log(bar));
+  for (const bar of [0.5, 0.2]) {
+    let [low, high] = [500, 900];
+    for (let k = 0; k < 60; k++) {
+      const middle = (low + high) / 2;
+      if (gap(middle, bar) > 0) low = middle;
+      else high = middle;
+    }
+    const boiling = { from: 'l', to: 'g', T: low.toFixed(3), dH: '', dS: '', p: String(bar), gas: 'ideal' };
+    printed.transitions.push(boiling);
+  }
+  return printed;
 }
 
 describe('many numbers at once', () => {
@@ -73,7 +93,7 @@ describe('many numbers at once', () => {
 
   it('every entropy of the gas at 1 atm, its anchor with it, is one suspect', () => {
     const printed = medium();
-    const step = 8.31446261815324 * Math.log(1.01325);
+    const step = R * Math.log(1.01325);
     for (const row of printed.tables.g!) {
       row[S] = (Number(row[S]) - step).toFixed(3);
       row[F] = (Number(row[F]) - step).toFixed(3);
@@ -91,6 +111,21 @@ describe('many numbers at once', () => {
     for (const row of printed.tables.l!) row[CP] = scaled(row[CP]!, 1 / 4.184);
     const { first } = firstOf(printed);
     expect([first.explanation, first.cells]).toEqual(['calorie-read-as-joule', printed.tables.l!.length]);
+  });
+
+  it.each([
+    ['evaluated', 'torr', 750.061683, 'torr-read-as-pascal'],
+    ['measured', 'torr', 750.061683, 'torr-read-as-pascal'],
+    ['evaluated', 'kilopascal', 100, 'pascal-read-as-bar-or-atmosphere'],
+    ['measured', 'kilopascal', 100, 'pascal-read-as-bar-or-atmosphere'],
+  ] as const)('the pressures of boiling points (%s) in %s are one suspect', (basis, _, ratio, code) => {
+    const clean = boilingPoints(basis);
+    expect(reconciled(clean).verdict).toBe('cleared');
+    for (const one of clean.transitions.slice(1)) one.p = (Number(one.p) * ratio).toPrecision(7);
+    const { first, roots } = firstOf(clean);
+    expect(roots).toHaveLength(1);
+    expect([first.explanation, first.cells, first.address.column]).toEqual([code, 3, 'p']);
+    expect(Number(first.proposedPrinted)).toBeCloseTo(1, 5);
   });
 
   it('leave single slips alone: one number in calories is one number', () => {

@@ -54,6 +54,16 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     [/^Cp is -24\.5 at 300 K, which cannot be; expected was Cp > 0\./],
   ],
   [
+    'impossible, a quantity of one letter',
+    {
+      rule: 'value-possible',
+      fromPhase: 'l',
+      toPhase: null,
+      detail: { code: 'impossible', quantity: 'pressure', read: '-1', wanted: 'a pressure above 0' },
+    },
+    [/^p of l is -1/],
+  ],
+  [
     'interval',
     { detail: interval, observed: 3.2, expected: 2.198, difference: 1.002, tolerance: 0.01, unit: 'J/(mol.K)' },
     [
@@ -304,6 +314,29 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     },
     [/no transition is stated there\. ΔH = T ΔS, as at a transition: one may have been left out\. State it, or/],
   ],
+  ...(
+    [
+      ['p l>g', 'the pressure of l>g'],
+      ['p over l', 'the vapour pressure over l'],
+      ['T cr>l', 'the temperature of cr>l'],
+      ['T over cr', 'the temperature over cr'],
+    ] as const
+  ).map(([place, words]): (typeof SENTENCES)[number] => [
+    `adjustment of ${place}`,
+    {
+      rule: 'adjustment-closes',
+      detail: { code: 'adjustment', place, w: -12.345, critical: 3.5, chiSquare: 152, freedom: 5 },
+      observed: 75_006_200,
+      expected: 100_000,
+      difference: 74_906_200,
+      tolerance: 300,
+      unit: 'Pa',
+    },
+    [
+      new RegExp(`^Taken together with all else that is stated, ${words} is .* Pa; the rest puts it at`),
+      /residual 12\.35/,
+    ],
+  ]),
   [
     'calculation-failed',
     { rule: 'row-readable', detail: { code: 'calculation-failed', message: 'matrix is singular' } },
@@ -336,6 +369,7 @@ describe('the words of a finding', () => {
       'phase-order': true,
       'entropy-order': true,
       'unstated-jump': true,
+      adjustment: true,
       'calculation-failed': true,
     };
     expect(new Set(SENTENCES.map(([, { detail }]) => detail.code))).toEqual(new Set(Object.keys(codes)));

@@ -40,4 +40,27 @@ describe('the numbers that a trace moves', () => {
       expect(read(now())).toBeCloseTo(was, 9);
     }
   });
+
+  it('are the pressure of a transition, where it is a cell', () => {
+    const columns = [columnOf('T', 'transition-temperature', 'K'), columnOf('p', 'pressure', 'bar')];
+    const table = tableOf(columns, { holds: 'transitions', file: 'transitions.csv' });
+    const words = { 'from-phase': 'l', 'to-phase': 'g', gas: 'ideal' };
+    const raw: RawCase = {
+      substance: SUBSTANCE,
+      series: [],
+      anchors: [],
+      transitions: [rowOf(table, words, { 'transition-temperature': '900.000', pressure: '1' }, 4)],
+      vapourPressures: [],
+      findings: [],
+    };
+    const [before] = harmonise([raw], settings).artefact;
+    const { raw: copy, numbers } = movable(raw, before!, []);
+    const pressure = numbers.find(({ quantity }) => quantity === 'pressure')!;
+    expect(pressure).toMatchObject({ place: 'l>g', printed: '1', u: 0, address: { line: 4, column: 'p' } });
+    pressure.move(0.5);
+    const [now] = harmonise([copy], settings).artefact;
+    expect(pressure.read(now!)).toBeCloseTo(150_000, 6);
+    expect(now!.transitions[0]!.pressurePa).toBeCloseTo(150_000, 6);
+    expect(pressure.read(before!)).toBe(100_000);
+  });
 });

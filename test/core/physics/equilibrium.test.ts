@@ -110,4 +110,20 @@ describe('two phases in equilibrium', () => {
     expect(condensedTermUncertainty(101325)).toBeCloseTo(0.0765, 4);
     expect(gasTerm(BENZENE, 'ideal', 2e5, 353).u(t)).toBe(0);
   });
+
+  it('bounds a real gas at high pressure by its critical point: RT ln phi from -0.41 RT to 0', () => {
+    const [t, rt] = [353, 8.31446261815324 * 353];
+    const unknown = { ...BENZENE, criticalTemperatureK: null, criticalPressurePa: null };
+    for (const pressurePa of [2e6, 7.5e7, 1e10]) {
+      const { shift, u } = gasTerm(BENZENE, 'real', pressurePa, 353);
+      expect(shift!(t)).toBeCloseTo(rt * (Math.log(pressurePa / 1e5) - 0.41), 6);
+      expect(u(t)).toBeLessThanOrEqual(0.25 * rt);
+      expect(gasTerm(unknown, 'real', pressurePa, 353).u(t)).toBeCloseTo(0.25 * rt, 9);
+    }
+    // Below, the virial equation stands as it is.
+    const low = gasTerm(BENZENE, 'real', 1e6, 353);
+    const { value, u } = secondVirial(BENZENE, t, 353);
+    expect(low.shift!(t)).toBeCloseTo(rt * Math.log(10) + value * 1e6, 6);
+    expect(low.u(t)).toBeCloseTo(u * 1e6, 9);
+  });
 });
