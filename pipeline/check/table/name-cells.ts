@@ -7,6 +7,7 @@ import type { TableContext } from './column-hypotheses.js';
 import { type Anomaly, type Detectable, leftOver, smallest } from './left-over.js';
 import { withOwnDigits } from './own-digits.js';
 import { type Residuals, residuals, standoff, standoffWithout } from './residuals.js';
+import { secondRow } from './second-row.js';
 import { cellU, type TableRows, tableRows } from './table-rows.js';
 import { type WholeColumns, wholeColumns, worthTrying } from './whole-columns.js';
 import { type Hypothesis, type Pattern, testHeatCapacity, Window } from './window.js';
@@ -195,9 +196,10 @@ function described(rows: TableRows, one: Hypothesis): Omit<SuspectCell, 'rivals'
 function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, window: Window): Hypothesis | null {
   const stand = standoff(rows, k);
   if (!stand.interior) return null;
-  const alone = Math.abs(stand.difference) / stand.u;
   if (window.conditions === 0) {
-    if (!stand.symmetric) return null;
+    const sure = stand.symmetric ? stand : secondRow(rows, k);
+    if (sure === null) return null;
+    const { difference, u } = sure;
     // Cp alone: the neighbours must lie on their own curve once this row is out.
     let worst = 0;
     for (let j = Math.max(rows.from[k], k - 3); j <= Math.min(rows.to[k], k + 3); j++) {
@@ -207,20 +209,21 @@ function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, wind
         worst = Math.max(worst, Math.abs(other.difference));
       }
     }
-    const left = worst / Math.abs(stand.difference);
+    const w = Math.abs(difference) / u;
     return {
       row: k,
       pattern: 'heat-capacity',
-      w: alone,
-      error: stand.difference,
-      uError: stand.u,
-      before: alone * alone,
-      after: left > 0.25 ? alone * alone : 0,
+      w,
+      error: difference,
+      uError: u,
+      before: w * w,
+      after: worst > 0.25 * Math.abs(difference) ? w * w : 0,
       freedom: 1,
     };
   }
   const joint = testHeatCapacity(rows, res, k);
   if (joint === null || joint.w < 3) return null;
+  const alone = Math.abs(stand.difference) / stand.u;
   return {
     ...joint,
     w: Math.hypot(joint.w, Math.min(alone, joint.w)),
