@@ -13,8 +13,8 @@ import { rowsDistinct } from './rules/rows-distinct.js';
 import { judgeTable } from './rules/table-rules.js';
 import { statedValuesPossible, valuePossible } from './rules/value-possible.js';
 import { belowZero } from './table/below-zero.js';
+import type { WholeColumns } from './table/column-cause.js';
 import { nameCells, type TableVerdict } from './table/name-cells.js';
-import type { WholeColumns } from './table/whole-columns.js';
 
 const TABLE_RULES = [entropyFollowsHeatCapacity, enthalpyFollowsHeatCapacity, functionsClose, heatCapacitySmooth];
 

@@ -6,10 +6,10 @@ import type { Policy } from '../../../schemas/policy.js';
 import { QUANTITY_UNITS } from '../../../schemas/quantities.js';
 import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
 import { addressOf, evidenceOf } from '../place.js';
+import type { WholeColumns } from '../table/column-cause.js';
 import { type ColumnCells, columnCells } from '../table/column-cells.js';
 import { type ColumnChange, changedValue, quantityIn, quantityName, type TableColumn } from '../table/column-change.js';
-import type { ColumnHypothesis } from '../table/column-hypotheses.js';
-import type { WholeColumns } from '../table/whole-columns.js';
+import type { ColumnHypothesis } from '../table/column-hypothesis.js';
 
 export interface ColumnFindings {
   readonly findings: Finding[];

@@ -1,6 +1,6 @@
 import type { Series } from '../../../schemas/harmonised.js';
+import type { WholeColumns } from './column-cause.js';
 import { temperatureLaws } from './column-laws.js';
-import type { WholeColumns } from './whole-columns.js';
 
 /** One negative temperature may be a sign too many. */
 const FEWEST = 2;

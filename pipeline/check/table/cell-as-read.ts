@@ -1,8 +1,8 @@
 import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import type { NumberQuantity } from '../../../schemas/quantities.js';
+import type { WholeColumns } from './column-cause.js';
 import { type ColumnChange, quantityIn, type TableColumn, unchangedValue } from './column-change.js';
 import type { SuspectCell } from './name-cells.js';
-import type { WholeColumns } from './whole-columns.js';
 
 /** A cell that stands out of its column once that is put right, with its numbers as the column itself has them. */
 export function cellAsRead(series: Series, whole: readonly WholeColumns[], cell: SuspectCell): SuspectCell {

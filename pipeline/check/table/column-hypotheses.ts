@@ -1,45 +1,13 @@
-import type { Anchor, SeriesQuantity } from '../../../schemas/harmonised.js';
+import type { SeriesQuantity } from '../../../schemas/harmonised.js';
 import type { Substance } from '../../../schemas/substances.js';
-import {
-  R_J_PER_MOL_K,
-  REFERENCE_TEMPERATURE_K,
-  STANDARD_ATMOSPHERE_PA,
-  STANDARD_PRESSURE_PA,
-} from '../../core/constants.js';
-import { enthalpyAtReference } from './closing.js';
-import {
-  type ColumnChange,
-  type RowRun,
-  scaledBy,
-  shiftedBy,
-  statesUApart,
-  type TableColumn,
-} from './column-change.js';
+import { type RowRun, scaledBy, statesUApart, type TableColumn } from './column-change.js';
+import type { ColumnHypothesis, TableContext } from './column-hypothesis.js';
 import { type RatioLaw, ratioLaws, temperatureLaws, UNEXPLAINED_WEIGHT } from './column-laws.js';
+import { pairsOf } from './column-pairs.js';
+import { columnShifts } from './column-shifts.js';
 import type { Residuals } from './residuals.js';
-import { type Ratio, type RatioPairs, robustRatio } from './robust-ratio.js';
-import { cellU, type TableRows } from './table-rows.js';
-
-/** What else is known of the substance whose table is looked at. */
-export interface TableContext {
-  readonly substance: Substance;
-  readonly anchors: readonly Anchor[];
-}
-
-/** One law for whole columns of one table, not yet tried. */
-export interface ColumnHypothesis {
-  readonly changes: readonly ColumnChange[];
-  readonly explanation: string | null;
-  /** Natural logarithm of how usual it is. */
-  readonly prior: number;
-  /** Standard uncertainty of its factor, relative, and of its shift; 0 where the law fixes them. */
-  readonly uFactor: number;
-  readonly uShift: number;
-  /** Relative: an unexplained factor this near a usual slip's is no other one. Few digits of Cp are wrong alike along a table. */
-  readonly loose: number;
-  /** What this table alone cannot tell from it: the other columns by the inverse factor, another column by the inverse shift. */
-  readonly equal: readonly ColumnHypothesis[];
-}
+import { type Ratio, robustRatio } from './robust-ratio.js';
+import type { TableRows } from './table-rows.js';
 
 /** How usual it is that several columns go wrong together, by how many. */
 const TOGETHER = [1, 0.4, 0.2, 0.1];
@@ -48,8 +16,6 @@ const NEAR = 8;
 const NEAR_SHARE = 2e-3;
 /** Two ways to the same factor. */
 const SAME_FACTOR = 1e-7;
-/** S(1 bar) - S(1 atm) [J/(mol K)]. */
-const ATMOSPHERE_STEP = R_J_PER_MOL_K * Math.log(STANDARD_ATMOSPHERE_PA / STANDARD_PRESSURE_PA);
 
 /**
  * All that is worth trying on the rows of `run`, or on all.
@@ -84,11 +50,12 @@ export function columnHypotheses(
     for (const factor of factors) {
       const uFactor = uOf.get(factor) ?? 0;
       const one = scaled(rows, set, factor, uFactor, context.substance);
+      // The other columns by the inverse factor: this table alone cannot tell them apart.
       const other = scaled(rows, others, 1 / factor, uFactor, context.substance);
-      out.push({ ...one, equal: [other] }, { ...other, equal: [one] });
+      out.push(one, other);
     }
   }
-  out.push(...shifts(rows, res, within, context.anchors));
+  out.push(...columnShifts(rows, res, within, context.anchors));
   if (run === null) {
     for (const { code, change, weight } of temperatureLaws(rows.series)) {
       out.push({
@@ -98,7 +65,6 @@ export function columnHypotheses(
         uFactor: 0,
         uShift: 0,
         loose: 0,
-        equal: [],
       });
     }
   }
@@ -129,7 +95,6 @@ function scaled(
     uFactor: law.code === null ? uFactor : 0,
     uShift: 0,
     loose: NEAR * uFactor + roundingOf(rows),
-    equal: [],
   };
 }
 
@@ -165,165 +130,4 @@ function splits(columns: readonly TableColumn[]): TableColumn[][] {
     if (size < 0 || (size === 0 && set.includes(columns[0]))) out.push(set);
   }
   return out;
-}
-
-/**
- * The conditions that hold a column of the set against one outside it, factor * x = y: those of dH, of dS, and of the three
- * functions of a row, each by itself, since another column that is wrong too spoils only some of them.
- */
-function pairsOf(
-  rows: TableRows,
-  res: Residuals,
-  set: ReadonlySet<TableColumn>,
-  within: (i: number) => boolean,
-): RatioPairs[] {
-  const heats = noPairs();
-  const entropies = noPairs();
-  const functions = noPairs();
-  const { n, h, s, f, t } = rows;
-  const hasCp = set.has('heatCapacity');
-  const hasH = set.has('enthalpy');
-  const hasS = set.has('entropy');
-  const hasF = set.has('gibbsFunction');
-  for (let i = 0; i < n; i++) {
-    if (!within(i)) continue;
-    const r = rows.row[i];
-    if (res.hasClosure[i] === 1 && s !== null && h !== null && f !== null) {
-      // S - F - H/T = 0, parted into what the factor acts on and the rest.
-      let x = 0;
-      let y = 0;
-      let vx = 0;
-      let vy = 0;
-      for (const [inSet, value, u] of [
-        [hasS, s.values[r], cellU(s, r)],
-        [hasF, -f.values[r], cellU(f, r)],
-        [hasH, -h.values[r] / t[i], cellU(h, r) / t[i]],
-      ] as const) {
-        if (inSet) {
-          x += value;
-          vx += u * u;
-        } else {
-          y -= value;
-          vy += u * u;
-        }
-      }
-      if (vx > 0 && vy > 0) add(functions, true, x, Math.sqrt(vx), y, Math.sqrt(vy));
-    }
-    if (i === n - 1 || res.usable[i] !== 1 || !within(i + 1)) continue;
-    const next = rows.row[i + 1];
-    const e = Math.sqrt(res.e[i] * res.e[i] + res.own[i]);
-    if (hasH !== hasCp && h !== null && h.present[r] === 1 && h.present[next] === 1) {
-      add(heats, hasH, h.values[next] - h.values[r], Math.hypot(cellU(h, r), cellU(h, next)), res.q[i], e);
-    }
-    if (hasS !== hasCp && s !== null && s.present[r] === 1 && s.present[next] === 1) {
-      const u = e * Math.hypot(res.c[i], res.open[i]);
-      add(entropies, hasS, s.values[next] - s.values[r], Math.hypot(cellU(s, r), cellU(s, next)), res.p[i], u);
-    }
-  }
-  return [heats, entropies, functions].filter(({ x }) => x.length > 0);
-}
-
-function noPairs(): RatioPairs {
-  return { x: [], y: [], ux: [], uy: [] };
-}
-
-/** The factor acts on `a` where that is in the set, else on `b`. */
-function add(to: RatioPairs, inSet: boolean, a: number, ua: number, b: number, ub: number): void {
-  to.x.push(inSet ? a : b);
-  to.ux.push(inSet ? ua : ub);
-  to.y.push(inSet ? b : a);
-  to.uy.push(inSet ? ub : ua);
-}
-
-/** H, S or -[G - H]/T off by a constant; -[G - H]/T by one over T. */
-function shifts(
-  rows: TableRows,
-  res: Residuals,
-  within: (i: number) => boolean,
-  anchors: readonly Anchor[],
-): ColumnHypothesis[] {
-  const out: ColumnHypothesis[] = [];
-  const { n, h, s, f, t, series } = rows;
-  const overT = noPairs();
-  const plain = noPairs();
-  for (let i = 0; i < n; i++) {
-    if (res.hasClosure[i] !== 1 || !within(i) || s === null || h === null || f === null) continue;
-    const r = rows.row[i];
-    const u = Math.hypot(cellU(s, r), cellU(f, r), cellU(h, r) / t[i]);
-    add(overT, true, 1 / t[i], 0, res.closure[i], u);
-    add(plain, true, 1, 0, res.closure[i], u);
-  }
-  const alone = (change: ColumnChange, explanation: string | null, weight: number, u: number): ColumnHypothesis => ({
-    changes: [change],
-    explanation,
-    prior: Math.log(weight),
-    uFactor: 0,
-    uShift: u,
-    loose: 0,
-    equal: [],
-  });
-  const zero = enthalpyAtReference(rows);
-  const slope = robustRatio(overT);
-  if (slope !== null && Math.abs(slope.value) > NEAR * slope.u) {
-    const { value, u } = slope;
-    // S - F - H/T = value/T: H lies too low by it, or -[G - H]/T.
-    const code = zeroCode(rows, -value, anchors);
-    const inH = alone(shiftedBy('enthalpy', value), code, code === null ? UNEXPLAINED_WEIGHT : 0.03, u);
-    const change = { column: 'gibbsFunction', factor: 1, shift: 0, shiftOverT: value } as const;
-    const fCode = zeroCode(rows, value, anchors);
-    const inF = alone(change, fCode, (fCode === null ? UNEXPLAINED_WEIGHT : 0.03) * 0.5, u);
-    // A row at Tr tells them apart.
-    const equal = zero === null;
-    out.push({ ...inH, equal: equal ? [inF] : [] }, { ...inF, equal: equal ? [inH] : [] });
-  }
-  const step = robustRatio(plain);
-  if (step !== null && Math.abs(step.value) > NEAR * step.u) {
-    const gas = series.phase === 'g' || series.phase.startsWith('g-');
-    const { value, u } = step;
-    const near = Math.abs(Math.abs(value) - ATMOSPHERE_STEP) <= Math.max(NEAR * u, 1e-3);
-    const exact = near ? Math.sign(value) * ATMOSPHERE_STEP : value;
-    // What is printed at 1 atm lacks the step; the reverse is rarer.
-    const weightOf = (added: number): number =>
-      near && gas ? (added > 0 ? 0.035 : 0.015) : near ? 2 * UNEXPLAINED_WEIGHT : UNEXPLAINED_WEIGHT;
-    const code = near && gas ? 'atmosphere-for-bar' : null;
-    const inS = alone(shiftedBy('entropy', -exact), code, weightOf(-exact), near ? 0 : u);
-    const inF = alone(shiftedBy('gibbsFunction', exact), code, weightOf(exact), near ? 0 : u);
-    out.push({ ...inS, equal: [inF] }, { ...inF, equal: [inS] });
-  }
-  if (zero !== null && within(zero.at) && Math.abs(zero.enthalpy) > NEAR * zero.u) {
-    const { enthalpy, u } = zero;
-    const code = zeroCode(rows, enthalpy, anchors);
-    const weight = code === null ? UNEXPLAINED_WEIGHT : 0.03;
-    const inH = shiftedBy('enthalpy', -enthalpy);
-    if (!res.hasClosure.includes(1)) out.push(alone(inH, code, weight, u));
-    else {
-      const inF = { column: 'gibbsFunction', factor: 1, shift: 0, shiftOverT: enthalpy } as const;
-      out.push({ ...alone(inH, code, weight * TOGETHER[1], u), changes: [inH, inF] });
-    }
-  }
-  return out;
-}
-
-/** H(Tr) - H(0) is some such share of Cp(Tr) Tr, from stiff crystals to gases. */
-const ZERO_SHARE = [0.15, 1.1] as const;
-
-/**
- * Whether H - H(Tr) is off by H(Tr) - H(0) [J/mol]: as an anchor or the row at 0 K has it, else where it could be.
- */
-function zeroCode(rows: TableRows, off: number, anchors: readonly Anchor[]): string | null {
-  const code = 'counted-from-zero-kelvin';
-  const own = anchors.filter(({ phase, enthalpyFromZero }) => phase === rows.series.phase && enthalpyFromZero !== null);
-  const anchor = own.find(({ table }) => table.source === rows.series.table.source) ?? own[0];
-  const stated = anchor?.enthalpyFromZero ?? null;
-  if (stated !== null)
-    return Math.abs(Math.abs(off) - stated.value) <= 0.005 * stated.value + 6 * stated.u ? code : null;
-  if (rows.h === null || off <= 0) return null;
-  if (rows.t[0] === 0) return Math.abs(rows.h.values[rows.row[0]]) <= 4 * cellU(rows.h, rows.row[0]) ? code : null;
-  let nearest = 0;
-  for (let i = 1; i < rows.n; i++) {
-    const way = (k: number): number => Math.abs(rows.t[k] - REFERENCE_TEMPERATURE_K);
-    if (way(i) < way(nearest)) nearest = i;
-  }
-  const share = off / (rows.cp[nearest] * REFERENCE_TEMPERATURE_K);
-  return share > ZERO_SHARE[0] && share < ZERO_SHARE[1] ? code : null;
 }

@@ -209,6 +209,18 @@ describe('columns off by a constant', () => {
     },
   );
 
+  it.each(CRYSTALS.map((one) => [named(one), one] as const))(
+    '-[G - H]/T alone counted from 0 K is named in %s, since H is 0 at Tr',
+    (_, one) => {
+      const zero = FROM_ZERO[one.file]!;
+      const { T, F } = one.columns;
+      const lower: Rewrite = (value, decimals, row) => (value - (1000 * zero) / row.get(T)!).toFixed(decimals);
+      const { finding, detail } = only(spoilt(PUBLISHED, one, { [F]: lower }));
+      expect(finding.rule).toBe('functions-close');
+      expect(detail).toMatchObject({ factor: null, shift: null, explanation: 'counted-from-zero-kelvin' });
+    },
+  );
+
   const atOneAtmosphere: Rewrite = (value, decimals) => (value === 0 ? value : value - 0.10944).toFixed(decimals);
   it.each(GASES.map((one) => [named(one), one] as const))(
     'S at 1 atm beside -[G - H]/T at 1 bar is named in %s',
