@@ -78,12 +78,12 @@ export function seriesSlips(system: ConditionSystem): WholeSlip[] {
 }
 
 /**
- * A table whose temperatures stand on an old scale though they are said to be on the new one: its H and S at T are those of
+ * A table whose temperatures stand on an old scale though they are not said to: its H and S at T are those of
  * T - (t90 - told), which counts from the reference temperature where their level does.
  */
 function oldScales(system: ConditionSystem, curve: PhaseCurve, series: Series): WholeSlip[] {
   const { table, temperatureK: temperatures } = series;
-  if (table.temperatureScale !== 'ITS-90') return [];
+  if (table.temperatureScale === 'IPTS-68' || table.temperatureScale === 'IPTS-48') return [];
   const at = curve.referenceK;
   const slips: WholeSlip[] = [];
   for (const difference of [t90MinusT68, t90MinusT48]) {
