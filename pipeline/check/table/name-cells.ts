@@ -2,14 +2,15 @@ import type { Series, SeriesQuantity } from '../../../schemas/harmonised.js';
 import type { Policy } from '../../../schemas/policy.js';
 import type { NumberQuantity } from '../../../schemas/quantities.js';
 import { cellAsRead } from './cell-as-read.js';
+import type { WholeColumns } from './column-cause.js';
 import { changed } from './column-change.js';
-import type { TableContext } from './column-hypotheses.js';
+import type { TableContext } from './column-hypothesis.js';
 import { type Anomaly, type Detectable, leftOver, smallest } from './left-over.js';
 import { withOwnDigits } from './own-digits.js';
 import { type Residuals, residuals, standoff, standoffWithout } from './residuals.js';
 import { secondRow } from './second-row.js';
 import { cellU, type TableRows, tableRows } from './table-rows.js';
-import { type WholeColumns, wholeColumns, worthTrying } from './whole-columns.js';
+import { wholeColumns, worthTrying } from './whole-columns.js';
 import { type Hypothesis, type Pattern, testHeatCapacity, Window } from './window.js';
 
 /** A cell that the pattern of the row checks points to. */
