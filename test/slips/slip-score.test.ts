@@ -32,7 +32,6 @@ const suspect = (of: string, place: number, group: number, more: Partial<SeenSus
   column: planted.column,
   explanation: null,
   explainedPrinted: null,
-  toldApartBy: null,
   proposedPrinted: planted.clean,
   normalisedResidual: 9,
   ...more,
