@@ -156,7 +156,7 @@ describe('adjustment in condition form', () => {
   it('says so where a datum shows in no condition, and where conditions repeat each other', () => {
     const s = system([1, 1], [0.5], [[1, -1]]);
     expect(testDatum(s, Float64Array.of(0), 1)).toBeNull();
-const repeated = whitened(Float64Array.of(1, 1), Float64Array.of(2, 2, 2, 2), 2);
+    const repeated = whitened(Float64Array.of(1, 1), Float64Array.of(2, 2, 2, 2), 2);
     // The second says nothing of its own: one degree of freedom, and the statistic of one condition alone.
     expect([repeated.freedom, repeated.chiSquare]).toEqual([1, expect.closeTo(0.5, 12)]);
     const free = new FreeData(repeated);
