@@ -6,8 +6,9 @@ import { seeded } from '../numeric/random.js';
 /**
  * Levelling network of C. D. Ghilani, Adjustment Computations, chapter 12 (figures from memory; they close on themselves):
  * bench marks X = 100.00 and Y = 107.50, unknown heights A, B, C, seven height differences over lines of 4, 3, 2, 3, 2, 2
- * and 2 miles. Published: A = 105.141, B = 104.483, C = 106.188 with equal weights; 105.150, 104.489, 106.197 weighted by
- * 1/length.
+ * and 2 miles. Published: A = 105.141, B = 104.483, C = 106.188 with equal weights, their residuals and S0 = 0.050;
+ * 105.150, 104.489, 106.197 weighted by 1/length. Redundancy numbers and w are not among what is remembered of the example:
+ * they are held against the adjustment by parameters below.
  */
 const LINES = [
   { observed: 5.1 + 100, design: [1, 0, 0], miles: 4 },
@@ -79,6 +80,19 @@ describe('adjustment in condition form', () => {
     expect(l[0] - residuals[0]).toBeCloseTo(published[0], 3);
     expect(l[5] - residuals[5]).toBeCloseTo(published[1], 3);
     expect(l[2] - residuals[2]).toBeCloseTo(published[2], 3);
+  });
+
+  it('reproduces the published residuals of the network with equal weights, and its S0', () => {
+    const u = LINES.map(() => 0.05);
+    const s = system(u, misclosures, CONDITIONS);
+    const residuals = LINES.map((_line, i) => {
+      const test = testDatum(s, direction(CONDITIONS, i), u[i])!;
+      return (-test.error * u[i] ** 2) / test.uError ** 2;
+    });
+    const published = [0.041, 0.019, -0.062, -0.058, 0.022, -0.017, 0.005];
+    for (const [i, v] of residuals.entries()) expect(Math.abs(v - published[i]), `line ${i + 1}`).toBeLessThan(0.0006);
+    const s0 = Math.sqrt(residuals.reduce((sum, v) => sum + v * v, 0) / CONDITIONS.length);
+    expect(s0).toBeCloseTo(0.05, 3);
   });
 
   it('has the residuals, redundancy numbers and w of the adjustment by parameters, and as many redundancies as conditions', () => {
