@@ -29,7 +29,7 @@ function spoil(substance: string, line: number, printed: string): void {
   writeFileSync(path, lines.join('\n'));
 }
 
-describe('a boiling point at 1 bar', () => {
+describe('a boiling point', () => {
   it.each([
     ['lead', 3, 'p_bar', '750.062', 'torr-read-as-pascal'],
     ['copper', 3, 'p/bar', '750.062', 'torr-read-as-pascal'],
@@ -37,16 +37,38 @@ describe('a boiling point at 1 bar', () => {
     ['titanium', 4, 'p_bar', '0.1', 'decimal-point-moved'],
     ['iron', 6, 'p/bar', '0.001', 'kilo-dropped'],
     ['copper', 3, 'p/bar', '4', 'one-digit-wrong'],
-  ])('of %s, line %d, whose %s says %s is found by its one suspect: %s', (substance, line, column, printed, code) => {
-    spoil(substance, line, printed);
-    const { suspects, verdict } = judged(sources, substance);
+  ])(
+    'of %s at 1 bar, line %d, whose %s says %s is found by its one suspect: %s',
+    (substance, line, column, printed, code) => {
+      spoil(substance, line, printed);
+      const { suspects, verdict } = judged(sources, substance);
+      expect(verdict).toBe('withheld');
+      expect(rootsOf(substance)).toHaveLength(1);
+      expect(suspects).toHaveLength(1);
+      const [first] = suspects;
+      expect(first).toMatchObject({ cells: 1, printed, explanation: code, address: { line, column } });
+      expect(Number(first!.explainedPrinted)).toBeCloseTo(1, 6);
+      expect(Math.abs(first!.proposed / 1e5 - 1)).toBeLessThan(2e-3);
+    },
+  );
+
+  it.each([
+    [3, '101325', '760', 'torr-read-as-pascal'],
+    [3, '101325', '1.01325', 'bar-or-atmosphere-read-as-pascal'],
+    [3, '101325', '101.325', 'kilo-dropped'],
+    [5, '100000', '750.062', 'torr-read-as-pascal'],
+    [5, '100000', '10000', 'decimal-point-moved'],
+  ])('of the real fluid (line %d, %s Pa printed as %s) belongs to its isobar: %s', (line, clean, printed, code) => {
+    const path = join(sources, 'iapws-water', 'transitions.csv');
+    const lines = readFileSync(path, 'utf8').split('\n');
+    lines[line - 1] = lines[line - 1]!.replace(clean, printed);
+    writeFileSync(path, lines.join('\n'));
+    const { suspects, verdict } = judged(sources, 'water');
     expect(verdict).toBe('withheld');
-    expect(rootsOf(substance)).toHaveLength(1);
+    expect(rootsOf('water')).toHaveLength(1);
     expect(suspects).toHaveLength(1);
-    const [first] = suspects;
-    expect(first).toMatchObject({ cells: 1, printed, explanation: code, address: { line, column } });
-    expect(Number(first!.explainedPrinted)).toBeCloseTo(1, 6);
-    expect(Math.abs(first!.proposed / 1e5 - 1)).toBeLessThan(2e-3);
+    expect(suspects[0]).toMatchObject({ cells: 1, printed, explanation: code, address: { line, column: 'p_Pa' } });
+    expect(Number(suspects[0]!.explainedPrinted)).toBeCloseTo(Number(clean), 6);
   });
 
   it('in torr is put right by `correct`, and what it says clears the substance', async () => {

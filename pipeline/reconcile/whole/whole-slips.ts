@@ -1,8 +1,9 @@
-/** Slips that touch many numbers at once, each tried as one hypothesis with nothing left to choose. */
+/** Slips that touch many numbers at once, or a number by another curve, each tried as one hypothesis with nothing left to choose. */
 import type { ConditionDatum, ConditionSystem } from '../system/system.js';
 import { columnsOfOtherUnits } from './columns.js';
 import { exchangedPairs } from './exchanged.js';
 import { formationScales } from './formation-scales.js';
+import { pressuresOfIsobars } from './isobars.js';
 import { pressureColumns } from './pressures.js';
 import { seriesSlips } from './series.js';
 import { temperatureColumns } from './temperatures.js';
@@ -33,5 +34,6 @@ export function wholeSlips(system: ConditionSystem): readonly WholeSlip[] {
     ...seriesSlips(system),
     ...formationScales(system),
     ...pressureColumns(system),
+    ...pressuresOfIsobars(system),
   ].filter(({ change }) => change.some((v) => v !== 0));
 }
