@@ -73,7 +73,7 @@ describe('a boiling point', () => {
 
   it('in torr is put right by `correct`, and what it says clears the substance', async () => {
     spoil('lead', 3, '750.062');
-    const [{ id }] = rootsOf('lead') as [{ id: string }];
+    const { id } = rootsOf('lead')[0]!;
     const log = recorder();
     const request = asked(sources, 'correct', id.slice(0, 8), '--only', 'lead', '--yes', '--by', 'A. Curator');
     expect(await correct(request, log, null)).toBe(0);
