@@ -42,11 +42,11 @@ export function withCauses(
   const causeOf = new Map<string, string>();
   const open = (f: Finding): boolean => f.severity !== 'note' && RANK[f.rule] >= 4;
 
-  // A cell that the row checks name explains what the same table shows beside it.
+  // A cell or a column that the row checks name explains what the same table shows beside it.
   for (const cell of findings) {
-    if (cell.detail.code !== 'cell') continue;
+    if (!namesCells(cell) || cell.cause !== null) continue;
     for (const f of findings) {
-      if (f === cell || f.detail.code === 'cell' || causeOf.has(f.id)) continue;
+      if (f === cell || namesCells(f) || f.cause !== null || causeOf.has(f.id)) continue;
       const samePlace = f.fromPhase === cell.fromPhase && f.address?.file === cell.address?.file;
       const sameLine = f.evidence.some((e) => e.file === cell.address?.file && e.line === cell.address?.line);
       const table = f.rule === 'entropy-rises' || f.rule === 'value-possible' || f.detail.code === 'anomaly';
@@ -74,6 +74,15 @@ export function withCauses(
       rooted[0];
     if (near !== undefined) causeOf.set(f.id, near.finding.id);
   }
+  // A curve made without a column that is named shows what it lacks.
+  for (const column of findings) {
+    if (column.detail.code !== 'column' || column.cause !== null) continue;
+    for (const f of findings) {
+      const shows =
+        f.rule === 'adjustment-closes' && (f.fromPhase === column.fromPhase || f.toPhase === column.fromPhase);
+      if (shows && !causeOf.has(f.id)) causeOf.set(f.id, column.id);
+    }
+  }
   if (rooted.length === 0) {
     // Nothing ranked: the same transition's findings still follow from the most direct of them.
     const transitions = findings.filter(open).sort((a, b) => RANK[a.rule] - RANK[b.rule]);
@@ -83,6 +92,10 @@ export function withCauses(
     findings: findings.map((f) => (causeOf.has(f.id) ? { ...f, cause: causeOf.get(f.id) ?? null } : f)),
     groups: rooted,
   };
+}
+
+function namesCells({ detail }: Finding): boolean {
+  return detail.code === 'cell' || detail.code === 'column';
 }
 
 function candidates(findings: readonly Finding[], datum: ConditionDatum, phases: readonly string[]): Finding[] {
