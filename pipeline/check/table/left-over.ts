@@ -1,5 +1,6 @@
 import type { Policy } from '../../../schemas/policy.js';
-import { digitU, type Residuals } from './residuals.js';
+import { digitU, isSymmetric, type Residuals } from './residuals.js';
+import { isSecondTested } from './second-row.js';
 import { cellU, type TableRows } from './table-rows.js';
 
 /** A place that does not close and that no single cell explains. */
@@ -100,6 +101,7 @@ export function smallest(rows: TableRows, res: Residuals, policy: Policy): Detec
   const times = policy.cell.threshold + 0.84;
   const out: Detectable = { entropy: null, enthalpy: null, closure: null, heatCapacity: null };
   const { h, s, f } = rows;
+  const alone = h === null && s === null;
   for (let i = 0; i < rows.n - 1; i++) {
     const r = rows.row[i];
     const next = rows.row[i + 1];
@@ -114,17 +116,27 @@ export function smallest(rows: TableRows, res: Residuals, policy: Policy): Detec
       const u = Math.hypot(cellU(s, r), cellU(f, r), cellU(h, r) / rows.t[i]);
       out.closure = Math.max(out.closure ?? 0, times * u, 10 * s.halfUnit[r]);
     }
-    if (i > rows.from[i] && res.usable[i - 1] === 1 && rows.to[i] - rows.from[i] >= 4) {
+    if (i > rows.from[i] && res.usable[i - 1] === 1 && isHeatCapacityTested(rows, i)) {
+      const scatter = alone && (i === rows.from[i] + 1 || i === rows.to[i] - 1) ? SECOND_ROW_SCATTER : 1.45;
       // An even table's stand-off is as unsure as the thinned integral beside it, per kelvin.
       const left = res.e[i - 1] / (rows.t[i] - rows.t[i - 1]);
       const right = res.e[i] / (rows.t[i + 1] - rows.t[i]);
       const spread = Math.max(left, right);
       out.heatCapacity = Math.max(
         out.heatCapacity ?? 0,
-        times * Math.sqrt(spread * spread + (1.45 * rows.uCp[i]) ** 2),
+        times * Math.sqrt(spread * spread + (scatter * rows.uCp[i]) ** 2),
         policy.material.heatCapacityRelative * Math.abs(rows.cp[i]),
       );
     }
   }
   return out;
+}
+
+/** Of heat capacities alone: a line or parabola through eight rows beyond, one step on, and the row itself. */
+const SECOND_ROW_SCATTER = 1.6;
+
+/** Whether a wrong Cp of an inner row could be named: by the integrals beside it, else by its neighbours on both sides. */
+function isHeatCapacityTested(rows: TableRows, i: number): boolean {
+  if (rows.h !== null || rows.s !== null) return true;
+  return isSymmetric(rows, i) || isSecondTested(rows, i);
 }

@@ -5,13 +5,14 @@ import { cellAsRead } from './cell-as-read.js';
 import type { WholeColumns } from './column-cause.js';
 import { changed } from './column-change.js';
 import type { TableContext } from './column-hypothesis.js';
+import { heatCapacityHypothesis } from './heat-capacity-hypothesis.js';
 import { type Anomaly, type Detectable, leftOver, smallest } from './left-over.js';
 import { withOwnDigits } from './own-digits.js';
-import { type Residuals, residuals, standoff, standoffWithout } from './residuals.js';
-import { secondRow } from './second-row.js';
-import { cellU, type TableRows, tableRows } from './table-rows.js';
+import { type Residuals, residuals } from './residuals.js';
+import { screen } from './screen.js';
+import { type TableRows, tableRows } from './table-rows.js';
 import { wholeColumns, worthTrying } from './whole-columns.js';
-import { type Hypothesis, type Pattern, testHeatCapacity, Window } from './window.js';
+import { type Hypothesis, type Pattern, Window } from './window.js';
 
 /** A cell that the pattern of the row checks points to. */
 export interface SuspectCell {
@@ -42,8 +43,6 @@ export interface TableVerdict {
 }
 
 const MOST_NAMES = 12;
-/** Above this a residual is looked at; naming needs more. */
-const SCREEN = 3.5;
 
 /** Takes the best explained cell, leaves it out, and looks again; whole columns first, where much does not close. */
 export function nameCells(series: Series, policy: Policy, context: TableContext): TableVerdict | null {
@@ -84,52 +83,6 @@ export function nameCells(series: Series, policy: Policy, context: TableContext)
   const anomalies = hot.length === 0 ? [] : leftOver(rows, res, policy);
   const asRead = columns.length === 0 ? cells : cells.map((cell) => cellAsRead(series, columns, cell));
   return { columns, cells: asRead, anomalies, detectable };
-}
-
-/** Rows around which something does not close. */
-function screen(rows: TableRows, res: Residuals, policy: Policy): number[] {
-  const hot: number[] = [];
-  const { n, h, s, f } = rows;
-  for (let i = 0; i < n; i++) {
-    let over = 0;
-    if (res.hasClosure[i] === 1 && s !== null && h !== null && f !== null) {
-      const r = rows.row[i];
-      const u2 = cellU(s, r) ** 2 + cellU(f, r) ** 2 + (cellU(h, r) / rows.t[i]) ** 2;
-      over = (res.closure[i] * res.closure[i]) / u2;
-    }
-    if (i < n - 1 && res.usable[i] !== 0) {
-      const r = rows.row[i];
-      const next = rows.row[i + 1];
-      const hasH = h !== null && h.present[r] === 1 && h.present[next] === 1;
-      const hasS = s !== null && s.present[r] === 1 && s.present[next] === 1;
-      if (hasH || hasS) {
-        const e2 = res.e[i] * res.e[i] + res.own[i];
-        const c = res.c[i];
-        const uh2 = hasH ? cellU(h, r) ** 2 + cellU(h, next) ** 2 : 0;
-        const us2 = hasS ? cellU(s, r) ** 2 + cellU(s, next) ** 2 : 0;
-        const yh = hasH ? h.values[next] - h.values[r] - res.q[i] : 0;
-        const ys = hasS ? s.values[next] - s.values[r] - res.p[i] : 0;
-        const vh = uh2 + e2;
-        const vs = us2 + e2 * (c * c + res.open[i] * res.open[i]);
-        if (hasH) over = Math.max(over, (yh * yh) / vh);
-        if (hasS) over = Math.max(over, (ys * ys) / vs);
-        if (hasH && hasS) {
-          const k = e2 * c;
-          const det = vh * vs - k * k;
-          over = Math.max(over, (yh * yh * vs - 2 * yh * ys * k + ys * ys * vh) / det / 1.6);
-        }
-      }
-    }
-    if (over <= SCREEN * SCREEN) {
-      const least = 0.6 * policy.material.heatCapacityRelative * Math.abs(rows.cp[i]);
-      const stand = standoff(rows, i, least);
-      if (stand.interior && Math.abs(stand.difference) > SCREEN * stand.u) {
-        over = SCREEN * SCREEN + 1;
-      }
-    }
-    if (over > SCREEN * SCREEN) hot.push(i);
-  }
-  return hot;
 }
 
 const PATTERNS = ['entropy', 'enthalpy', 'gibbs-function', 'entropy+gibbs', 'enthalpy+gibbs'] as const;
@@ -190,46 +143,6 @@ function described(rows: TableRows, one: Hypothesis): Omit<SuspectCell, 'rivals'
     observed,
     proposed: observed - one.error,
     uProposed: one.uError,
-  };
-}
-
-/** "This Cp", by the integrals around it where there are any, and by the row's own stand-off. First and last rows never. */
-function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: number, window: Window): Hypothesis | null {
-  const stand = standoff(rows, k);
-  if (!stand.interior) return null;
-  if (window.conditions === 0) {
-    const sure = stand.symmetric ? stand : secondRow(rows, k);
-    if (sure === null) return null;
-    const { difference, u } = sure;
-    // Cp alone: the neighbours must lie on their own curve once this row is out.
-    let worst = 0;
-    for (let j = Math.max(rows.from[k], k - 3); j <= Math.min(rows.to[k], k + 3); j++) {
-      if (j === k) continue;
-      const other = standoffWithout(rows, j, k);
-      if (other !== null && Math.abs(other.difference) > 3 * other.u) {
-        worst = Math.max(worst, Math.abs(other.difference));
-      }
-    }
-    const w = Math.abs(difference) / u;
-    return {
-      row: k,
-      pattern: 'heat-capacity',
-      w,
-      error: difference,
-      uError: u,
-      before: w * w,
-      after: worst > 0.25 * Math.abs(difference) ? w * w : 0,
-      freedom: 1,
-    };
-  }
-  const joint = testHeatCapacity(rows, res, k);
-  if (joint === null || joint.w < 3) return null;
-  const alone = Math.abs(stand.difference) / stand.u;
-  return {
-    ...joint,
-    w: Math.hypot(joint.w, Math.min(alone, joint.w)),
-    error: stand.difference,
-    uError: stand.u,
   };
 }
 

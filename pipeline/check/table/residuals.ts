@@ -163,6 +163,12 @@ export interface Standoff {
 
 const NOWHERE: Standoff = { difference: 0, u: 0, interior: false, symmetric: false };
 
+/** Two rows of the stretch on each side of k, none of them a limit row at 0 K. */
+export function isSymmetric({ t, from, to }: TableRows, k: number): boolean {
+  const low = k - 2;
+  return low >= from[k] && k + 2 <= to[k] && !(t[low] === 0 && low === from[k]);
+}
+
 /** `least`: a smaller difference is of no interest, and its u is then not worked out (Infinity). */
 export function standoff(rows: TableRows, k: number, least = 0): Standoff {
   const { t, cp } = rows;
@@ -176,7 +182,7 @@ export function standoff(rows: TableRows, k: number, least = 0): Standoff {
   through(central, t, cp, t[k], fineCubic);
   const a = fineCubic.c0;
   const difference = cp[k] - a;
-  const symmetric = k - 2 >= from && k + 2 <= to && !(t[from] === 0 && k - 2 === from);
+  const symmetric = isSymmetric(rows, k);
   if (Math.abs(difference) < least) return { difference, u: Number.POSITIVE_INFINITY, interior: true, symmetric };
   pick(coarse, t, from, to, low, high, 2, apart, k);
   through(coarse, t, cp, t[k], coarseCubic);
@@ -190,6 +196,14 @@ export function standoff(rows: TableRows, k: number, least = 0): Standoff {
   // The squared weights of four even points sum to 0.94; a little more is taken for uneven ones.
   const scatter = 1.45 * rows.uCp[k];
   return { difference, u: Math.sqrt(spread * spread + scatter * scatter), interior: true, symmetric };
+}
+
+/** Row k's Cp by the polynomial through the rows beside it, four where its stretch has as many. */
+export function between(rows: TableRows, k: number): number {
+  const { t, cp } = rows;
+  pick(central, t, rows.from[k], rows.to[k], k - 1, k + 1, 1, 0.1 * (t[k + 1] - t[k - 1]), k);
+  through(central, t, cp, t[k], fineCubic);
+  return fineCubic.c0;
 }
 
 /** One row on one side of k, three on the other; false where there are not enough, or two stand too close. */

@@ -212,13 +212,24 @@ export class Window {
   }
 }
 
+/** "This Cp" by the integrals alone. */
+export interface ByIntegrals extends Hypothesis {
+  /** What w would be if the row's Cp were off by all of its stand-off, and which share of that the integrals ask for. */
+  readonly foreseen: number;
+  readonly share: number;
+}
+
 /** "This Cp": how much better the window closes when the row's Cp is left out, judged with the tolerance made without it. */
-export function testHeatCapacity(rows: TableRows, res: Residuals, row: number): Hypothesis | null {
+export function testHeatCapacity(rows: TableRows, res: Residuals, row: number): ByIntegrals | null {
   const all = new Window(rows, res, row);
   const without = new Window(rows, res, row, row);
   if (!all.ok || !without.ok || all.conditions !== without.conditions) return null;
-  const before = without.squaresOf(all.raw());
+  const y = all.raw();
+  const before = without.squaresOf(y);
   const after = without.squares;
+  const change = without.raw();
+  for (let i = 0; i < y.length; i++) change[i] = y[i] - change[i];
+  const foreseen2 = without.squaresOf(change);
   return {
     row,
     pattern: 'heat-capacity',
@@ -228,5 +239,8 @@ export function testHeatCapacity(rows: TableRows, res: Residuals, row: number): 
     before,
     after,
     freedom: without.conditions - 1,
+    foreseen: Math.sqrt(foreseen2),
+    // before - after = 2 y.c - c.c in the metric of Q, y the residuals and c the change: the share is y.c / c.c.
+    share: (before - after + foreseen2) / (2 * foreseen2),
   };
 }

@@ -1,7 +1,10 @@
 import { describe, expect, it } from 'vitest';
+import { smallest } from '../../../pipeline/check/table/left-over.js';
 import { localFit } from '../../../pipeline/check/table/local-fit.js';
+import { residuals } from '../../../pipeline/check/table/residuals.js';
 import { isSecondTested, secondRow } from '../../../pipeline/check/table/second-row.js';
 import type { TableRows } from '../../../pipeline/check/table/table-rows.js';
+import { POLICY } from '../../harmonise/raw.js';
 import { CP, examined, F, findingsOf, H, medium, S, T } from '../medium.js';
 
 const RULE = 'heat-capacity-smooth';
@@ -69,6 +72,25 @@ describe('the second row of a stretch of heat capacities alone', () => {
     expect(isSecondTested(stretch(even.slice(0, 6), smooth), 1)).toBe(true);
     expect(isSecondTested(stretch(even.slice(0, 5), smooth), 1)).toBe(false);
     expect(isSecondTested(stretch([0, ...even], smooth), 1)).toBe(false);
+  });
+});
+
+describe('the smallest wrong Cp that would be named in heat capacities alone', () => {
+  const least = (t: readonly number[]): number | null => {
+    const rows = stretch(t, (x) => 20 + 0.1 * x, 0.5);
+    return smallest(rows, residuals(rows), POLICY).heatCapacity;
+  };
+  /** Power 80 % at w = 6. */
+  const times = 6.84;
+
+  it('is that of the second row, whose neighbours lie on one side', () => {
+    expect(least(even)).toBeCloseTo(times * 1.6 * 0.5, 9);
+  });
+
+  it('is that of the rows which are tested: in five rows the middle one, beside 0 K neither of two', () => {
+    expect(least(even.slice(0, 5))).toBeCloseTo(times * 1.45 * 0.5, 9);
+    expect(least([0, 15, 30, 45, 60, 75])).toBeCloseTo(times * 1.6 * 0.5, 9);
+    expect(least([0, 15, 30, 45, 60])).toBeNull();
   });
 });
 
