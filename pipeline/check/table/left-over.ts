@@ -1,5 +1,5 @@
 import type { Policy } from '../../../schemas/policy.js';
-import { digitU, isSymmetric, type Residuals } from './residuals.js';
+import { digitU, type Residuals } from './residuals.js';
 import { isSecondTested } from './second-row.js';
 import { cellU, type TableRows } from './table-rows.js';
 
@@ -116,8 +116,8 @@ export function smallest(rows: TableRows, res: Residuals, policy: Policy): Detec
       const u = Math.hypot(cellU(s, r), cellU(f, r), cellU(h, r) / rows.t[i]);
       out.closure = Math.max(out.closure ?? 0, times * u, 10 * s.halfUnit[r]);
     }
-    if (i > rows.from[i] && res.usable[i - 1] === 1 && isHeatCapacityTested(rows, i)) {
-      const scatter = alone && (i === rows.from[i] + 1 || i === rows.to[i] - 1) ? SECOND_ROW_SCATTER : 1.45;
+    const scatter = i > rows.from[i] && res.usable[i - 1] === 1 ? scatterOf(rows, i, alone) : 0;
+    if (scatter > 0) {
       // An even table's stand-off is as unsure as the thinned integral beside it, per kelvin.
       const left = res.e[i - 1] / (rows.t[i] - rows.t[i - 1]);
       const right = res.e[i] / (rows.t[i + 1] - rows.t[i]);
@@ -132,11 +132,13 @@ export function smallest(rows: TableRows, res: Residuals, policy: Policy): Detec
   return out;
 }
 
-/** Of heat capacities alone: a line or parabola through eight rows beyond, one step on, and the row itself. */
-const SECOND_ROW_SCATTER = 1.6;
-
-/** Whether a wrong Cp of an inner row could be named: by the integrals beside it, else by its neighbours on both sides. */
-function isHeatCapacityTested(rows: TableRows, i: number): boolean {
-  if (rows.h !== null || rows.s !== null) return true;
-  return isSymmetric(rows, i) || isSecondTested(rows, i);
+/**
+ * How the scatter of Cp enters the stand-off of an inner row; 0 where a wrong Cp is not looked for. The second row of heat
+ * capacities alone is held against a parabola through eight rows, one step on.
+ */
+function scatterOf(rows: TableRows, i: number, alone: boolean): number {
+  if (!alone) return 1.45;
+  const depth = i - rows.from[i];
+  if (depth === 1 || rows.to[i] - i === 1) return isSecondTested(rows, i) ? 1.6 : 0;
+  return depth === 2 && rows.t[rows.from[i]] === 0 ? 0 : 1.45;
 }

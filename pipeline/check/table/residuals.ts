@@ -163,12 +163,6 @@ export interface Standoff {
 
 const NOWHERE: Standoff = { difference: 0, u: 0, interior: false, symmetric: false };
 
-/** Two rows of the stretch on each side of k, none of them a limit row at 0 K. */
-export function isSymmetric({ t, from, to }: TableRows, k: number): boolean {
-  const low = k - 2;
-  return low >= from[k] && k + 2 <= to[k] && !(t[low] === 0 && low === from[k]);
-}
-
 /** `least`: a smaller difference is of no interest, and its u is then not worked out (Infinity). */
 export function standoff(rows: TableRows, k: number, least = 0): Standoff {
   const { t, cp } = rows;
@@ -182,7 +176,7 @@ export function standoff(rows: TableRows, k: number, least = 0): Standoff {
   through(central, t, cp, t[k], fineCubic);
   const a = fineCubic.c0;
   const difference = cp[k] - a;
-  const symmetric = isSymmetric(rows, k);
+  const symmetric = k - 2 >= from && k + 2 <= to && !(t[from] === 0 && k - 2 === from);
   if (Math.abs(difference) < least) return { difference, u: Number.POSITIVE_INFINITY, interior: true, symmetric };
   pick(coarse, t, from, to, low, high, 2, apart, k);
   through(coarse, t, cp, t[k], coarseCubic);
