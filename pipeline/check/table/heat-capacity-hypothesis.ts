@@ -39,7 +39,7 @@ export function heatCapacityHypothesis(rows: TableRows, res: Residuals, k: numbe
 }
 
 /** The neighbours must lie on their own curve once the row is out, and the row stand off from it. */
-function byStandoff(rows: TableRows, k: number): Hypothesis | null {
+export function byStandoff(rows: TableRows, k: number): Hypothesis | null {
   const stand = standoff(rows, k);
   if (!stand.interior) return null;
   const sure = stand.symmetric ? stand : secondRow(rows, k);

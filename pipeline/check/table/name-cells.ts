@@ -5,6 +5,7 @@ import { cellAsRead } from './cell-as-read.js';
 import type { WholeColumns } from './column-cause.js';
 import { changed } from './column-change.js';
 import type { TableContext } from './column-hypothesis.js';
+import { grossPair } from './gross-pair.js';
 import { heatCapacityHypothesis } from './heat-capacity-hypothesis.js';
 import { type Anomaly, type Detectable, leftOver, smallest } from './left-over.js';
 import { withOwnDigits } from './own-digits.js';
@@ -70,7 +71,7 @@ export function nameCells(series: Series, policy: Policy, context: TableContext)
     hot = screen(rows, res, policy);
   }
   while (hot.length > 0 && cells.length < MOST_NAMES) {
-    const best = bestOf(rows, res, hot, policy);
+    const best = bestOf(rows, res, hot, policy) ?? bestOfPair(rows, hot, policy);
     if (best === null) break;
     cells.push(best);
     current = withoutCells(current, best);
@@ -128,6 +129,13 @@ function bestOf(rows: TableRows, res: Residuals, hot: readonly number[], policy:
     };
   }
   return null;
+}
+
+/** Of heat capacities alone, the surer of two wrong ones side by side. */
+function bestOfPair(rows: TableRows, hot: readonly number[], policy: Policy): SuspectCell | null {
+  if (rows.h !== null || rows.s !== null) return null;
+  const one = grossPair(rows, hot, policy.cell.threshold);
+  return one === null || !worthNaming(rows, one, policy) ? null : { ...described(rows, one), rivals: [] };
 }
 
 function described(rows: TableRows, one: Hypothesis): Omit<SuspectCell, 'rivals'> {
