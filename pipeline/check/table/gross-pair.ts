@@ -1,6 +1,7 @@
-import { byStandoff } from './heat-capacity-hypothesis.js';
+import { byStandoff, heatCapacityHypothesis } from './heat-capacity-hypothesis.js';
+import { residuals } from './residuals.js';
 import type { TableRows } from './table-rows.js';
-import type { Hypothesis } from './window.js';
+import { fits, type Hypothesis, Window } from './window.js';
 
 /** Two wrong Cp hide one another only within a stencil's reach. */
 const REACH = 6;
@@ -21,6 +22,7 @@ export function grossPair(rows: TableRows, hot: readonly number[], threshold: nu
       if (a === null || Math.abs(a.w) <= least) continue;
       const b = gross(without(rows, k), m - 1);
       if (b === null || Math.abs(b.w) <= least) continue;
+      if (!isBorneOut(without(rows, m), k, threshold) || !isBorneOut(without(rows, k), m - 1, threshold)) continue;
       least = Math.min(Math.abs(a.w), Math.abs(b.w));
       best = Math.abs(a.w) >= Math.abs(b.w) ? a : { ...b, row: m };
     }
@@ -35,6 +37,14 @@ function gross(rows: TableRows, k: number): Hypothesis | null {
   const one = byStandoff(rows, k);
   if (one === null || one.after > 0) return null;
   return Math.abs(one.error) >= GROSS * Math.abs(rows.cp[k] - one.error) ? one : null;
+}
+
+/** What entropies and enthalpies there are must want it too. */
+function isBorneOut(rows: TableRows, k: number, threshold: number): boolean {
+  if (rows.h === null && rows.s === null) return true;
+  const res = residuals(rows, true);
+  const one = heatCapacityHypothesis(rows, res, k, new Window(rows, res, k));
+  return one !== null && one.w > threshold && fits(one);
 }
 
 /** The rows without row m, which is not an end of its stretch. */

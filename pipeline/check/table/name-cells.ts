@@ -13,7 +13,7 @@ import { type Residuals, residuals } from './residuals.js';
 import { screen } from './screen.js';
 import { type TableRows, tableRows } from './table-rows.js';
 import { wholeColumns, worthTrying } from './whole-columns.js';
-import { type Hypothesis, type Pattern, Window } from './window.js';
+import { fits, type Hypothesis, type Pattern, Window } from './window.js';
 
 /** A cell that the pattern of the row checks points to. */
 export interface SuspectCell {
@@ -105,8 +105,7 @@ function bestOf(rows: TableRows, res: Residuals, hot: readonly number[], policy:
   for (const one of all) {
     if (Math.abs(one.w) <= policy.cell.threshold) return null;
     if (!worthNaming(rows, one, policy)) continue;
-    const fits = one.after / Math.max(1, one.freedom) < 5 || one.after < 0.05 * one.before;
-    if (!fits) continue;
+    if (!fits(one)) continue;
     const rivals = all.filter(
       (o) =>
         o !== one &&
@@ -131,9 +130,8 @@ function bestOf(rows: TableRows, res: Residuals, hot: readonly number[], policy:
   return null;
 }
 
-/** Of heat capacities alone, the surer of two wrong ones side by side. */
+/** The surer of two wrong heat capacities near one another. */
 function bestOfPair(rows: TableRows, hot: readonly number[], policy: Policy): SuspectCell | null {
-  if (rows.h !== null || rows.s !== null) return null;
   const one = grossPair(rows, hot, policy.cell.threshold);
   return one === null || !worthNaming(rows, one, policy) ? null : { ...described(rows, one), rivals: [] };
 }

@@ -11,7 +11,6 @@ const SCREEN = 3.5;
 export function screen(rows: TableRows, res: Residuals, policy: Policy): number[] {
   const hot: number[] = [];
   const { n, h, s, f } = rows;
-  const alone = h === null && s === null;
   for (let i = 0; i < n; i++) {
     let over = 0;
     if (res.hasClosure[i] === 1 && s !== null && h !== null && f !== null) {
@@ -47,7 +46,7 @@ export function screen(rows: TableRows, res: Residuals, policy: Policy): number[
       const stand = standoff(rows, i, least);
       if (stand.interior && Math.abs(stand.difference) > SCREEN * stand.u) over = SCREEN * SCREEN + 1;
       // Two wrong ones near one another make each other's u as large as themselves.
-      if (alone && Math.abs(stand.difference) > GROSS * Math.abs(rows.cp[i])) over = SCREEN * SCREEN + 1;
+      if (stand.interior && Math.abs(stand.difference) > GROSS * Math.abs(rows.cp[i])) over = SCREEN * SCREEN + 1;
       // Too few rows for a stand-off: a wrong Cp makes the interpolation error of its own intervals as large as itself.
       if (!stand.interior && i > rows.from[i] && i < rows.to[i] && Math.abs(rows.cp[i] - between(rows, i)) >= least) {
         if (opensDigits(rows, res, i - 1) || opensDigits(rows, res, i)) over = SCREEN * SCREEN + 1;

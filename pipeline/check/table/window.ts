@@ -19,6 +19,11 @@ export interface Hypothesis {
   readonly freedom: number;
 }
 
+/** The rest closes once the cell is right, or the cell explains nearly all. */
+export function fits({ before, after, freedom }: Hypothesis): boolean {
+  return after / Math.max(1, freedom) < 5 || after < 0.05 * before;
+}
+
 const HALF_WIDTH = 3;
 
 /**

@@ -1,8 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { CP, examined, F, findingsOf, H, type Law, laws, medium, rowsOf, S } from '../medium.js';
 
-/** Heat capacities alone, every 20 K; some rows times a factor. */
-function spoilt(factors: Readonly<Record<number, number>>, law: Law = laws().cr) {
+/** Every 20 K, heat capacities alone where not said otherwise; some rows times a factor. */
+function spoilt(factors: Readonly<Record<number, number>>, law: Law = laws().cr, without = [S, F, H]) {
   const printed = medium();
   printed.tables = {
     cr: rowsOf(
@@ -10,7 +10,7 @@ function spoilt(factors: Readonly<Record<number, number>>, law: Law = laws().cr)
       Array.from({ length: 16 }, (_, i) => 300 + 20 * i),
     ),
   };
-  printed.without = [S, F, H];
+  printed.without = without;
   for (const [line, factor] of Object.entries(factors)) {
     const row = printed.tables.cr![Number(line)]!;
     row[CP] = (Number(row[CP]) * factor).toFixed(3);
@@ -30,6 +30,15 @@ describe('two grossly wrong heat capacities side by side', () => {
     const lines = Object.keys(factors).map(Number);
     expect(found.named.map(({ row }) => row).sort((a, b) => a - b)).toEqual(lines);
     expect(findingsOf(found, 'heat-capacity-smooth').map(({ severity }) => severity)).toEqual(['fault']);
+  });
+
+  it('are both named beside entropies and enthalpies', () => {
+    const { named, findings } = spoilt({ 6: 0.12, 7: 0.1 }, laws().cr, []);
+    expect(named.map(({ row, quantity }) => `${quantity} ${row}`).sort()).toEqual([
+      'heat-capacity 6',
+      'heat-capacity 7',
+    ]);
+    expect(findings.map(({ rule }) => rule)).toEqual(['heat-capacity-smooth']);
   });
 
   it('are not seen in a sharp peak, nor in a step', () => {
