@@ -60,7 +60,7 @@ export interface PhaseCurve {
   readonly measuredToK: number;
   readonly hasEnthalpyLevel: boolean;
   readonly hasEntropyLevel: boolean;
-  /** How the levels are known; `transition`: carried through the one that `carriedThrough` names. */
+  /** How the levels are known; `transition`: carried through the one that `enthalpyThrough` or `entropyThrough` names. */
   readonly enthalpyLevelFrom: 'anchor' | 'table' | 'transition' | 'none';
   readonly entropyLevelFrom: 'anchor' | 'table' | 'third-law' | 'transition' | 'none';
   /** Standard uncertainty of Cp at the knots [J/(mol K)]; calibration and continuation come on top. */
@@ -86,8 +86,9 @@ export interface PhaseCurve {
   /** Index of the anchor (among the substance's) that fixes the level of H and of S; -1 where none does. */
   readonly enthalpyAnchor: number;
   readonly entropyAnchor: number;
-  /** Index of the stated transition that carries a level of this phase, or -1. */
-  readonly carriedThrough: number;
+  /** Index of the stated transition that the level of H, and of S, was carried through, or -1. */
+  readonly enthalpyThrough: number;
+  readonly entropyThrough: number;
   /** Growth of u(Cp) beyond the measured range: this share of Cp per kelvin. */
   readonly continuationGrowthPerK: number;
   readonly origins: readonly CurveOrigin[];

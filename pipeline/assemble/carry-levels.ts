@@ -4,6 +4,7 @@ import { R_J_PER_MOL_K } from '../core/constants.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
 import { datumKey } from '../core/physics/datum-keys.js';
 import { departure } from '../core/physics/equilibrium.js';
+import { imperfection } from '../core/physics/imperfection-error.js';
 import { boilingTemperature, isGas } from '../core/physics/placed-phase.js';
 import { gasTerm } from '../core/physics/pressure-terms.js';
 import type { PhaseShape } from './phase-shape.js';
@@ -21,7 +22,8 @@ export interface Level {
   uS: number;
   hFrom: PhaseCurve['enthalpyLevelFrom'];
   sFrom: PhaseCurve['entropyLevelFrom'];
-  through: number;
+  hThrough: number;
+  sThrough: number;
   hAnchor: Anchor | null;
   sAnchor: Anchor | null;
   hOrigin: Origin | null;
@@ -84,9 +86,11 @@ function carry(
             { key: datumKey.entropy(index), by: by * temperatureK, u: (stated.entropy as Datum).u },
             { key: datumKey.temperature(index), by: by * (stated.entropy as Datum).value, u: uT },
           ];
+    errors.push(...imperfection(b.uGas - scale * a.uGas, -1, 0, temperatureK));
     target.hOrigin = { ...origin, errors };
     target.uH = Math.hypot(scale * source.uH, ...errors.map((e) => e.by * e.u));
     target.hFrom = 'transition';
+    target.hThrough = index;
   }
   if (wantsS) {
     const dS = stated.entropy?.value ?? (stated.enthalpy as Datum).value / temperatureK;
@@ -103,11 +107,12 @@ function carry(
       const { u, value } = stated.pressure;
       errors.push({ key: datumKey.transitionPressure(index), by: -byPressure, u: u / value });
     }
+    errors.push(...imperfection(b.uGas - scale * a.uGas, 0, -1, temperatureK));
     target.sOrigin = { ...origin, errors };
     target.uS = Math.hypot(scale * source.uS, ...errors.map((e) => e.by * e.u));
     target.sFrom = 'transition';
+    target.sThrough = index;
   }
-  target.through = index;
   return true;
 }
 
@@ -117,6 +122,8 @@ interface Placed {
   readonly units: number;
   /** dS/d ln p. */
   readonly byPressure: number;
+  /** Standard uncertainty of the gas term of G [J/mol]. */
+  readonly uGas: number;
 }
 
 /** H and S of the shape at the transition, its level apart, with what the pressure adds to a gas; its formula units. */
@@ -134,6 +141,7 @@ function atPressure(shape: PhaseShape, stated: StatedTransition, { zeros, substa
     s: entropyAt(arrays, temperatureK) + entropy,
     units: gas ? (substance.substance.vapourSpecies?.formulaUnits ?? 1) : 1,
     byPressure: term === null ? 0 : -R_J_PER_MOL_K,
+    uGas: term === null ? 0 : term.u(temperatureK),
   };
 }
 

@@ -194,7 +194,8 @@ describe('levels carried through transitions', () => {
     expect(entropyAt(i, 400) - entropyAt(ii, 400)).toBeCloseTo(5, 9);
     expect(enthalpyAt(l, 600) - enthalpyAt(i, 600)).toBeCloseTo(18000, 6);
     expect(entropyAt(l, 600) - entropyAt(i, 600)).toBeCloseTo(30, 9);
-    expect([i.carriedThrough, l.carriedThrough]).toEqual([1, 0]);
+    expect([i.enthalpyThrough, l.enthalpyThrough]).toEqual([1, 0]);
+    expect([i.entropyThrough, l.entropyThrough]).toEqual([1, 0]);
     expect([i.enthalpyLevelFrom, l.entropyLevelFrom]).toEqual(['transition', 'transition']);
   });
 

@@ -30,8 +30,11 @@ export interface TransitionView {
   } | null;
   /** What is missing for a comparison, in words for the curator. */
   readonly missing: string | null;
-  /** A level of one of the phases was carried through this very transition: its G closes by construction. */
+  /** H and S of one of the phases were carried through this very transition: its G closes by construction. */
   readonly byConstruction: boolean;
+  /** H, and S, of one of the phases was carried through it: the curves' dH, or dS, is the stated one. */
+  readonly carriesH: boolean;
+  readonly carriesS: boolean;
   readonly crossing: Crossing | null;
   readonly uStatedK: number;
   readonly evidence: EvidenceKind;
@@ -60,6 +63,8 @@ function viewOf(
       pair: null,
       missing: 'a pressure above 0',
       byConstruction: false,
+      carriesH: false,
+      carriesS: false,
       crossing: null,
       uStatedK: stated.temperature.u,
       evidence: 'independent',
@@ -73,6 +78,8 @@ function viewOf(
       pair: null,
       missing: `a heat-capacity table of ${without}`,
       byConstruction: false,
+      carriesH: false,
+      carriesS: false,
       crossing: null,
       uStatedK: stated.temperature.u,
       evidence: 'independent',
@@ -89,13 +96,17 @@ function viewOf(
   const from = placePhase(a, substance.substance, setting, boiling);
   const to = placePhase(b, substance.substance, setting, boiling);
   const crossing = nearestCrossing(stated, a, assembled.crossings, temperatureK);
-  const byConstruction = a.carriedThrough === index || b.carriedThrough === index;
+  const carriesH = a.enthalpyThrough === index || b.enthalpyThrough === index;
+  const carriesS = a.entropyThrough === index || b.entropyThrough === index;
+  const byConstruction = carriesH && carriesS;
   if (unlevelled !== undefined) {
     return {
       ...base,
       pair: null,
       missing: `a formation enthalpy and an entropy of ${unlevelled.phase}`,
       byConstruction,
+      carriesH,
+      carriesS,
       crossing: null,
       uStatedK,
       evidence,
@@ -112,6 +123,8 @@ function viewOf(
         pair: null,
         missing: `a heat-capacity table of ${short.map((p) => p.source.phase).join(' and ')} that reaches the stated temperature`,
         byConstruction,
+        carriesH,
+        carriesS,
         crossing,
         uStatedK,
         evidence,
@@ -130,6 +143,8 @@ function viewOf(
     },
     missing: null,
     byConstruction,
+    carriesH,
+    carriesS,
     crossing,
     uStatedK,
     evidence,

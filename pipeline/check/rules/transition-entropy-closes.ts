@@ -35,7 +35,7 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
   if (isFirstOrder(view) && pair !== null && pair.atK === t && !view.byConstruction) {
     const { at } = pair;
     const uCurves = differenceUncertainty(pair);
-    if (enthalpy !== null) {
+    if (enthalpy !== null && !view.carriesH) {
       comparisons.push({
         observed: enthalpy.value,
         expected: at.enthalpyJPerMol,
@@ -47,7 +47,7 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
         about: enthalpy,
       });
     }
-    if (entropy !== null) {
+    if (entropy !== null && !view.carriesS) {
       comparisons.push({
         observed: t * entropy.value,
         expected: t * at.entropyJPerMolK,

@@ -4,6 +4,7 @@ import { R_J_PER_MOL_K } from '../../core/constants.js';
 import { enthalpyAt, entropyAt, heatCapacityAt, intervalOf } from '../../core/physics/curve.js';
 import { datumKey } from '../../core/physics/datum-keys.js';
 import { ErrorSum } from '../../core/physics/error-sum.js';
+import { imperfection } from '../../core/physics/imperfection-error.js';
 import { condensedTermUncertainty } from '../../core/physics/pressure-terms.js';
 import type { Joined, Pair, Saturated } from './joined.js';
 
@@ -29,8 +30,6 @@ export interface Condition {
   readonly sum: ErrorSum;
   /** Variance that is this condition's own. */
   readonly variance: number;
-  /** Standard uncertainty, signed, that it shares with the others through the gas imperfection. */
-  readonly gas: number;
   /** All of its numbers are one evaluated source's. */
   readonly within: boolean;
 }
@@ -40,7 +39,8 @@ export function transitionConditions(joined: readonly Joined[]): Condition[] {
   const conditions: Condition[] = [];
   for (let k = 0; k < joined.length; k++) {
     const j = joined[k];
-    if (j.byConstruction) continue;
+    // With both levels carried through it, G is equal on both sides whatever is stated.
+    if (j.carriesH && j.carriesS) continue;
     const { judged, at, atK, within } = j;
     const { stated, index } = judged;
     const { enthalpy, entropy } = stated;
@@ -52,22 +52,21 @@ export function transitionConditions(joined: readonly Joined[]): Condition[] {
     const isobar = j.from.source.family.isobarPa;
     const byPressure = isobar !== null || stated.pressure === null ? 0 : R_J_PER_MOL_K * gasUnits(j);
     const volume = isobar === null ? condensedTermUncertainty(stated.pressurePa) : 0;
-    const add = (kind: ConditionKind, value: number, sum: ErrorSum, variance: number, gas: number): void => {
-      conditions.push({ kind, joined: k, transition: index, value, sum, variance, gas, within });
+    const add = (kind: ConditionKind, value: number, sum: ErrorSum, h: number, s: number, variance: number): void => {
+      for (const { key, by, u } of imperfection(uGas, h, s, atK)) sum.addDatum(key, by, u);
+      conditions.push({ kind, joined: k, transition: index, value, sum, variance, within });
     };
-    const gap = difference(j, 1, -atK).addDatum(keyT, -dS, 0);
-    add('gap', -(at.gapJPerMol + dS * offset), addPressure(gap, keyP, atK * byPressure), volume * volume, uGas);
-    if (enthalpy !== null) {
+    const gap = addPressure(difference(j, 1, -atK).addDatum(keyT, -dS, 0), keyP, atK * byPressure);
+    add('gap', -(at.gapJPerMol + dS * offset), gap, 1, -atK, volume * volume);
+    if (enthalpy !== null && !j.carriesH) {
       const sum = difference(j, 1, 0).addDatum(keyT, dCp, 0).addDatum(datumKey.enthalpy(index), -1, 0);
-      // The departure of H is some four times that of G for a fluid near boiling (B falls about as 1/T^3).
-      add('enthalpy', at.enthalpyJPerMol + dCp * offset - enthalpy.value, sum, 16 * uGas * uGas, 0);
+      add('enthalpy', at.enthalpyJPerMol + dCp * offset - enthalpy.value, sum, 1, 0, 0);
     }
-    if (entropy !== null) {
+    if (entropy !== null && !j.carriesS) {
       const sum = difference(j, 0, 1)
         .addDatum(keyT, dCp / atK, 0)
         .addDatum(datumKey.entropy(index), -1, 0);
-      const variance = (9 * uGas * uGas) / (atK * atK);
-      add('entropy', dS + (dCp * offset) / atK - entropy.value, addPressure(sum, keyP, -byPressure), variance, 0);
+      add('entropy', dS + (dCp * offset) / atK - entropy.value, addPressure(sum, keyP, -byPressure), 0, 1, 0);
     }
   }
   return conditions;
@@ -83,7 +82,7 @@ export function closureConditions(
   transitions.forEach(({ enthalpy, entropy, temperature, order }, index) => {
     const k = joined.findIndex((j) => j.judged.index === index);
     if (order !== 'first' || enthalpy === null || entropy === null || !onIsobar(index)) return;
-    if (k >= 0 && !joined[k].byConstruction) return;
+    if (k >= 0 && !(joined[k].carriesH && joined[k].carriesS)) return;
     const t = temperature.value;
     const sum = new ErrorSum()
       .addDatum(datumKey.enthalpy(index), 1, 0)
@@ -97,7 +96,6 @@ export function closureConditions(
       value: enthalpy.value - t * entropy.value,
       sum,
       variance: 0,
-      gas: 0,
       within,
     });
   });
@@ -106,18 +104,22 @@ export function closureConditions(
 
 /** G_g(T, p) - G_condensed(T, p) = 0 of each measured vapour pressure, its error in p taken in ln p. */
 export function saturationConditions(saturated: readonly Saturated[]): Condition[] {
-  return saturated.map((pair) => ({
-    kind: 'saturation',
-    joined: -1,
-    transition: -1,
-    value: -pair.at.gapJPerMol,
-    sum: difference(pair, 1, -pair.atK)
-      .addDatum(datumKey.saturationTemperature(pair.index), -pair.at.entropyJPerMolK, 0)
-      .addDatum(datumKey.saturationPressure(pair.index), (R_J_PER_MOL_K * pair.atK) / pair.to.formulaUnits, 0),
-    variance: 0,
-    gas: gasU(pair),
-    within: false,
-  }));
+  return saturated.map((pair) => {
+    const { atK, at, to, index } = pair;
+    const sum = difference(pair, 1, -atK)
+      .addDatum(datumKey.saturationTemperature(index), -at.entropyJPerMolK, 0)
+      .addDatum(datumKey.saturationPressure(index), (R_J_PER_MOL_K * atK) / to.formulaUnits, 0);
+    for (const { key, by, u } of imperfection(gasU(pair), 1, -atK, atK)) sum.addDatum(key, by, u);
+    return {
+      kind: 'saturation',
+      joined: -1,
+      transition: -1,
+      value: -at.gapJPerMol,
+      sum,
+      variance: 0,
+      within: false,
+    };
+  });
 }
 
 /**
@@ -138,7 +140,7 @@ export function anchorConditions(
     if (t < curve.measuredFromK || t > curve.measuredToK || restsOnAnother(anchor, curve, substance)) return;
     const within = anchor.table.basis !== 'measured' && curve.sources.every((s) => s === anchor.table.source);
     const add = (kind: ConditionKind, value: number, sum: ErrorSum, variance = 0): void => {
-      conditions.push({ kind, joined: -1, transition: -1, value, sum, variance, gas: 0, within });
+      conditions.push({ kind, joined: -1, transition: -1, value, sum, variance, within });
     };
     const { entropy, enthalpyOfFormation, enthalpyFromZero, heatCapacity } = anchor;
     if (

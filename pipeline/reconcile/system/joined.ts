@@ -17,8 +17,9 @@ export interface Joined extends Pair {
   readonly judged: JudgedTransition;
   /** Everything is from one evaluated source: rounding alone stands between its numbers. */
   readonly within: boolean;
-  /** A level of one of the phases was carried through this very transition. */
-  readonly byConstruction: boolean;
+  /** H, and S, of one of the phases was carried through this very transition: its stated dH, or dS, closes by construction. */
+  readonly carriesH: boolean;
+  readonly carriesS: boolean;
 }
 
 export function joinedTransitions(checked: CheckedCase, isobarPa: number | null): Joined[] {
@@ -28,7 +29,8 @@ export function joinedTransitions(checked: CheckedCase, isobarPa: number | null)
   const boiling = boilingTemperature(transitions);
   for (const judged of checked.judged) {
     const { stated } = judged;
-    if (!(stated.pressurePa > 0)) continue;
+    // An estimate witnesses nothing.
+    if (!(stated.pressurePa > 0) || stated.table.basis === 'estimated') continue;
     if (stated.order !== 'first' || stated.from === stated.to || judged.fromCurve < 0 || judged.toCurve < 0) continue;
     const a = curves[judged.fromCurve];
     const b = curves[judged.toCurve];
@@ -44,8 +46,9 @@ export function joinedTransitions(checked: CheckedCase, isobarPa: number | null)
     if (atK < low || atK > high) atK = judged.computedK ?? Math.min(high, Math.max(low, atK));
     const { source, basis } = stated.table;
     const within = basis !== 'measured' && a.sources.every((s) => s === source) && b.sources.every((s) => s === source);
-    const byConstruction = a.carriedThrough === judged.index || b.carriedThrough === judged.index;
-    joined.push({ judged, from, to, atK, at: equilibrium(from, to, atK), within, byConstruction });
+    const carriesH = a.enthalpyThrough === judged.index || b.enthalpyThrough === judged.index;
+    const carriesS = a.entropyThrough === judged.index || b.entropyThrough === judged.index;
+    joined.push({ judged, from, to, atK, at: equilibrium(from, to, atK), within, carriesH, carriesS });
   }
   return joined;
 }

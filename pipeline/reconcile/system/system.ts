@@ -162,7 +162,7 @@ function addRows(q: Float64Array, conditions: readonly Condition[]): void {
     for (let k = 0; k <= i; k++) {
       const other = conditions[k];
       const otherRows = other.sum.rows;
-      let v = one.gas * other.gas + (i === k ? one.variance : 0);
+      let v = i === k ? one.variance : 0;
       for (let a = 0; a < oneRows.length; a++) {
         const x = oneRows[a];
         for (let b = 0; b < otherRows.length; b++) {
