@@ -38,9 +38,21 @@ export const INTERNATIONAL_TABLE_CALORIE = exact(
   '5th International Conference on the Properties of Steam (1956); NIST SP 811 (2008), B.8',
 );
 
+/** The conventional millimetre of mercury is 1.4e-7 larger. */
+export const TORR = exact(101325 / 760, 'Pa', 'NIST SP 811 (2008), B.8');
+/** H2O; the isotopes of natural waters spread by ± 0.001, taken for a rectangular distribution. */
+export const WATER_MOLAR_MASS: Constant = {
+  value: 18.015,
+  unit: 'g/mol',
+  uncertainty: 0.0006,
+  reference: 'abridged standard atomic weights, IUPAC/CIAAW (2021): 2 x 1.0080 + 15.999',
+};
+
 /** Plain numbers for formulas. */
 export const R_J_PER_MOL_K = GAS_CONSTANT.value;
 export const STANDARD_PRESSURE_PA = STANDARD_PRESSURE.value;
 export const STANDARD_ATMOSPHERE_PA = STANDARD_ATMOSPHERE.value;
 export const REFERENCE_TEMPERATURE_K = REFERENCE_TEMPERATURE.value;
+export const TORR_PA = TORR.value;
+export const WATER_G_PER_MOL = WATER_MOLAR_MASS.value;
 export const ICE_POINT_K = ICE_POINT.value;

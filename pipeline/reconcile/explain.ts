@@ -21,9 +21,6 @@ export const SLIP_CODES: readonly string[] = USUAL_SLIPS.map((slip) => slip.code
 
 export const DIGIT_CODES: readonly string[] = USUAL_SLIPS.filter((slip) => slip.ofDigits).map((slip) => slip.code);
 
-/** Slips that only ever befall several cells at once. */
-export const MANY_CELL_CODES: readonly string[] = ['from-and-to-exchanged'];
-
 /**
  * The usual slips whose corrected value meets `proposed` within the larger of two standard uncertainties (the rounding of
  * the corrected value included) and `material`, best first; empty where none does. All in SI.

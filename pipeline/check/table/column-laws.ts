@@ -6,8 +6,10 @@ import {
   INTERNATIONAL_TABLE_CALORIE,
   R_J_PER_MOL_K,
   THERMOCHEMICAL_CALORIE,
+  WATER_G_PER_MOL,
 } from '../../core/constants.js';
 import { printedNumber } from '../../core/numeric/printed-like.js';
+import { CALORIES_J } from '../../core/units/calories.js';
 import { readUnit } from '../../core/units/expression.js';
 import { type ColumnChange, quantityIn, type TableColumn } from './column-change.js';
 
@@ -22,14 +24,6 @@ export interface RatioLaw {
 /** A factor that nobody can explain. */
 export const UNEXPLAINED_WEIGHT = 1e-4;
 
-/** [J per calorie, share]: tables of pure substances are mostly in thermochemical calories. */
-const CALORIES = [
-  [THERMOCHEMICAL_CALORIE.value, 0.85],
-  [INTERNATIONAL_TABLE_CALORIE.value, 0.15],
-] as const;
-
-/** H2O, from the abridged standard atomic weights (IUPAC/CIAAW 2021) [g/mol]. */
-const WATER = 18.015;
 const MOST_WATERS = 10;
 
 /** The usual slips that multiply a column, by what its unit counts in. */
@@ -43,7 +37,7 @@ export function ratioLaws(series: Series, column: TableColumn, substance: Substa
     { code: 'other-formula-molar-mass', factor: 2, weight: 0.002 },
     { code: 'other-formula-molar-mass', factor: 0.5, weight: 0.002 },
   ];
-  for (const [joules, share] of CALORIES) {
+  for (const [joules, share] of CALORIES_J) {
     laws.push({ code: 'calorie-read-as-joule', factor: joules, weight: 0.05 * share });
     laws.push({ code: 'joule-read-as-calorie', factor: 1 / joules, weight: 0.03 * share });
     if (perKelvin || perMass) continue;
@@ -67,13 +61,13 @@ export function ratioLaws(series: Series, column: TableColumn, substance: Substa
     laws.push({ code: 'per-gram-read-as-kilo-per-mole', factor: mass / 1000, weight: 0.02 });
   }
   if (!calories && !perMass) {
-    for (const [joules, share] of CALORIES) {
+    for (const [joules, share] of CALORIES_J) {
       const code = 'calorie-per-gram-read-as-joule-per-mole';
       laws.push({ code, factor: (joules * mass) / (kilo ? 1000 : 1), weight: 0.01 * share });
     }
   }
   for (let n = 1; n <= MOST_WATERS; n++) {
-    const factor = (mass + n * WATER) / mass;
+    const factor = (mass + n * WATER_G_PER_MOL) / mass;
     laws.push({ code: 'other-formula-molar-mass', factor, weight: 0.001 });
     laws.push({ code: 'other-formula-molar-mass', factor: 1 / factor, weight: 0.001 });
   }
@@ -133,7 +127,7 @@ export function unitOf(series: Series, column: TableColumn): ColumnUnit {
   const parts = 'parts' in reading ? reading.parts : null;
   const perMass = parts !== null && parts.moles === 0 && !parts.atoms.has('eV') && !parts.atoms.has('[k]');
   const calories = code.includes('cal');
-  const joules = !calories ? 1 : code.includes('cal_IT') ? CALORIES[1][0] : CALORIES[0][0];
+  const joules = !calories ? 1 : (code.includes('cal_IT') ? INTERNATIONAL_TABLE_CALORIE : THERMOCHEMICAL_CALORIE).value;
   const factor = q === null ? 1 : factorShown(series, column);
   return {
     perMass,

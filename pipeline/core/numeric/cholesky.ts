@@ -49,12 +49,3 @@ export function whiten(l: Float64Array, n: number, b: Float64Array): void {
     b[i] = v / l[i * n + i];
   }
 }
-
-/** Solves L^T x = z in place. */
-export function unwhiten(l: Float64Array, n: number, z: Float64Array): void {
-  for (let i = n - 1; i >= 0; i--) {
-    let v = z[i];
-    for (let k = i + 1; k < n; k++) v -= l[k * n + i] * z[k];
-    z[i] = v / l[i * n + i];
-  }
-}

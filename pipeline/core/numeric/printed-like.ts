@@ -9,7 +9,9 @@ export function printedLike(printed: string, value: number): string {
   const point = plain.search(/[.,]/);
   const exponent = plain.search(/[eEdD]/);
   const decimals = point < 0 ? 0 : (exponent < 0 ? plain.length : exponent) - point - 1;
-  const text = value.toFixed(Math.max(0, Math.min(12, decimals)));
+  const fixed = value.toFixed(Math.max(0, Math.min(12, decimals)));
+  // Zero has no sign.
+  const text = /^-[0.]*$/.test(fixed) ? fixed.slice(1) : fixed;
   return comma ? text.replace('.', ',') : text;
 }
 

@@ -16,7 +16,7 @@ class Blocks<A extends Float64Array | Int32Array> {
   constructor(private readonly make: (length: number) => A) {}
 
   take(length: number): A {
-    if (length > BLOCK / 8) return this.make(length);
+    if (length === 0 || length > BLOCK / 8) return this.make(length);
     if (this.used + length > BLOCK) {
       this.at++;
       this.used = 0;

@@ -58,11 +58,6 @@ export function whitened(y: Float64Array, q: Float64Array, m: number): Whitened 
 export class FreeData {
   private readonly basis: Float64Array[] = [];
 
-  /** Data that were set free and took a degree of freedom each. */
-  get freed(): number {
-    return this.basis.length;
-  }
-
   private known: { readonly of: Float64Array; readonly z: Float64Array } | null = null;
 
   constructor(private readonly system: Whitened) {}

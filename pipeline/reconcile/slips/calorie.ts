@@ -1,15 +1,9 @@
 /** Calorie and joule exchanged, the thermochemical calorie or that of the International Table. */
-import { INTERNATIONAL_TABLE_CALORIE, THERMOCHEMICAL_CALORIE } from '../../core/constants.js';
+import { CALORIES_J } from '../../core/units/calories.js';
 import { isInCalories } from './column-unit.js';
 import { isEnergetic } from './quantity-kinds.js';
 import { times } from './ratio.js';
 import type { Candidate, Slip, SuspectCell } from './slip.js';
-
-/** [J per calorie, share]: tables of pure substances are mostly in thermochemical calories. */
-const CALORIES = [
-  [THERMOCHEMICAL_CALORIE.value, 0.85],
-  [INTERNATIONAL_TABLE_CALORIE.value, 0.15],
-] as const;
 
 /** Where the column is not declared so, the number was converted twice; that is as much more seldom. */
 const TWICE = 0.15;
@@ -30,5 +24,5 @@ export const jouleReadAsCalorie: Slip = {
 
 function proposed(cell: SuspectCell, part: number, ratio: (joules: number) => number): Candidate[] {
   if (!isEnergetic(cell.quantity)) return [];
-  return CALORIES.map(([joules, share]) => times(cell, ratio(joules), part * share));
+  return CALORIES_J.map(([joules, share]) => times(cell, ratio(joules), part * share));
 }

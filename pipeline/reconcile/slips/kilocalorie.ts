@@ -1,15 +1,9 @@
 /** Calorie and joule exchanged and the prefix kilo beside: kilocalories in a column of joules, and its fellows. */
-import { INTERNATIONAL_TABLE_CALORIE, THERMOCHEMICAL_CALORIE } from '../../core/constants.js';
+import { CALORIES_J } from '../../core/units/calories.js';
 import { isInCalories, isKiloPerMole, isPlainPerMole } from './column-unit.js';
 import { isEnergetic, isPerKelvin } from './quantity-kinds.js';
 import { times } from './ratio.js';
 import type { Slip, SuspectCell } from './slip.js';
-
-/** [J per calorie, share] */
-const CALORIES = [
-  [THERMOCHEMICAL_CALORIE.value, 0.85],
-  [INTERNATIONAL_TABLE_CALORIE.value, 0.15],
-] as const;
 
 /** The cell holds kilocalories where joules are declared. */
 export const kilocalorieReadAsJoule: Slip = {
@@ -42,5 +36,5 @@ export const jouleReadAsKilocalorie: Slip = {
 /** What is per kelvin is a few calories: nobody writes it in kilocalories. */
 function proposed(cell: SuspectCell, declared: boolean, ratio: (joules: number) => number) {
   if (!declared || !isEnergetic(cell.quantity) || isPerKelvin(cell.quantity)) return [];
-  return CALORIES.map(([joules, share]) => times(cell, ratio(joules), share));
+  return CALORIES_J.map(([joules, share]) => times(cell, ratio(joules), share));
 }

@@ -1,11 +1,10 @@
 /** Another formula's molar mass: of a hydrate or of the anhydrous substance, of two formula units or of half of one. */
+import { WATER_G_PER_MOL } from '../../core/constants.js';
 import { isPerMass } from './column-unit.js';
 import { isMolar } from './quantity-kinds.js';
 import { times } from './ratio.js';
 import type { Candidate, Slip, SuspectCell } from './slip.js';
 
-/** H2O, from the abridged standard atomic weights (IUPAC/CIAAW 2021) [g/mol]. */
-const WATER = 18.015;
 /** [molecules of water, share of the hydrates] */
 const WATERS = [
   [0.5, 0.08],
@@ -38,9 +37,9 @@ export const otherFormulaMolarMass: Slip = {
     const sense = isPerMass(cell) ? 1 : -1;
     const candidates: Candidate[] = [times(cell, 2, 0.15), times(cell, 0.5, 0.15)];
     for (const [n, share] of WATERS) {
-      const ratio = ((mass + n * WATER) / mass) ** sense;
+      const ratio = ((mass + n * WATER_G_PER_MOL) / mass) ** sense;
       candidates.push(byMass(cell, ratio, 0.4 * share), byMass(cell, 1 / ratio, 0.2 * share));
-      const anhydrous = mass - n * WATER;
+      const anhydrous = mass - n * WATER_G_PER_MOL;
       if (anhydrous >= LIGHTEST) candidates.push(byMass(cell, (anhydrous / mass) ** sense, 0.1 * share));
     }
     return candidates;

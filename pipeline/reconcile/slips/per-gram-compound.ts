@@ -1,15 +1,9 @@
 /** Per gram and per mole exchanged and the unit of energy beside: kJ/mol in a column of J/g, cal/g in one of J/mol. */
-import { INTERNATIONAL_TABLE_CALORIE, THERMOCHEMICAL_CALORIE } from '../../core/constants.js';
+import { CALORIES_J } from '../../core/units/calories.js';
 import { isInCalories, isKiloPerMole, isPerMass, joulesOfUnit } from './column-unit.js';
 import { isEnergetic, isPerKelvin } from './quantity-kinds.js';
 import { readAs } from './ratio.js';
 import type { Candidate, Slip, SuspectCell } from './slip.js';
-
-/** [J per calorie, share] */
-const CALORIES = [
-  [THERMOCHEMICAL_CALORIE.value, 0.85],
-  [INTERNATIONAL_TABLE_CALORIE.value, 0.15],
-] as const;
 
 const isEnergy = ({ quantity }: SuspectCell): boolean => isEnergetic(quantity) && !isPerKelvin(quantity);
 
@@ -36,7 +30,7 @@ export const caloriePerGramReadAsJoulePerMole: Slip = {
   weight: 0.01,
   propose: (cell) => {
     if (!isEnergetic(cell.quantity) || isInCalories(cell) || isPerMass(cell) || !(cell.molarMassGPerMol > 0)) return [];
-    return CALORIES.map(([joules, share]) => readAs(cell, joules * cell.molarMassGPerMol, 0, share));
+    return CALORIES_J.map(([joules, share]) => readAs(cell, joules * cell.molarMassGPerMol, 0, share));
   },
 };
 
@@ -48,7 +42,7 @@ export const caloriePerMoleReadAsJoulePerGram: Slip = {
     if (!isEnergetic(cell.quantity) || isInCalories(cell) || !isPerMass(cell)) return [];
     const plain = isPerKelvin(cell.quantity) ? 1 : 0.5;
     const candidates: Candidate[] = [];
-    for (const [joules, share] of CALORIES) {
+    for (const [joules, share] of CALORIES_J) {
       candidates.push(readAs(cell, joules, 0, plain * share));
       if (plain < 1) candidates.push(readAs(cell, 1000 * joules, 0, (1 - plain) * share));
     }

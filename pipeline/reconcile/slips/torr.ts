@@ -1,10 +1,8 @@
 /** Torr and pascal exchanged. */
-import { STANDARD_ATMOSPHERE_PA } from '../../core/constants.js';
+import { TORR_PA } from '../../core/constants.js';
 import { isPressure } from './quantity-kinds.js';
 import { readAs, times } from './ratio.js';
 import type { Slip, SuspectCell } from './slip.js';
-
-const TORR_PA = STANDARD_ATMOSPHERE_PA / 760;
 
 /** The cell holds torr where pascal (or kPa, bar, atm) are declared. */
 export const torrReadAsPascal: Slip = {

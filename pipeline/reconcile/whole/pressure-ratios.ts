@@ -1,9 +1,6 @@
 /** Ratios by which a whole column of pressures is off when its unit is another one: meant value over printed value. */
-import { STANDARD_ATMOSPHERE_PA, STANDARD_PRESSURE_PA } from '../../core/constants.js';
+import { STANDARD_ATMOSPHERE_PA, STANDARD_PRESSURE_PA, TORR_PA } from '../../core/constants.js';
 import type { UnitRatio } from './unit-ratios.js';
-
-/** 1 mmHg, conventional: NIST SP 811 (2008), B.8. */
-const TORR_PA = STANDARD_ATMOSPHERE_PA / 760;
 
 /** @param unitPa of the column as declared */
 export function pressureRatios(unitPa: number): UnitRatio[] {

@@ -1,8 +1,10 @@
 /** Ratios by which a whole column is off when its unit is another one: meant value over printed value. */
-import { INTERNATIONAL_TABLE_CALORIE, R_J_PER_MOL_K, THERMOCHEMICAL_CALORIE } from '../../core/constants.js';
-
-/** IUPAC abridged atomic weights (2021): 2 x 1.008 + 15.999. */
-const WATER_G_PER_MOL = 18.015;
+import {
+  INTERNATIONAL_TABLE_CALORIE,
+  R_J_PER_MOL_K,
+  THERMOCHEMICAL_CALORIE,
+  WATER_G_PER_MOL,
+} from '../../core/constants.js';
 
 export interface UnitRatio {
   readonly code: string;

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { factorise, unwhiten, whiten } from '../../../pipeline/core/numeric/cholesky.js';
+import { factorise, whiten } from '../../../pipeline/core/numeric/cholesky.js';
 import { column, type Matrix, product, solved, transposed } from './dense.js';
 import { seeded } from './random.js';
 
@@ -29,7 +29,7 @@ describe('Cholesky factor', () => {
     }
   });
 
-  it('solves systems as elimination does, and whitens a vector to its length under the inverse', () => {
+  it('whitens a vector to its length under the inverse', () => {
     const n = 8;
     const a = positiveDefinite(n, 77);
     const { normal } = seeded(78);
@@ -44,8 +44,6 @@ describe('Cholesky factor', () => {
       b.reduce((sum, v, i) => sum + v * x[i], 0),
       9,
     );
-    unwhiten(l, n, z);
-    for (let i = 0; i < n; i++) expect(z[i]).toBeCloseTo(x[i], 9);
   });
 
   it('says no where the matrix is indefinite, singular or broken', () => {
