@@ -38,6 +38,14 @@ describe('nightly', () => {
     for (const id of FIVE) expect(published('functions')).toContain(`\n${id},cr,`);
   });
 
+  it('names the table file that is missing where its one substance has no other', () => {
+    writeSmallLibrary(sources, ['amberite']);
+    rmSync(join(sources, 'made-tables', 'points.csv'));
+    const { stdout } = cuspline('check', '--sources', sources);
+    expect(stdout).toContain('points.csv');
+    expect(stdout).not.toContain('broke down');
+  });
+
   it('withholds a substance with a slip and names its cell, what it says and what it should say', () => {
     writeSmallLibrary(sources, FIVE, { entropy: ['corvane'] });
     const { status, stdout } = night();

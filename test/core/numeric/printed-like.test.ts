@@ -3,7 +3,7 @@ import { printedLike } from '../../../pipeline/core/numeric/printed-like.js';
 
 it.each([
   ['1.25', 2.34159, '2.34'],
-  ['1,25', 2.34159, '2.34'],
+  ['1,25', 2.34159, '2,34'],
   ['7', -2.6, '-3'],
   ['1.5e3', 1249.96, '1250.0'],
 ])('prints like %s: %d becomes %s', (printed, value, text) => {
