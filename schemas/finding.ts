@@ -127,6 +127,11 @@ export type FindingDetail =
   | {
       readonly code: 'transition';
       readonly what: 'gap' | 'crossing' | 'closure' | 'jump' | 'no-jump' | 'falls' | 'not-crossed';
+      /**
+       * Of a closure, what was compared [J/mol]: dH with T dS, both as stated; the stated dH with the curves'; T times the
+       * stated dS with T times the curves' dS.
+       */
+      readonly of?: 'stated' | 'enthalpy' | 'entropy';
       readonly statedK: number;
       readonly computedK: number | null;
       readonly smallestDetectable: number | null;
@@ -145,6 +150,8 @@ export type FindingDetail =
   | {
       readonly code: 'adjustment';
       readonly place: string;
+      /** How many printed cells one law for all of them would put right; 1 where a single one stands off. */
+      readonly cells: number;
       readonly w: number | null;
       readonly critical: number;
       readonly chiSquare: number;

@@ -92,7 +92,7 @@ export function adjustmentFindings(
     const [first] = group.members;
     const { of } = first;
     const i = system.data.indexOf(of);
-    const w = i >= 0 ? (tests[i]?.w ?? first.w) : first.w;
+    const w = first.whole === null && i >= 0 ? (tests[i]?.w ?? first.w) : first.w;
     findings.push(
       makeFinding({
         ...common,
@@ -109,6 +109,7 @@ export function adjustmentFindings(
         detail: {
           code: 'adjustment',
           place: of.place,
+          cells: first.whole?.cells ?? 1,
           w,
           critical: critical.doubt,
           chiSquare: white.chiSquare,
@@ -127,6 +128,7 @@ export function adjustmentFindings(
         detail: {
           code: 'adjustment',
           place: '',
+          cells: 1,
           w: null,
           critical: critical.doubt,
           chiSquare: white.chiSquare,

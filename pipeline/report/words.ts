@@ -135,18 +135,30 @@ function told(finding: Finding): string {
 }
 
 /** All stated numbers together: the one that stands off, or the whole where no single one explains it. */
-function adjustment(finding: Finding, { place, w, critical, chiSquare, freedom }: Detail<'adjustment'>): string {
+function adjustment(finding: Finding, { place, cells, w, critical, chiSquare, freedom }: Detail<'adjustment'>): string {
   if (place === '' || w === null) {
     return (
       `Taken together, the transitions, anchors and tables do not close (chi square ${figure(chiSquare)} with ${freedom} degrees of freedom), ` +
       'and no single number explains it. Look at the uncertainties that the sources state.'
     );
   }
+  if (cells > 1) {
+    return (
+      `Taken together with all else that is stated, ${cells} printed cells do not fit as they are, the first of them ` +
+      `${statedPlace(place)}; one law for all of them puts them right (normalised residual ${residual(w)}, ` +
+      `at most ${residual(critical)} is usual): see the suspects. Compare them with the original.`
+    );
+  }
   return (
     `Taken together with all else that is stated, ${statedPlace(place)} is ${amount(finding.observed, finding)}; ` +
-    `the rest puts it at ${amount(finding.expected, finding)} (normalised residual ${figure(Math.round(100 * Math.abs(w)) / 100)}, ` +
-    `at most ${figure(Math.round(100 * critical) / 100)} is usual). Compare the cell with the original.`
+    `the rest puts it at ${amount(finding.expected, finding)} (normalised residual ${residual(w)}, ` +
+    `at most ${residual(critical)} is usual). Compare the cell with the original.`
   );
+}
+
+/** To two decimals. */
+function residual(w: number): string {
+  return figure(Math.round(100 * Math.abs(w)) / 100);
 }
 
 /** `T cr>l` becomes `the temperature of cr>l`. */
@@ -248,7 +260,7 @@ function transition(finding: Finding, detail: Detail<'transition'>): string {
   return finding.severity === 'note' ? found : `${found} ${next}`;
 }
 
-function transitionParts(finding: Finding, { what, statedK, computedK }: Detail<'transition'>): [string, string] {
+function transitionParts(finding: Finding, { what, of, statedK, computedK }: Detail<'transition'>): [string, string] {
   const { fromPhase: from, toPhase: to } = finding;
   const name = `${from} → ${to}`;
   const crossing =
@@ -273,10 +285,7 @@ function transitionParts(finding: Finding, { what, statedK, computedK }: Detail<
         'Look at the formation enthalpies and entropies of both phases.',
       ];
     case 'closure':
-      return [
-        `${name} at ${kelvin(statedK)}: ΔH is ${amount(finding.observed, finding)}; T ΔS gives ${expectation(finding)}.`,
-        'Look at ΔH, ΔS and the temperature.',
-      ];
+      return closure(`${name} at ${kelvin(statedK)}`, of ?? 'stated', finding);
     case 'jump':
       return [
         `${name} at ${kelvin(statedK)} is stated as a transition without latent heat, and the entropy jumps by ${amount(finding.observed, finding)}; ` +
@@ -296,6 +305,31 @@ function transitionParts(finding: Finding, { what, statedK, computedK }: Detail<
   }
 }
 
+/** The stated ΔH and ΔS of a transition, with each other or with what the curves give. */
+function closure(name: string, of: NonNullable<Detail<'transition'>['of']>, finding: Finding): [string, string] {
+  const found = amount(finding.observed, finding);
+  const expected = expectation(finding);
+  const text = printedText(finding);
+  switch (of) {
+    case 'stated':
+      return [
+        `${name}: the stated ΔH is ${found}${printed(finding)}; T times the stated ΔS gives ${expected}.`,
+        'Look at ΔH, ΔS and the temperature.',
+      ];
+    case 'enthalpy':
+      return [
+        `${name}: the stated ΔH is ${found}${printed(finding)}; the curves of both phases give ${expected}.`,
+        'Look at ΔH, and at the enthalpies and the heat capacities of both phases.',
+      ];
+    case 'entropy':
+      return [
+        `${name}: T times the stated ΔS${text === undefined ? '' : ` (printed ${text})`} is ${found}; ` +
+          `T times the ΔS of the curves of both phases gives ${expected}.`,
+        'Look at ΔS, and at the entropies and the heat capacities of both phases.',
+      ];
+  }
+}
+
 /** Significance and materiality, where the finding was judged by both. */
 function gravity({ severity, detail, tolerance, unit, difference }: Finding): string {
   if (
@@ -307,8 +341,10 @@ function gravity({ severity, detail, tolerance, unit, difference }: Finding): st
     return '';
   if (detail.code === 'transition' && detail.what === 'no-jump') return '';
   const known = detail.code === 'transition' ? detail.smallestDetectable : null;
+  // What many numbers are off by together is no difference of the first of them.
+  const many = detail.code === 'adjustment' && detail.cells > 1;
   const limit =
-    tolerance === null || difference === null
+    tolerance === null || difference === null || many
       ? ''
       : `: ${difference < 0 ? '−' : ''}${figure(Math.abs(difference), tolerance)} against ${figure(tolerance, tolerance)}${unit === null ? '' : ` ${unitInWords(unit)}`}`;
   switch (severity) {

@@ -228,11 +228,36 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     {
       ...melting,
       rule: 'transition-entropy-closes',
-      detail: { ...transition, what: 'closure' },
+      detail: { ...transition, what: 'closure', of: 'stated' },
       observed: 4770,
       expected: 4810,
     },
-    [/ΔH is 4770 J\/mol; T ΔS gives 4810 J\/mol/],
+    [/the stated ΔH is 4770 J\/mol; T times the stated ΔS gives 4810 J\/mol\. Look at ΔH, ΔS and the temperature/],
+  ],
+  [
+    'stated enthalpy of a transition beside the curves',
+    {
+      ...melting,
+      rule: 'transition-entropy-closes',
+      detail: { ...transition, what: 'closure', of: 'enthalpy' },
+      observed: 4770,
+      expected: 4810,
+    },
+    [/the stated ΔH is 4770 J\/mol; the curves of both phases give 4810 J\/mol\. Look at ΔH, and/],
+  ],
+  [
+    'stated entropy of a transition beside the curves',
+    {
+      ...melting,
+      rule: 'transition-entropy-closes',
+      detail: { ...transition, what: 'closure', of: 'entropy' },
+      evidence: [{ ...address, printed: '7.942' }],
+      observed: 4770,
+      expected: 4810,
+    },
+    [
+      /T times the stated ΔS \(printed 7\.942\) is 4770 J\/mol; T times the ΔS of the curves of both phases gives 4810 J\/mol\. Look at ΔS, and/,
+    ],
   ],
   [
     'transition that jumps though continuous',
@@ -325,7 +350,7 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
     `adjustment of ${place}`,
     {
       rule: 'adjustment-closes',
-      detail: { code: 'adjustment', place, w: -12.345, critical: 3.5, chiSquare: 152, freedom: 5 },
+      detail: { code: 'adjustment', place, cells: 1, w: -12.345, critical: 3.5, chiSquare: 152, freedom: 5 },
       observed: 75_006_200,
       expected: 100_000,
       difference: 74_906_200,
@@ -337,6 +362,23 @@ const SENTENCES: readonly (readonly [string, Parameters<typeof say>[0], readonly
       /residual 12\.35/,
     ],
   ]),
+  [
+    'adjustment of many numbers',
+    {
+      rule: 'adjustment-closes',
+      severity: 'fault',
+      detail: { code: 'adjustment', place: 'dH l>cr', cells: 2, w: -12.345, critical: 3.5, chiSquare: 152, freedom: 5 },
+      observed: 4774,
+      expected: 4774,
+      difference: 0,
+      tolerance: 1.2,
+      unit: 'J/mol',
+    },
+    [
+      /^Taken together with all else that is stated, 2 printed cells do not fit as they are, the first of them the enthalpy of l>cr; one law for all of them puts them right \(normalised residual 12\.35, at most 3\.5 is usual\): see the suspects\./,
+      /Outside what the uncertainties allow, and large enough to matter\.$/,
+    ],
+  ],
   [
     'calculation-failed',
     { rule: 'row-readable', detail: { code: 'calculation-failed', message: 'matrix is singular' } },

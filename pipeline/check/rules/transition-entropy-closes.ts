@@ -1,6 +1,8 @@
+import type { FindingDetail } from '../../../schemas/finding.js';
 import type { Datum } from '../../../schemas/harmonised.js';
 import { makeFinding } from '../../../schemas/make-finding.js';
 import { NON_CENTRALITY } from '../../core/physics/adjustment.js';
+import { uStated } from '../../core/physics/stated-u.js';
 import { differenceUncertainty } from '../curve/difference-uncertainty.js';
 import {
   isFirstOrder,
@@ -11,6 +13,8 @@ import {
 } from '../curve/judgement.js';
 import { gravity } from '../curve/significance.js';
 import { outcome } from '../place.js';
+
+type Compared = NonNullable<Extract<FindingDetail, { code: 'transition' }>['of']>;
 
 /**
  * dH = T dS of the stated numbers; where only one of them is stated, or the curves give their own, against the curves'
@@ -23,12 +27,13 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
   const t = temperature.value;
   const within = view.evidence === 'arithmetic' || stated.table.basis !== 'measured';
   const uOf = (d: Datum): number => (within ? d.uRounding : d.u);
-  const comparisons: { observed: number; expected: number; u: number; about: Datum }[] = [];
+  const comparisons: { observed: number; expected: number; u: number; of: Compared; about: Datum }[] = [];
   if (enthalpy !== null && entropy !== null) {
     comparisons.push({
       observed: enthalpy.value,
       expected: t * entropy.value,
       u: Math.hypot(uOf(enthalpy), t * uOf(entropy), entropy.value * (within ? temperature.uRounding : temperature.u)),
+      of: 'stated',
       about: enthalpy,
     });
   }
@@ -40,10 +45,11 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
         observed: enthalpy.value,
         expected: at.enthalpyJPerMol,
         u: Math.hypot(
-          view.evidence === 'arithmetic' ? enthalpy.uRounding : enthalpy.u,
+          uStated(enthalpy, view.evidence === 'arithmetic'),
           uCurves.enthalpyJPerMol,
           Math.abs(at.heatCapacityJPerMolK) * view.uStatedK,
         ),
+        of: 'enthalpy',
         about: enthalpy,
       });
     }
@@ -52,10 +58,11 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
         observed: t * entropy.value,
         expected: t * at.entropyJPerMolK,
         u: Math.hypot(
-          t * (view.evidence === 'arithmetic' ? entropy.uRounding : entropy.u),
+          t * uStated(entropy, view.evidence === 'arithmetic'),
           uCurves.entropyTimesTJPerMol,
           Math.abs(at.heatCapacityJPerMolK) * view.uStatedK,
         ),
+        of: 'entropy',
         about: entropy,
       });
     }
@@ -99,6 +106,7 @@ export function transitionEntropyCloses({ substance, view, policy, limits }: Tra
     detail: {
       code: 'transition',
       what: 'closure',
+      of: worst.of,
       statedK: t,
       computedK: view.crossing?.temperatureK ?? null,
       smallestDetectable,

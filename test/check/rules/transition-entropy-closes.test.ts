@@ -41,6 +41,23 @@ describe(RULE, () => {
     expect(outcomeOf(found, RULE, 'l>g').outcome).toBe('agrees');
   });
 
+  it('says which of the three comparisons is worst, at the cell that it is about', () => {
+    const about = (printed: ReturnType<typeof medium>) =>
+      melting(checked(printed)).map(({ detail, address }) => [
+        detail.code === 'transition' && detail.of,
+        address?.column,
+      ]);
+    const bare = medium();
+    bare.tables = {};
+    bare.transitions[0]!.dH = '2.151';
+    expect(about(bare)).toEqual([['stated', 'dH']]);
+    const alone = medium();
+    Object.assign(alone.transitions[0]!, { dH: '2.151', dS: '' });
+    expect(about(alone)).toEqual([['enthalpy', 'dH']]);
+    Object.assign(alone.transitions[0]!, { dH: '', dS: '1.800' });
+    expect(about(alone)).toEqual([['entropy', 'dS']]);
+  });
+
   it('compares the stated numbers with each other where no table reaches them', () => {
     expect(melting(spoilt('dH', '9.000', 'evaluated', true))).toEqual([]);
     expect(outcomeOf(spoilt('dH', '9.000', 'evaluated', true), RULE, 'cr>l').outcome).toBe('agrees');
