@@ -63,6 +63,11 @@ export interface Datum {
   readonly u: number;
   /** Standard uncertainty of the rounding alone. */
   readonly uRounding: number;
+  /**
+   * Beside another source's numbers: `u`, and where only digits speak, what the policy takes for a measured number on top.
+   * Absent: `u`.
+   */
+  readonly uBeside?: number | undefined;
   readonly halfUnit: number;
   readonly origin: UncertaintyOrigin;
   readonly address: Address;

@@ -7,6 +7,7 @@ import { departure } from '../core/physics/equilibrium.js';
 import { imperfection } from '../core/physics/imperfection-error.js';
 import { boilingTemperature, isGas } from '../core/physics/placed-phase.js';
 import { gasTerm } from '../core/physics/pressure-terms.js';
+import { uStated } from '../core/physics/stated-u.js';
 import type { PhaseShape } from './phase-shape.js';
 
 /** Where a level is from, the other curve by its index among the shapes; -1 where it is a datum. */
@@ -63,7 +64,11 @@ function carry(
   sign: number,
 ): boolean {
   const stated = family.substance.transitions[index];
-  const { value: temperatureK, u: uT } = stated.temperature;
+  const { value: temperatureK } = stated.temperature;
+  const own = [shapes[known], shapes[open]].every((s) => s.main.table.source === stated.table.source);
+  // Of its own source all that is stated counts; beside another's, digits alone do not.
+  const uOf = (datum: Datum): number => (own ? datum.u : uStated(datum, false));
+  const uT = uOf(stated.temperature);
   const target = levels[open];
   const source = levels[known];
   const wantsH = target.h === null && source.h !== null;
@@ -81,9 +86,9 @@ function carry(
     target.h = scale * (a.h + (source.h ?? 0)) + by * dH - b.h;
     const errors =
       stated.enthalpy !== null
-        ? [{ key: datumKey.enthalpy(index), by, u: stated.enthalpy.u }]
+        ? [{ key: datumKey.enthalpy(index), by, u: uOf(stated.enthalpy) }]
         : [
-            { key: datumKey.entropy(index), by: by * temperatureK, u: (stated.entropy as Datum).u },
+            { key: datumKey.entropy(index), by: by * temperatureK, u: uOf(stated.entropy as Datum) },
             { key: datumKey.temperature(index), by: by * (stated.entropy as Datum).value, u: uT },
           ];
     errors.push(...imperfection(b.uGas - scale * a.uGas, -1, 0, temperatureK));
@@ -97,9 +102,9 @@ function carry(
     target.s = scale * (a.s + (source.s ?? 0)) + by * dS - b.s;
     const errors =
       stated.entropy !== null
-        ? [{ key: datumKey.entropy(index), by, u: stated.entropy.u }]
+        ? [{ key: datumKey.entropy(index), by, u: uOf(stated.entropy) }]
         : [
-            { key: datumKey.enthalpy(index), by: by / temperatureK, u: (stated.enthalpy as Datum).u },
+            { key: datumKey.enthalpy(index), by: by / temperatureK, u: uOf(stated.enthalpy as Datum) },
             { key: datumKey.temperature(index), by: (-by * dS) / temperatureK, u: uT },
           ];
     const byPressure = b.byPressure - scale * a.byPressure;

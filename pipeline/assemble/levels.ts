@@ -4,6 +4,7 @@ import type { Policy } from '../../schemas/policy.js';
 import { numbers } from '../core/numeric/room.js';
 import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
 import { datumKey } from '../core/physics/datum-keys.js';
+import { uStated } from '../core/physics/stated-u.js';
 import { carryAll, type Level, type Origin, relative } from './carry-levels.js';
 import type { PhaseShape } from './phase-shape.js';
 
@@ -182,9 +183,9 @@ const EVALUATED = ' as evaluated by ';
 
 /** Rounding alone within one compiled source; what is stated, or the default, where sources meet. */
 function uOf(datum: Datum, anchor: Anchor | undefined, shape: PhaseShape): number {
-  if (anchor === undefined) return datum.u;
+  if (anchor === undefined) return uStated(datum, false);
   const one = anchor.table.source === shape.main.table.source && anchor.table.basis === 'evaluated';
-  return one ? datum.uRounding : datum.u;
+  return uStated(datum, one);
 }
 
 /** The preferred anchor of the phase that states the quantity. */
@@ -262,7 +263,7 @@ function curveOf(shape: PhaseShape, level: Level, family: Family, growth: number
     uCalibrationRelative: shape.uCalibrationRelative,
     referenceK: shape.referenceK,
     entropyReferenceK: shape.entropyReferenceK,
-    sources: shape.sources,
+    sources: sourcesOf(shape, level),
     enthalpyAnchor: level.hAnchor === null ? -1 : all.indexOf(level.hAnchor),
     entropyAnchor: level.sAnchor === null ? -1 : all.indexOf(level.sAnchor),
     enthalpyThrough: level.hThrough,
@@ -272,6 +273,12 @@ function curveOf(shape: PhaseShape, level: Level, family: Family, growth: number
     enthalpyLevel: undefined,
     entropyLevel: undefined,
   };
+}
+
+/** The table's own, then whose anchors its levels rest on. */
+function sourcesOf({ sources }: PhaseShape, { hAnchor, sAnchor }: Level): readonly string[] {
+  const more = [hAnchor, sAnchor].flatMap((anchor) => (anchor === null ? [] : [anchor.table.source]));
+  return more.every((source) => sources.includes(source)) ? sources : [...new Set([...sources, ...more])];
 }
 
 function raised(values: Float64Array, by: number): Float64Array {

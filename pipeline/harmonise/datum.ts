@@ -30,6 +30,7 @@ export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, p
   return {
     value,
     u: Math.sqrt(variance),
+    ...beside(quantity, value, Math.sqrt(variance), origin, constant || defined, policy),
     uRounding,
     halfUnit,
     origin,
@@ -44,6 +45,20 @@ export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, p
     factor,
     offset,
   };
+}
+
+/** A number whose digits alone speak is known no better than a measured one, as soon as it stands beside another source's. */
+function beside(
+  quantity: NumberQuantity,
+  value: number,
+  u: number,
+  origin: Datum['origin'],
+  exact: boolean,
+  policy: Policy,
+): { readonly uBeside?: number } {
+  if (exact || origin !== 'printed digits') return {};
+  const { relative, absolute } = policyPart(policy, quantity);
+  return { uBeside: Math.hypot(u, relative * value, absolute) };
 }
 
 /** Zero of a formation quantity is a definition. */
@@ -67,6 +82,7 @@ export function moved(datum: Datum, shift: number, uShift = 0): Datum {
     value: datum.value + shift,
     offset: datum.offset + shift,
     u: uShift === 0 ? datum.u : Math.hypot(datum.u, uShift),
+    ...(datum.uBeside === undefined ? {} : { uBeside: Math.hypot(datum.uBeside, uShift) }),
   };
 }
 

@@ -82,7 +82,7 @@ function solvedOf(checked: CheckedCase, policy: Policy): Adjusted[] {
   const { transitions, anchors } = examined.harmonised;
   const tests = testCount(transitions.length, anchors.length);
   const isobars = new Set<number | null>([null, ...curves.map((c) => c.family.isobarPa)]);
-  return [...isobars].map((isobar) => adjusted(systemOf(checked, isobar, policy), tests, policy));
+  return [...isobars].map((isobar) => adjusted(systemOf(checked, isobar), tests, policy));
 }
 
 const TRANSITION_RULES: ReadonlySet<string> = new Set([

@@ -79,7 +79,7 @@ describe('several series of one phase', () => {
     expect(step[0]).toBeCloseTo(0.02 * TRUTH.cp(200), 2);
     expect(step[1]).toBeNull();
     expect(step[2]).toBeCloseTo(0.02 * TRUTH.cp(400), 1);
-    expect(curve.sources).toEqual(['alpha', 'beta', 'gamma']);
+    expect(curve.sources).toEqual(['alpha', 'beta', 'gamma', 'desk']);
   });
 
   it("follow the policy's preferred sources before ranks, and tables with S or H before bare ones of one rank", () => {

@@ -45,10 +45,10 @@ function measured(design: DesignName): string {
     };
     const floor = timesOf(allBefore) / SUBSTANCES;
     const cases = allBefore();
-    const adjust = (one: CheckedCase) => adjustmentOutcomes(adjusted(systemOf(one, null, policy), 20, policy));
+    const adjust = (one: CheckedCase) => adjustmentOutcomes(adjusted(systemOf(one, null), 20, policy));
     for (const one of cases) timesOf(() => adjust(one));
     const each = cases.map((one) => timesOf(() => adjust(one)));
-    const conditions = middle(cases.map((one) => systemOf(one, null, policy).m));
+    const conditions = middle(cases.map((one) => systemOf(one, null).m));
     const own = middle(each);
     return `${design.padEnd(18)} ${String(conditions).padStart(10)} ${own.toFixed(0).padStart(10)} ${floor.toFixed(0).padStart(22)} ${(own / floor).toFixed(3).padStart(8)}`;
   } finally {

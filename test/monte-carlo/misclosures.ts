@@ -27,7 +27,7 @@ export function misclosures(design: Design, truth: Truth, draws: number, seed: n
   const smallest = new Map<string, number>();
   let freedom = 0;
   reconcileDraws({ design, truth, draws, seed }, (one: ReconciledCase) => {
-    const { system, whitened, tests } = adjusted(systemOf(one.checked, null, policy), 1, policy);
+    const { system, whitened, tests } = adjusted(systemOf(one.checked, null), 1, policy);
     y.push([...system.y]);
     chiSquare.push(whitened.chiSquare);
     freedom = whitened.freedom;

@@ -24,7 +24,7 @@ const adjustmentOf = (printed: Printed) => reconciled(printed).outcomes.filter((
 
 describe('the pressure of a boiling point', () => {
   it('is tested as RT d(ln p) in G and -R d(ln p) in the entropy of the gas', () => {
-    const { data, conditions, joined } = systemOf(checked(medium()), null, settings.policy);
+    const { data, conditions, joined } = systemOf(checked(medium()), null);
     const pressure = data.find(({ kind }) => kind === 'transition-pressure')!;
     expect([pressure.place, pressure.datum.value, pressure.u]).toEqual(['p l>g', 1e5, 0]);
     const by = (kind: string) =>
@@ -38,7 +38,7 @@ describe('the pressure of a boiling point', () => {
     const printed = medium();
     const boiling = printed.transitions[BOILING]!;
     Object.assign(boiling, { from: 'g', to: 'l', dH: `-${boiling.dH}`, dS: `-${boiling.dS}` });
-    const { data, conditions } = systemOf(checked(printed), null, settings.policy);
+    const { data, conditions } = systemOf(checked(printed), null);
     const { direction, place } = data.find(({ kind }) => kind === 'transition-pressure')!;
     expect(place).toBe('p g>l');
     expect(direction[conditions.findIndex((c) => c.kind === 'gap' && c.transition === BOILING)]).toBeLessThan(0);
@@ -104,7 +104,7 @@ describe('the pressure of a boiling point', () => {
 
   it('opens nothing by itself', () => {
     for (const basis of ['evaluated', 'measured'] as const) expect(reconciled(medium(basis)).verdict).toBe('cleared');
-    const system = systemOf(checked(medium()), null, settings.policy);
+    const system = systemOf(checked(medium()), null);
     const pressure = system.data.findIndex(({ kind }) => kind === 'transition-pressure');
     // Misclosures along the pressure's own direction: a little beyond what is usual for it, and so for nothing else.
     const { direction } = system.data[pressure]!;

@@ -10,6 +10,7 @@ import {
   type PlacedPhase,
   placePhase,
 } from '../../core/physics/placed-phase.js';
+import { uStated } from '../../core/physics/stated-u.js';
 
 /** A stated transition beside the two curves that it joins. */
 export interface TransitionView {
@@ -88,7 +89,7 @@ function viewOf(
   const a = curves[fromCurve];
   const b = curves[toCurve];
   const within = stated.table.basis !== 'measured' && everySource(a, b, stated.table.source);
-  const uStatedK = within ? stated.temperature.uRounding : stated.temperature.u;
+  const uStatedK = uStated(stated.temperature, within);
   const evidence: EvidenceKind = within ? 'arithmetic' : 'independent';
   const unlevelled = [a, b].find((c) => !c.hasEnthalpyLevel || !c.hasEntropyLevel);
   const setting: DiagramSetting = { pressurePa: stated.pressurePa, gas: stated.gas ?? 'real' };

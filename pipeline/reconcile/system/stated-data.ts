@@ -1,7 +1,7 @@
 import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
-import type { Policy } from '../../../schemas/policy.js';
 import { datumKey } from '../../core/physics/datum-keys.js';
 import { isGas } from '../../core/physics/placed-phase.js';
+import { uStated } from '../../core/physics/stated-u.js';
 import type { Joined, Saturated } from './joined.js';
 
 export type DatumKind =
@@ -50,14 +50,13 @@ export function statedData(
   joined: readonly Joined[],
   saturated: readonly Saturated[],
   uOfAnchor: (key: string, anchor: Anchor, datum: Datum) => number,
-  policy: Policy,
 ): StatedDatum[] {
   const data: StatedDatum[] = [];
   const where = isobarPa === null ? '' : ` at ${isobarPa} Pa`;
   substance.transitions.forEach((stated, transition) => {
     if (isobarOf(transition) !== isobarPa) return;
     const within = joined.some((j) => j.judged.index === transition && j.within);
-    const u = (datum: Datum): number => (within ? datum.uRounding : datum.u);
+    const u = (datum: Datum): number => uStated(datum, within);
     const phases = [stated.from, stated.to];
     const name = `${stated.from}>${stated.to}${where}`;
     const add = (kind: DatumKind, key: string, symbol: string, datum: Datum | null): void => {
@@ -103,7 +102,7 @@ export function statedData(
       key: datumKey.saturationTemperature(index),
       kind: 'saturation-temperature',
       datum: temperature,
-      u: temperature.u,
+      u: uStated(temperature, false),
       place: `T over ${phase}`,
     });
     data.push({
@@ -111,14 +110,9 @@ export function statedData(
       key: datumKey.saturationPressure(index),
       kind: 'saturation-pressure',
       datum: pressure,
-      u: unsaid(pressure) ? policy.defaultUncertainty.pressureRelative : pressure.u / pressure.value,
+      u: uStated(pressure, false) / pressure.value,
       place: `p over ${phase}`,
     });
   });
   return data;
-}
-
-/** Nothing but its digits says how well it is known; beside another source's numbers that is not all there is to it. */
-function unsaid(datum: Datum): boolean {
-  return datum.origin === 'printed digits';
 }

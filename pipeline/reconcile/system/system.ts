@@ -1,11 +1,11 @@
 import type { CheckedCase } from '../../../schemas/checked.js';
 import type { PhaseCurve } from '../../../schemas/curves.js';
 import type { Anchor, Datum, HarmonisedCase } from '../../../schemas/harmonised.js';
-import type { Policy } from '../../../schemas/policy.js';
 import { numbers } from '../../core/numeric/room.js';
 import { equilibrium } from '../../core/physics/equilibrium.js';
 import type { LevelOrigin, UncertainCurve } from '../../core/physics/error-sum.js';
 import { addCrossCovariance } from '../../core/physics/rows-covariance.js';
+import { uStated } from '../../core/physics/stated-u.js';
 import {
   anchorConditions,
   atTemperature,
@@ -43,7 +43,7 @@ export interface ConditionSystem {
   readonly substance: HarmonisedCase;
 }
 
-export function systemOf(checked: CheckedCase, isobarPa: number | null, policy: Policy): ConditionSystem {
+export function systemOf(checked: CheckedCase, isobarPa: number | null): ConditionSystem {
   const { assembled } = checked;
   const substance = assembled.examined.harmonised;
   const { curves } = assembled;
@@ -60,8 +60,8 @@ export function systemOf(checked: CheckedCase, isobarPa: number | null, policy: 
     ...saturationConditions(saturated),
   ];
   const uOfAnchor = (key: string, anchor: Anchor, datum: Datum): number =>
-    levelU(curves, key) ?? apartU(curves, anchor, datum, key, policy);
-  const stated = statedData(substance, isobarPa, isobarOf, joined, saturated, uOfAnchor, policy);
+    levelU(curves, key) ?? apartU(curves, anchor, datum);
+  const stated = statedData(substance, isobarPa, isobarOf, joined, saturated, uOfAnchor);
   const m = conditions.length;
   const y = Float64Array.from(conditions, (c) => c.value);
   const q = new Float64Array(m * m);
@@ -116,16 +116,11 @@ function levelU(curves: readonly PhaseCurve[], key: string): number | null {
   return null;
 }
 
-/**
- * Of an anchor that no level rests on: the rounding within one evaluated source, else what is stated; and where only the
- * digits of another source speak, what the policy takes for a measured one.
- */
-function apartU(curves: readonly PhaseCurve[], anchor: Anchor, datum: Datum, key: string, policy: Policy): number {
+/** Of an anchor that no level rests on: the rounding within one evaluated source, else what it has beside another's. */
+function apartU(curves: readonly PhaseCurve[], anchor: Anchor, datum: Datum): number {
   const curve = curves.find((c) => c.phase === anchor.phase && c.family.isobarPa === anchor.table.isobarPa);
   const own = curve === undefined || curve.sources.every((s) => s === anchor.table.source);
-  if (own) return anchor.table.basis === 'evaluated' ? datum.uRounding : datum.u;
-  if (datum.origin !== 'printed digits' || datum.uRounding === 0) return datum.u;
-  return Math.hypot(datum.u, defaultU(key, datum.value, policy));
+  return own ? uStated(datum, anchor.table.basis === 'evaluated') : uStated(datum, false);
 }
 
 /** B diag(rows) B^T: what the tables' own errors do, each curve at each temperature once. */
@@ -240,19 +235,4 @@ function isNegligible(direction: Float64Array, conditions: readonly Condition[])
     if (Math.abs(direction[i]) > size) return false;
   }
   return true;
-}
-
-function defaultU(key: string, value: number, { defaultUncertainty: u }: Policy): number {
-  switch (key.split(' ')[0]) {
-    case 'H':
-      return u.enthalpyOfFormationJPerMol;
-    case 'S':
-      return u.entropyRelative * Math.abs(value);
-    case 'H0':
-      return u.enthalpyIncrementRelative * Math.abs(value);
-    case 'Cp':
-      return u.heatCapacityRelative * Math.abs(value);
-    default:
-      return 0;
-  }
 }
