@@ -1,7 +1,7 @@
-import type { CurveFamily, LevelOrigin, PhaseCurve } from '../../schemas/curves.js';
+import type { CurveFamily, LevelError, LevelOrigin, PhaseCurve } from '../../schemas/curves.js';
 import type { Anchor, Datum, HarmonisedCase, StatedTransition } from '../../schemas/harmonised.js';
 import { R_J_PER_MOL_K } from '../core/constants.js';
-import { type CurveArrays, enthalpyAt, entropyAt } from '../core/physics/curve.js';
+import { type CurveArrays, enthalpyAt, entropyAt, heatCapacityAt } from '../core/physics/curve.js';
 import { datumKey } from '../core/physics/datum-keys.js';
 import { departure } from '../core/physics/equilibrium.js';
 import { imperfection } from '../core/physics/imperfection-error.js';
@@ -91,9 +91,11 @@ function carry(
             { key: datumKey.entropy(index), by: by * temperatureK, u: uOf(stated.entropy as Datum) },
             { key: datumKey.temperature(index), by: by * (stated.entropy as Datum).value, u: uT },
           ];
+    // The two are joined at the stated temperature: with another one by the heat capacities between.
+    errors.push({ key: datumKey.temperature(index), by: scale * a.cp - b.cp, u: uT });
     errors.push(...imperfection(b.uGas - scale * a.uGas, -1, 0, temperatureK));
     target.hOrigin = { ...origin, errors };
-    target.uH = Math.hypot(scale * source.uH, ...errors.map((e) => e.by * e.u));
+    target.uH = Math.hypot(scale * source.uH, ...sums(errors));
     target.hFrom = 'transition';
     target.hThrough = index;
   }
@@ -107,6 +109,7 @@ function carry(
             { key: datumKey.enthalpy(index), by: by / temperatureK, u: uOf(stated.enthalpy as Datum) },
             { key: datumKey.temperature(index), by: (-by * dS) / temperatureK, u: uT },
           ];
+    errors.push({ key: datumKey.temperature(index), by: (scale * a.cp - b.cp) / temperatureK, u: uT });
     const byPressure = b.byPressure - scale * a.byPressure;
     if (byPressure !== 0 && stated.pressure !== null && stated.pressurePa > 0) {
       const { u, value } = stated.pressure;
@@ -114,7 +117,7 @@ function carry(
     }
     errors.push(...imperfection(b.uGas - scale * a.uGas, 0, -1, temperatureK));
     target.sOrigin = { ...origin, errors };
-    target.uS = Math.hypot(scale * source.uS, ...errors.map((e) => e.by * e.u));
+    target.uS = Math.hypot(scale * source.uS, ...sums(errors));
     target.sFrom = 'transition';
     target.sThrough = index;
   }
@@ -124,6 +127,7 @@ function carry(
 interface Placed {
   readonly h: number;
   readonly s: number;
+  readonly cp: number;
   readonly units: number;
   /** dS/d ln p. */
   readonly byPressure: number;
@@ -144,10 +148,18 @@ function atPressure(shape: PhaseShape, stated: StatedTransition, { zeros, substa
   return {
     h: enthalpyAt(arrays, temperatureK) + enthalpy,
     s: entropyAt(arrays, temperatureK) + entropy,
+    cp: heatCapacityAt(arrays, temperatureK),
     units: gas ? (substance.substance.vapourSpecies?.formulaUnits ?? 1) : 1,
     byPressure: term === null ? 0 : -R_J_PER_MOL_K,
     uGas: term === null ? 0 : term.u(temperatureK),
   };
+}
+
+/** Standard errors by datum, what one datum adds twice taken together. */
+function sums(errors: readonly LevelError[]): number[] {
+  const by = new Map<string, number>();
+  for (const { key, by: share, u } of errors) by.set(key, (by.get(key) ?? 0) + share * u);
+  return [...by.values()];
 }
 
 export function relative(shape: PhaseShape): CurveArrays {

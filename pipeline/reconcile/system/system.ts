@@ -89,19 +89,57 @@ export interface Resolved {
 export function resolvedAt(system: ConditionSystem, datum: ConditionDatum): Resolved | null {
   if (datum.kind !== 'temperature') return null;
   const k = system.joined.findIndex((j) => j.judged.index === datum.transition);
-  const crossingK = system.joined[k]?.judged.computedK ?? null;
-  if (crossingK === null) return null;
   const j = system.joined[k];
-  const { stated } = j.judged;
-  const there = equilibrium(j.from, j.to, crossingK);
+  if (j === undefined) return null;
+  const { stated, computedK } = j.judged;
+  if (j.carriesH !== j.carriesS) return resolvedThrough(system, datum, j);
+  if (computedK === null) return null;
+  const there = equilibrium(j.from, j.to, computedK);
   const dS = stated.entropy?.value ?? 0;
   const own = (c: Condition): boolean => c.joined === k;
   return {
-    value: crossingK,
-    y: Float64Array.from(system.conditions, (c) => (own(c) ? atTemperature(c, there, crossingK, stated) : c.value)),
+    value: computedK,
+    y: Float64Array.from(system.conditions, (c) => (own(c) ? atTemperature(c, there, computedK, stated) : c.value)),
     direction: Float64Array.from(system.conditions, (c, i) =>
-      own(c) ? slopeAtTemperature(c, there, crossingK, dS) : datum.direction[i],
+      own(c) ? slopeAtTemperature(c, there, computedK, dS) : datum.direction[i],
     ),
+  };
+}
+
+/**
+ * Where one level was carried through the transition itself, it moves with the temperature: G is equal where the stated dH is
+ * T dS of the curves, or dH of the curves T times the stated dS. By Newton's method from the stated temperature.
+ */
+function resolvedThrough(system: ConditionSystem, datum: ConditionDatum, j: Joined): Resolved | null {
+  const { enthalpy, entropy } = j.judged.stated;
+  const low = Math.max(j.from.lowK, j.to.lowK);
+  const high = Math.min(j.from.highK, j.to.highK);
+  let t = j.atK;
+  let slope = 0;
+  for (let step = 0; step < 20; step++) {
+    const { enthalpyJPerMol: dH, entropyJPerMolK: dS, heatCapacityJPerMolK: dCp } = equilibrium(j.from, j.to, t);
+    let gap: number;
+    if (j.carriesH) {
+      if (enthalpy === null) return null;
+      gap = enthalpy.value - t * dS;
+      slope = -dS - dCp;
+    } else {
+      const stated = entropy?.value ?? (enthalpy === null ? null : enthalpy.value / t);
+      if (stated === null) return null;
+      gap = dH - t * stated;
+      slope = entropy === null ? dCp : dCp - stated;
+    }
+    if (slope === 0) return null;
+    const next = Math.min(high, Math.max(low, t - gap / slope));
+    if (Math.abs(next - t) < 1e-9 * t) break;
+    t = next;
+  }
+  const k = system.joined.indexOf(j);
+  const isGap = (c: Condition): boolean => c.joined === k && c.kind === 'gap';
+  return {
+    value: t,
+    y: Float64Array.from(system.conditions, (c) => (isGap(c) ? 0 : c.value)),
+    direction: Float64Array.from(system.conditions, (c, i) => (isGap(c) ? slope : datum.direction[i])),
   };
 }
 
