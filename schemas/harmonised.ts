@@ -93,6 +93,9 @@ export interface StatedTransition {
   readonly table: TableMeaning;
   readonly from: string;
   readonly to: string;
+  /** What the cells of the two phases say, before corrections; null where a constant gives the phase. */
+  readonly printedFrom: string | null;
+  readonly printedTo: string | null;
   readonly order: 'first' | 'continuous' | 'glass';
   /** `real`: a measured boiling or sublimation point; `ideal`: fugacity equals the pressure; null where no gas is involved. */
   readonly gas: 'real' | 'ideal' | null;

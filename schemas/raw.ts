@@ -68,6 +68,8 @@ export interface RawRow {
   readonly line: number;
   readonly cells: Readonly<Partial<Record<NumberQuantity, RawCell>>>;
   readonly words: Readonly<Partial<Record<TextQuantity, string>>>;
+  /** The cells of the phases of a transition as printed, before corrections; none where a constant gives the phase. */
+  readonly printedPhases?: { readonly from: string | null; readonly to: string | null };
 }
 
 export interface RawCase {

@@ -65,6 +65,8 @@ export function harmoniseTransition(
     table,
     from,
     to,
+    printedFrom: row.printedPhases?.from ?? null,
+    printedTo: row.printedPhases?.to ?? null,
     order: order ?? 'first',
     gas: withGas ? (gas ?? 'real') : null,
     pressurePa: pressure?.value ?? table.isobarPa ?? table.standardPressurePa,

@@ -2,7 +2,7 @@
 import type { NumberQuantity, TextQuantity } from '../../schemas/quantities.js';
 import type { RawCell, RawRow } from '../../schemas/raw.js';
 import { CONDENSED_WANTED, isGasLabel } from './phase.js';
-import type { IngestPart } from './plan.js';
+import type { IngestPart, WordFrom } from './plan.js';
 import type { RowReader } from './row-reader.js';
 import { readPhase, wordOf } from './row-words.js';
 import { neededNumbers } from './table-quantities.js';
@@ -31,7 +31,8 @@ export function readRows(part: IngestPart, reader: RowReader, id: string, runs: 
       const words = wordsOf(part, reader, id);
       const cells = readCells(part, reader);
       if (words === null || cells === null) continue;
-      rows.push({ table: plan.meaning, line: reader.line, cells, words });
+      const row = { table: plan.meaning, line: reader.line, cells, words };
+      rows.push(plan.meaning.holds === 'transitions' ? { ...row, printedPhases: printedPhases(part, reader) } : row);
     }
   }
   return rows;
@@ -89,6 +90,12 @@ function transitionWords(part: IngestPart, reader: RowReader, id: string): Words
       ...(hasGas ? { gas } : {}),
     };
   return null;
+}
+
+function printedPhases({ plan }: IngestPart, reader: RowReader): NonNullable<RawRow['printedPhases']> {
+  const printed = (from: WordFrom | undefined): string | null =>
+    from === undefined || 'constant' in from ? null : reader.printed(from.column);
+  return { from: printed(plan.words['from-phase']), to: printed(plan.words['to-phase']) };
 }
 
 function otherWords(part: IngestPart, reader: RowReader): Words {

@@ -47,15 +47,16 @@ export function saySuspects(suspects: readonly Suspect[]): string[] {
   const ordered = [...suspects].sort((a, b) => a.place - b.place);
   return ordered.flatMap((suspect, i) => {
     const role = i === 0 ? 'suspect' : ordered[i - 1]!.group === suspect.group ? 'or' : 'and';
-    const line = `${role}: ${saySuspect(suspect)}; ${closesAt(suspect)}`;
+    const line = `${role}: ${saySuspect(suspect)}${closesAt(suspect)}`;
     const ends = ordered[i + 1]?.group !== suspect.group;
     return ends && suspect.toldApartBy !== null ? [line, `told apart by: ${suspect.toldApartBy}`] : [line];
   });
 }
 
-/** What the rest of the data put there, in SI. */
-function closesAt({ proposed, uProposed, unit }: Suspect): string {
-  return `the rest puts it at ${plusMinus(proposed, uProposed)} ${unitInWords(unit)}`;
+/** What the rest of the data put there, in SI; nothing of a phase, which is no number. */
+function closesAt({ explanation, observed, proposed, uProposed, unit }: Suspect): string {
+  if (explanation === 'from-and-to-exchanged' && proposed === observed) return '';
+  return `; the rest puts it at ${plusMinus(proposed, uProposed)} ${unitInWords(unit)}`;
 }
 
 /**
@@ -176,6 +177,7 @@ const PLACES: Readonly<Record<string, string>> = {
   T: 'the temperature',
   dH: 'the enthalpy',
   dS: 'the entropy',
+  from: 'the first phase',
   dfH: 'the formation enthalpy',
   dfG: 'the Gibbs energy of formation',
   S: 'the entropy',

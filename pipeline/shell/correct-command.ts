@@ -14,6 +14,7 @@ import {
   valuesToTry,
   withCorrection,
 } from './correction-entry.js';
+import { refuseExchange } from './exchange-remedy.js';
 import { EXIT, type ExitStatus, Stop } from './exit-status.js';
 import { type FoundFinding, findFinding, listFindings } from './find-finding.js';
 import { withEntry, writeAtomically } from './json-list.js';
@@ -31,6 +32,7 @@ export async function correct(request: Request, log: Log, ask: Ask = askOnTermin
   const { finding, before } = found;
   const suspects = suspectsToCorrect(found);
   const suspect = chosenSuspect(suspects, request);
+  refuseExchange(found, suspect, request);
   refuseWholeColumn(found, suspect, request.sources);
   const { planned, after, first } = bestOf(request, found, suspect);
   refuseUnreadable(after, suspect.address, planned);

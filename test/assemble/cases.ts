@@ -178,6 +178,8 @@ export function transitionOf(
     table: tableOf({ holds: 'transitions', file: 'transitions.csv', ...table }),
     from,
     to,
+    printedFrom: from,
+    printedTo: to,
     order: values.order ?? 'first',
     gas: values.gas ?? null,
     pressurePa: values.pressurePa ?? 100000,

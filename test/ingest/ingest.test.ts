@@ -342,6 +342,7 @@ describe('transitions', () => {
     const [melting, boiling, glass, curie] = cases[0]!.transitions;
     expect(melting).toMatchObject({ line: 2, words: { 'from-phase': 'cr', 'to-phase': 'l', order: 'first' } });
     expect(melting!.words.gas).toBeUndefined();
+    expect(melting!.printedPhases).toEqual({ from: 'cr', to: 'l' });
     expect(melting!.cells.pressure).toMatchObject({ column: -1, value: 101325, printed: '1 atm', uncertainty: null });
     expect(melting!.cells['transition-temperature']).toMatchObject({
       value: 600.6,

@@ -153,6 +153,8 @@ export const stated: StatedTransition = {
   table: TABLE,
   from: 'cr',
   to: 'l',
+  printedFrom: 'cr',
+  printedTo: 'l',
   order: 'first',
   gas: null,
   pressurePa: 100000,

@@ -577,6 +577,15 @@ describe('the reason why a substance is withheld', () => {
     ]);
   });
 
+  it('says no number of a phase that is exchanged', () => {
+    const one = { ...cell(root.id, 1, 1, 'From'), cells: 2, printed: 'LIQUID', proposedPrinted: 'CRYSTAL' };
+    const code = 'from-and-to-exchanged';
+    const phase = { ...one, explanation: code, explainedPrinted: 'CRYSTAL', proposed: one.observed };
+    expect(saySuspects([phase])).toEqual([
+      `suspect: mill-lab/points.csv:412 From and 1 more, the first says LIQUID, probably CRYSTAL (${EXPLANATIONS[code]}?)`,
+    ]);
+  });
+
   it('says after a group what would tell its members apart', () => {
     const apart = (place: number, group: number, column: string) => ({
       ...cell(root.id, place, group, column),

@@ -19,11 +19,11 @@ export function exchangedPairs(system: ConditionSystem): WholeSlip[] {
     const cell = phaseCell(size, system);
     slips.push({
       code: 'from-and-to-exchanged',
-      cells: 2,
+      cells: cell === size ? sizes.length : 2,
       data: [cell, ...sizes],
       corrected: cell === size ? -size.datum.value : size.datum.value,
       uCorrected: size.u,
-      correctedPrinted: cell === size ? printedLike(size.datum.printed, -numberOf(size)) : stated.to,
+      correctedPrinted: cell === size ? printedLike(size.datum.printed, -numberOf(size)) : (stated.printedTo ?? ''),
       change: reversed,
       open: false,
       weight: 0.04,
@@ -40,7 +40,7 @@ export function exchangedPairs(system: ConditionSystem): WholeSlip[] {
       data: [dH, dS],
       corrected: meantH,
       uCorrected: Math.abs((dS.u / dS.datum.factor) * dH.datum.factor),
-      correctedPrinted: printedLike(dS.datum.printed, numberOf(dS)),
+      correctedPrinted: dS.datum.printed,
       change: swapped,
       open: false,
       weight: 0.04,
@@ -53,14 +53,15 @@ function numberOf({ datum }: ConditionDatum): number {
   return (datum.value - datum.offset) / datum.factor;
 }
 
-/** The transition's first phase as a cell of its own: what would be exchanged; the size itself where no column names it. */
+/** The cell of the transition's first phase: what would be exchanged; the size itself where no columns name the phases. */
 function phaseCell(size: ConditionDatum, system: ConditionSystem): ConditionDatum {
   const { stated } = system.joined.find((j) => j.judged.index === size.transition)!.judged;
   const column = stated.table.columns.find((c) => c.is === 'from-phase');
-  if (column === undefined) return size;
+  if (column === undefined || stated.printedFrom === null || stated.printedTo === null) return size;
   return {
     ...size,
-    datum: { ...size.datum, address: { ...size.datum.address, column: column.header }, printed: stated.from },
+    place: size.place.replace(/^\S+/, 'from'),
+    datum: { ...size.datum, address: { ...size.datum.address, column: column.header }, printed: stated.printedFrom },
   };
 }
 
