@@ -46,7 +46,10 @@ function checkCase(assembled: AssembledCase, policy: Policy): CheckedCase {
     findings.push(...rises.findings, ...jumps.findings);
   });
   const views = transitionViews(assembled);
-  const limits = thresholds(policy, testCount(views.length, harmonised.anchors.length));
+  const limits = thresholds(
+    policy,
+    testCount(views.length, harmonised.anchors.length, harmonised.vapourPressures.length),
+  );
   const judged: JudgedTransition[] = [];
   for (const view of views) {
     const results = TRANSITION_RULES.map((rule) => rule({ substance, view, policy, limits }));

@@ -152,8 +152,26 @@ function severityOf(
   policy: Policy,
 ): Severity {
   const error = Math.abs(first.of.datum.value - first.proposed);
-  const large = first.whole !== null || error > materialOf(first.of, system, policy);
+  const large =
+    first.whole === null || first.whole.open
+      ? error > materialOf(first.of, system, policy)
+      : isLargeChange(first.whole.change, system, policy);
   return Math.abs(first.w) > critical.fault && large ? 'fault' : 'doubt';
+}
+
+/** Undoing a slip of many numbers moves a condition by what a user would notice there. */
+function isLargeChange(change: Float64Array, { conditions, joined }: ConditionSystem, { material }: Policy): boolean {
+  return conditions.some(({ kind, joined: k }, i) => {
+    const { entropyJPerMolK: dS = 0 } = joined[k]?.at ?? {};
+    const gap = material.transitionTemperatureK * Math.abs(dS);
+    const limit =
+      kind === 'entropy'
+        ? gap / (joined[k]?.atK ?? 1)
+        : kind === 'anchor-entropy'
+          ? material.entropyJPerMolK
+          : gap || material.enthalpyJPerMol;
+    return Math.abs(change[i]) > limit;
+  });
 }
 
 /** What a user of the release would notice, carried to the number in question [its SI unit]. */

@@ -57,7 +57,11 @@ export function withCauses(
   const numbers = new Map<string, number>();
   for (const group of groups) {
     const first = group.members[0];
-    const wanted = candidates(findings.filter(open), first.of, group.phases);
+    const wanted = candidates(
+      findings.filter((f) => open(f) && canBring(group, f, checked)),
+      first.of,
+      group.phases,
+    );
     const root = wanted.find((f) => !rooted.some((r) => r.finding === f)) ?? wanted[0] ?? rooted[0]?.finding;
     if (root === undefined) continue;
     const number = (numbers.get(root.id) ?? 0) + 1;
@@ -69,9 +73,9 @@ export function withCauses(
     if (!open(f) || rooted.some((r) => r.finding === f) || causeOf.has(f.id)) continue;
     const near =
       rooted.find((r) => isItsOwn(r, f)) ??
-      rooted.find((r) => explains(r, f)) ??
-      rooted.find((r) => touches(r, f)) ??
-      rooted[0];
+      rooted.find((r) => canBring(r.group, f, checked) && explains(r, f)) ??
+      rooted.find((r) => canBring(r.group, f, checked) && touches(r, f)) ??
+      rooted.find((r) => canBring(r.group, f, checked));
     if (near !== undefined) causeOf.set(f.id, near.finding.id);
   }
   // A curve made without a column that is named shows what it lacks.
@@ -92,6 +96,14 @@ export function withCauses(
     findings: findings.map((f) => (causeOf.has(f.id) ? { ...f, cause: causeOf.get(f.id) ?? null } : f)),
     groups: rooted,
   };
+}
+
+/** Whether the error shows where the finding was made: in that transition's conditions, in its own number, or in its phases. */
+function canBring(group: SuspectGroup, f: Finding, checked: CheckedCase): boolean {
+  if (f.detail.code === 'adjustment') return f.detail.place === group.members[0].of.place;
+  if (f.rule === 'lowest-curve-is-the-stated-phase' || f.toPhase === null) return touchesPhase(group.phases, f);
+  const { transitions } = checked.assembled.examined.harmonised;
+  return transitions.some((t, index) => t.from === f.fromPhase && t.to === f.toPhase && group.reaches.has(index));
 }
 
 function namesCells({ detail }: Finding): boolean {

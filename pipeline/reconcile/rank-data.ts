@@ -23,6 +23,8 @@ export interface SuspectGroup {
   readonly members: readonly RankedDatum[];
   /** Phases that the first of them bears on, through levels that rest on it too. */
   readonly phases: readonly string[];
+  /** Transitions whose conditions its error shows in: indices among the substance's. */
+  readonly reaches: ReadonlySet<number>;
   readonly before: number;
   readonly after: number;
   /** The measurement that would tell the first two apart. */
@@ -104,15 +106,60 @@ function nextGroup(
   }
   ranked.sort((a, b) => Math.abs(b.w) - Math.abs(a.w));
   const alone = ranked.length === 1 || !isNear(ranked[1], ranked[0]);
-  const suspected = ranked.filter((one, k) => !isNominal(one) || scoreOf(one, alone && k === 0) !== null);
+  const suspected = ranked.filter(
+    (one, k) => !isDefinition(one, system) && (!isNominal(one) || scoreOf(one, alone && k === 0) !== null),
+  );
   const [best] = suspected;
-  const near = (r: RankedDatum): boolean => isNear(r, best) && Math.abs(r.w) > threshold / 2;
+  if (best === undefined) return null;
+  const near = (r: RankedDatum): boolean =>
+    r === best || (isNear(r, best) && Math.abs(r.w) > threshold / 2 && pointsAlike(free, r, best));
   const members = ordered(suspected.filter(near), scoreOf);
-  return { members, phases: bearing(system, members[0].of), before, after: before - best.w * best.w };
+  const [first] = members;
+  return {
+    members,
+    phases: [...new Set((first.whole?.data ?? [first.of]).flatMap((d) => bearing(system, d)))],
+    reaches: reached(system, first),
+    before,
+    after: before - best.w * best.w,
+  };
 }
 
 function isNear({ w }: RankedDatum, best: RankedDatum): boolean {
   return best.w * best.w - w * w < ONE_GROUP + ROUNDING * best.w * best.w;
+}
+
+/** Two numbers that the conditions cannot tell apart move them in nearly the same way. */
+function pointsAlike(free: FreeData, one: RankedDatum, other: RankedDatum): boolean {
+  if (one.whole !== null || other.whole !== null) return true;
+  const a = free.reduced(one.of.direction);
+  const b = free.reduced(other.of.direction);
+  let ab = 0;
+  let aa = 0;
+  let bb = 0;
+  for (let i = 0; i < a.length; i++) {
+    ab += a[i] * b[i];
+    aa += a[i] * a[i];
+    bb += b[i] * b[i];
+  }
+  return ab * ab > LEAST_ALIKE * aa * bb;
+}
+
+/** An element's reference state has no formation enthalpy, by definition. */
+function isDefinition({ of, whole }: RankedDatum, { substance }: ConditionSystem): boolean {
+  const { value, halfUnit } = of.datum;
+  const element = /^[A-Z][a-z]?[0-9]*$/.test(substance.substance.formula ?? '');
+  return whole === null && of.kind === 'formation-enthalpy' && value === 0 && halfUnit === 0 && element;
+}
+
+/** Transitions in whose conditions the error is more than their own uncertainty. */
+function reached({ conditions, q, m }: ConditionSystem, { of, whole, proposed }: RankedDatum): Set<number> {
+  const found = new Set<number>();
+  const error = isPressure(of) ? Math.log(proposed / of.datum.value) : proposed - of.datum.value;
+  conditions.forEach(({ transition }, i) => {
+    const shows = whole === null ? of.direction[i] * error : whole.change[i];
+    if (transition >= 0 && Math.abs(shows) > Math.sqrt(q[i * m + i])) found.add(transition);
+  });
+  return found;
 }
 
 /** The pressure that a transition is stated at: a number that nobody measured. */
@@ -124,6 +171,8 @@ function bearing({ curves }: ConditionSystem, { key, phases }: ConditionDatum): 
   return [...new Set([...phases, ...curves.filter((c) => restsOn(c, key)).map((c) => c.phase)])];
 }
 
+/** Square of the cosine between two directions from which they count as alike; judgement. */
+const LEAST_ALIKE = 0.3;
 /** Of a very large chi square, differences below this share are rounding. */
 const ROUNDING = 1e-10;
 /** What a slip of many numbers may leave: this share of chi square, or so much a condition. */

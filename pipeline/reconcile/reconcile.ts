@@ -79,8 +79,8 @@ function reconcileCase(checked: CheckedCase, settings: ReconcileSettings, loose:
 /** The adjustment of each isobar's curves. */
 function solvedOf(checked: CheckedCase, policy: Policy): Adjusted[] {
   const { curves, examined } = checked.assembled;
-  const { transitions, anchors } = examined.harmonised;
-  const tests = testCount(transitions.length, anchors.length);
+  const { transitions, anchors, vapourPressures } = examined.harmonised;
+  const tests = testCount(transitions.length, anchors.length, vapourPressures.length);
   const isobars = new Set<number | null>([null, ...curves.map((c) => c.family.isobarPa)]);
   return [...isobars].map((isobar) => adjusted(systemOf(checked, isobar), tests, policy));
 }

@@ -20,7 +20,8 @@ export function wouldHelp(d: StatedDatum, system: ConditionSystem): string {
       return `a heat-capacity table of ${phase} and ${other} that reaches the stated temperature`;
     return `a formation enthalpy and an entropy of ${phase} or ${other} that do not rest on this transition`;
   }
-  if (d.kind === 'formation-gibbs-energy') return 'reference data of the elements';
+  if (d.kind === 'formation-gibbs-energy')
+    return 'the Gibbs energy of formation of another phase, or reference data of the elements';
   if (curve(phase) === undefined) return `a heat-capacity table of ${phase}`;
   switch (d.kind) {
     case 'anchor-entropy':

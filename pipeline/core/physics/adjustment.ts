@@ -31,10 +31,10 @@ export const NON_CENTRALITY = 4.13;
 
 /**
  * Tests that one substance shares its alpha over: of each transition the three rules and the three stated numbers, of each
- * anchor its two, the order of the phases, and the whole.
+ * anchor its two, of each vapour pressure one (its T and its p are one test), the order of the phases, and the whole.
  */
-export function testCount(transitions: number, anchors: number): number {
-  return 6 * transitions + 2 * anchors + 2;
+export function testCount(transitions: number, anchors: number, vapourPressures: number): number {
+  return 6 * transitions + 2 * anchors + vapourPressures + 2;
 }
 
 /** A condition whose own part of its variance is below this share repeats the others: rounding leaves some 1e-16. */

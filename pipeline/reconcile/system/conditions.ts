@@ -1,7 +1,7 @@
 import type { PhaseCurve } from '../../../schemas/curves.js';
 import type { Anchor, Datum, HarmonisedCase, StatedTransition } from '../../../schemas/harmonised.js';
 import { R_J_PER_MOL_K } from '../../core/constants.js';
-import { enthalpyAt, entropyAt, heatCapacityAt, intervalOf } from '../../core/physics/curve.js';
+import { enthalpyAt, entropyAt, gibbsAt, heatCapacityAt, intervalOf } from '../../core/physics/curve.js';
 import { datumKey } from '../../core/physics/datum-keys.js';
 import { ErrorSum } from '../../core/physics/error-sum.js';
 import { imperfection } from '../../core/physics/imperfection-error.js';
@@ -17,6 +17,7 @@ export type ConditionKind =
   | 'anchor-entropy'
   | 'from-zero'
   | 'heat-capacity'
+  | 'formation'
   | 'saturation';
 
 /** One value that should vanish, with all that its error is made of. */
@@ -175,6 +176,38 @@ export function anchorConditions(
     }
   });
   return conditions;
+}
+
+/** Between two phases the elements cancel: the difference of their Gibbs energies of formation is that of their curves. */
+export function formationConditions(
+  substance: HarmonisedCase,
+  curves: readonly PhaseCurve[],
+  isobarPa: number | null,
+): Condition[] {
+  const stated = substance.anchors.flatMap((anchor, index) => {
+    const { gibbsEnergyOfFormation: datum, phase, table, referenceTemperatureK: t } = anchor;
+    const curve = curves.find((c) => c.phase === phase && c.family.isobarPa === isobarPa);
+    if (datum === null || table.isobarPa !== isobarPa || curve === undefined) return [];
+    const reaches = t >= curve.measuredFromK && t <= curve.measuredToK;
+    if (!curve.hasEnthalpyLevel || !curve.hasEntropyLevel || !reaches) return [];
+    return [{ curve, datum, index, t, source: table.source, evaluated: table.basis !== 'measured' }];
+  });
+  const [first, ...others] = stated;
+  return others
+    .filter(({ t }) => t === first.t)
+    .map(({ curve, datum, index, t, source, evaluated }) => ({
+      kind: 'formation',
+      joined: -1,
+      transition: -1,
+      value: datum.value - first.datum.value - (gibbsAt(curve, t) - gibbsAt(first.curve, t)),
+      sum: new ErrorSum()
+        .add(curve, t, -1, t)
+        .add(first.curve, t, 1, -t)
+        .addDatum(datumKey.formationGibbsEnergy(index), 1, 0)
+        .addDatum(datumKey.formationGibbsEnergy(first.index), -1, 0),
+      variance: 0,
+      within: evaluated && [...curve.sources, ...first.curve.sources, first.source].every((s) => s === source),
+    }));
 }
 
 /** h H + s S of `to` less that of `from`, each per formula unit. */

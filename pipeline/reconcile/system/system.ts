@@ -11,6 +11,7 @@ import {
   atTemperature,
   type Condition,
   closureConditions,
+  formationConditions,
   saturationConditions,
   slopeAtTemperature,
   transitionConditions,
@@ -57,6 +58,7 @@ export function systemOf(checked: CheckedCase, isobarPa: number | null): Conditi
     ...transitionConditions(joined),
     ...closureConditions(substance.transitions, (transition) => isobarOf(transition) === isobarPa, joined),
     ...anchorConditions(substance, curves, isobarPa),
+    ...formationConditions(substance, curves, isobarPa),
     ...saturationConditions(saturated),
   ];
   const uOfAnchor = (key: string, anchor: Anchor, datum: Datum): number =>
