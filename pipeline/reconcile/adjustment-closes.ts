@@ -1,9 +1,12 @@
 import type { Finding, Outcome, Severity } from '../../schemas/finding.js';
 import { makeFinding } from '../../schemas/make-finding.js';
 import type { Policy } from '../../schemas/policy.js';
+import { REFERENCE_TEMPERATURE_K } from '../core/constants.js';
 import { chiSquareTail } from '../core/numeric/chi-square.js';
 import { sidakThreshold, upperTail } from '../core/numeric/normal.js';
 import { type DatumTest, FreeData, type Whitened, whitened } from '../core/physics/adjustment.js';
+import { datumKey } from '../core/physics/datum-keys.js';
+import { noticeablePressurePa } from './noticeable-pressure.js';
 import type { RankedDatum, SuspectGroup } from './rank-data.js';
 import { isPressure } from './system/stated-data.js';
 import type { ConditionDatum, ConditionSystem } from './system/system.js';
@@ -154,7 +157,7 @@ function severityOf(
   const error = Math.abs(first.of.datum.value - first.proposed);
   const large =
     first.whole === null || first.whole.open
-      ? error > materialOf(first.of, system, policy)
+      ? error > noticeableError(first.of, system, policy)
       : isLargeChange(first.whole.change, system, policy);
   return Math.abs(first.w) > critical.fault && large ? 'fault' : 'doubt';
 }
@@ -175,7 +178,7 @@ function isLargeChange(change: Float64Array, { conditions, joined }: ConditionSy
 }
 
 /** What a user of the release would notice, carried to the number in question [its SI unit]. */
-export function materialOf(d: ConditionDatum, system: ConditionSystem, policy: Policy): number {
+function noticeableError(d: ConditionDatum, system: ConditionSystem, policy: Policy): number {
   const { material } = policy;
   const own = Math.abs(d.datum.value);
   const k = system.joined.find((j) => j.judged.index === d.transition);
@@ -201,10 +204,16 @@ export function materialOf(d: ConditionDatum, system: ConditionSystem, policy: P
       return material.heatCapacityRelative * own;
     case 'saturation-pressure':
     case 'transition-pressure':
-      return material.heatCapacityRelative * own;
+      return noticeablePressurePa(own, pressureAtK(d, system), policy);
     default:
       return material.enthalpyJPerMol;
   }
+}
+
+/** The temperature that a pressure is stated at [K]. */
+function pressureAtK({ key, transition }: ConditionDatum, { saturated, substance }: ConditionSystem): number {
+  const over = saturated.find(({ index }) => datumKey.saturationPressure(index) === key);
+  return over?.atK ?? substance.transitions[transition]?.temperature.value ?? REFERENCE_TEMPERATURE_K;
 }
 
 function placeOf(d: ConditionDatum): { fromPhase: string; toPhase: string | null; transition: string } {

@@ -4,6 +4,7 @@ import type { HarmonisedCase } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import type { NumberQuantity } from '../../schemas/quantities.js';
 import { DIGIT_CODES, type Explanation, explain, isNominal, outside, type SuspectContext } from './explain.js';
+import { noticeablePressurePa } from './noticeable-pressure.js';
 import { unknownScore } from './slips/unknown-error.js';
 import { suspectContext } from './suspect-context.js';
 import { usualSize } from './usual-size.js';
@@ -34,7 +35,7 @@ function explanationsIn(
   { proposed, uProposed }: Pick<Suspect, 'proposed' | 'uProposed'>,
   policy: Policy,
 ): readonly Explanation[] {
-  return explain(found, proposed, uProposed, materialOf(found, proposed, policy));
+  return explain(found, proposed, uProposed, noticeableChange(found, proposed, policy));
 }
 
 /** Findings that name a cell take their first suspect's explanation. */
@@ -82,8 +83,8 @@ const WRONG_ZERO_SHARE = 0.02;
 const isFormation = (quantity: NumberQuantity): boolean =>
   quantity === 'enthalpy-of-formation' || quantity === 'gibbs-energy-of-formation';
 
-/** What a user of the value would notice. */
-function materialOf(context: SuspectContext, proposed: number, policy: Policy): number {
+/** What a user of the proposed value would notice, by the cell's quantity [SI]. */
+function noticeableChange(context: SuspectContext, proposed: number, policy: Policy): number {
   const { material } = policy;
   const t = context.temperatureK ?? 298.15;
   switch (context.quantity) {
@@ -99,8 +100,7 @@ function materialOf(context: SuspectContext, proposed: number, policy: Policy): 
     case 'gibbs-function':
       return material.entropyJPerMolK;
     case 'pressure':
-      // By Trouton's rule, dS = 88 J/(mol K): dp/p = (dS/R) dT/T.
-      return (10.6 * material.transitionTemperatureK * Math.abs(proposed)) / t;
+      return noticeablePressurePa(proposed, t, policy);
     default:
       return material.enthalpyJPerMol;
   }
