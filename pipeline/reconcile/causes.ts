@@ -101,7 +101,9 @@ export function withCauses(
 /** Whether the error shows where the finding was made: in that transition's conditions, in its own number, or in its phases. */
 function canBring(group: SuspectGroup, f: Finding, checked: CheckedCase): boolean {
   if (f.detail.code === 'adjustment') return f.detail.place === group.members[0].of.place;
-  if (f.rule === 'lowest-curve-is-the-stated-phase' || f.toPhase === null) return touchesPhase(group.phases, f);
+  // Curves show only what they rest on.
+  if (f.rule === 'lowest-curve-is-the-stated-phase' || f.toPhase === null)
+    return group.reaches.size > 0 && touchesPhase(group.phases, f);
   const { transitions } = checked.assembled.examined.harmonised;
   return transitions.some((t, index) => t.from === f.fromPhase && t.to === f.toPhase && group.reaches.has(index));
 }

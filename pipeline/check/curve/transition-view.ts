@@ -58,6 +58,19 @@ function viewOf(
   const place = `${stated.from}>${stated.to}${isobarPa === null ? '' : ` at ${isobarPa} Pa`}`;
   const temperatureK = stated.temperature.value;
   const base = { stated, index, place, fromCurve, toCurve };
+  if (stated.table.basis === 'estimated') {
+    return {
+      ...base,
+      pair: null,
+      missing: 'a measured or evaluated transition: an estimate witnesses nothing',
+      byConstruction: false,
+      carriesH: false,
+      carriesS: false,
+      crossing: null,
+      uStatedK: stated.temperature.u,
+      evidence: 'independent',
+    };
+  }
   if (!(stated.pressurePa > 0)) {
     return {
       ...base,

@@ -134,7 +134,7 @@ export function anchorConditions(
 ): Condition[] {
   const conditions: Condition[] = [];
   substance.anchors.forEach((anchor, index) => {
-    if (anchor.table.isobarPa !== isobarPa) return;
+    if (anchor.table.isobarPa !== isobarPa || anchor.table.basis === 'estimated') return;
     const curve = curves.find((c) => c.phase === anchor.phase && c.family.isobarPa === isobarPa);
     if (curve === undefined) return;
     const t = anchor.referenceTemperatureK;
