@@ -1,10 +1,11 @@
 /** What the conditions of many draws of one experiment leave open, with the tests of each stated number. */
 import { adjusted } from '../../pipeline/reconcile/adjustment-closes.js';
+import { isPressure } from '../../pipeline/reconcile/system/stated-data.js';
 import { systemOf } from '../../pipeline/reconcile/system/system.js';
 import type { ReconciledCase } from '../../schemas/checked.js';
 import { policySchema } from '../../schemas/policy.js';
 import { column, type Matrix, product, solved, transposed } from '../core/numeric/dense.js';
-import type { Design } from '../synthetic/design.js';
+import { type Design, WHICH } from '../synthetic/design.js';
 import type { Truth } from '../synthetic/truth.js';
 import { reconcileDraws } from './draws.js';
 
@@ -39,7 +40,7 @@ export function misclosures(design: Design, truth: Truth, draws: number, seed: n
       seen.set(d.place, again + 1);
       const place = again === 0 ? d.place : `${d.place} ${again + 1}`;
       w.set(place, [...(w.get(place) ?? []), test.w]);
-      const size = d.kind === 'saturation-pressure' ? d.datum.value * Math.expm1(test.smallestDetectable) : null;
+      const size = isPressure(d) ? d.datum.value * Math.expm1(test.smallestDetectable) : null;
       if (!smallest.has(place)) smallest.set(place, size ?? test.smallestDetectable);
     });
   });
@@ -72,6 +73,46 @@ export function without(design: Design, file: string, which: (row: readonly stri
           if (name !== file || !which(row)) task.write(source, name, row);
         },
       }),
+  };
+}
+
+/**
+ * The design with two more kinds of number, each of stated u: the pressure of the boiling point (0.2 %), and Gibbs energies of
+ * formation of the crystal and the gas (200 J/mol), from elements of any entropy.
+ */
+export function withPressureAndGibbsEnergies(design: Design): Design {
+  const columns = {
+    ...WHICH,
+    dfG: { is: 'gibbs-energy-of-formation', unit: 'kJ/mol', uncertainty: { absolute: 0.2 } },
+  };
+  const pressure = { 'p/Pa': { is: 'pressure', unit: 'Pa', uncertainty: { relative: 0.002 } } };
+  const home = design.sources.find(({ tables }) => tables.some(({ file }) => file === 'anchors.csv'))!.id;
+  const sources = design.sources.map((source) => ({
+    ...source,
+    tables: [
+      ...source.tables.map((table) =>
+        table.file === 'transitions.csv' ? { ...table, columns: { ...table.columns, ...pressure } } : table,
+      ),
+      ...(source.id === home ? [{ file: 'gibbs-energies.csv', holds: 'anchors', columns }] : []),
+    ],
+  }));
+  return {
+    ...design,
+    sources,
+    fill: (task) => {
+      const { id, truth, pen, write } = task;
+      design.fill({
+        ...task,
+        write: (source, file, row) => {
+          if (file !== 'transitions.csv') return write(source, file, row);
+          return write(source, file, [...row, row[2] === 'g' ? pen.measured(1e5, 200) : '100000']);
+        },
+      });
+      for (const { label, formationEnthalpy, referenceEntropy } of [truth.phases[0]!, truth.phases.at(-1)!]) {
+        const gibbs = formationEnthalpy - 298.15 * (referenceEntropy - 120);
+        write(home, 'gibbs-energies.csv', [id, label, pen.measured(gibbs / 1000, 0.2)]);
+      }
+    },
   };
 }
 

@@ -8,7 +8,15 @@ import { chiSquareTail } from '../../pipeline/core/numeric/chi-square.js';
 import type { Design } from '../synthetic/design.js';
 import { type DesignName, designNamed } from '../synthetic/designs.js';
 import { drawTruth, type Truth } from '../synthetic/truth.js';
-import { type Misclosures, misclosures, moved, sampleCovariance, smallestDetectable, without } from './misclosures.js';
+import {
+  type Misclosures,
+  misclosures,
+  moved,
+  sampleCovariance,
+  smallestDetectable,
+  without,
+  withPressureAndGibbsEnergies,
+} from './misclosures.js';
 
 const DRAWS = 2000;
 /** Two-sided critical values of the normal law at 5 %, 1 % and 0.1 %. */
@@ -29,6 +37,11 @@ const wide = (p: number) => 3.5 * Math.sqrt((p * (1 - p)) / DRAWS);
 const atLowPressure = (design: Design): Design =>
   without(design, 'vapour-pressures.csv', (row) => Number(row[3]) > 5000);
 
+const designOf = (name: DesignName): Design => {
+  const design = atLowPressure(designNamed(name, true));
+  return name === 'vapour-pressures' ? withPressureAndGibbsEnergies(design) : design;
+};
+
 const SEED = 11;
 const experiments = new Map<string, Misclosures>();
 
@@ -36,7 +49,7 @@ const experiments = new Map<string, Misclosures>();
 function drawn(name: DesignName, kind: Truth['kind'], crystals: 1 | 2 | 3): Misclosures {
   const known = experiments.get(name);
   if (known !== undefined) return known;
-  const found = misclosures(atLowPressure(designNamed(name, true)), drawTruth(7, kind, crystals), DRAWS, SEED);
+  const found = misclosures(designOf(name), drawTruth(7, kind, crystals), DRAWS, SEED);
   experiments.set(name, found);
   return found;
 }
@@ -83,10 +96,12 @@ const KINDS = [
   ['S cr', 'anchors.csv', (row: readonly string[]) => row[1] === 'cr', 4, 1],
   ['T over l', 'vapour-pressures.csv', () => true, 2, 1],
   ['p over l', 'vapour-pressures.csv', () => true, 3, 1],
+  ['p l>g', 'transitions.csv', (row: readonly string[]) => row[2] === 'g', 9, 1],
+  ['dfG g', 'gibbs-energies.csv', (row: readonly string[]) => row[1] === 'g', 2, 1000],
 ] as const;
 
 describe('an error of the smallest detectable size', () => {
-  const design = atLowPressure(designNamed('vapour-pressures', true));
+  const design = designOf('vapour-pressures');
   const truth = drawTruth(7, 'ionic', 1);
   let clean: Misclosures;
   beforeAll(() => {
