@@ -96,7 +96,7 @@ const KINDS = [
   ['S cr', 'anchors.csv', (row: readonly string[]) => row[1] === 'cr', 4, 1],
   ['T over l', 'vapour-pressures.csv', () => true, 2, 1],
   ['p over l', 'vapour-pressures.csv', () => true, 3, 1],
-  ['p l>g', 'transitions.csv', (row: readonly string[]) => row[2] === 'g', 9, 1],
+  ['p l>g', 'transitions.csv', (row: readonly string[]) => row[2] === 'g', 10, 1],
   ['dfG g', 'gibbs-energies.csv', (row: readonly string[]) => row[1] === 'g', 2, 1000],
 ] as const;
 
