@@ -11,23 +11,13 @@ import { type Study, studyPublished, studySynthetic } from './slip-study.js';
 const REPORTING_SEED = 700_001;
 
 /**
- * What falls short of what is asked, with what is held instead. Causes: a transition that is left out is not missed; a slip
- * of scale in a whole table, or at 1 atm in a whole gas, is not seen as one; the second row from either end of a measured series is not tested; vapour pressures far off are
- * passed over; of two slips, what is proposed for one is pulled aside by the other.
+ * What falls short of the bench's own bar, with what is held instead. Causes: a gas table at 1 atm or in another unit that only
+ * an anchor stands against (either may be the wrong one); a real fluid's table whose neighbours are carried along; of two slips
+ * in one substance, one that only the other's number speaks of.
  */
 const SHORT: Readonly<Record<'published' | 'synthetic', Readonly<Record<string, number>>>> = {
-  published: {
-    'many cells at once: caught': 0.92,
-    'many cells at once: first': 0.84,
-  },
-  synthetic: {
-    'interior Cp cells of 1 % or more: caught': 0.94,
-    'interior Cp cells: first': 0.94,
-    'anchors and transitions: first, where alone in its group, or of unit, sign or exchange': 0.95,
-    'many cells at once: caught': 0.9,
-    'many cells at once: first': 0.86,
-    'two slips in one substance: both named first': 0.83,
-  },
+  published: { 'many cells at once: first': 0.92 },
+  synthetic: { 'two slips in one substance: both named first': 0.9 },
 };
 
 function expectHeld(study: Study, short: Readonly<Record<string, number>>): void {
