@@ -30,7 +30,7 @@ export function datumOf(row: RawRow, quantity: NumberQuantity, book: UnitBook, p
   return {
     value,
     u: Math.sqrt(variance),
-    ...beside(quantity, value, Math.sqrt(variance), origin, constant || defined, policy),
+    uBeside: beside(quantity, value, Math.sqrt(variance), origin, constant || defined, policy),
     uRounding,
     halfUnit,
     origin,
@@ -55,10 +55,10 @@ function beside(
   origin: Datum['origin'],
   exact: boolean,
   policy: Policy,
-): { readonly uBeside?: number } {
-  if (exact || origin !== 'printed digits') return {};
+): number | undefined {
+  if (exact || origin !== 'printed digits') return undefined;
   const { relative, absolute } = policyPart(policy, quantity);
-  return { uBeside: Math.hypot(u, relative * value, absolute) };
+  return Math.hypot(u, relative * value, absolute);
 }
 
 /** Zero of a formation quantity is a definition. */
@@ -82,7 +82,7 @@ export function moved(datum: Datum, shift: number, uShift = 0): Datum {
     value: datum.value + shift,
     offset: datum.offset + shift,
     u: uShift === 0 ? datum.u : Math.hypot(datum.u, uShift),
-    ...(datum.uBeside === undefined ? {} : { uBeside: Math.hypot(datum.uBeside, uShift) }),
+    uBeside: datum.uBeside === undefined ? undefined : Math.hypot(datum.uBeside, uShift),
   };
 }
 

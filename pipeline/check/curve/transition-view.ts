@@ -57,112 +57,55 @@ function viewOf(
   const isobarPa = fromCurve < 0 ? null : curves[fromCurve].family.isobarPa;
   const place = `${stated.from}>${stated.to}${isobarPa === null ? '' : ` at ${isobarPa} Pa`}`;
   const temperatureK = stated.temperature.value;
-  const base = { stated, index, place, fromCurve, toCurve };
-  if (stated.table.basis === 'estimated') {
-    return {
-      ...base,
-      pair: null,
-      missing: 'a measured or evaluated transition: an estimate witnesses nothing',
-      byConstruction: false,
-      carriesH: false,
-      carriesS: false,
-      crossing: null,
-      uStatedK: stated.temperature.u,
-      evidence: 'independent',
-    };
-  }
-  if (!(stated.pressurePa > 0)) {
-    return {
-      ...base,
-      pair: null,
-      missing: 'a pressure above 0',
-      byConstruction: false,
-      carriesH: false,
-      carriesS: false,
-      crossing: null,
-      uStatedK: stated.temperature.u,
-      evidence: 'independent',
-    };
-  }
-  if (fromCurve < 0 || toCurve < 0) {
-    const without =
-      fromCurve < 0 && toCurve < 0 ? `${stated.from} and ${stated.to}` : fromCurve < 0 ? stated.from : stated.to;
-    return {
-      ...base,
-      pair: null,
-      missing: `a heat-capacity table of ${without}`,
-      byConstruction: false,
-      carriesH: false,
-      carriesS: false,
-      crossing: null,
-      uStatedK: stated.temperature.u,
-      evidence: 'independent',
-    };
-  }
   const a = curves[fromCurve];
   const b = curves[toCurve];
-  const within = stated.table.basis !== 'measured' && everySource(a, b, stated.table.source);
-  const uStatedK = uStated(stated.temperature, within);
-  const evidence: EvidenceKind = within ? 'arithmetic' : 'independent';
+  const both = fromCurve >= 0 && toCurve >= 0;
+  const within = both && stated.table.basis !== 'measured' && everySource(a, b, stated.table.source);
+  const carriesH = both && (a.enthalpyThrough === index || b.enthalpyThrough === index);
+  const carriesS = both && (a.entropyThrough === index || b.entropyThrough === index);
+  // Written out once: every substance asks for a few, and copies of half an object cost more than the numbers in it.
+  const view = (missing: string | null, crossing: Crossing | null, pair: TransitionView['pair']): TransitionView => ({
+    stated,
+    index,
+    place,
+    fromCurve,
+    toCurve,
+    pair,
+    missing,
+    byConstruction: carriesH && carriesS,
+    carriesH,
+    carriesS,
+    crossing,
+    uStatedK: both ? uStated(stated.temperature, within) : stated.temperature.u,
+    evidence: within ? 'arithmetic' : 'independent',
+  });
+  if (stated.table.basis === 'estimated')
+    return view('a measured or evaluated transition: an estimate witnesses nothing', null, null);
+  if (!(stated.pressurePa > 0)) return view('a pressure above 0', null, null);
+  if (!both) {
+    const without = [fromCurve < 0 ? stated.from : null, toCurve < 0 ? stated.to : null].filter((p) => p !== null);
+    return view(`a heat-capacity table of ${without.join(' and ')}`, null, null);
+  }
   const unlevelled = [a, b].find((c) => !c.hasEnthalpyLevel || !c.hasEntropyLevel);
+  if (unlevelled !== undefined) return view(`a formation enthalpy and an entropy of ${unlevelled.phase}`, null, null);
   const setting: DiagramSetting = { pressurePa: stated.pressurePa, gas: stated.gas ?? 'real' };
   const boiling = boilingTemperature(substance.transitions);
   const from = placePhase(a, substance.substance, setting, boiling);
   const to = placePhase(b, substance.substance, setting, boiling);
   const crossing = nearestCrossing(stated, a, assembled.crossings, temperatureK);
-  const carriesH = a.enthalpyThrough === index || b.enthalpyThrough === index;
-  const carriesS = a.entropyThrough === index || b.entropyThrough === index;
-  const byConstruction = carriesH && carriesS;
-  if (unlevelled !== undefined) {
-    return {
-      ...base,
-      pair: null,
-      missing: `a formation enthalpy and an entropy of ${unlevelled.phase}`,
-      byConstruction,
-      carriesH,
-      carriesS,
-      crossing: null,
-      uStatedK,
-      evidence,
-    };
-  }
   const low = Math.max(from.lowK, to.lowK);
   const high = Math.min(from.highK, to.highK);
   let atK = temperatureK;
   if (temperatureK < low || temperatureK > high) {
     if (crossing === null) {
       const short = [from, to].filter((p) => temperatureK < p.lowK || temperatureK > p.highK);
-      return {
-        ...base,
-        pair: null,
-        missing: `a heat-capacity table of ${short.map((p) => p.source.phase).join(' and ')} that reaches the stated temperature`,
-        byConstruction,
-        carriesH,
-        carriesS,
-        crossing,
-        uStatedK,
-        evidence,
-      };
+      const phases = short.map((p) => p.source.phase).join(' and ');
+      return view(`a heat-capacity table of ${phases} that reaches the stated temperature`, null, null);
     }
     atK = crossing.temperatureK;
   }
-  return {
-    ...base,
-    pair: {
-      from,
-      to,
-      at: equilibrium(from, to, atK),
-      atK,
-      uGapJPerMol: gapUncertainty(from, to, atK, stated.pressurePa),
-    },
-    missing: null,
-    byConstruction,
-    carriesH,
-    carriesS,
-    crossing,
-    uStatedK,
-    evidence,
-  };
+  const uGapJPerMol = gapUncertainty(from, to, atK, stated.pressurePa);
+  return view(null, crossing, { from, to, at: equilibrium(from, to, atK), atK, uGapJPerMol });
 }
 
 /**
