@@ -34,6 +34,8 @@ export interface PrintedTransition {
   p: string;
   order?: string;
   gas?: string;
+  /** Another source than the tables'. */
+  source?: string;
 }
 
 /** What the sources print; every text may be changed before it is read. */
@@ -189,9 +191,9 @@ export function caseOf(printed: Printed, extra: Partial<RawCase> = {}): Harmonis
     anchors: printed.anchors.map(({ phase, H, S }, i) =>
       rowOf(anchorTable, { phase }, given({ 'enthalpy-of-formation': H, entropy: S }), i + 2),
     ),
-    transitions: printed.transitions.map(({ from, to, T, dH, dS, p, order, gas }, i) =>
+    transitions: printed.transitions.map(({ from, to, T, dH, dS, p, order, gas, source }, i) =>
       rowOf(
-        transitionTable,
+        source === undefined ? transitionTable : { ...transitionTable, source },
         { 'from-phase': from, 'to-phase': to, ...(order && { order }), ...(gas && { gas }) },
         given({ 'transition-temperature': T, 'transition-enthalpy': dH, 'transition-entropy': dS, pressure: p }),
         i + 2,
