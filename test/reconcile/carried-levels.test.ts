@@ -62,12 +62,13 @@ describe('two evaluated sources', () => {
       ...printed.transitions[0]!,
       T: '500.150',
       dH: '9.080',
-      dS: '18.150',
+      dS: '18.155',
       source: 'another',
     });
     const found = reconciled(printed);
     expect(found.findings.filter(({ severity }) => severity !== 'note')).toEqual([]);
-    printed.transitions[2]!.T = '510.000';
+    // Ten kelvin are more than that.
+    Object.assign(printed.transitions[2]!, { T: '510.000', dS: '17.804' });
     const spoilt = reconciled(printed);
     expect(groupOf(spoilt, rootsOf(spoilt)[0]!)[0]).toBe('transitions.csv:4 T');
   });
