@@ -8,6 +8,8 @@ export type PossibleRange = readonly [low: number, high: number];
 
 /** No table of a condensed phase or of an ideal gas goes beyond [K]. */
 const HIGHEST_K = 20_000;
+/** Far above the critical pressure of any substance [Pa]. */
+const HIGHEST_PA = 1e9;
 const ANY: PossibleRange = [Number.NEGATIVE_INFINITY, Number.POSITIVE_INFINITY];
 const POSITIVE: PossibleRange = [0, Number.POSITIVE_INFINITY];
 
@@ -22,9 +24,10 @@ export function possibleRange(quantity: NumberQuantity, table: TableMeaning): Po
     case 'transition-enthalpy':
     case 'transition-entropy':
     case 'heat-capacity':
-    case 'pressure':
     case 'enthalpy-from-zero':
       return POSITIVE;
+    case 'pressure':
+      return [0, HIGHEST_PA];
     default:
       return ANY;
   }

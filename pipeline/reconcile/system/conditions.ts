@@ -104,9 +104,20 @@ export function closureConditions(
 }
 
 /** G_g(T, p) - G_condensed(T, p) = 0 of each measured vapour pressure, its error in p taken in ln p. */
+/** Of the heat capacities of a vapour and what it is over [J/(mol K)]; a bound for most substances: judgement. */
+const USUAL_DIFFERENCE = 50;
+/** However far, the entropy of vaporization changes by less than this share of itself on the way; judgement. */
+const LARGEST_CHANGE = 0.2;
+
+/** Standard uncertainty of G beyond the curves' end, taken on by the entropy there: dCp x^2 / 2T, bounded [J/mol]. */
+function beyondCurves({ at, atK, beyondK: x }: Saturated): number {
+  const dCp = Math.max(USUAL_DIFFERENCE, 2 * Math.abs(at.heatCapacityJPerMolK));
+  return Math.min((dCp * x * x) / (2 * atK), LARGEST_CHANGE * Math.abs(at.entropyJPerMolK * x));
+}
+
 export function saturationConditions(saturated: readonly Saturated[]): Condition[] {
   return saturated.map((pair) => {
-    const { atK, at, to, index } = pair;
+    const { atK, at, to, index, beyondK } = pair;
     const sum = difference(pair, 1, -atK)
       .addDatum(datumKey.saturationTemperature(index), -at.entropyJPerMolK, 0)
       .addDatum(datumKey.saturationPressure(index), (R_J_PER_MOL_K * atK) / to.formulaUnits, 0);
@@ -115,9 +126,10 @@ export function saturationConditions(saturated: readonly Saturated[]): Condition
       kind: 'saturation',
       joined: -1,
       transition: -1,
-      value: -at.gapJPerMol,
+      // Beyond the curves by the entropy at their end; what the heat capacities may add is allowed for.
+      value: -(at.gapJPerMol + at.entropyJPerMolK * beyondK),
       sum,
-      variance: 0,
+      variance: beyondCurves(pair) ** 2,
       within: false,
     };
   });

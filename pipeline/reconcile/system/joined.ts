@@ -56,6 +56,8 @@ export function joinedTransitions(checked: CheckedCase, isobarPa: number | null)
 /** A measured (T, p) over a condensed phase, by its index among the substance's. */
 export interface Saturated extends Pair {
   readonly index: number;
+  /** How far the stated temperature lies beyond what both curves cover. */
+  readonly beyondK: number;
 }
 
 /** The virial equation cut after B is good to about this. */
@@ -73,14 +75,17 @@ export function saturatedPairs(checked: CheckedCase): Saturated[] {
   vapourPressures.forEach((stated, index) => {
     const condensed = curves.find((c) => c.phase === stated.phase && c.family.isobarPa === null && hasLevels(c));
     const pressurePa = stated.pressure.value;
-    const atK = stated.temperature.value;
-    if (condensed === undefined || !(pressurePa > 0) || !(atK > 0)) return;
+    const statedK = stated.temperature.value;
+    if (condensed === undefined || !(pressurePa > 0) || !(statedK > 0)) return;
     // Beyond what a second virial coefficient can do, its uncertainty would hide any slip.
     const setting = { pressurePa, gas: pressurePa > HIGHEST_REAL_PA ? ('ideal' as const) : ('real' as const) };
     const from = placePhase(condensed, substance, setting, boiling);
     const to = placePhase(gas, substance, setting, boiling);
-    if (atK < Math.max(from.lowK, to.lowK) || atK > Math.min(from.highK, to.highK)) return;
-    pairs.push({ index, from, to, atK, at: equilibrium(from, to, atK) });
+    const low = Math.max(from.lowK, to.lowK);
+    const high = Math.min(from.highK, to.highK);
+    if (!(high > low)) return;
+    const atK = Math.min(high, Math.max(low, statedK));
+    pairs.push({ index, from, to, atK, at: equilibrium(from, to, atK), beyondK: statedK - atK });
   });
   return pairs;
 }
