@@ -92,8 +92,12 @@ function exact(candidate: Candidate): Candidate {
 }
 
 /** Whether a value lies where none can, by more than three of its standard uncertainties. */
-export function outside({ possible }: SuspectContext, value: number, u: number): boolean {
-  return possible !== undefined && (value + 3 * u < possible[0] || value - 3 * u > possible[1]);
+export function outside({ possible, quantity }: SuspectContext, value: number, u: number): boolean {
+  if (possible === undefined) return false;
+  const [low, high] = possible;
+  // A pressure is known by its logarithm, and its u is that times the pressure.
+  if (quantity === 'pressure' && value > 0) return Math.log(value) - (3 * u) / value > Math.log(high);
+  return value + 3 * u < low || value - 3 * u > high;
 }
 
 /** Share of proposals that are wrong by more than they say, and how far: this share of the correction. */
