@@ -251,7 +251,9 @@ function rankWhole(
  */
 function ordered(members: readonly RankedDatum[], scoreOf: ScoreOf): RankedDatum[] {
   const best = members.find((one) => one.whole !== null);
-  const kept = members.filter((one) => one.whole === null || one === best);
+  // One cell is one suspect, whether a law or its own number says so.
+  const same = (one: RankedDatum): boolean => best?.whole?.cells === 1 && one.of.key === best.of.key;
+  const kept = members.filter((one) => one === best || (one.whole === null && !same(one)));
   if (kept.length < 2) return kept;
   const weighed = kept.map((one) => ({
     wSquared: one.w * one.w,
