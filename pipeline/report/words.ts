@@ -1,10 +1,11 @@
 /** Every sentence that people read about findings is made here, and nowhere else. */
 
-import type { Finding, FindingDetail, Suspect } from '../../schemas/finding.js';
+import type { Finding, FindingDetail } from '../../schemas/finding.js';
 import type { Address } from '../../schemas/harmonised.js';
 import { sayExplanation } from './explanations.js';
 import { figure, plusMinus, unitInWords } from './figures.js';
 import { READING } from './reading-words.js';
+import { statedPlace, symbol } from './symbols.js';
 
 type Detail<Code extends FindingDetail['code']> = Extract<FindingDetail, { code: Code }>;
 
@@ -27,55 +28,6 @@ export function sayAddress({ source, file, line, column }: Address): string {
 export function sayPlace({ source, file, line, column }: Address): string {
   const path = source === '' || file === '' ? source + file : `${source}/${file}`;
   return `${path}${line > 0 ? `:${line}` : ''}${column === '' ? '' : ` ${column}`}`;
-}
-
-/** Cell, what it says, and what it should probably say: `x/points.csv:412 S says 888.108, probably 889.108 (one digit wrong)`. */
-export function saySuspect(suspect: Suspect): string {
-  const { address, cells, printed, proposedPrinted, explanation, explainedPrinted } = suspect;
-  const more = cells > 1 ? ` and ${cells - 1} more, the first` : '';
-  const says = `${sayPlace(address)}${more} says ${printed}`;
-  if (proposedPrinted === printed) return `${says}; a change below its last digit would close it`;
-  if (explanation === null) return `${says}, probably ${proposedPrinted}`;
-  return `${says}, probably ${explainedPrinted ?? proposedPrinted} (${sayExplanation(explanation)}?)`;
-}
-
-/**
- * The suspects of one finding, a line each: the cells of one group cannot be told apart, a further group is a further error.
- * After a group of several stands what would tell them apart.
- */
-export function saySuspects(suspects: readonly Suspect[]): string[] {
-  const ordered = [...suspects].sort((a, b) => a.place - b.place);
-  return ordered.flatMap((suspect, i) => {
-    const role = i === 0 ? 'suspect' : ordered[i - 1]!.group === suspect.group ? 'or' : 'and';
-    const line = `${role}: ${saySuspect(suspect)}${closesAt(suspect)}`;
-    const ends = ordered[i + 1]?.group !== suspect.group;
-    return ends && suspect.toldApartBy !== null ? [line, `told apart by: ${suspect.toldApartBy}`] : [line];
-  });
-}
-
-/** What the rest of the data put there, in SI; nothing of a phase, which is no number. */
-function closesAt({ explanation, observed, proposed, uProposed, unit }: Suspect): string {
-  if (explanation === 'from-and-to-exchanged' && proposed === observed) return '';
-  return `; the rest puts it at ${plusMinus(proposed, uProposed)} ${unitInWords(unit)}`;
-}
-
-/**
- * Why a substance is withheld or flagged, in one line: the first suspect cell of its worst finding, or that finding itself.
- * `findings` are worst first, as reconcile leaves them.
- */
-export function sayReason(findings: readonly Finding[], suspects: readonly Suspect[]): string {
-  const grave = findings.filter(({ severity, accepted }) => severity !== 'note' && !accepted);
-  const roots = grave.filter(({ cause }) => cause === null);
-  const order = new Map([...roots, ...grave].map(({ id }, i) => [id, i]).reverse() as [string, number][]);
-  const [first] = suspects
-    .filter(({ finding }) => order.has(finding))
-    .sort((a, b) => a.place - b.place || order.get(a.finding)! - order.get(b.finding)!);
-  if (first !== undefined) {
-    const alike = suspects.filter((one) => one !== first && one.finding === first.finding && one.group === first.group);
-    return [first, ...alike].map(saySuspect).join('; or ');
-  }
-  const worst = roots[0] ?? grave[0] ?? findings[0];
-  return worst === undefined ? 'nothing was found' : sayFinding(worst);
 }
 
 function told(finding: Finding): string {
@@ -161,31 +113,6 @@ function adjustment(finding: Finding, { place, cells, w, critical, chiSquare, fr
 function residual(w: number): string {
   return figure(Math.round(100 * Math.abs(w)) / 100);
 }
-
-/** `T cr>l` becomes `the temperature of cr>l`. */
-function statedPlace(place: string): string {
-  const gap = place.indexOf(' ');
-  const over = place.startsWith('over ', gap + 1);
-  const name = PLACES[place.slice(0, over ? gap + 5 : gap)] ?? PLACES[place.slice(0, gap)] ?? place.slice(0, gap);
-  return `${name}${place
-    .slice(gap)
-    .replace(/^ over /, ' over ')
-    .replace(/^ (?!over )/, ' of ')}`;
-}
-
-const PLACES: Readonly<Record<string, string>> = {
-  T: 'the temperature',
-  dH: 'the enthalpy',
-  dS: 'the entropy',
-  from: 'the first phase',
-  dfH: 'the formation enthalpy',
-  dfG: 'the Gibbs energy of formation',
-  S: 'the entropy',
-  Cp: 'the heat capacity',
-  'H-H(0)': 'H − H(0)',
-  p: 'the pressure',
-  'p over': 'the vapour pressure',
-};
 
 function reading({ problem, read, wanted, remedy }: Detail<'reading'>): string {
   return join(
@@ -362,28 +289,6 @@ function gravity({ severity, detail, tolerance, unit, difference }: Finding): st
 
 function where({ address, cause }: Finding): string {
   return join(address === null ? '' : sayAddress(address), cause === null ? '' : `It follows from finding ${cause}`);
-}
-
-const SYMBOLS: Readonly<Record<string, string>> = {
-  temperature: 'T',
-  'heat-capacity': 'Cp',
-  entropy: 'S',
-  'enthalpy-increment': 'H − H(Tr)',
-  'gibbs-function': '−[G − H(Tr)]/T',
-  enthalpy: 'H',
-  'gibbs-energy': 'G',
-  'enthalpy-of-formation': 'ΔfH',
-  'gibbs-energy-of-formation': 'ΔfG',
-  'enthalpy-from-zero': 'H(Tr) − H(0)',
-  'transition-temperature': 'the transition temperature',
-  'transition-enthalpy': 'ΔH',
-  'transition-entropy': 'ΔS',
-  pressure: 'p',
-};
-
-/** The quantity as a chemist writes it; an unknown name stands for itself. */
-export function symbol(quantity: string): string {
-  return SYMBOLS[quantity] ?? quantity;
 }
 
 function at({ temperatureK }: Finding): string {

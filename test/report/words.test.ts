@@ -2,7 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { SLIP_CODES } from '../../pipeline/reconcile/explain.js';
 import { EXPLANATIONS } from '../../pipeline/report/explanations.js';
 import { figure, plusMinus, unitInWords } from '../../pipeline/report/figures.js';
-import { sayAddress, sayFinding, sayPlace, sayReason, saySuspect, saySuspects } from '../../pipeline/report/words.js';
+import { sayReason, saySuspect, saySuspects } from '../../pipeline/report/suspect-words.js';
+import { sayAddress, sayFinding, sayPlace } from '../../pipeline/report/words.js';
 import type { FindingDetail, ReadingProblem, Suspect } from '../../schemas/finding.js';
 import { makeFinding, type PartialFinding } from '../../schemas/make-finding.js';
 
