@@ -88,7 +88,9 @@ function findingLines({ findings, suspects }: ReconciledCase): string[] {
     return [
       `${finding.severity}  ${finding.rule}${place}  [${finding.id.slice(0, 8)}]`,
       ...wrap(sayFinding(finding), WIDTH - 6).map((line) => `    ${line}`),
-      ...saySuspects(own).map((line) => `    ${line}`),
+      ...saySuspects(own).flatMap((line) =>
+        wrap(line, WIDTH - 8).map((part, i) => (i === 0 ? `    ${part}` : `      ${part}`)),
+      ),
     ];
   });
 }
