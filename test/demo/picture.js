@@ -21,7 +21,9 @@ const shown = run('show', 'lumerite').split('\n');
 rmSync(out, { recursive: true });
 
 const from = shown.findIndex((line) => line.startsWith('Transitions'));
-const to = shown.findIndex((line) => line.startsWith('      suspect'));
+// The first suspect, with the lines that it runs on over.
+const suspect = shown.findIndex((line) => line.startsWith('      suspect'));
+const to = shown.findIndex((line, i) => i > suspect && !line.startsWith('        ')) - 1;
 const sketch = shown.findIndex((line) => line.startsWith('G against T'));
 const end = shown.findIndex((line) => line.startsWith('Nothing about'));
 const lines = [
