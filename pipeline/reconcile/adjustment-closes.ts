@@ -8,7 +8,7 @@ import { type DatumTest, FreeData, type Whitened, whitened } from '../core/physi
 import { datumKey } from '../core/physics/datum-keys.js';
 import { noticeablePressurePa } from './noticeable-pressure.js';
 import type { RankedDatum, SuspectGroup } from './rank-data.js';
-import { isPressure } from './system/stated-data.js';
+import { inPressure, isPressure } from './system/stated-data.js';
 import type { ConditionDatum, ConditionSystem } from './system/system.js';
 import { wouldHelp } from './would-help.js';
 
@@ -65,7 +65,7 @@ export function adjustmentOutcomes({ system, tests, whitened: white, critical, o
       outcome: open && Math.abs(test.w) > critical.doubt ? 'disagrees' : 'agrees',
       evidence: d.within ? 'arithmetic' : 'independent',
       missing: null,
-      smallestDetectable: isPressure(d) ? d.datum.value * Math.expm1(test.smallestDetectable) : test.smallestDetectable,
+      smallestDetectable: isPressure(d) ? inPressure(d.datum.value, test.smallestDetectable) : test.smallestDetectable,
     });
   });
   for (const d of system.unseen) {

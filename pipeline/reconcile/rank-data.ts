@@ -1,7 +1,7 @@
 import type { Policy } from '../../schemas/policy.js';
 import { FreeData, type Whitened, whitened } from '../core/physics/adjustment.js';
 import { orderedByExplanation } from './order-in-group.js';
-import { isPressure } from './system/stated-data.js';
+import { inPressure, isPressure } from './system/stated-data.js';
 import { type ConditionDatum, type ConditionSystem, resolvedAt, restsOn } from './system/system.js';
 import { toldApartBy } from './told-apart.js';
 import { type WholeSlip, wholeSlips } from './whole/whole-slips.js';
@@ -212,7 +212,7 @@ function rank(
     whole: null,
     w,
     redundancy: test.redundancy,
-    smallestDetectable: logarithmic ? value * Math.expm1(test.smallestDetectable) : test.smallestDetectable,
+    smallestDetectable: logarithmic ? inPressure(value, test.smallestDetectable) : test.smallestDetectable,
     proposed,
     uProposed: uError * scale,
   };

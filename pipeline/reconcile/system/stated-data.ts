@@ -34,6 +34,11 @@ export interface StatedDatum {
   readonly place: string;
 }
 
+/** An error of a pressure's logarithm as one of the pressure; a power beyond all pressures is as good as any. */
+export function inPressure(pressurePa: number, logarithm: number): number {
+  return pressurePa * Math.expm1(Math.min(logarithm, 100));
+}
+
 /** Its error is one of ln p. */
 export function isPressure({ kind }: Pick<StatedDatum, 'kind'>): boolean {
   return kind === 'saturation-pressure' || kind === 'transition-pressure';
