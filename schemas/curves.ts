@@ -71,6 +71,8 @@ export interface PhaseCurve {
   readonly varS: Float64Array;
   /** Smoother gains knot k <- k + 1, 2x2 row-major, 4 a knot: Cov(x_k, x_j) = G_k Cov(x_{k+1}, x_j), k < j. */
   readonly gain: Float64Array;
+  /** Standard uncertainty of the bend inside each interval that neither of its ends sees [J/mol]; absent: none. */
+  readonly uBendJPerMol?: Float64Array | undefined;
   readonly uEnthalpyLevelJPerMol: number;
   readonly uEntropyLevelJPerMolK: number;
   /** Which data the levels owe their errors to; absent where they are the curve's own. */

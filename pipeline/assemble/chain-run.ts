@@ -1,7 +1,7 @@
 import { cubicIntegral, cubicIntegralOverT } from '../core/numeric/cubic.js';
 import { type ChainResult, smoothChain } from '../core/numeric/gaussian-chain.js';
 import { numbers } from '../core/numeric/room.js';
-import type { Stretch } from './stretch.js';
+import { LEAST_ERROR, type Stretch } from './stretch.js';
 
 /** A chain run over a stretch, with the steps that it was given. */
 export interface ChainRun {
@@ -51,7 +51,7 @@ export function runChain(stretch: Stretch, zero: Zero): ChainRun {
     const beta = cubicIntegralOverT(0, 60 / w2, -180 / (w2 * w), 120 / (w2 * w2), t[i], w);
     alphas[i] = alpha;
     betas[i] = beta;
-    const a = stretch.errorJPerMol[i] + 0.001 * w;
+    const a = stretch.errorJPerMol[i] + LEAST_ERROR * w;
     const b = a / 2;
     stepVarH[i] = a * a + stretch.ownVarH[i];
     stepCovHS[i] = a * a * alpha + stretch.ownCovHS[i];
@@ -146,6 +146,29 @@ function nearestTo(t: Float64Array, n: number, temperatureK: number): number {
 function firstFinite(variance: Float64Array): number {
   for (let i = 0; i < variance.length; i++) if (variance[i] !== Number.POSITIVE_INFINITY) return i;
   return -1;
+}
+
+/**
+ * How sure each interval's second bump is [J/mol]: what the smoothed steps of H and S leave of it, b = (dS - alpha dH) / beta,
+ * and no more than the chain was given it with.
+ */
+export function bendUncertainty(stretch: Stretch, { chain, alpha, beta }: ChainRun): Float64Array {
+  const { n, temperatureK: t, errorJPerMol } = stretch;
+  const { varH, covHS, varS, gain } = chain;
+  const out = numbers(n - 1);
+  for (let i = 0; i < n - 1; i++) {
+    const w = t[i + 1] - t[i];
+    if (w === 0) continue;
+    const j = i + 1;
+    const g = 4 * i;
+    const hh = varH[i] + varH[j] - 2 * (gain[g] * varH[j] + gain[g + 1] * covHS[j]);
+    const ss = varS[i] + varS[j] - 2 * (gain[g + 2] * covHS[j] + gain[g + 3] * varS[j]);
+    const cross = gain[g] * covHS[j] + gain[g + 1] * varS[j] + gain[g + 2] * varH[j] + gain[g + 3] * covHS[j];
+    const hs = covHS[i] + covHS[j] - cross;
+    const left = Math.sqrt(Math.max(0, ss - 2 * alpha[i] * hs + alpha[i] * alpha[i] * hh)) / Math.abs(beta[i]);
+    out[i] = Math.min(left, (errorJPerMol[i] + LEAST_ERROR * w) / 2);
+  }
+  return out;
 }
 
 /** Bends each interval's cubic by its two bumps until its integrals are the chain's steps. */

@@ -27,13 +27,14 @@ export class CurveDraft {
   private start = FRONT;
   private end: number;
   private readonly a: Record<
-    'knotK' | 'c0' | 'c1' | 'c2' | 'c3' | 'h' | 's' | 'varH' | 'covHS' | 'varS' | 'uCp',
+    'knotK' | 'c0' | 'c1' | 'c2' | 'c3' | 'h' | 's' | 'varH' | 'covHS' | 'varS' | 'uCp' | 'uBend',
     Float64Array
   >;
   private readonly kind: Uint8Array;
   private readonly gain: Float64Array;
 
-  constructor(stretch: Stretch, chain: ChainResult) {
+  /** @param uBend of each interval [J/mol] */
+  constructor(stretch: Stretch, chain: ChainResult, uBend: Float64Array) {
     const n = stretch.n;
     this.end = FRONT + n;
     const size = n + FRONT + BACK;
@@ -54,6 +55,7 @@ export class CurveDraft {
       covHS: from(chain.covHS),
       varS: from(chain.varS),
       uCp: from(stretch.uHeatCapacity),
+      uBend: from(uBend),
     };
     this.kind = new Uint8Array(size);
     this.kind.set(stretch.kind, FRONT);
@@ -70,7 +72,7 @@ export class CurveDraft {
     return this.a[name].subarray(this.start, this.end);
   }
 
-  intervals(name: 'c0' | 'c1' | 'c2' | 'c3'): Float64Array {
+  intervals(name: 'c0' | 'c1' | 'c2' | 'c3' | 'uBend'): Float64Array {
     return this.a[name].subarray(this.start, this.end - 1);
   }
 

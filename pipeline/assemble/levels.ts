@@ -258,6 +258,7 @@ function curveOf(shape: PhaseShape, level: Level, family: Family, growth: number
     covHS: shape.covHS,
     varS: shape.varS,
     gain: shape.gain,
+    uBendJPerMol: shape.uBend,
     uEnthalpyLevelJPerMol: level.uH,
     uEntropyLevelJPerMolK: level.uS,
     uCalibrationRelative: shape.uCalibrationRelative,

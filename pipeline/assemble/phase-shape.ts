@@ -3,7 +3,7 @@ import type { CurveOrigin } from '../../schemas/curves.js';
 import type { Series } from '../../schemas/harmonised.js';
 import type { Policy } from '../../schemas/policy.js';
 import { baseCurve } from './base-curve.js';
-import { bend, runChain, smoothed } from './chain-run.js';
+import { bend, bendUncertainty, runChain, smoothed } from './chain-run.js';
 import { CurveDraft } from './curve-draft.js';
 import { debyeTail } from './debye-tail.js';
 import { type Extended, extend } from './join.js';
@@ -26,6 +26,8 @@ export interface PhaseShape {
   readonly covHS: Float64Array;
   readonly varS: Float64Array;
   readonly gain: Float64Array;
+  /** Of the bend inside each interval [J/mol]. */
+  readonly uBend: Float64Array;
   readonly knotKind: Uint8Array;
   readonly uHeatCapacity: Float64Array;
   readonly measuredFromK: number;
@@ -160,7 +162,7 @@ function finish(
   const { chain } = run;
   bend(stretch, run);
 
-  const draft = new CurveDraft(stretch, chain);
+  const draft = new CurveDraft(stretch, chain, bendUncertainty(stretch, run));
   if (measuredFromK === 0 && stretch.n > 2) keepPositive(draft);
   else if (tail !== null) addTail(draft, tail, thirdLaw);
   if (policy.continuation.method === 'hold') draft.addContinuations(policy.continuation.reachRelative);
@@ -179,6 +181,7 @@ function finish(
     covHS: draft.view('covHS'),
     varS: draft.view('varS'),
     gain: draft.gains(),
+    uBend: draft.intervals('uBend'),
     knotKind: draft.kinds(),
     uHeatCapacity: draft.view('uCp'),
     measuredFromK: tail !== null ? 0 : measuredFromK,

@@ -3,6 +3,9 @@ import { numbers } from '../core/numeric/room.js';
 import type { BaseCurve } from './base-curve.js';
 import type { Knots } from './knots.js';
 
+/** Of an interval's integral, per kelvin [J/(mol K)]: no interpolation is surer than that. */
+export const LEAST_ERROR = 0.001;
+
 /** Knots, cubics, step errors and observations of one stretch; what the chain runs over. n knots, n - 1 intervals. */
 export class Stretch {
   constructor(

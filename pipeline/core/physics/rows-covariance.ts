@@ -14,6 +14,8 @@ export interface RowsUncertainty extends CurveArrays {
   readonly referenceK: number;
   readonly entropyReferenceK: number;
   readonly continuationGrowthPerK: number;
+  /** Standard uncertainty of the bend inside each interval that neither end sees [J/mol]; absent: none. */
+  readonly uBendJPerMol?: Float64Array | undefined;
 }
 
 /** Variances of H and S and their covariance at one temperature. */
@@ -48,6 +50,10 @@ export function rowsCovariance(curve: RowsUncertainty, temperatureK: number): St
     hh += a * t * between.hh;
     hs += a * t * between.hs;
     ss += a * t * between.ss;
+    const bend = bendAt(curve, i, t);
+    hh += bend * bend;
+    hs += (bend * bend) / temperatureK;
+    ss += (bend / temperatureK) ** 2;
   }
   if (curve.uCalibrationRelative > 0) {
     const u2 = curve.uCalibrationRelative * curve.uCalibrationRelative;
@@ -128,6 +134,11 @@ export function addCrossCovariance(
       hs += t1 * b2 * between.hs;
       sh += t1 * b2 * between.hs;
       ss += t1 * b2 * between.ss;
+      const bend = bendAt(curve, i, t1) * bendAt(curve, i, t2);
+      hh += bend;
+      hs += bend / second;
+      sh += bend / first;
+      ss += bend / (first * second);
     }
   } else {
     let m0 = n0;
@@ -206,6 +217,14 @@ function betweenKnots({ knotK, varH, covHS, varS, gain }: RowsUncertainty, i: nu
 /** Of two variances and their covariance: 2 sqrt(a b) in place of twice the covariance, and no more than they differ by. */
 function lacking(a: number, b: number, covariance: number): number {
   return Math.max(0, Math.min(Math.abs(b - a), 2 * (Math.sqrt(a * b) - covariance)));
+}
+
+/**
+ * One standard uncertainty of H at the share t of an interval from the bend between its ends: the second bump of the chain,
+ * 60 x (1 - x)(1 - 2x), has the integral 30 x^2 (1 - x)^2. S errs by that over T, and G by nothing.
+ */
+function bendAt({ uBendJPerMol }: RowsUncertainty, i: number, t: number): number {
+  return uBendJPerMol === undefined || i >= uBendJPerMol.length ? 0 : 30 * t * t * (1 - t) * (1 - t) * uBendJPerMol[i];
 }
 
 function shareOf(curve: RowsUncertainty, i: number, temperatureK: number): number {
