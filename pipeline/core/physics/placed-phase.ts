@@ -62,3 +62,9 @@ export function gapUncertainty(a: PlacedPhase, b: PlacedPhase, temperatureK: num
   const volume = a.source.family.isobarPa === null ? condensedTermUncertainty(pressurePa) : 0;
   return Math.hypot(curves, gas(a), gas(b), volume);
 }
+
+/** Signed standard uncertainty of the gas terms in G(to) - G(from) [J/mol]: one second virial coefficient is behind both. */
+export function gasTermUncertainty(from: PlacedPhase, to: PlacedPhase, temperatureK: number): number {
+  const gas = (p: PlacedPhase): number => (p.term === null ? 0 : p.term.u(temperatureK) / p.formulaUnits);
+  return gas(to) - gas(from);
+}

@@ -5,6 +5,7 @@ import { enthalpyAt, entropyAt, gibbsAt, heatCapacityAt, intervalOf } from '../.
 import { datumKey } from '../../core/physics/datum-keys.js';
 import { ErrorSum } from '../../core/physics/error-sum.js';
 import { imperfection } from '../../core/physics/imperfection-error.js';
+import { gasTermUncertainty } from '../../core/physics/placed-phase.js';
 import { condensedTermUncertainty } from '../../core/physics/pressure-terms.js';
 import type { Joined, Pair, Saturated } from './joined.js';
 
@@ -49,7 +50,7 @@ export function transitionConditions(joined: readonly Joined[]): Condition[] {
     const keyT = datumKey.temperature(index);
     const keyP = datumKey.transitionPressure(index);
     const offset = stated.temperature.value - atK;
-    const uGas = gasU(j);
+    const uGas = gasTermUncertainty(j.from, j.to, atK);
     const isobar = j.from.source.family.isobarPa;
     const byPressure = isobar !== null || stated.pressure === null ? 0 : R_J_PER_MOL_K * gasUnits(j);
     const volume = isobar === null ? condensedTermUncertainty(stated.pressurePa) : 0;
@@ -121,7 +122,8 @@ export function saturationConditions(saturated: readonly Saturated[]): Condition
     const sum = difference(pair, 1, -atK)
       .addDatum(datumKey.saturationTemperature(index), -at.entropyJPerMolK, 0)
       .addDatum(datumKey.saturationPressure(index), (R_J_PER_MOL_K * atK) / to.formulaUnits, 0);
-    for (const { key, by, u } of imperfection(gasU(pair), 1, -atK, atK)) sum.addDatum(key, by, u);
+    for (const { key, by, u } of imperfection(gasTermUncertainty(pair.from, to, atK), 1, -atK, atK))
+      sum.addDatum(key, by, u);
     return {
       kind: 'saturation',
       joined: -1,
@@ -237,10 +239,6 @@ function gasUnits({ from, to }: Pair): number {
 /** The error of a transition's pressure, by ln p; none where it is no cell, or no gas takes part. */
 function addPressure(sum: ErrorSum, key: string, by: number): ErrorSum {
   return by === 0 ? sum : sum.addDatum(key, by, 0);
-}
-
-function gasU({ from, to, atK }: Pair): number {
-  return (to.term?.u(atK) ?? 0) / to.formulaUnits - (from.term?.u(atK) ?? 0) / from.formulaUnits;
 }
 
 /** The anchor's source was computed from one of the curve's, or the other way round. */

@@ -16,23 +16,24 @@ export function columnsOfOtherUnits(system: ConditionSystem): WholeSlip[] {
     for (const { code, ratio, weight } of unitRatios(system.substance.substance.molarMassGPerMol, perKelvin)) {
       const change = new Float64Array(system.m);
       for (const d of data) addTo(change, d.direction, (ratio - 1) * d.datum.value);
-      slips.push({
-        code,
-        cells: data.length,
-        data,
-        corrected: first.datum.value * ratio,
-        uCorrected: first.u * ratio,
-        correctedPrinted: printedLike(
-          first.datum.printed,
-          (first.datum.value * ratio - first.datum.offset) / first.datum.factor,
-        ),
-        change,
-        open: false,
-        weight,
-      });
+      slips.push(columnSlip(code, data, first.datum.value * ratio, first.u * ratio, change, weight));
     }
   }
   return slips;
+}
+
+/** All data of a column off by one law, the first cell as it would stand. */
+export function columnSlip(
+  code: string,
+  data: readonly ConditionDatum[],
+  corrected: number,
+  uCorrected: number,
+  change: Float64Array,
+  weight: number,
+): WholeSlip {
+  const { printed, offset, factor } = data[0].datum;
+  const correctedPrinted = printedLike(printed, (corrected - offset) / factor);
+  return { code, cells: data.length, data, corrected, uCorrected, correctedPrinted, change, open: false, weight };
 }
 
 /** Data of one column of one file, where it is more than one that is not zero. */

@@ -1,10 +1,10 @@
 /** All pressures of one column in another unit: of vapours, or of transitions; or the vapours' temperatures in degrees. */
 import { ICE_POINT_K } from '../../core/constants.js';
-import { printedLike } from '../../core/numeric/printed-like.js';
+import { datumKey } from '../../core/physics/datum-keys.js';
 import { equilibrium } from '../../core/physics/equilibrium.js';
 import { isPressure } from '../system/stated-data.js';
 import type { ConditionDatum, ConditionSystem } from '../system/system.js';
-import { byColumn } from './columns.js';
+import { byColumn, columnSlip } from './columns.js';
 import { addTo } from './exchanged.js';
 import { pressureRatios } from './pressure-ratios.js';
 import type { WholeSlip } from './whole-slips.js';
@@ -21,7 +21,7 @@ export function pressureColumns(system: ConditionSystem): WholeSlip[] {
     for (const { code, ratio, weight } of pressureRatios(datum.factor)) {
       const change = new Float64Array(system.m);
       for (const d of data) addTo(change, d.direction, Math.log(ratio));
-      slips.push(slipOf(code, data, datum.value * ratio, u * datum.value * ratio, change, weight));
+      slips.push(columnSlip(code, data, datum.value * ratio, u * datum.value * ratio, change, weight));
     }
     // lg p printed where ln p was meant, or the reverse: the number to the power of ln 10, or of lg e.
     for (const power of [Math.LN10, Math.LOG10E]) {
@@ -29,14 +29,14 @@ export function pressureColumns(system: ConditionSystem): WholeSlip[] {
       const step = (d: ConditionDatum): number => (power - 1) * Math.log(d.datum.value / d.datum.factor);
       for (const d of data) addTo(change, d.direction, step(d));
       const corrected = datum.value * Math.exp(step(data[0]));
-      slips.push(slipOf('log10-taken-for-ln', data, corrected, u * corrected, change, 0.01));
+      slips.push(columnSlip('log10-taken-for-ln', data, corrected, u * corrected, change, 0.01));
     }
   }
   for (const data of byColumn(system.data.filter((d) => d.kind === 'saturation-temperature'))) {
     for (const [code, shift, weight] of SHIFTS) {
       const change = new Float64Array(system.m);
       const reached = data.every((d) => {
-        const pair = system.saturated.find((one) => d.key.endsWith(` ${one.index}`));
+        const pair = system.saturated.find((one) => d.key === datumKey.saturationTemperature(one.index));
         const t = d.datum.value + shift;
         if (pair === undefined) return false;
         if (!(t > Math.max(pair.from.lowK, pair.to.lowK) && t < Math.min(pair.from.highK, pair.to.highK))) return false;
@@ -44,21 +44,8 @@ export function pressureColumns(system: ConditionSystem): WholeSlip[] {
         change[i] = -equilibrium(pair.from, pair.to, t).gapJPerMol - system.y[i];
         return true;
       });
-      if (reached) slips.push(slipOf(code, data, data[0].datum.value + shift, data[0].u, change, weight));
+      if (reached) slips.push(columnSlip(code, data, data[0].datum.value + shift, data[0].u, change, weight));
     }
   }
   return slips;
-}
-
-function slipOf(
-  code: string,
-  data: readonly ConditionDatum[],
-  corrected: number,
-  uCorrected: number,
-  change: Float64Array,
-  weight: number,
-): WholeSlip {
-  const { printed, offset, factor } = data[0].datum;
-  const correctedPrinted = printedLike(printed, (corrected - offset) / factor);
-  return { code, cells: data.length, data, corrected, uCorrected, correctedPrinted, change, open: false, weight };
 }

@@ -1,11 +1,10 @@
 /** The transition temperatures of one table all in degrees, or on an old scale. */
 import { ICE_POINT_K } from '../../core/constants.js';
-import { printedLike } from '../../core/numeric/printed-like.js';
 import { equilibrium } from '../../core/physics/equilibrium.js';
 import { t90MinusT48, t90MinusT68 } from '../../core/units/temperature-scale.js';
 import { atTemperature } from '../system/conditions.js';
 import type { ConditionSystem } from '../system/system.js';
-import { byColumn } from './columns.js';
+import { byColumn, columnSlip } from './columns.js';
 import type { WholeSlip } from './whole-slips.js';
 
 /** By code: the temperature that was meant [K]; null where it is not known. */
@@ -37,17 +36,8 @@ export function temperatureColumns(system: ConditionSystem): WholeSlip[] {
       });
       if (!reached) continue;
       const corrected = meant(first.datum.value) as number;
-      slips.push({
-        code,
-        cells: data.length,
-        data,
-        corrected,
-        uCorrected: first.u,
-        correctedPrinted: printedLike(first.datum.printed, (corrected - first.datum.offset) / first.datum.factor),
-        change,
-        open: false,
-        weight: code === 'old-temperature-scale' ? 0.005 : 0.02,
-      });
+      const weight = code === 'old-temperature-scale' ? 0.005 : 0.02;
+      slips.push(columnSlip(code, data, corrected, first.u, change, weight));
     }
   }
   return slips;
